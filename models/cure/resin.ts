@@ -1,0 +1,79 @@
+/** The resin document (`dwellbook-resin/1`): one parameter set of one study, never mixed with another. */
+
+export type Kinetics =
+  | { readonly law: 'nth-order'; readonly A: number; readonly E: number; readonly n: number }
+  | { readonly law: 'autocatalytic'; readonly A: number; readonly E: number; readonly m: number; readonly n: number }
+  | {
+      readonly law: 'kamal-sourour';
+      readonly A1: number;
+      readonly E1: number;
+      readonly A2: number;
+      readonly E2: number;
+      readonly m: number;
+      readonly n: number;
+    }
+  | {
+      readonly law: 'lee-loos-springer';
+      readonly A1: number;
+      readonly E1: number;
+      readonly A2: number;
+      readonly E2: number;
+      readonly A3: number;
+      readonly E3: number;
+      readonly B: number;
+      readonly switchDegree: number;
+    }
+  | {
+      readonly law: 'two-term';
+      readonly A1: number;
+      readonly E1: number;
+      readonly m1: number;
+      readonly n1: number;
+      readonly A2: number;
+      readonly E2: number;
+      readonly m2: number;
+      readonly n2: number;
+      readonly D: number;
+      readonly alphaC0: number;
+      readonly alphaCT: number;
+    }
+  | {
+      readonly law: 'isoconversional';
+      readonly degree: readonly number[];
+      readonly E: readonly number[];
+      readonly lnAf: readonly number[];
+    };
+
+export const RESIN_STATUSES = ['published', 'recalled', 'fitted', 'illustrative'] as const;
+export type ResinStatus = (typeof RESIN_STATUSES)[number];
+
+export interface Resin {
+  readonly format: 'dwellbook-resin/1';
+  readonly code: string;
+  readonly name: string;
+  readonly source: { readonly citation: string; readonly status: ResinStatus };
+  /** Range of temperature the set was fitted in, °C. */
+  readonly validC?: readonly [number, number];
+  /** Degree of cure at the first scan; part of the set. */
+  readonly initialDegree: number;
+  /** J/(mol K), as the study used it. */
+  readonly gasConstant: number;
+  /** `A` in 1/s, `E` in J/mol. */
+  readonly kinetics: Kinetics;
+  /** Multiplies the whole rate by 1/(1 + exp(C (α − (alphaC0 + alphaCT T)))), T in K. */
+  readonly diffusion?: {
+    readonly law: 'logistic';
+    readonly C: number;
+    readonly alphaC0: number;
+    readonly alphaCT: number;
+  };
+  readonly glassTransition?: {
+    readonly law: 'dibenedetto';
+    readonly tg0C: number;
+    readonly tgInfC: number;
+    readonly lambda: number;
+    readonly method?: string;
+  };
+  readonly gel?: { readonly degree: number };
+  readonly thermal?: { readonly heatOfReaction: number; readonly basis: 'resin' | 'composite' };
+}
