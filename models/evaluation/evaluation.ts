@@ -1,5 +1,5 @@
-import type { PassedOver, Repair } from '../log/readings.ts';
 import type { ChannelRole } from '../log/layout.ts';
+import type { PassedOver, Repair } from '../log/readings.ts';
 
 /** What `check` says (`dwellbook-evaluation/1`): findings and verdict of one run against one issue of a cycle. */
 
