@@ -34,7 +34,8 @@ export interface PressureUnit {
 /** Reads `bar`, `psi abs`, `inHg`, `torr abs` …; throws `unit-unknown` with the name as it was written. */
 export function parsePressureUnit(unit: string): PressureUnit {
   const absolute = unit.endsWith(' abs');
-  const paPerUnit = PA_PER_UNIT[absolute ? unit.slice(0, -4) : unit];
+  const bare = absolute ? unit.slice(0, -4) : unit;
+  const paPerUnit = Object.hasOwn(PA_PER_UNIT, bare) ? PA_PER_UNIT[bare] : undefined;
   if (paPerUnit === undefined) {
     throw new DomainError('unit-unknown', `"${unit}" is not a unit of pressure or vacuum`, { unit });
   }
