@@ -1,0 +1,25 @@
+import * as z from 'zod';
+import type { Resin } from '../../models/cure/resin.ts';
+import type { Cycle } from '../../models/cycle/cycle.ts';
+import type { Evaluation, PartEvaluation } from '../../models/evaluation/evaluation.ts';
+import type { Layout } from '../../models/log/layout.ts';
+import type { Load } from '../../models/run/load.ts';
+
+/**
+ * The documents travel whole. Their own parsers in `models` take them apart and refuse by name; here they are only
+ * known to be objects.
+ */
+function document<T>(id: string, description: string): z.ZodType<T> {
+  return z
+    .custom<T>((value) => typeof value === 'object' && value !== null && !Array.isArray(value), {
+      error: `expected a ${id} document`,
+    })
+    .meta({ id, description });
+}
+
+export const cycleDocument = document<Cycle>('Cycle', 'Cycle document, dwellbook-cycle/1');
+export const layoutDocument = document<Layout>('Layout', 'Log layout document, dwellbook-layout/1');
+export const loadDocument = document<Load>('Load', 'Load document, dwellbook-load/1');
+export const resinDocument = document<Resin>('Resin', 'Resin document, dwellbook-resin/1');
+export const evaluationDocument = document<Evaluation>('Evaluation', 'What check says, dwellbook-evaluation/1');
+export const partEvaluationDocument = document<PartEvaluation>('PartEvaluation', 'One part of an evaluation');

@@ -1,0 +1,139 @@
+/** Where everything is. Builders only: no schema is loaded by who imports this. */
+
+export const WORKSHOP_PATH = '/api/workshop';
+export const NOW_PATH = '/api/now';
+export const RUNS_PATH = '/api/runs';
+export const IMPORTS_PATH = '/api/imports';
+export const RECORDERS_PATH = '/api/recorders';
+export const VESSELS_PATH = '/api/vessels';
+export const CYCLES_PATH = '/api/cycles';
+export const RESINS_PATH = '/api/resins';
+export const PARTS_PATH = '/api/parts';
+export const AUDIT_PATH = '/api/audit';
+export const AUDIT_VERIFY_PATH = '/api/audit/verify';
+export const OPENAPI_PATH = '/api/openapi.json';
+
+/** A query as it is put into an address; what is null or absent is left out. */
+export type Query = Readonly<Record<string, string | number | boolean | null | undefined>>;
+
+export function withQuery(path: string, query: Query): string {
+  const entries = Object.entries(query).flatMap(([key, value]): [string, string][] =>
+    value === undefined || value === null || value === '' ? [] : [[key, String(value)]],
+  );
+  return entries.length === 0 ? path : `${path}?${new URLSearchParams(entries)}`;
+}
+
+export function runsPath(query: Query = {}): string {
+  return withQuery(RUNS_PATH, query);
+}
+
+export function runPath(run: number): string {
+  return `${RUNS_PATH}/${run}`;
+}
+
+/** `from` and `until` are ISO instants, `points` the most a series may hold, `part` the part whose judgement is drawn. */
+export function runChartPath(
+  run: number,
+  query: { from?: string; until?: string; points?: number; part?: string | null } = {},
+): string {
+  return withQuery(`${runPath(run)}/chart`, query);
+}
+
+export function runLoadPath(run: number): string {
+  return `${runPath(run)}/load`;
+}
+
+export function runExclusionsPath(run: number): string {
+  return `${runPath(run)}/exclusions`;
+}
+
+export function runEvaluationsPath(run: number): string {
+  return `${runPath(run)}/evaluations`;
+}
+
+export function runEvaluationPath(run: number, evaluation: number): string {
+  return `${runPath(run)}/evaluations/${evaluation}`;
+}
+
+export function runNotesPath(run: number): string {
+  return `${runPath(run)}/notes`;
+}
+
+export function runReadingsCsvPath(run: number): string {
+  return `${runPath(run)}/readings.csv`;
+}
+
+/** The n-th file of a run, counted from 1: the bytes as they came. */
+export function runFilePath(run: number, file: number): string {
+  return `${runPath(run)}/file/${file}`;
+}
+
+/** Where a file's bytes are posted as `application/octet-stream`. */
+export function uploadPath(name: string, recorder?: string): string {
+  return withQuery(IMPORTS_PATH, { name, recorder });
+}
+
+export function importPath(id: number): string {
+  return `${IMPORTS_PATH}/${id}`;
+}
+
+export function importPreviewPath(id: number): string {
+  return `${importPath(id)}/preview`;
+}
+
+export function importRunPath(id: number): string {
+  return `${importPath(id)}/run`;
+}
+
+export function importDiscardPath(id: number): string {
+  return `${importPath(id)}/discard`;
+}
+
+export function recorderPath(name: string): string {
+  return `${RECORDERS_PATH}/${encodeURIComponent(name)}`;
+}
+
+export function recorderLayoutsPath(name: string): string {
+  return `${recorderPath(name)}/layouts`;
+}
+
+export function cyclePath(code: string, issue: string): string {
+  return `${CYCLES_PATH}/${encodeURIComponent(code)}/${encodeURIComponent(issue)}`;
+}
+
+export function cycleReleasePath(code: string, issue: string): string {
+  return `${cyclePath(code, issue)}/release`;
+}
+
+export function cycleWithdrawPath(code: string, issue: string): string {
+  return `${cyclePath(code, issue)}/withdraw`;
+}
+
+export function resinPath(code: string): string {
+  return `${RESINS_PATH}/${encodeURIComponent(code)}`;
+}
+
+export function partsPath(query: { q?: string; limit?: number } = {}): string {
+  return withQuery(PARTS_PATH, query);
+}
+
+export function partPath(serial: string): string {
+  return `${PARTS_PATH}/${encodeURIComponent(serial)}`;
+}
+
+export function partResultsPath(serial: string): string {
+  return `${partPath(serial)}/results`;
+}
+
+export function findPath(code: string): string {
+  return withQuery('/api/find', { code });
+}
+
+export function auditPath(query: { before?: number; limit?: number; subject?: string } = {}): string {
+  return withQuery(AUDIT_PATH, query);
+}
+
+/** The help page of a problem's `type`. */
+export function problemPath(code: string): string {
+  return `/problems/${code}`;
+}
