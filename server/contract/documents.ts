@@ -23,3 +23,5 @@ export const loadDocument = document<Load>('Load', 'Load document, dwellbook-loa
 export const resinDocument = document<Resin>('Resin', 'Resin document, dwellbook-resin/1');
 export const evaluationDocument = document<Evaluation>('Evaluation', 'What check says, dwellbook-evaluation/1');
 export const partEvaluationDocument = document<PartEvaluation>('PartEvaluation', 'One part of an evaluation');
+/** Plain geometry, made and typed by `models/chart`. */
+export const chartDocument = document<object>('Chart', 'What is to be drawn of a run, as plain geometry');
