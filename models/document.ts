@@ -92,7 +92,7 @@ export function number(range: NumberRange = {}): Read<number> {
 }
 
 /** One of a list of texts. */
-export function oneOf<T extends string>(values: readonly T[]): Read<T> {
+export function oneOf<const T extends string>(values: readonly T[]): Read<T> {
   return (value, path) =>
     values.includes(value as T) ? (value as T) : refuse(path, `one of ${values.map(quoted).join(', ')}`, value);
 }
