@@ -1,0 +1,19 @@
+import type { Cycle, WindowLimit } from './cycle.ts';
+import { eventWords, vacuumWords } from './words-of-event.ts';
+import { bandWords } from './words-of-figures.ts';
+import { forgivenessSentence } from './words-of-forgiveness.ts';
+
+/** A pressure or vacuum window in sentences. */
+export function windowSentences(cycle: Cycle, window: WindowLimit): string[] {
+  const isVacuum = window.quantity === 'vacuum';
+  const unit = (isVacuum ? cycle.units.vacuum : cycle.units.pressure) ?? '';
+  const what = isVacuum ? 'The vacuum at the bag' : 'The vessel pressure';
+  const sentences = [
+    `${what} is ${bandWords(window, isVacuum ? vacuumWords(cycle) : unit)}, ends included.`,
+    `From: ${eventWords(cycle, window.from)}. Until: ${eventWords(cycle, window.until)}.`,
+  ];
+  if (window.forgive !== undefined) {
+    sentences.push(forgivenessSentence('excursions', window.forgive, unit));
+  }
+  return sentences;
+}
