@@ -185,9 +185,28 @@ describe('parseCycle', () => {
         'stages[3].time': undefined,
         'stages[3].clock': undefined,
         'windows[0].from': { at: 'opens', stage: 'dwell 2' },
+        spread: undefined,
       },
       'document-missing-key',
       'stages[3].clock',
+    ],
+    [
+      'a pressure for the gel without its unit',
+      { 'units.pressure': undefined, windows: [] },
+      'document-missing-key',
+      'units.pressure',
+    ],
+    [
+      'a leak test without the unit of vacuum',
+      { 'units.vacuum': undefined, windows: [] },
+      'document-missing-key',
+      'units.vacuum',
+    ],
+    [
+      'an absolute pressure below zero',
+      { 'units.pressure': 'bar abs', 'windows[1].atLeast': -1 },
+      'document-wrong-value',
+      'windows[1].atLeast',
     ],
     [
       'a spread by openings of a dwell without a clock',
@@ -219,6 +238,12 @@ describe('parseCycle', () => {
     expect(code).toBe('cycle-stages-out-of-order');
     expect(key).toBe('stages[2]');
     expect(message).toContain('"dwell 1" and "dwell 2"');
+  });
+
+  it('refuses two dwells of one temperature with no stage between them', () => {
+    const { stages } = exampleCycle();
+    const document = { ...exampleCycle(), stages: [stages[1], { ...stages[1], name: 'dwell 1b' }] };
+    expect(refusal(document)).toMatchObject({ code: 'cycle-stages-out-of-order', key: 'stages[1]' });
   });
 
   it('refuses a hotter dwell reached only by cooling', () => {
