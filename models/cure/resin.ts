@@ -44,14 +44,29 @@ export type Kinetics =
       readonly lnAf: readonly number[];
     };
 
+export type NthOrder = Extract<Kinetics, { law: 'nth-order' }>;
+export type Autocatalytic = Extract<Kinetics, { law: 'autocatalytic' }>;
+export type KamalSourour = Extract<Kinetics, { law: 'kamal-sourour' }>;
+export type LeeLoosSpringer = Extract<Kinetics, { law: 'lee-loos-springer' }>;
+export type TwoTerm = Extract<Kinetics, { law: 'two-term' }>;
+export type Isoconversional = Extract<Kinetics, { law: 'isoconversional' }>;
+
 export const RESIN_STATUSES = ['published', 'recalled', 'fitted', 'illustrative'] as const;
 export type ResinStatus = (typeof RESIN_STATUSES)[number];
+
+export type Diffusion = NonNullable<Resin['diffusion']>;
+export type GlassTransition = NonNullable<Resin['glassTransition']>;
 
 export interface Resin {
   readonly format: 'dwellbook-resin/1';
   readonly code: string;
   readonly name: string;
-  readonly source: { readonly citation: string; readonly status: ResinStatus };
+  readonly source: {
+    readonly citation: string;
+    readonly status: ResinStatus;
+    /** Where a figure looks wrong and is not: in words, why it stands as the source prints it. Silences the questions. */
+    readonly confirmed?: string;
+  };
   /** Range of temperature the set was fitted in, °C. */
   readonly validC?: readonly [number, number];
   /** Degree of cure at the first scan; part of the set. */

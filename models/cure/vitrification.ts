@@ -1,0 +1,86 @@
+import { findRoot } from '../numerics/find-root.ts';
+import type { CureStepper } from './cure-stepper.ts';
+import { glassTransitionK } from './glass-transition.ts';
+import { RecentTemperatures } from './recent-temperatures.ts';
+import type { GlassTransition } from './resin.ts';
+
+/** Temperature is looked at over the last 10 minutes, s. */
+const LOOK_BACK_S = 600;
+/** Its mean may fall by less than 0.1 °C/min, in K/s. */
+const FALL_K_PER_S = 0.1 / 60;
+
+/**
+ * Looks out for vitrification: the first moment at which Tg(α) ≥ T while the mean of T over the last 10 minutes falls
+ * by less than 0.1 °C/min.
+ *
+ * The running mean of T over a span s changes at the rate (T(t) − T(t − s))/s, so the second condition reads
+ * T(t − 10 min) − T(t) < 1 °C; before 10 minutes have passed, the span since the first scan is taken. Without it every
+ * resin would be said to vitrify on cooling. The moment is found as the root of Tg − T or of the fall, whichever comes
+ * to hold last, each trial degree being integrated anew from the start of its step.
+ */
+export class VitrificationWatch {
+  readonly #set: GlassTransition;
+  readonly #firstS: number;
+  #recent: RecentTemperatures;
+
+  constructor(set: GlassTransition, firstS: number, firstK: number) {
+    this.#set = set;
+    this.#firstS = firstS;
+    this.#recent = new RecentTemperatures(LOOK_BACK_S);
+    this.#recent.push(firstS, firstK);
+  }
+
+  /** True where the very first scan finds the resin vitrified. */
+  holdsAtFirst(alpha: number, temperatureK: number): boolean {
+    return glassTransitionK(alpha, this.#set) >= temperatureK;
+  }
+
+  /** Takes note of a scan; call before stepping towards it. */
+  accept(timeS: number, temperatureK: number): void {
+    this.#recent.push(timeS, temperatureK);
+  }
+
+  /** Forgets what no later moment needs; call when the stepping has reached `timeS`. */
+  passed(timeS: number): void {
+    this.#recent.forgetBefore(timeS);
+  }
+
+  /** The moment of vitrification, in s from the piece's start `startS`, if it lies inside the step last taken. */
+  within(step: CureStepper, startS: number): number | null {
+    const coldest = Math.min(step.temperatureAt(step.fromS), step.temperatureAt(step.toS));
+    if (glassTransitionK(step.toAlpha, this.#set) < coldest) return null;
+    const excess = (elapsedS: number) =>
+      glassTransitionK(step.alphaAt(elapsedS), this.#set) - step.temperatureAt(elapsedS);
+    const fromS = startS + step.fromS;
+    const toS = startS + step.toS;
+    const bends = this.#recent.scansBetween(fromS - LOOK_BACK_S, toS - LOOK_BACK_S).map((s) => s + LOOK_BACK_S);
+    const ends = [fromS, ...bends, toS];
+    for (let i = 1; i < ends.length; i += 1) {
+      const [a, b] = this.#steady(ends[i - 1]! - startS, ends[i]! - startS, step, startS);
+      if (a === null) continue;
+      if (excess(a) >= 0) return a;
+      if (excess(b) >= 0) return findRoot(excess, a, b, 1e-9 * (step.toS - step.fromS));
+    }
+    return null;
+  }
+
+  copy(): VitrificationWatch {
+    const copied = new VitrificationWatch(this.#set, this.#firstS, 0);
+    copied.#recent = this.#recent.copy();
+    return copied;
+  }
+
+  /** The part of [a, b] (no bend inside) over which the temperature is not falling, as far as it is one stretch. */
+  #steady(a: number, b: number, step: CureStepper, startS: number): [number, number] | [null, null] {
+    const margin = (elapsedS: number) => {
+      const sinceS = Math.min(LOOK_BACK_S, startS + elapsedS - this.#firstS);
+      const before = this.#recent.at(startS + elapsedS - sinceS);
+      return step.temperatureAt(elapsedS) - before + FALL_K_PER_S * sinceS;
+    };
+    const [atA, atB] = [margin(a), margin(b)];
+    if (atA <= 0 && atB <= 0) return [null, null];
+    const turn = a + ((b - a) * atA) / (atA - atB);
+    if (atA <= 0) return [turn, b];
+    return atB <= 0 ? [a, turn] : [a, b];
+  }
+}
