@@ -1,7 +1,7 @@
 import * as z from 'zod';
-import { FAULT_KINDS } from '../../models/evaluation/evaluation.ts';
 import { CHANNEL_ROLES } from '../../models/log/layout.ts';
 import { PASSED_OVER_KINDS, REPAIR_KINDS } from '../../models/log/readings.ts';
+import { FAULT_KINDS } from '../../models/run/fault-kinds.ts';
 import { cycleDocument, evaluationDocument, layoutDocument, loadDocument, resinDocument } from './documents.ts';
 import { countInQuery, deed, instant, name, reason, runNumber, sha256, verdict } from './scalars.ts';
 

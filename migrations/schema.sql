@@ -1,0 +1,431 @@
+CREATE TABLE audit (
+  n               INTEGER PRIMARY KEY CHECK (n > 0),
+  at              TEXT NOT NULL,
+  by              TEXT NOT NULL CHECK (by <> ''),
+  verb            TEXT NOT NULL CHECK (verb <> ''),
+  subject         TEXT NOT NULL CHECK (subject <> ''),
+  why             TEXT,
+  details         TEXT NOT NULL CHECK (json_valid(details)),
+  previous_sha256 TEXT NOT NULL CHECK (length(previous_sha256) = 64),
+  sha256          TEXT NOT NULL UNIQUE CHECK (length(sha256) = 64)
+) STRICT;
+
+CREATE INDEX audit_by_subject ON audit (subject, n);
+
+CREATE TRIGGER audit_grows_by_one BEFORE INSERT ON audit
+WHEN NEW.n <> (SELECT coalesce(max(n), 0) + 1 FROM audit)
+BEGIN SELECT RAISE(ABORT, 'the audit trail grows by one line at its end'); END;
+
+CREATE TRIGGER audit_is_never_deleted BEFORE DELETE ON audit
+BEGIN SELECT RAISE(ABORT, 'the audit trail is never deleted from'); END;
+
+CREATE TRIGGER audit_is_never_updated BEFORE UPDATE ON audit
+BEGIN SELECT RAISE(ABORT, 'the audit trail is never updated'); END;
+
+CREATE TABLE cycle_statuses (
+  id       INTEGER PRIMARY KEY,
+  cycle_id INTEGER NOT NULL REFERENCES cycles (id),
+  status   TEXT NOT NULL CHECK (status IN ('draft', 'released', 'withdrawn')),
+  reason   TEXT,
+  at       TEXT NOT NULL,
+  by       TEXT NOT NULL CHECK (by <> '')
+) STRICT;
+
+CREATE INDEX cycle_statuses_by_cycle ON cycle_statuses (cycle_id, id);
+
+CREATE TRIGGER cycle_statuses_are_never_deleted BEFORE DELETE ON cycle_statuses
+BEGIN SELECT RAISE(ABORT, 'the history of a cycle is never deleted'); END;
+
+CREATE TRIGGER cycle_statuses_are_never_updated BEFORE UPDATE ON cycle_statuses
+BEGIN SELECT RAISE(ABORT, 'the history of a cycle is never updated'); END;
+
+CREATE TABLE cycles (
+  id              INTEGER PRIMARY KEY,
+  code            TEXT NOT NULL CHECK (code <> ''),
+  issue           TEXT NOT NULL CHECK (issue <> ''),
+  title           TEXT NOT NULL,
+  document_sha256 TEXT NOT NULL REFERENCES documents (sha256),
+  -- Code of the resin set it estimates with.
+  resin           TEXT,
+  at              TEXT NOT NULL,
+  by              TEXT NOT NULL CHECK (by <> ''),
+  UNIQUE (code, issue)
+) STRICT;
+
+CREATE TRIGGER cycles_are_never_deleted BEFORE DELETE ON cycles
+BEGIN SELECT RAISE(ABORT, 'a cycle is never deleted'); END;
+
+CREATE TRIGGER released_cycles_are_frozen BEFORE UPDATE ON cycles
+WHEN EXISTS (SELECT 1 FROM cycle_statuses WHERE cycle_id = OLD.id AND status <> 'draft')
+BEGIN SELECT RAISE(ABORT, 'a released issue is frozen'); END;
+
+CREATE TABLE documents (
+  sha256 TEXT PRIMARY KEY CHECK (length(sha256) = 64),
+  format TEXT NOT NULL CHECK (format <> ''),
+  text   TEXT NOT NULL CHECK (json_valid(text))
+) STRICT;
+
+CREATE TRIGGER documents_are_never_deleted BEFORE DELETE ON documents
+BEGIN SELECT RAISE(ABORT, 'a document is never deleted'); END;
+
+CREATE TRIGGER documents_are_never_updated BEFORE UPDATE ON documents
+BEGIN SELECT RAISE(ABORT, 'a document is never updated'); END;
+
+CREATE TABLE evaluation_parts (
+  evaluation_id INTEGER NOT NULL REFERENCES evaluations (id),
+  part_id       INTEGER NOT NULL REFERENCES parts (id),
+  verdict       TEXT NOT NULL CHECK (verdict IN ('conforms', 'does-not-conform', 'cannot-tell', 'pending')),
+  PRIMARY KEY (evaluation_id, part_id)
+) STRICT, WITHOUT ROWID;
+
+CREATE INDEX evaluation_parts_by_part ON evaluation_parts (part_id, evaluation_id);
+
+CREATE TRIGGER evaluation_parts_are_never_deleted BEFORE DELETE ON evaluation_parts
+BEGIN SELECT RAISE(ABORT, 'an evaluation is never deleted'); END;
+
+CREATE TRIGGER evaluation_parts_are_never_updated BEFORE UPDATE ON evaluation_parts
+BEGIN SELECT RAISE(ABORT, 'an evaluation is never updated'); END;
+
+CREATE TABLE evaluations (
+  id               INTEGER PRIMARY KEY,
+  run_id           INTEGER NOT NULL REFERENCES runs (id),
+  because          TEXT NOT NULL CHECK (because <> ''),
+  engine           TEXT NOT NULL CHECK (engine <> ''),
+  verdict          TEXT NOT NULL CHECK (verdict IN ('conforms', 'does-not-conform', 'cannot-tell', 'pending')),
+  undecided        INTEGER NOT NULL CHECK (undecided >= 0),
+  not_met          TEXT NOT NULL CHECK (json_valid(not_met)),
+  cannot_tell      TEXT NOT NULL CHECK (json_valid(cannot_tell)),
+  readings_sha256  TEXT NOT NULL CHECK (length(readings_sha256) = 64),
+  layout_sha256    TEXT NOT NULL CHECK (length(layout_sha256) = 64),
+  load_sha256      TEXT NOT NULL REFERENCES documents (sha256),
+  cycle_sha256     TEXT NOT NULL REFERENCES documents (sha256),
+  resin_sha256     TEXT REFERENCES documents (sha256),
+  decisions_sha256 TEXT NOT NULL REFERENCES documents (sha256),
+  sha256           TEXT NOT NULL CHECK (length(sha256) = 64),
+  packed           BLOB NOT NULL,
+  at               TEXT NOT NULL,
+  by               TEXT NOT NULL CHECK (by <> '')
+) STRICT;
+
+CREATE INDEX evaluations_by_run ON evaluations (run_id, id);
+
+CREATE TRIGGER evaluations_are_never_deleted BEFORE DELETE ON evaluations
+BEGIN SELECT RAISE(ABORT, 'an evaluation is never deleted'); END;
+
+CREATE TRIGGER evaluations_are_never_updated BEFORE UPDATE ON evaluations
+BEGIN SELECT RAISE(ABORT, 'an evaluation is never updated'); END;
+
+CREATE TABLE file_chunks (
+  id      INTEGER PRIMARY KEY,
+  file_id INTEGER NOT NULL REFERENCES files (id),
+  n       INTEGER NOT NULL CHECK (n >= 0),
+  bytes   INTEGER NOT NULL CHECK (bytes > 0),
+  packed  BLOB NOT NULL,
+  UNIQUE (file_id, n)
+) STRICT;
+
+CREATE TRIGGER file_chunks_are_never_deleted BEFORE DELETE ON file_chunks
+BEGIN SELECT RAISE(ABORT, 'a file is kept as it came'); END;
+
+CREATE TRIGGER file_chunks_are_never_updated BEFORE UPDATE ON file_chunks
+BEGIN SELECT RAISE(ABORT, 'a file is kept as it came'); END;
+
+CREATE TABLE files (
+  id     INTEGER PRIMARY KEY,
+  sha256 TEXT NOT NULL UNIQUE CHECK (length(sha256) = 64),
+  bytes  INTEGER NOT NULL CHECK (bytes >= 0)
+) STRICT;
+
+CREATE TRIGGER files_are_never_deleted BEFORE DELETE ON files
+BEGIN SELECT RAISE(ABORT, 'a file is kept as it came'); END;
+
+CREATE TRIGGER files_are_never_updated BEFORE UPDATE ON files
+BEGIN SELECT RAISE(ABORT, 'a file is kept as it came'); END;
+
+CREATE TABLE imports (
+  id          INTEGER PRIMARY KEY,
+  sha256      TEXT NOT NULL CHECK (length(sha256) = 64),
+  bytes       INTEGER NOT NULL CHECK (bytes >= 0),
+  -- NULL where the bytes are no log at all and are not kept.
+  file_id     INTEGER REFERENCES files (id),
+  name        TEXT NOT NULL CHECK (name <> ''),
+  origin      TEXT NOT NULL CHECK (origin IN ('upload', 'watched-folder', 'command')),
+  recorder_id INTEGER REFERENCES recorders (id),
+  state       TEXT NOT NULL CHECK (state IN ('waiting', 'recorded', 'discarded')),
+  run_id      INTEGER REFERENCES runs (id),
+  -- Why it could not become a run by itself.
+  refusal     TEXT CHECK (json_valid(refusal)),
+  at          TEXT NOT NULL,
+  by          TEXT NOT NULL CHECK (by <> ''),
+  CHECK ((state = 'recorded') = (run_id IS NOT NULL)),
+  CHECK (file_id IS NOT NULL OR refusal IS NOT NULL)
+) STRICT;
+
+CREATE INDEX imports_by_hash ON imports (sha256);
+
+CREATE INDEX imports_waiting ON imports (state, id);
+
+CREATE TRIGGER imports_are_never_deleted BEFORE DELETE ON imports
+BEGIN SELECT RAISE(ABORT, 'an import is never deleted'); END;
+
+CREATE TABLE load_parts (
+  load_id  INTEGER NOT NULL REFERENCES loads (id),
+  part_id  INTEGER NOT NULL REFERENCES parts (id),
+  n        INTEGER NOT NULL CHECK (n >= 0),
+  quantity INTEGER NOT NULL CHECK (quantity > 0),
+  PRIMARY KEY (load_id, part_id)
+) STRICT, WITHOUT ROWID;
+
+CREATE INDEX load_parts_by_part ON load_parts (part_id, load_id);
+
+CREATE TRIGGER load_parts_are_never_deleted BEFORE DELETE ON load_parts
+BEGIN SELECT RAISE(ABORT, 'a load is never deleted'); END;
+
+CREATE TRIGGER load_parts_are_never_updated BEFORE UPDATE ON load_parts
+BEGIN SELECT RAISE(ABORT, 'a load is never updated'); END;
+
+CREATE TABLE loads (
+  id              INTEGER PRIMARY KEY,
+  run_id          INTEGER NOT NULL REFERENCES runs (id),
+  document_sha256 TEXT NOT NULL REFERENCES documents (sha256),
+  work_order      TEXT,
+  cycle_id        INTEGER REFERENCES cycles (id),
+  reason          TEXT,
+  at              TEXT NOT NULL,
+  by              TEXT NOT NULL CHECK (by <> '')
+) STRICT;
+
+CREATE INDEX loads_by_cycle ON loads (cycle_id);
+
+CREATE INDEX loads_by_run ON loads (run_id, id);
+
+CREATE INDEX loads_by_work_order ON loads (work_order);
+
+CREATE TRIGGER loads_are_never_deleted BEFORE DELETE ON loads
+BEGIN SELECT RAISE(ABORT, 'a load is never deleted'); END;
+
+CREATE TRIGGER loads_are_never_updated BEFORE UPDATE ON loads
+BEGIN SELECT RAISE(ABORT, 'a load is never updated'); END;
+
+CREATE TABLE migrations (
+  name   TEXT PRIMARY KEY,
+  sha256 TEXT NOT NULL CHECK (length(sha256) = 64),
+  at     TEXT NOT NULL
+) STRICT;
+
+CREATE TABLE part_particulars (
+  id            INTEGER PRIMARY KEY,
+  part_id       INTEGER NOT NULL REFERENCES parts (id),
+  title         TEXT,
+  drawing       TEXT,
+  drawing_issue TEXT,
+  tool          TEXT,
+  at            TEXT NOT NULL,
+  by            TEXT NOT NULL CHECK (by <> '')
+) STRICT;
+
+CREATE INDEX part_particulars_by_part ON part_particulars (part_id, id);
+
+CREATE TRIGGER part_particulars_are_never_deleted BEFORE DELETE ON part_particulars
+BEGIN SELECT RAISE(ABORT, 'particulars are never deleted'); END;
+
+CREATE TRIGGER part_particulars_are_never_updated BEFORE UPDATE ON part_particulars
+BEGIN SELECT RAISE(ABORT, 'particulars are never updated'); END;
+
+CREATE TABLE part_results (
+  id        INTEGER PRIMARY KEY,
+  part_id   INTEGER NOT NULL REFERENCES parts (id),
+  tested_at TEXT NOT NULL,
+  test      TEXT NOT NULL CHECK (test <> ''),
+  outcome   TEXT NOT NULL CHECK (outcome IN ('passed', 'failed', 'noted')),
+  figure    REAL,
+  unit      TEXT,
+  text      TEXT NOT NULL,
+  at        TEXT NOT NULL,
+  by        TEXT NOT NULL CHECK (by <> ''),
+  CHECK (figure IS NULL OR unit IS NOT NULL)
+) STRICT;
+
+CREATE INDEX part_results_by_part ON part_results (part_id, id);
+
+CREATE TRIGGER part_results_are_never_deleted BEFORE DELETE ON part_results
+BEGIN SELECT RAISE(ABORT, 'a test result is never deleted'); END;
+
+CREATE TRIGGER part_results_are_never_updated BEFORE UPDATE ON part_results
+BEGIN SELECT RAISE(ABORT, 'a test result is never updated'); END;
+
+CREATE TABLE parts (
+  id     INTEGER PRIMARY KEY,
+  serial TEXT NOT NULL UNIQUE CHECK (serial <> '')
+) STRICT;
+
+CREATE TABLE reading_blocks (
+  id         INTEGER PRIMARY KEY,
+  source_id  INTEGER NOT NULL REFERENCES run_sources (id),
+  column_n   INTEGER NOT NULL CHECK (column_n >= 0),
+  first_scan INTEGER NOT NULL CHECK (first_scan >= 0),
+  scans      INTEGER NOT NULL CHECK (scans > 0),
+  packed     BLOB NOT NULL,
+  UNIQUE (source_id, column_n, first_scan)
+) STRICT;
+
+CREATE TRIGGER reading_blocks_are_never_deleted BEFORE DELETE ON reading_blocks
+BEGIN SELECT RAISE(ABORT, 'readings are never deleted'); END;
+
+CREATE TRIGGER reading_blocks_are_never_updated BEFORE UPDATE ON reading_blocks
+BEGIN SELECT RAISE(ABORT, 'readings are never updated'); END;
+
+CREATE TABLE recorder_layouts (
+  id              INTEGER PRIMARY KEY,
+  recorder_id     INTEGER NOT NULL REFERENCES recorders (id),
+  document_sha256 TEXT NOT NULL REFERENCES documents (sha256),
+  at              TEXT NOT NULL,
+  by              TEXT NOT NULL CHECK (by <> '')
+) STRICT;
+
+CREATE INDEX recorder_layouts_by_recorder ON recorder_layouts (recorder_id, id);
+
+CREATE TRIGGER recorder_layouts_are_never_deleted BEFORE DELETE ON recorder_layouts
+BEGIN SELECT RAISE(ABORT, 'a kept layout is never deleted'); END;
+
+CREATE TRIGGER recorder_layouts_are_never_updated BEFORE UPDATE ON recorder_layouts
+BEGIN SELECT RAISE(ABORT, 'a kept layout is never updated'); END;
+
+CREATE TABLE recorders (
+  id        INTEGER PRIMARY KEY,
+  name      TEXT NOT NULL UNIQUE CHECK (name <> ''),
+  vessel_id INTEGER REFERENCES vessels (id)
+) STRICT;
+
+CREATE TABLE resins (
+  id              INTEGER PRIMARY KEY,
+  code            TEXT NOT NULL UNIQUE CHECK (code <> ''),
+  name            TEXT NOT NULL,
+  status          TEXT NOT NULL CHECK (status IN ('published', 'recalled', 'fitted', 'illustrative')),
+  document_sha256 TEXT NOT NULL REFERENCES documents (sha256),
+  at              TEXT NOT NULL,
+  by              TEXT NOT NULL CHECK (by <> '')
+) STRICT;
+
+CREATE TRIGGER resins_are_never_deleted BEFORE DELETE ON resins
+BEGIN SELECT RAISE(ABORT, 'a resin set is never deleted'); END;
+
+CREATE TRIGGER resins_are_never_updated BEFORE UPDATE ON resins
+BEGIN SELECT RAISE(ABORT, 'a resin set is never updated'); END;
+
+CREATE TABLE run_notes (
+  id     INTEGER PRIMARY KEY,
+  run_id INTEGER NOT NULL REFERENCES runs (id),
+  -- The instant of the run it is about.
+  about  TEXT NOT NULL,
+  text   TEXT NOT NULL CHECK (text <> ''),
+  at     TEXT NOT NULL,
+  by     TEXT NOT NULL CHECK (by <> '')
+) STRICT;
+
+CREATE INDEX run_notes_by_run ON run_notes (run_id, id);
+
+CREATE TRIGGER run_notes_are_never_deleted BEFORE DELETE ON run_notes
+BEGIN SELECT RAISE(ABORT, 'a note is never deleted'); END;
+
+CREATE TRIGGER run_notes_are_never_updated BEFORE UPDATE ON run_notes
+BEGIN SELECT RAISE(ABORT, 'a note is never updated'); END;
+
+CREATE TABLE run_sources (
+  id              INTEGER PRIMARY KEY,
+  run_id          INTEGER NOT NULL REFERENCES runs (id),
+  n               INTEGER NOT NULL CHECK (n > 0),
+  recorder_id     INTEGER REFERENCES recorders (id),
+  -- The source whose file this one reads again, by another layout.
+  replaces_id     INTEGER UNIQUE REFERENCES run_sources (id),
+  layout_sha256   TEXT NOT NULL REFERENCES documents (sha256),
+  -- Over the canonical form of its scans in order; does not depend on how they are cut into blocks.
+  chain_sha256    TEXT NOT NULL CHECK (length(chain_sha256) = 64),
+  scans           INTEGER NOT NULL CHECK (scans > 0),
+  from_ms         REAL NOT NULL,
+  until_ms        REAL NOT NULL,
+  repairs         TEXT NOT NULL CHECK (json_valid(repairs)),
+  passed_over     TEXT NOT NULL CHECK (json_valid(passed_over)),
+  at              TEXT NOT NULL,
+  by              TEXT NOT NULL CHECK (by <> ''),
+  UNIQUE (run_id, n),
+  CHECK (until_ms >= from_ms)
+) STRICT;
+
+CREATE TRIGGER run_sources_are_never_deleted BEFORE DELETE ON run_sources
+BEGIN SELECT RAISE(ABORT, 'readings are never deleted'); END;
+
+CREATE TRIGGER run_sources_are_never_updated BEFORE UPDATE ON run_sources
+BEGIN SELECT RAISE(ABORT, 'readings are never updated'); END;
+
+CREATE TABLE runs (
+  id        INTEGER PRIMARY KEY AUTOINCREMENT,
+  vessel_id INTEGER REFERENCES vessels (id),
+  -- First and last scan of all its sources, ms since 1970-01-01T00:00:00Z.
+  from_ms   REAL NOT NULL,
+  until_ms  REAL NOT NULL,
+  at        TEXT NOT NULL,
+  by        TEXT NOT NULL CHECK (by <> ''),
+  CHECK (until_ms >= from_ms)
+) STRICT;
+
+CREATE INDEX runs_by_time ON runs (from_ms);
+
+CREATE INDEX runs_by_vessel ON runs (vessel_id, from_ms);
+
+CREATE TRIGGER runs_are_never_deleted BEFORE DELETE ON runs
+BEGIN SELECT RAISE(ABORT, 'a run is never deleted'); END;
+
+CREATE TABLE sensor_decisions (
+  id       INTEGER PRIMARY KEY,
+  run_id   INTEGER NOT NULL REFERENCES runs (id),
+  channel  TEXT NOT NULL CHECK (channel <> ''),
+  decision TEXT NOT NULL CHECK (decision IN ('exclude', 'keep')),
+  kind     TEXT,
+  since    TEXT,
+  reason   TEXT NOT NULL CHECK (reason <> ''),
+  at       TEXT NOT NULL,
+  by       TEXT NOT NULL CHECK (by <> ''),
+  CHECK ((decision = 'exclude') = (since IS NOT NULL))
+) STRICT;
+
+CREATE INDEX sensor_decisions_by_run ON sensor_decisions (run_id, id);
+
+CREATE TRIGGER sensor_decisions_are_never_deleted BEFORE DELETE ON sensor_decisions
+BEGIN SELECT RAISE(ABORT, 'a decision is never deleted'); END;
+
+CREATE TRIGGER sensor_decisions_are_never_updated BEFORE UPDATE ON sensor_decisions
+BEGIN SELECT RAISE(ABORT, 'a decision is never updated'); END;
+
+CREATE TABLE source_files (
+  source_id INTEGER NOT NULL REFERENCES run_sources (id),
+  n         INTEGER NOT NULL CHECK (n >= 0),
+  file_id   INTEGER NOT NULL REFERENCES files (id),
+  name      TEXT NOT NULL CHECK (name <> ''),
+  PRIMARY KEY (source_id, n)
+) STRICT, WITHOUT ROWID;
+
+CREATE INDEX source_files_by_file ON source_files (file_id);
+
+CREATE TRIGGER source_files_are_never_deleted BEFORE DELETE ON source_files
+BEGIN SELECT RAISE(ABORT, 'readings are never deleted'); END;
+
+CREATE TRIGGER source_files_are_never_updated BEFORE UPDATE ON source_files
+BEGIN SELECT RAISE(ABORT, 'readings are never updated'); END;
+
+CREATE TABLE vessels (
+  id   INTEGER PRIMARY KEY,
+  name TEXT NOT NULL UNIQUE CHECK (name <> ''),
+  kind TEXT NOT NULL CHECK (kind IN ('autoclave', 'oven', 'press', 'heated-tool', 'heat-blanket'))
+) STRICT;
+
+CREATE TABLE workshop (
+  id               INTEGER PRIMARY KEY CHECK (id = 1),
+  name             TEXT NOT NULL CHECK (name <> ''),
+  zone             TEXT NOT NULL CHECK (zone <> ''),
+  temperature_unit TEXT NOT NULL CHECK (temperature_unit IN ('°C', '°F')),
+  pressure_unit    TEXT NOT NULL CHECK (pressure_unit IN ('bar', 'kPa', 'MPa', 'psi')),
+  vacuum_unit      TEXT NOT NULL CHECK (vacuum_unit IN ('bar', 'kPa', 'mbar', 'inHg', 'mmHg')),
+  -- The sentence every page shows where all is invented; NULL in a real workshop.
+  practice         TEXT
+) STRICT;

@@ -1,0 +1,25 @@
+import { createHash } from 'node:crypto';
+
+/**
+ * The canonical form of a JSON document: keys in code-unit order at every level, no white space, numbers and strings
+ * as ECMAScript writes them. What is equal as data has equal bytes, however it was laid out.
+ *
+ * Source: RFC 8785, JSON Canonicalization Scheme.
+ */
+export function canonicalJson(value: unknown): string {
+  if (Array.isArray(value)) return `[${value.map((item) => canonicalJson(item ?? null)).join(',')}]`;
+  if (typeof value !== 'object' || value === null) return JSON.stringify(value) ?? 'null';
+  const members = Object.entries(value)
+    .filter(([, member]) => member !== undefined)
+    .sort(([a], [b]) => (a < b ? -1 : 1))
+    .map(([key, member]) => `${JSON.stringify(key)}:${canonicalJson(member)}`);
+  return `{${members.join(',')}}`;
+}
+
+export function sha256OfDocument(document: unknown): string {
+  return sha256Of(canonicalJson(document));
+}
+
+export function sha256Of(bytes: string | Uint8Array): string {
+  return createHash('sha256').update(bytes).digest('hex');
+}

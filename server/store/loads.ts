@@ -1,0 +1,55 @@
+import type { Load } from '../../models/run/load.ts';
+import type { Db } from './database.ts';
+import { keepDocument, readDocument } from './documents.ts';
+import { keepPart } from './parts.ts';
+
+export interface LoadRow {
+  readonly id: number;
+  readonly sha256: string;
+  readonly document: Load;
+  readonly cycle: { readonly code: string; readonly issue: string } | null;
+  readonly at: string;
+  readonly by: string;
+}
+
+/** The load that holds for a run: the latest. */
+export function findLoad(db: Db, run: number): LoadRow | null {
+  const row = db
+    .prepare<
+      [number],
+      { id: number; sha256: string; code: string | null; issue: string | null; at: string; by: string }
+    >(
+      `SELECT loads.id, loads.document_sha256 AS sha256, code, issue, loads.at, loads.by
+       FROM loads LEFT JOIN cycles ON cycles.id = cycle_id WHERE run_id = ? ORDER BY loads.id DESC LIMIT 1`,
+    )
+    .get(run);
+  if (row === undefined) return null;
+  const { id, sha256, code, issue, at, by } = row;
+  const cycle = code === null || issue === null ? null : { code, issue };
+  return { id, sha256, document: readDocument<Load>(db, sha256), cycle, at, by };
+}
+
+export interface NewLoad {
+  readonly run: number;
+  readonly document: Load;
+  readonly cycleId: number | null;
+  readonly reason: string | null;
+  readonly at: string;
+  readonly by: string;
+}
+
+/** Writes a load and makes the parts it names that are not known yet. */
+export function insertLoad(db: Db, { run, document, cycleId, reason, at, by }: NewLoad): string {
+  const sha256 = keepDocument(db, document);
+  const { lastInsertRowid } = db
+    .prepare(
+      `INSERT INTO loads (run_id, document_sha256, work_order, cycle_id, reason, at, by)
+       VALUES (@run, @sha256, @workOrder, @cycleId, @reason, @at, @by)`,
+    )
+    .run({ run, sha256, workOrder: document.workOrder ?? null, cycleId, reason, at, by });
+  const insert = db.prepare('INSERT INTO load_parts (load_id, part_id, n, quantity) VALUES (?, ?, ?, ?)');
+  document.parts.forEach(({ part, quantity = 1 }, n) => {
+    insert.run(lastInsertRowid, keepPart(db, part), n, quantity);
+  });
+  return sha256;
+}

@@ -1,0 +1,128 @@
+import { DomainError } from '../../models/errors.ts';
+import type { PartLine, PartResult, Parts } from '../contract/parts.ts';
+import type { Particulars } from '../contract/runs.ts';
+import type { Db } from './database.ts';
+import { isoFromMs } from './instants.ts';
+
+/** The row of a part, made where it is new. */
+export function keepPart(db: Db, serial: string): number {
+  const known = db.prepare<[string], number>('SELECT id FROM parts WHERE serial = ?').pluck().get(serial);
+  return known ?? Number(db.prepare('INSERT INTO parts (serial) VALUES (?)').run(serial).lastInsertRowid);
+}
+
+/** The row of a part that must be there. */
+export function requirePart(db: Db, serial: string): number {
+  const id = db.prepare<[string], number>('SELECT id FROM parts WHERE serial = ?').pluck().get(serial);
+  if (id === undefined) throw new DomainError('not-found', `There is no part "${serial}"`, { part: serial });
+  return id;
+}
+
+export function insertParticulars(db: Db, { part, ...particulars }: Particulars, at: string, by: string): void {
+  const { title = null, drawing = null, drawingIssue = null, tool = null } = particulars;
+  db.prepare(
+    `INSERT INTO part_particulars (part_id, title, drawing, drawing_issue, tool, at, by)
+     VALUES (?, ?, ?, ?, ?, ?, ?)`,
+  ).run(keepPart(db, part), title, drawing, drawingIssue, tool, at, by);
+}
+
+export interface ParticularsRow {
+  readonly title: string | null;
+  readonly drawing: string | null;
+  readonly drawingIssue: string | null;
+  readonly tool: string | null;
+}
+
+export function readParticulars(db: Db, partId: number): ParticularsRow {
+  const row = db
+    .prepare<[number], ParticularsRow>(
+      `SELECT title, drawing, drawing_issue AS drawingIssue, tool FROM part_particulars
+       WHERE part_id = ? ORDER BY id DESC LIMIT 1`,
+    )
+    .get(partId);
+  return row ?? { title: null, drawing: null, drawingIssue: null, tool: null };
+}
+
+export function insertPartResult(
+  db: Db,
+  serial: string,
+  { at, test, outcome, figure, unit, text }: Omit<PartResult, 'deed'>,
+  deed: PartResult['deed'],
+): void {
+  db.prepare(
+    `INSERT INTO part_results (part_id, tested_at, test, outcome, figure, unit, text, at, by)
+     VALUES (?, ?, ?, ?, ?, ?, ?, ?, ?)`,
+  ).run(requirePart(db, serial), at, test, outcome, figure, unit, text, deed.at, deed.by);
+}
+
+export function readPartResults(db: Db, partId: number): PartResult[] {
+  return db
+    .prepare<[number], Omit<PartResult, 'deed' | 'at'> & { tested_at: string; at: string; by: string }>(
+      'SELECT tested_at, test, outcome, figure, unit, text, at, by FROM part_results WHERE part_id = ? ORDER BY id',
+    )
+    .all(partId)
+    .map(({ tested_at, at, by, ...result }) => ({ ...result, at: tested_at, deed: { at, by } }));
+}
+
+/** Parts on one line each, those cured last first; `q` is any stretch of serial, title, drawing or work order. */
+export function listParts(db: Db, { q = '', limit }: { q?: string | undefined; limit: number }): Parts {
+  const values = { q: `%${q.replace(/[\\%_]/g, '\\$&')}%` };
+  const total = db.prepare<object, number>(`${MATCHES} SELECT count(*) FROM matches`).pluck().get(values) ?? 0;
+  const rows = db
+    .prepare<object, PartRow>(
+      `${MATCHES} SELECT matches.*,
+         (SELECT verdict FROM evaluation_parts
+          WHERE part_id = matches.id ORDER BY evaluation_id DESC LIMIT 1) AS verdict,
+         EXISTS (SELECT 1 FROM part_results WHERE part_id = matches.id AND outcome = 'failed') AS failed
+       FROM matches ORDER BY from_ms DESC, serial LIMIT @limit`,
+    )
+    .all({ ...values, limit });
+  return { parts: rows.map((row) => lineOf(db, row)), total };
+}
+
+/** Runs whose load holds this part now, in order of time. */
+export function readRunsOfPart(db: Db, partId: number): number[] {
+  return db
+    .prepare<[number], number>(
+      `SELECT runs.id FROM load_parts JOIN loads ON loads.id = load_id JOIN runs ON runs.id = run_id
+       WHERE part_id = ? AND loads.id = (SELECT max(id) FROM loads WHERE run_id = runs.id) ORDER BY from_ms, runs.id`,
+    )
+    .pluck()
+    .all(partId);
+}
+
+interface PartRow {
+  readonly id: number;
+  readonly serial: string;
+  readonly title: string | null;
+  readonly drawing: string | null;
+  readonly quantity: number | null;
+  readonly from_ms: number | null;
+  readonly verdict: PartLine['verdict'];
+  readonly failed: number;
+}
+
+const MATCHES = `
+  WITH latest AS (SELECT run_id, max(id) AS id FROM loads GROUP BY run_id),
+  cured AS (
+    SELECT part_id, max(runs.from_ms) AS from_ms, max(quantity) AS quantity, group_concat(work_order, ' ') AS orders
+    FROM latest JOIN load_parts ON load_id = latest.id JOIN runs ON runs.id = run_id
+    JOIN loads ON loads.id = latest.id GROUP BY part_id),
+  about AS (SELECT part_id, title, drawing, max(id) FROM part_particulars GROUP BY part_id),
+  matches AS (
+    SELECT parts.id, serial, title, drawing, quantity, from_ms FROM parts
+    LEFT JOIN cured ON cured.part_id = parts.id LEFT JOIN about ON about.part_id = parts.id
+    WHERE serial LIKE @q ESCAPE '\\' OR title LIKE @q ESCAPE '\\' OR drawing LIKE @q ESCAPE '\\'
+       OR orders LIKE @q ESCAPE '\\')`;
+
+function lineOf(db: Db, row: PartRow): PartLine {
+  return {
+    serial: row.serial,
+    title: row.title,
+    drawing: row.drawing,
+    quantity: row.quantity ?? 1,
+    runs: readRunsOfPart(db, row.id),
+    verdict: row.verdict,
+    failedTest: row.failed === 1,
+    lastRunAt: row.from_ms === null ? null : isoFromMs(row.from_ms),
+  };
+}

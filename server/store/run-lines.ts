@@ -1,0 +1,128 @@
+import type * as z from 'zod';
+import type { RunLine, Runs, runsQuery } from '../contract/runs.ts';
+import type { Db } from './database.ts';
+import { isoFromMs } from './instants.ts';
+
+export type RunsQuery = Partial<z.infer<typeof runsQuery>>;
+
+/** Runs on one line each, latest first. */
+export function listRuns(db: Db, query: RunsQuery = {}): Runs {
+  const { after = 0, limit = 50 } = query;
+  const { where, values } = conditionsOf(query);
+  const total = db.prepare<object, number>(`SELECT count(*) ${FROM} ${where}`).pluck().get(values) ?? 0;
+  const runs = db
+    .prepare<object, LineRow>(`${SELECT} ${where} ORDER BY runs.from_ms DESC, runs.id DESC LIMIT @limit OFFSET @after`)
+    .all({ ...values, limit, after })
+    .map((row) => lineOf(db, row));
+  return { runs, total, next: after + runs.length < total ? after + runs.length : null };
+}
+
+export function findRunLine(db: Db, run: number): RunLine | undefined {
+  const row = db.prepare<[number], LineRow>(`${SELECT} WHERE runs.id = ?`).get(run);
+  return row === undefined ? undefined : lineOf(db, row);
+}
+
+/** Runs that wait for a person, latest first: without a load, with a suspect to decide, or that cannot be told. */
+export function listRunsInNeed(db: Db, limit: number): RunLine[] {
+  return db
+    .prepare<[number], LineRow>(
+      `${SELECT} WHERE loads.id IS NULL OR loads.cycle_id IS NULL OR evaluations.undecided > 0
+         OR evaluations.verdict = 'cannot-tell' ORDER BY runs.from_ms DESC, runs.id DESC LIMIT ?`,
+    )
+    .all(limit)
+    .map((row) => lineOf(db, row));
+}
+
+const FROM = `
+  FROM runs
+  LEFT JOIN vessels ON vessels.id = runs.vessel_id
+  LEFT JOIN loads ON loads.id = (SELECT max(id) FROM loads WHERE run_id = runs.id)
+  LEFT JOIN cycles ON cycles.id = loads.cycle_id
+  LEFT JOIN evaluations ON evaluations.id = (SELECT max(id) FROM evaluations WHERE run_id = runs.id)`;
+
+const SELECT = `
+  SELECT runs.id AS run, vessels.name AS vessel, runs.from_ms, runs.until_ms, loads.id AS load_id,
+         loads.work_order, cycles.code, cycles.issue, evaluations.verdict, evaluations.undecided,
+         evaluations.not_met, evaluations.cannot_tell ${FROM}`;
+
+interface LineRow {
+  readonly run: number;
+  readonly vessel: string | null;
+  readonly from_ms: number;
+  readonly until_ms: number;
+  readonly load_id: number | null;
+  readonly work_order: string | null;
+  readonly code: string | null;
+  readonly issue: string | null;
+  readonly verdict: RunLine['verdict'];
+  readonly undecided: number | null;
+  readonly not_met: string | null;
+  readonly cannot_tell: string | null;
+}
+
+function lineOf(db: Db, row: LineRow): RunLine {
+  const { code, issue } = row;
+  return {
+    run: row.run,
+    vessel: row.vessel,
+    ...readSourceSummary(db, row.run),
+    from: isoFromMs(row.from_ms),
+    until: isoFromMs(row.until_ms),
+    workOrder: row.work_order,
+    cycle: code === null || issue === null ? null : { code, issue },
+    parts: row.load_id === null ? [] : readSerials(db, row.load_id),
+    state: row.load_id === null ? 'awaiting-load' : code === null ? 'awaiting-cycle' : 'judged',
+    verdict: row.verdict,
+    undecided: row.undecided ?? 0,
+    notMet: JSON.parse(row.not_met ?? '[]'),
+    cannotTell: JSON.parse(row.cannot_tell ?? '[]'),
+  };
+}
+
+function readSourceSummary(db: Db, run: number): { recorder: string | null; scans: number } {
+  const row = db
+    .prepare<[number], { recorder: string | null; scans: number }>(
+      `SELECT recorders.name AS recorder, scans FROM run_sources LEFT JOIN recorders ON recorders.id = recorder_id
+       WHERE run_id = ? AND run_sources.id NOT IN (SELECT replaces_id FROM run_sources WHERE replaces_id IS NOT NULL)
+       ORDER BY n LIMIT 1`,
+    )
+    .get(run);
+  return row ?? { recorder: null, scans: 0 };
+}
+
+function readSerials(db: Db, loadId: number): string[] {
+  return db
+    .prepare<[number], string>(
+      'SELECT serial FROM load_parts JOIN parts ON parts.id = part_id WHERE load_id = ? ORDER BY n',
+    )
+    .pluck()
+    .all(loadId);
+}
+
+function conditionsOf(query: RunsQuery): { where: string; values: Record<string, unknown> } {
+  const conditions: string[] = [];
+  const values: Record<string, unknown> = {};
+  const add = (condition: string, name: string, value: unknown) => {
+    if (value === undefined) return;
+    conditions.push(condition);
+    values[name] = value;
+  };
+  add('vessels.name = @vessel', 'vessel', query.vessel);
+  add("(cycles.code = @cycle OR cycles.code || '/' || cycles.issue = @cycle)", 'cycle', query.cycle);
+  add(
+    'EXISTS (SELECT 1 FROM load_parts JOIN parts ON parts.id = part_id WHERE load_id = loads.id AND serial = @part)',
+    'part',
+    query.part,
+  );
+  add('evaluations.verdict = @verdict', 'verdict', query.verdict);
+  add('runs.from_ms >= @from', 'from', query.from === undefined ? undefined : Date.parse(query.from));
+  add('runs.from_ms < @until', 'until', query.until === undefined ? undefined : Date.parse(query.until));
+  if (query.state !== undefined) conditions.push(STATES[query.state]);
+  return { where: conditions.length === 0 ? '' : `WHERE ${conditions.join(' AND ')}`, values };
+}
+
+const STATES = {
+  'awaiting-load': 'loads.id IS NULL',
+  'awaiting-cycle': 'loads.id IS NOT NULL AND loads.cycle_id IS NULL',
+  judged: 'loads.cycle_id IS NOT NULL',
+} as const;

@@ -1,0 +1,50 @@
+import { DomainError } from '../../models/errors.ts';
+import type { Db } from './database.ts';
+
+export interface NewRun {
+  readonly vesselId: number | null;
+  readonly fromMs: number;
+  readonly untilMs: number;
+  readonly at: string;
+  readonly by: string;
+}
+
+export function insertRun(db: Db, run: NewRun): number {
+  const { lastInsertRowid } = db
+    .prepare('INSERT INTO runs (vessel_id, from_ms, until_ms, at, by) VALUES (@vesselId, @fromMs, @untilMs, @at, @by)')
+    .run(run);
+  return Number(lastInsertRowid);
+}
+
+export function requireRun(db: Db, run: number): void {
+  if (db.prepare('SELECT 1 FROM runs WHERE id = ?').get(run) === undefined) {
+    throw new DomainError('not-found', `There is no run ${run}`, { run });
+  }
+}
+
+export function setVessel(db: Db, run: number, vesselId: number): void {
+  db.prepare('UPDATE runs SET vessel_id = ? WHERE id = ?').run(vesselId, run);
+}
+
+/** The span of a run is that of the sources it is judged by. */
+export function refreshSpan(db: Db, run: number): void {
+  db.prepare(
+    `UPDATE runs SET (from_ms, until_ms) = (
+       SELECT min(from_ms), max(until_ms) FROM run_sources
+       WHERE run_id = @run AND id NOT IN (SELECT replaces_id FROM run_sources WHERE replaces_id IS NOT NULL))
+     WHERE id = @run`,
+  ).run({ run });
+}
+
+/** The run a file belongs to already. */
+export function findRunOfFile(db: Db, sha256: string): number | null {
+  return (
+    db
+      .prepare<[string], number>(
+        `SELECT run_id FROM files JOIN source_files ON file_id = files.id JOIN run_sources ON run_sources.id = source_id
+         WHERE files.sha256 = ? LIMIT 1`,
+      )
+      .pluck()
+      .get(sha256) ?? null
+  );
+}
