@@ -1,0 +1,79 @@
+import { DomainError } from '../../models/errors.ts';
+import { readLog } from '../../models/log/read-log.ts';
+import type { ImportLine } from '../contract/imports.ts';
+import type { Recorder } from '../contract/recorders.ts';
+import { findRecorder, listRecorders } from '../store/recorders.ts';
+import type { ActionParts } from './action-parts.ts';
+import type { IncomingFile } from './incoming-file.ts';
+import { logFileOf } from './log-file-of.ts';
+import { receiveFile, refuseRecorded } from './receive-file.ts';
+import { recordRun } from './record-run.ts';
+
+/** What became of a file: a run that awaits its load, or an import that waits for someone. */
+export type Arrival = { readonly run: number } | { readonly importId: number; readonly refusal: DomainError };
+
+/**
+ * Makes a run of a file by the layout its recorder has kept. Where the recorder is not known, the one stored layout
+ * that reads the file is taken; none or several: the file waits for someone.
+ */
+export async function bringInFile(
+  parts: ActionParts,
+  file: IncomingFile,
+  origin: ImportLine['origin'],
+  recorder: string | null = null,
+): Promise<Arrival> {
+  refuseRecorded(parts, file);
+  try {
+    const from = recorder === null ? await recognise(parts, file) : requireLayout(parts, recorder);
+    return { run: await recordRun(parts, { files: [file], layout: from.layout.document, recorder: from.name }) };
+  } catch (error) {
+    if (!(error instanceof DomainError) || error.code === 'already-recorded') throw error;
+    const known = recorder !== null && findRecorder(parts.db, recorder) !== undefined;
+    const importId = receiveFile(parts, { file, origin, recorder: known ? recorder : null, refusal: error });
+    return { importId, refusal: error };
+  }
+}
+
+type WithLayout = Recorder & { readonly layout: NonNullable<Recorder['layout']> };
+
+function hasLayout(recorder: Recorder): recorder is WithLayout {
+  return recorder.layout !== null;
+}
+
+function requireLayout({ db }: ActionParts, name: string): WithLayout {
+  const recorder = findRecorder(db, name);
+  if (recorder !== undefined && hasLayout(recorder)) return recorder;
+  throw new DomainError('layout-not-provable', `No layout is kept for a recorder called "${name}" yet`, {
+    recorder: name,
+  });
+}
+
+async function recognise({ db }: ActionParts, file: IncomingFile): Promise<WithLayout> {
+  const reading: WithLayout[] = [];
+  let lastRefusal: DomainError | null = null;
+  for (const recorder of listRecorders(db).filter(hasLayout)) {
+    const refusal = await refusalBy(file, recorder);
+    if (refusal === null) reading.push(recorder);
+    else lastRefusal = refusal;
+  }
+  const [only] = reading;
+  if (only !== undefined && reading.length === 1) return only;
+  if (reading.length === 0 && lastRefusal !== null && lastRefusal.code === 'log-not-text') throw lastRefusal;
+  throw new DomainError(
+    'layout-not-provable',
+    reading.length === 0
+      ? `${file.name}: no kept layout reads this file; someone has to say how it is to be read`
+      : `${file.name}: the layouts of ${reading.map(({ name }) => name).join(' and ')} both read it; someone has to say which`,
+    { file: file.name },
+  );
+}
+
+async function refusalBy(file: IncomingFile, { layout }: WithLayout): Promise<DomainError | null> {
+  try {
+    readLog([await logFileOf(file)], layout.document);
+    return null;
+  } catch (error) {
+    if (error instanceof DomainError) return error;
+    throw error;
+  }
+}

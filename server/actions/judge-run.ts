@@ -1,0 +1,95 @@
+import { DomainError } from '../../models/errors.ts';
+import type { Evaluation } from '../../models/evaluation/evaluation.ts';
+import { VERSION } from '../contract/version.ts';
+import { appendAudit } from '../store/audit.ts';
+import { keepDocument } from '../store/documents.ts';
+import { insertEvaluation } from '../store/evaluations.ts';
+import { requireRun } from '../store/runs.ts';
+import { type ActionParts, deedOf } from './action-parts.ts';
+import type { EvaluateLog } from './evaluate-log.ts';
+import { type Changes, gatherInputs, type JudgementInputs } from './judgement-inputs.ts';
+
+/** Parts of an action that ends in a judgement. */
+export interface JudgingParts extends ActionParts {
+  readonly evaluate: EvaluateLog;
+}
+
+/**
+ * Judges a run as it would stand after `changes`, then writes the change and the judgement in one transaction.
+ *
+ * `write` makes the change itself. Where the run cannot be judged yet, only `write` happens. Nothing is written where
+ * the judgement is refused, or where an input changed while it was made.
+ *
+ * @returns the evaluation's number, or null where there was nothing to judge by.
+ */
+export async function changeAndJudge(
+  parts: JudgingParts,
+  run: number,
+  because: string,
+  changes: Changes,
+  write: () => void,
+): Promise<number | null> {
+  const { db } = parts;
+  requireRun(db, run);
+  const inputs = gatherInputs(db, run, changes);
+  const document = inputs === null ? null : await evaluateInputs(parts.evaluate, inputs);
+  return db
+    .transaction(() => {
+      write();
+      return inputs === null || document === null ? null : writeEvaluation(parts, run, because, inputs, document);
+    })
+    .immediate();
+}
+
+/** Judges a run again by what is written now. */
+export async function judgeRun(parts: JudgingParts, run: number, because = 'judged again'): Promise<number> {
+  const evaluation = await changeAndJudge(parts, run, because, {}, () => undefined);
+  if (evaluation !== null) return evaluation;
+  throw new DomainError(
+    'state-conflict',
+    `Run ${run} has no load or no cycle yet, so there is nothing to judge it by`,
+    {
+      run,
+    },
+  );
+}
+
+async function evaluateInputs(evaluate: EvaluateLog, inputs: JudgementInputs): Promise<Evaluation> {
+  const { cycle, load, resin, decisions } = inputs;
+  const { exclusions, kept } = decisions;
+  const evaluation = await evaluate(inputs.readLog(), { cycle, load, resin, exclusions, kept });
+  return {
+    ...evaluation,
+    log: { ...evaluation.log, sha256: inputs.logSha256 },
+    cycle: { ...evaluation.cycle, sha256: inputs.hashes.cycle },
+  };
+}
+
+function writeEvaluation(
+  parts: ActionParts,
+  run: number,
+  because: string,
+  inputs: JudgementInputs,
+  document: Evaluation,
+): number {
+  const { db } = parts;
+  const now = gatherInputs(db, run);
+  if (now === null || Object.entries(inputs.hashes).some(([key, hash]) => Object(now.hashes)[key] !== hash)) {
+    throw new DomainError('state-conflict', `Run ${run} was changed while it was being judged; judge it again`, {
+      run,
+    });
+  }
+  keepDocument(db, inputs.decisions);
+  const { at, by } = deedOf(parts);
+  const { hashes } = inputs;
+  const id = insertEvaluation(db, { run, because, engine: VERSION, inputs: hashes, document, at, by });
+  appendAudit(db, {
+    at,
+    by,
+    verb: 'judge-run',
+    subject: `run/${run}`,
+    why: because,
+    details: { evaluation: id, verdict: document.verdict, engine: VERSION, ...hashes },
+  });
+  return id;
+}

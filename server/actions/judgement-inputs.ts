@@ -1,0 +1,98 @@
+import type { Resin } from '../../models/cure/resin.ts';
+import type { Cycle } from '../../models/cycle/cycle.ts';
+import type { ReadLog } from '../../models/log/readings.ts';
+import type { Exclusion, Load } from '../../models/run/load.ts';
+import type { RunSource, SensorDecision } from '../contract/runs.ts';
+import { sha256Of, sha256OfDocument } from '../store/canonical.ts';
+import { type CycleRow, readCycleDocument, requireCycle } from '../store/cycles.ts';
+import type { Db } from '../store/database.ts';
+import { readDecisions } from '../store/decisions.ts';
+import type { EvaluationInputs } from '../store/evaluations.ts';
+import { findLoad } from '../store/loads.ts';
+import { findResin, readResinDocument } from '../store/resins.ts';
+import { readSourceLog, readSources } from '../store/sources.ts';
+import { mergeLogs } from './merge-logs.ts';
+
+/** What people decided about suspects, as one document: hashed and kept with each evaluation. */
+export interface DecisionsDocument {
+  readonly format: 'dwellbook-decisions/1';
+  readonly exclusions: readonly Exclusion[];
+  /** Channels whose suspicion somebody set aside. */
+  readonly kept: readonly string[];
+}
+
+/** Everything a run is judged by, with its hashes. */
+export interface JudgementInputs {
+  readonly load: Load;
+  readonly cycle: Cycle;
+  readonly resin: Resin | null;
+  readonly decisions: DecisionsDocument;
+  readonly hashes: EvaluationInputs;
+  /** Of the bytes as they came. */
+  readonly logSha256: string;
+  /** Reads the readings: the one costly part, put off until it is needed. */
+  readonly readLog: () => ReadLog;
+}
+
+/** What a write is about to change, so that a judgement can be made before anything is written. */
+export interface Changes {
+  readonly load?: Load;
+  readonly cycle?: CycleRow | null;
+  readonly decisions?: readonly SensorDecision[];
+}
+
+/** The inputs of a run's judgement; null while it has no load or no cycle. */
+export function gatherInputs(db: Db, run: number, changes: Changes = {}): JudgementInputs | null {
+  const stored = findLoad(db, run);
+  const load = changes.load ?? stored?.document;
+  const cycleRow = changes.cycle === undefined ? cycleOf(db, stored?.cycle ?? null) : changes.cycle;
+  if (load === undefined || cycleRow === null) return null;
+  const cycle = readCycleDocument(db, cycleRow);
+  const resin = cycle.cure === undefined ? undefined : findResin(db, cycle.cure.resin);
+  const decisions = decisionsDocument([...readDecisions(db, run), ...(changes.decisions ?? [])]);
+  const sources = readSources(db, run);
+  return {
+    load,
+    cycle,
+    resin: resin === undefined ? null : readResinDocument(db, resin),
+    decisions,
+    hashes: {
+      readings: oneHash(sources.map(({ chainSha256 }) => chainSha256)),
+      layout: oneHash(sources.map(({ layoutSha256 }) => layoutSha256)),
+      load: sha256OfDocument(load),
+      cycle: cycleRow.sha256,
+      resin: resin?.sha256 ?? null,
+      decisions: sha256OfDocument(decisions),
+    },
+    logSha256: oneHash(sources.flatMap(({ files }) => files.map(({ sha256 }) => sha256))),
+    readLog: () => readRunLog(db, sources),
+  };
+}
+
+/** All readings of a run, of however many sources. */
+export function readRunLog(db: Db, sources: readonly (RunSource & { readonly id: number })[]): ReadLog {
+  return mergeLogs(sources.map((source) => readSourceLog(db, source)));
+}
+
+function cycleOf(db: Db, named: { readonly code: string; readonly issue: string } | null): CycleRow | null {
+  return named === null ? null : requireCycle(db, named.code, named.issue);
+}
+
+/** Of several sources: the hash of their hashes, a line each. */
+function oneHash(hashes: readonly string[]): string {
+  const [only] = hashes;
+  return hashes.length === 1 && only !== undefined ? only : sha256Of(hashes.map((hash) => `${hash}\n`).join(''));
+}
+
+/** The latest decision of each channel, in the order of the channels' names. */
+function decisionsDocument(decisions: readonly SensorDecision[]): DecisionsDocument {
+  const latest = new Map(decisions.map((decision) => [decision.channel, decision]));
+  const ordered = [...latest.values()].sort((a, b) => (a.channel < b.channel ? -1 : 1));
+  return {
+    format: 'dwellbook-decisions/1',
+    exclusions: ordered.flatMap(({ channel, from, reason, deed }) =>
+      from === null ? [] : [{ channel, from, reason, by: deed.by }],
+    ),
+    kept: ordered.filter(({ decision }) => decision === 'keep').map(({ channel }) => channel),
+  };
+}
