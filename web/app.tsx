@@ -1,0 +1,69 @@
+import { useEffect } from 'preact/hooks';
+import { ErrorBoundary, LocationProvider, lazy, Route, Router } from 'preact-iso';
+import { AuditPage } from './pages/audit.tsx';
+import { CyclesPage } from './pages/cycles.tsx';
+import { FindPage } from './pages/find.tsx';
+import { ImportPage } from './pages/import.tsx';
+import { NowPage } from './pages/now.tsx';
+import { NowherePage } from './pages/nowhere.tsx';
+import { PartPage } from './pages/part.tsx';
+import { PartsPage } from './pages/parts.tsx';
+import { RecorderPage, RecordersPage } from './pages/recorders.tsx';
+import { ResinsPage } from './pages/resins.tsx';
+import { RunsPage } from './pages/runs.tsx';
+import { WorkshopPage } from './pages/workshop.tsx';
+import { Cautions } from './parts/cautions.tsx';
+import { Masthead } from './parts/masthead.tsx';
+import { readWorkshop } from './workshop.ts';
+
+const RunPage = lazy(() => import('./pages/run.tsx'));
+const LoadPage = lazy(() => import('./pages/load.tsx'));
+const ImportFilePage = lazy(() => import('./pages/import-file.tsx'));
+const CyclePage = lazy(() => import('./pages/cycle.tsx'));
+const CycleImportPage = lazy(() => import('./pages/cycle-import.tsx'));
+const ResinPage = lazy(() => import('./pages/resin.tsx'));
+
+export function App() {
+  useEffect(() => void readWorkshop(), []);
+  return (
+    <LocationProvider>
+      <a class="skip" href="#page">
+        Skip to the page
+      </a>
+      <div class="sheet">
+        <Masthead />
+        <main id="page" tabIndex={-1}>
+          <ErrorBoundary>
+            <Router onRouteChange={beginPage}>
+              <Route path="/" component={NowPage} />
+              <Route path="/import" component={ImportPage} />
+              <Route path="/imports/:id" component={ImportFilePage} />
+              <Route path="/runs" component={RunsPage} />
+              <Route path="/runs/:run" component={RunPage} />
+              <Route path="/runs/:run/load" component={LoadPage} />
+              <Route path="/parts" component={PartsPage} />
+              <Route path="/parts/:serial" component={PartPage} />
+              <Route path="/cycles" component={CyclesPage} />
+              <Route path="/cycles/import" component={CycleImportPage} />
+              <Route path="/cycles/:code/:issue" component={CyclePage} />
+              <Route path="/resins" component={ResinsPage} />
+              <Route path="/resins/:code" component={ResinPage} />
+              <Route path="/recorders" component={RecordersPage} />
+              <Route path="/recorders/:name" component={RecorderPage} />
+              <Route path="/audit" component={AuditPage} />
+              <Route path="/find" component={FindPage} />
+              <Route path="/workshop" component={WorkshopPage} />
+              <Route default component={NowherePage} />
+            </Router>
+          </ErrorBoundary>
+        </main>
+        <Cautions />
+      </div>
+    </LocationProvider>
+  );
+}
+
+/** A new page begins at its top, for the keyboard as for the eye. */
+function beginPage(): void {
+  document.getElementById('page')?.focus({ preventScroll: true });
+}

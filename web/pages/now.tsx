@@ -1,0 +1,61 @@
+import { NOW_PATH } from '../../server/contract/paths.ts';
+import type { Now } from '../../server/contract/now.ts';
+import { usePageTitle } from '../page-title.ts';
+import { FirstSteps } from '../parts/first-steps.tsx';
+import { Needs } from '../parts/needs.tsx';
+import { Notebook, PageHead } from '../parts/notebook.tsx';
+import { RunEntry } from '../parts/run-entry.tsx';
+import { Shown } from '../parts/shown.tsx';
+import { VesselLines } from '../parts/vessel-lines.tsx';
+import { useRead } from '../use-read.ts';
+import { day, weekday } from '../words/clock.ts';
+import { workshop, zone } from '../workshop.ts';
+
+/** The first page of the day: what needs someone, what each vessel did last, the last runs. */
+export function NowPage() {
+  usePageTitle('Now in the shop');
+  const reading = useRead<Now>(NOW_PATH);
+  const today = Date.now();
+  return (
+    <Notebook
+      margin={
+        <p class="when">
+          <b>{day(today, zone.value)}</b> {weekday(today, zone.value)}
+        </p>
+      }
+    >
+      <PageHead title="Now in the shop">
+        <div class="row">
+          <p class="soft">{workshop.value?.name}</p>
+          <a class="button primary" href="/import">
+            Import a log
+          </a>
+        </div>
+      </PageHead>
+      <Shown reading={reading} what="Reading what is in the shop">
+        {(now) => <NowBody now={now} />}
+      </Shown>
+    </Notebook>
+  );
+}
+
+function NowBody({ now }: { now: Now }) {
+  if (now.lastRuns.length === 0 && now.needs.length === 0) return <FirstSteps />;
+  return (
+    <>
+      <Needs needs={now.needs} />
+      <VesselLines vessels={now.vessels} />
+      <section class="section">
+        <h2>Last runs</h2>
+        <ul class="entries">
+          {now.lastRuns.map((line) => (
+            <RunEntry key={line.run} line={line} />
+          ))}
+        </ul>
+        <p class="section">
+          <a href="/runs">All runs</a>
+        </p>
+      </section>
+    </>
+  );
+}

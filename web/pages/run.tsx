@@ -1,0 +1,33 @@
+import { useRoute } from 'preact-iso';
+import { runPath } from '../../server/contract/paths.ts';
+import type { RunView } from '../../server/contract/runs.ts';
+import { usePageTitle } from '../page-title.ts';
+import { Notebook, PageHead } from '../parts/notebook.tsx';
+import { RunJudged } from '../parts/run-judged.tsx';
+import { RunUnjudged } from '../parts/run-unjudged.tsx';
+import { Shown } from '../parts/shown.tsx';
+import { useRead } from '../use-read.ts';
+
+/** One run: what it came to, why, and all it rests on. */
+export default function RunPage() {
+  const { params } = useRoute();
+  const run = Number(params['run']);
+  usePageTitle(`Run ${run}`);
+  const reading = useRead<RunView>(runPath(run));
+  if (!reading.value) {
+    return (
+      <Notebook>
+        <PageHead title={`Run ${run}`} />
+        <Shown reading={reading} what="Reading the run">
+          {() => null}
+        </Shown>
+      </Notebook>
+    );
+  }
+  const view = reading.value;
+  return view.evaluation ? (
+    <RunJudged key={view.run} run={view} evaluation={view.evaluation} again={reading.again} />
+  ) : (
+    <RunUnjudged key={view.run} run={view} again={reading.again} />
+  );
+}

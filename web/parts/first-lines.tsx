@@ -1,0 +1,45 @@
+import type { Layout } from '../../models/log/layout.ts';
+import { delimiterName } from '../words/layouts.ts';
+
+/** The file's own first lines, with what each line is taken for. */
+export function FirstLines({ name, lines, layout }: { name: string; lines: readonly string[]; layout: Layout | null }) {
+  return (
+    <figure class="first-lines">
+      <figcaption>
+        First lines of <strong class="breakable">{name}</strong>
+      </figcaption>
+      <div class="table-scroll" tabIndex={0} role="region" aria-label={`First lines of ${name}`}>
+        <ol>
+          {lines.map((line, n) => {
+            const taken = takenFor(n + 1, layout);
+            return (
+              // biome-ignore lint/suspicious/noArrayIndexKey: a line is its number
+              <li key={n} class={taken ? `is-${taken.kind}` : ''}>
+                <span class="taken">{taken?.word}</span>
+                <code>{line === '' ? ' ' : showTabs(line)}</code>
+              </li>
+            );
+          })}
+        </ol>
+      </div>
+      {layout && <p class="soft small">Cells apart by {delimiterName(layout.delimiter ?? ',')}.</p>}
+    </figure>
+  );
+}
+
+function takenFor(line: number, layout: Layout | null): { kind: string; word: string } | null {
+  if (!layout) return null;
+  if (line === layout.header) return { kind: 'header', word: 'headings' };
+  if (line === layout.units) return { kind: 'units', word: 'units' };
+  if (line === firstReadingOf(layout)) return { kind: 'reading', word: 'first reading' };
+  if (line > firstReadingOf(layout)) return { kind: 'reading', word: '' };
+  return { kind: 'before', word: '' };
+}
+
+export function firstReadingOf(layout: Layout): number {
+  return layout.firstReading ?? Math.max(layout.header, layout.units ?? 0) + 1;
+}
+
+function showTabs(line: string): string {
+  return line.replaceAll('\t', ' → ');
+}

@@ -1,0 +1,63 @@
+import type { CureEstimate, Evaluation } from '../../models/evaluation/evaluation.ts';
+import { temperatureFromCelsius } from '../../models/units.ts';
+import type { RunView } from '../../server/contract/runs.ts';
+import { clock } from '../words/clock.ts';
+import { plain } from '../words/figures.ts';
+import { shownUnits, zone } from '../workshop.ts';
+import { RESIN_STATUS_WORDS } from './resin-status-tag.tsx';
+
+/** Estimated cure of each judged thermocouple, said to be estimates, with the source they rest on. */
+export function RunEstimates({ run, evaluation }: { run: RunView; evaluation: Evaluation }) {
+  const estimates = new Map(evaluation.parts.flatMap((part) => part.cure).map((one) => [one.channel, one]));
+  if (estimates.size === 0 || !evaluation.resin) return null;
+  const status = run.resin?.document.source.status;
+  const unit = shownUnits.value.temperature;
+  return (
+    <section class="section">
+      <h2>Cure at the end, estimated</h2>
+      <p>
+        Worked out from the temperatures by a model, not measured. Set{' '}
+        <a href={`/resins/${encodeURIComponent(evaluation.resin.code)}`}>{evaluation.resin.code}</a>,{' '}
+        {evaluation.resin.citation}. {status && RESIN_STATUS_WORDS[status]}
+      </p>
+      <div class="table-scroll" tabIndex={0} role="region" aria-label="Cure at the end, estimated">
+        <table>
+          <thead>
+            <tr>
+              <th scope="col">Thermocouple</th>
+              <th scope="col" class="figure-cell">
+                Degree of cure
+              </th>
+              <th scope="col" class="figure-cell">
+                Tg, {unit}
+              </th>
+              <th scope="col" class="figure-cell">
+                Gels
+              </th>
+              <th scope="col" class="figure-cell">
+                Vitrifies
+              </th>
+            </tr>
+          </thead>
+          <tbody>
+            {[...estimates.values()].sort(leastFirst).map((one) => (
+              <tr key={one.channel}>
+                <th scope="row">{one.channel}</th>
+                <td class="figure-cell">{plain(one.degree, 3)}</td>
+                <td class="figure-cell">
+                  {one.tgC === null ? '–' : plain(temperatureFromCelsius(one.tgC, unit), 0)}
+                </td>
+                <td class="figure-cell">{one.gelAt ? clock(one.gelAt, zone.value) : 'not seen'}</td>
+                <td class="figure-cell">{one.vitrifiesAt ? clock(one.vitrifiesAt, zone.value) : 'not seen'}</td>
+              </tr>
+            ))}
+          </tbody>
+        </table>
+      </div>
+    </section>
+  );
+}
+
+function leastFirst(a: CureEstimate, b: CureEstimate): number {
+  return a.degree - b.degree;
+}

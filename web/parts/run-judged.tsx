@@ -1,0 +1,60 @@
+import { useRef, useState } from 'preact/hooks';
+import { useLocation } from 'preact-iso';
+import { withQuery } from '../../server/contract/paths.ts';
+import type { EvaluationView, RunView } from '../../server/contract/runs.ts';
+import { RunChart } from '../charts/run-chart.tsx';
+import { partName, worstPart } from '../words/verdicts.ts';
+import { Decisions } from './decisions.tsx';
+import { FindingList, focusNextFinding } from './finding-list.tsx';
+import { RunHead } from './run-head.tsx';
+import { RunMargin } from './run-margin.tsx';
+import { RunPapers } from './run-papers.tsx';
+import { RunVerdict } from './run-verdict.tsx';
+
+/** A judged run: the verdict first, then what is to be decided, the chart, and the findings beside it. */
+export function RunJudged({ run, evaluation, again }: { run: RunView; evaluation: EvaluationView; again: () => void }) {
+  const { query, route } = useLocation();
+  const [lit, setLit] = useState<string | null>(null);
+  const findings = useRef<HTMLDivElement>(null);
+  const parts = evaluation.document.parts;
+  const named = parts.find((one) => one.part !== null && one.part === query['part']);
+  const part = named ?? worstPart(evaluation.document);
+  const choose = (name: string | null) => route(withQuery(`/runs/${run.run}`, { part: name }), true);
+  return (
+    <div class="notebook with-side run-book">
+      <div class="margin">
+        <RunMargin run={run} />
+      </div>
+      <div class="leaf">
+        <RunHead run={run} />
+        <RunVerdict evaluation={evaluation.document} />
+        <Decisions run={run} evaluation={evaluation.document} onDecided={again} />
+        <RunChart run={run} part={part} lit={lit} onNext={() => focusNextFinding(findings.current)} />
+      </div>
+      <div class="side" ref={findings}>
+        {parts.length > 1 && (
+          <fieldset class="part-switch">
+            <legend>Part</legend>
+            {parts.map((one) => (
+              <button
+                key={partName(one)}
+                type="button"
+                class="quiet"
+                aria-pressed={one === part}
+                onClick={() => choose(one.part)}
+              >
+                {partName(one)}
+              </button>
+            ))}
+          </fieldset>
+        )}
+        {part && (
+          <FindingList part={part} run={run} evaluation={evaluation.document} lit={lit} onLight={setLit} />
+        )}
+      </div>
+      <div class="rest">
+        <RunPapers run={run} evaluation={evaluation} again={again} />
+      </div>
+    </div>
+  );
+}

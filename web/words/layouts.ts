@@ -1,0 +1,26 @@
+import type { Layout } from '../../models/log/layout.ts';
+
+const DELIMITERS: Readonly<Record<string, string>> = { ',': 'comma', ';': 'semicolon', '\t': 'tab', ' ': 'space', '|': 'bar |' };
+
+export function delimiterName(delimiter: string): string {
+  return DELIMITERS[delimiter] ?? `“${delimiter}”`;
+}
+
+/** How a layout reads time: `Date and Time, written dd/MM/yyyy HH:mm:ss, in Europe/Lisbon`. */
+export function timeWords(time: Layout['time']): string {
+  const columns = time.columns.join(' and ');
+  if ('elapsed' in time) return `${columns}, ${time.elapsed} elapsed since ${time.startsAt}`;
+  if ('serialDays' in time) return `${columns}, days of a spreadsheet, in ${time.zone}`;
+  return `${columns}, written ${time.pattern}, in ${time.zone}`;
+}
+
+export const ROLE_WORDS: Readonly<Record<string, string>> = {
+  part: 'part',
+  tool: 'tool',
+  air: 'air',
+  setpoint: 'setpoint',
+  pressure: 'vessel pressure',
+  vacuum: 'vacuum at a bag',
+  'vacuum-source': 'vacuum at the source',
+  other: 'other, kept but not judged',
+};

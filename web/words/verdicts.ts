@@ -1,0 +1,74 @@
+import type { Evaluation, Finding, PartEvaluation, Verdict } from '../../models/evaluation/evaluation.ts';
+import { count, listed, raised } from './figures.ts';
+import { worstFirst } from './limits.ts';
+
+const WORST = ['does-not-conform', 'cannot-tell', 'pending', 'conforms'] as const satisfies readonly Verdict[];
+
+const VERBS: Readonly<Record<Verdict, readonly [one: string, many: string]>> = {
+  conforms: ['conforms', 'conform'],
+  'does-not-conform': ['does not conform', 'do not conform'],
+  'cannot-tell': ['cannot be told', 'cannot be told'],
+  pending: ['is still running', 'are still running'],
+};
+
+/** The part that decides a run's verdict: the first of the worst. */
+export function worstPart(evaluation: Evaluation): PartEvaluation | null {
+  for (const verdict of WORST) {
+    const part = evaluation.parts.find((one) => one.verdict === verdict);
+    if (part) return part;
+  }
+  return null;
+}
+
+/** A run's verdict in a few sentences: why, what else, and how the other parts came out. */
+export function verdictSentences(evaluation: Evaluation): string[] {
+  const part = worstPart(evaluation);
+  if (!part) return ['No part is named in its load, so nothing was judged.'];
+  return [...whyOfPart(part), ...othersOf(evaluation, part)];
+}
+
+export function whyOfPart(part: PartEvaluation): string[] {
+  const findings = worstFirst(part.findings);
+  const worst = findings[0];
+  if (!worst || worst.outcome === 'met') return [`All ${count(findings.length, 'limit')} of the cycle were met.`];
+  const alike = findings.filter(({ outcome }) => outcome === worst.outcome).length - 1;
+  const rest = alike > 0 ? [`${raised(count(alike, 'other limit'))} ${STATES[worst.outcome]}.`] : [];
+  const also = otherOutcomes(findings, worst.outcome);
+  return [sentence(worst.because), ...rest, ...also];
+}
+
+const STATES: Readonly<Record<Finding['outcome'], string>> = {
+  'not-met': 'not met',
+  'cannot-tell': 'cannot be told',
+  pending: 'not decided yet',
+  met: 'met',
+};
+
+function otherOutcomes(findings: readonly Finding[], worst: Finding['outcome']): string[] {
+  const others = (['cannot-tell', 'pending'] as const).filter((outcome) => outcome !== worst);
+  const said = others.flatMap((outcome) => {
+    const n = findings.filter((finding) => finding.outcome === outcome).length;
+    return n === 0 ? [] : [`${raised(count(n, 'limit'))} ${STATES[outcome]}.`];
+  });
+  const isRestMet = findings.every(({ outcome }, n) => n === 0 || outcome === 'met');
+  return isRestMet && findings.length > 1 ? ['Everything else was met.'] : said;
+}
+
+function othersOf(evaluation: Evaluation, part: PartEvaluation): string[] {
+  const others = evaluation.parts.filter((other) => other !== part);
+  return WORST.flatMap((verdict) => {
+    const names = others.filter((other) => other.verdict === verdict).map(partName);
+    if (names.length === 0) return [];
+    const [one, many] = VERBS[verdict];
+    return [`${listed(names)} ${names.length === 1 ? one : many}.`];
+  });
+}
+
+export function partName(part: PartEvaluation): string {
+  return part.part ?? 'The load';
+}
+
+/** A reason ends as a sentence does, whoever wrote it. */
+export function sentence(text: string): string {
+  return /[.!?]$/.test(text) ? raised(text) : `${raised(text)}.`;
+}
