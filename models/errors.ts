@@ -16,6 +16,7 @@ export const ERROR_CODES = [
   'log-line-too-long',
   'log-encoding-wrong',
   'log-column-missing',
+  'log-column-twice',
   'log-units-contradict',
   'log-cell-unreadable',
   'log-row-ragged',

@@ -1,0 +1,76 @@
+import { DomainError } from '../errors.ts';
+import { placeOf, type RepairList } from './repair-list.ts';
+import type { ScanTable } from './scan-table.ts';
+import type { Zone } from './time-zone.ts';
+
+/**
+ * Turns the clock's times into instants.
+ *
+ * In an hour that the zone repeats: the first of the two instants that is not before the previous scan. Where the log
+ * begins in that hour, only a step back within it proves which of the two it began in.
+ *
+ * @returns [count] ms since 1970-01-01T00:00:00Z, in the order of the lines.
+ * @throws {DomainError} `log-time-skipped` for a time that the zone's clocks never showed; `log-time-ambiguous` for a
+ *   log that begins in a repeated hour and never steps back in it.
+ */
+export function instantsInZone(table: ScanTable, zone: Zone, files: readonly string[], list: RepairList): Float64Array {
+  const instantMs = new Float64Array(table.count);
+  const repeated: number[] = [];
+  /** The scan that began in a repeated hour, while nothing has proved which one. */
+  let unproved = -1;
+  let previousMs = Number.NEGATIVE_INFINITY;
+  for (let scan = 0; scan < table.count; scan++) {
+    const localMs = table.stampMs[scan]!;
+    const firstMs = zone.instantOf(localMs);
+    if (Number.isNaN(firstMs)) throw skipped(table, zone, files, scan);
+    const secondMs = zone.secondInstantOf(localMs);
+    let chosenMs = firstMs;
+    if (Number.isNaN(secondMs)) {
+      if (unproved >= 0) throw ambiguous(table, zone, files, unproved);
+    } else {
+      repeated.push(scan);
+      if (scan === 0 || secondMs < previousMs) {
+        if (unproved >= 0) throw ambiguous(table, zone, files, unproved);
+        unproved = scan;
+      } else if (firstMs < previousMs) {
+        chosenMs = secondMs;
+        unproved = -1;
+      }
+    }
+    instantMs[scan] = chosenMs;
+    previousMs = chosenMs;
+  }
+  if (unproved >= 0) throw ambiguous(table, zone, files, unproved);
+  list.add(
+    'repeated-hour',
+    repeated,
+    `Clocks in ${zone.name} showed these times twice; each scan was given the first instant not before the scan above it.`,
+  );
+  return instantMs;
+}
+
+function skipped(table: ScanTable, zone: Zone, files: readonly string[], scan: number): DomainError {
+  const { file, line } = placeOf(table, files, scan);
+  const time = wallClock(table.stampMs[scan]!);
+  return new DomainError(
+    'log-time-skipped',
+    `${file}, line ${line}: clocks in ${zone.name} never showed ${time}. ` +
+      'If the recorder does not follow summer time, give its zone as an offset, such as +00:00.',
+    { file, line, zone: zone.name, time },
+  );
+}
+
+function ambiguous(table: ScanTable, zone: Zone, files: readonly string[], scan: number): DomainError {
+  const { file, line } = placeOf(table, files, scan);
+  const time = wallClock(table.stampMs[scan]!);
+  return new DomainError(
+    'log-time-ambiguous',
+    `${file}, line ${line}: clocks in ${zone.name} showed ${time} twice, and nothing in the log tells which is meant. ` +
+      'Give the zone as the offset that held, such as +01:00.',
+    { file, line, zone: zone.name, time },
+  );
+}
+
+function wallClock(localMs: number): string {
+  return new Date(localMs).toISOString().slice(0, 19).replace('T', ' ');
+}

@@ -1,0 +1,64 @@
+import { believableRange } from './channel-range.ts';
+import { figureFromText } from './figure.ts';
+import type { Layout } from './layout.ts';
+import type { MissingCodes } from './missing-codes.ts';
+import { scaledReading } from './readings.ts';
+import type { RowPlan } from './row-plan.ts';
+import type { ScanTable } from './scan-table.ts';
+import type { StampReader } from './stamp-reader.ts';
+
+/** What a row taken apart as text turned out to hold. */
+export interface JudgedRow {
+  /** NaN where the time cells are no stamp. */
+  readonly stampMs: number;
+  readonly stampText: string;
+  /** As many cells as there are headings, and none with anything in it behind them. */
+  readonly isWhole: boolean;
+  readonly cells: number;
+  /** First cell, counted from 0, that is neither a number nor a missing code. */
+  readonly badCell: number | null;
+  readonly figures: number;
+}
+
+/** Reads a row's stamp and figures as text, into the table's next place. */
+export function judgeRow(
+  cells: readonly string[],
+  plan: RowPlan,
+  layout: Layout,
+  missing: MissingCodes,
+  stamps: StampReader,
+  table: ScanTable,
+): JudgedRow {
+  const decimal = layout.decimal ?? '.';
+  const timeParts: string[] = layout.time.columns.map(() => '');
+  let badCell: number | null = null;
+  let figures = 0;
+  for (const [column, target] of plan.targets.entries()) {
+    const cell = cells[column];
+    if (cell === undefined) break;
+    const channel = layout.channels[target];
+    if (target < -1) timeParts[-2 - target] = cell;
+    if (!channel) continue;
+    let value = Number.NaN;
+    if (!missing.has(cell)) {
+      value = figureFromText(cell, decimal);
+      if (Number.isNaN(value)) badCell ??= column;
+      else figures++;
+      const [least, greatest] = believableRange(channel);
+      const reading = scaledReading(value, channel);
+      if (!(reading >= least && reading <= greatest)) value = Number.NaN;
+    }
+    table.values[target]![table.count] = value;
+  }
+  const stampText = timeParts.join(' ');
+  const stamp = new TextEncoder().encode(stampText);
+  const stampMs = timeParts.includes('') ? Number.NaN : stamps.read(stamp, stamp.length);
+  table.stampMs[table.count] = stampMs;
+  const isWhole = cells.length >= plan.cells && cells.slice(plan.cells).every((cell) => cell === '');
+  return { stampMs, stampText, isWhole, cells: cells.length, badCell, figures };
+}
+
+/** Whether the time cells hold so many digits that they must have been meant as a stamp. */
+export function looksStamped(row: JudgedRow): boolean {
+  return !Number.isNaN(row.stampMs) || row.stampText.replace(/\D/g, '').length >= 4;
+}

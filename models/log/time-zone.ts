@@ -1,0 +1,143 @@
+import { DomainError } from '../errors.ts';
+
+/** What a zone's clocks show, turned into instants. Local times are ms since 1970-01-01 as the clock on the wall reads. */
+export interface Zone {
+  readonly name: string;
+  /** The only, or the first, instant at which clocks showed `localMs`; NaN where the zone skips that time. */
+  instantOf(localMs: number): number;
+  /** The second instant at which clocks showed `localMs`; NaN where there is none. */
+  secondInstantOf(localMs: number): number;
+}
+
+/** An IANA zone, or an offset such as `+01:00`; throws `zone-unknown`. */
+export function findZone(name: string): Zone {
+  const offsetMs = offsetFromText(name);
+  return offsetMs === null ? namedZone(name) : fixedZone(name, offsetMs);
+}
+
+/** Offset in ms of `Z`, `+01:00`, `-0530`, `+02`; null for anything else. */
+export function offsetFromText(text: string): number | null {
+  if (text === 'Z') return 0;
+  const match = /^([+-])(\d\d)(?::?([0-5]\d))?$/.exec(text);
+  if (!match) return null;
+  const minutes = Number(match[2]) * 60 + Number(match[3] ?? 0);
+  if (minutes > 14 * 60) return null; // no clock on earth is further from UTC
+  return (match[1] === '-' ? -minutes : minutes) * 60_000;
+}
+
+function fixedZone(name: string, offsetMs: number): Zone {
+  return { name, instantOf: (localMs) => localMs - offsetMs, secondInstantOf: () => Number.NaN };
+}
+
+const HOUR_MS = 3_600_000;
+
+/** A stretch of one offset: instants from `fromMs` to before `untilMs`. */
+interface Stretch {
+  readonly fromMs: number;
+  readonly untilMs: number;
+  readonly offsetMs: number;
+}
+
+function namedZone(name: string): Zone {
+  const offsetAt = offsetsOf(name);
+  // Around the last time asked for, clocks showed each time once and with one offset.
+  let plainFromMs = 0;
+  let plainUntilMs = 0;
+  let plainOffsetMs = 0;
+
+  function instantsOf(localMs: number): [number, number] {
+    const stretches = stretchesAround(localMs, offsetAt);
+    const found: number[] = [];
+    for (const { fromMs, untilMs, offsetMs } of stretches) {
+      const instantMs = localMs - offsetMs;
+      if (instantMs >= fromMs && instantMs < untilMs) found.push(instantMs);
+    }
+    if (stretches.length === 1) {
+      plainFromMs = localMs - 6 * HOUR_MS;
+      plainUntilMs = localMs + 6 * HOUR_MS;
+      plainOffsetMs = stretches[0]!.offsetMs;
+    }
+    return [found[0] ?? Number.NaN, found[1] ?? Number.NaN];
+  }
+
+  let lastLocalMs = Number.NaN;
+  let last: [number, number] = [Number.NaN, Number.NaN];
+  function lookUp(localMs: number): [number, number] {
+    if (localMs !== lastLocalMs) {
+      last = instantsOf(localMs);
+      lastLocalMs = localMs;
+    }
+    return last;
+  }
+
+  return {
+    name,
+    instantOf: (localMs) =>
+      localMs >= plainFromMs && localMs < plainUntilMs ? localMs - plainOffsetMs : lookUp(localMs)[0],
+    secondInstantOf: (localMs) => (localMs >= plainFromMs && localMs < plainUntilMs ? Number.NaN : lookUp(localMs)[1]),
+  };
+}
+
+/** The stretches of one offset within 36 hours of a local time: one, or more where the offset changes. */
+function stretchesAround(localMs: number, offsetAt: (instantMs: number) => number): Stretch[] {
+  const firstMs = Math.floor((localMs - 36 * HOUR_MS) / HOUR_MS) * HOUR_MS;
+  const lastMs = firstMs + 74 * HOUR_MS;
+  const stretches: Stretch[] = [];
+  let fromMs = firstMs;
+  let offsetMs = offsetAt(firstMs);
+  for (let atMs = firstMs; atMs < lastMs; atMs += 2 * HOUR_MS) {
+    const nextOffsetMs = offsetAt(atMs + 2 * HOUR_MS);
+    if (nextOffsetMs === offsetMs) continue;
+    const changeMs = changeBetween(atMs, atMs + 2 * HOUR_MS, offsetAt);
+    stretches.push({ fromMs, untilMs: changeMs, offsetMs });
+    fromMs = changeMs;
+    offsetMs = nextOffsetMs;
+  }
+  stretches.push({ fromMs, untilMs: lastMs, offsetMs });
+  return stretches;
+}
+
+/** The whole second at which the offset changes, by bisection. */
+function changeBetween(fromMs: number, untilMs: number, offsetAt: (instantMs: number) => number): number {
+  const before = offsetAt(fromMs);
+  let low = fromMs;
+  let high = untilMs;
+  while (high - low > 1000) {
+    const middle = low + Math.floor((high - low) / 2000) * 1000;
+    if (offsetAt(middle) === before) low = middle;
+    else high = middle;
+  }
+  return high;
+}
+
+/** The zone's offset from UTC in ms at an instant, as the platform's copy of the IANA database has it. */
+function offsetsOf(name: string): (instantMs: number) => number {
+  let format: Intl.DateTimeFormat;
+  try {
+    format = new Intl.DateTimeFormat('en-US', {
+      timeZone: name,
+      calendar: 'gregory',
+      numberingSystem: 'latn',
+      hourCycle: 'h23',
+      year: 'numeric',
+      month: 'numeric',
+      day: 'numeric',
+      hour: 'numeric',
+      minute: 'numeric',
+      second: 'numeric',
+    });
+  } catch (cause) {
+    throw new DomainError(
+      'zone-unknown',
+      `"${name}" is neither an IANA time zone (such as Europe/Lisbon) nor an offset (such as +01:00)`,
+      { zone: name },
+      { cause },
+    );
+  }
+  return (instantMs) => {
+    const shown: Record<string, number> = {};
+    for (const { type, value } of format.formatToParts(instantMs)) shown[type] = Number(value);
+    const { year = 0, month = 1, day = 1, hour = 0, minute = 0, second = 0 } = shown;
+    return Date.UTC(year, month - 1, day, hour, minute, second) - instantMs;
+  };
+}

@@ -1,0 +1,70 @@
+/** What a units row says of one column. */
+export interface SpelledUnit {
+  /** The product's name of the unit, without ` abs`; `K` for kelvin, which no channel has. */
+  readonly unit: string;
+  readonly quantity: 'temperature' | 'pressure';
+  /** What the spelling says of the zero point; null where it says nothing. */
+  readonly reference: 'gauge' | 'absolute' | null;
+}
+
+const TEMPERATURE_SPELLINGS: Readonly<Record<string, string>> = {
+  c: '°C',
+  celsius: '°C',
+  centigrade: '°C',
+  f: '°F',
+  fahrenheit: '°F',
+  k: 'K',
+  kelvin: 'K',
+};
+
+const PRESSURE_SPELLINGS: Readonly<Record<string, string>> = {
+  pa: 'Pa',
+  pascal: 'Pa',
+  hpa: 'hPa',
+  mbar: 'mbar',
+  mb: 'mbar',
+  millibar: 'mbar',
+  kpa: 'kPa',
+  bar: 'bar',
+  bars: 'bar',
+  mpa: 'MPa',
+  psi: 'psi',
+  lbfin2: 'psi',
+  lbin2: 'psi',
+  inhg: 'inHg',
+  inchhg: 'inHg',
+  '"hg': 'inHg',
+  mmhg: 'mmHg',
+  torr: 'torr',
+};
+
+/** The unit behind a spelling (`deg C`, `ºC`, `bar(g)`, `psia`, `in. Hg`); null where the text is no unit known here. */
+export function unitFromSpelling(spelling: string): SpelledUnit | null {
+  const bare = spelling
+    .trim()
+    .replace(/^[[({](.*)[\])}]$/u, '$1')
+    .normalize('NFKC')
+    .toLowerCase()
+    .replace(/[\s._^/·-]/g, '');
+  const temperature = TEMPERATURE_SPELLINGS[bare.replace(DEGREES, '')];
+  if (temperature !== undefined && Object.hasOwn(TEMPERATURE_SPELLINGS, bare.replace(DEGREES, ''))) {
+    return { unit: temperature, quantity: 'temperature', reference: null };
+  }
+  const match = REFERENCE.exec(bare)!;
+  const name = match[1]!;
+  if (!Object.hasOwn(PRESSURE_SPELLINGS, name)) return null;
+  return { unit: PRESSURE_SPELLINGS[name]!, quantity: 'pressure', reference: referenceFrom(match[2]) };
+}
+
+/**
+ * A degree sign as it is written (`°`, `º`, `˚`, `deg`), or as it arrives when its encoding was lost: `?`, U+FFFD, or
+ * the `Â°` of UTF-8 read as Windows-1252. NFKC turns `º` into `o`, `˚` into a space and U+030A, `℃` into `°C`.
+ */
+const DEGREES = /^(?:â?°|o|\u030a|\?|\ufffd+|deg(?:ree)?s?|grad|grd)(?=.)/u;
+
+const REFERENCE = /^(.*?)\(?(g|gauge|gage|rel|a|abs|absolute|vac|vacuum)?\)?$/u;
+
+function referenceFrom(suffix: string | undefined): 'gauge' | 'absolute' | null {
+  if (suffix === undefined || suffix.startsWith('vac')) return null;
+  return suffix.startsWith('a') ? 'absolute' : 'gauge';
+}
