@@ -1,22 +1,11 @@
 import type { ChannelRole } from '../log/layout.ts';
 import type { PassedOver, Repair } from '../log/readings.ts';
+import type { FaultKind } from '../run/fault-kinds.ts';
 
 /** What `check` says (`dwellbook-evaluation/1`): findings and verdict of one run against one issue of a cycle. */
 
 export type Outcome = 'met' | 'not-met' | 'cannot-tell' | 'pending';
 export type Verdict = 'conforms' | 'does-not-conform' | 'cannot-tell' | 'pending';
-
-export const FAULT_KINDS = [
-  'open',
-  'stuck',
-  'reversed',
-  'follows-air',
-  'jumping',
-  'offset',
-  'wrong-unit',
-  'unused',
-] as const;
-export type FaultKind = (typeof FAULT_KINDS)[number];
 
 /** A suspected sensor fault, with its evidence. A person decides. */
 export interface Fault {
@@ -81,6 +70,13 @@ export interface Dip {
   readonly sensor: string | null;
 }
 
+/** When one judged sensor was in a dwell; null where it did not enter, or has not left for good. */
+export interface SensorInDwell {
+  readonly channel: string;
+  readonly entered: string | null;
+  readonly left: string | null;
+}
+
 /** What happened in one stage, for one part. Instants are null where they did not come. */
 export interface StageRecord {
   readonly name: string;
@@ -91,6 +87,8 @@ export interface StageRecord {
   readonly openedBy: string | null;
   readonly closedBy: string | null;
   readonly dips: readonly Dip[];
+  /** Of a dwell: every judged sensor, in the order of `judgedBy`. */
+  readonly sensors?: readonly SensorInDwell[];
 }
 
 /** Where a window's bounds fell, for the chart. */

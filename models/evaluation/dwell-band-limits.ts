@@ -1,0 +1,194 @@
+import { furthest } from '../run/gaps.ts';
+import type { Interval } from '../run/intervals.ts';
+import { celsiusDifferenceFrom, round9, temperatureDifferenceFromCelsius, temperatureFromCelsius } from '../units.ts';
+import { type ForgivenessC, forgivenessC, forgiver } from './dips.ts';
+import { bandC, type DwellCourse, lastBackBelow } from './dwell-course.ts';
+import { showsCooling } from './dwell-time.ts';
+import type { Dwells } from './dwells.ts';
+import type { Outcome } from './evaluation.ts';
+import { type Found, say, unfinished } from './finding.ts';
+import { guarded } from './guarded.ts';
+import type { JudgedSensor, Judgement } from './judgement.ts';
+
+/** `<dwell>/upper`: the highest reading of any judged sensor between its entering and its leaving. */
+export function dwellUpperLimit(j: Judgement, dwells: Dwells, index: number): Found[] {
+  const stage = dwells.stages[index]!;
+  const sure = dwells.at(index, 'least').course;
+  const widest = dwells.at(index, 'most').course;
+  if (widest.entered.every((ms) => ms === null)) return [];
+  const unit = j.cycle.units.temperature;
+  const forgive = forgivenessC(stage.forgive?.above, (by) => celsiusDifferenceFrom(by, unit));
+  const hasEnded = j.sensors.every((s, k) => isDone(j, s, sure, k));
+  const outcome = guarded(dwells.shifts.length > 1, (shift) => {
+    const moved = { least: dwells.at(index, 'least', shift).course, most: dwells.at(index, 'most', shift).course };
+    if (j.sensors.some((s, k) => overshoots(j, s, moved.least, k, forgive).isBroken)) return 'not-met';
+    const mayBe = j.sensors.some(
+      (s, k) => overshoots(j, s, moved.most, k, forgive).isBroken || mayOvershoot(j, s, moved.most, k, forgive),
+    );
+    if (mayBe) return 'cannot-tell';
+    return hasEnded ? 'met' : unfinished(j);
+  });
+  const highest = highestOf(j, sure) ?? highestOf(j, widest);
+  if (highest === null) return [];
+  const { upperC } = bandC(j, stage, { uncertaintyC: 0 }, 0);
+  const isForgiven = outcome !== 'not-met' && highest.readingC > upperC;
+  const observed = temperatureFromCelsius(highest.readingC, unit);
+  const upper = round9(stage.target + stage.plus);
+  const forgivenTo = isForgiven ? (stage.forgive?.above?.by ?? 0) : 0;
+  return [
+    {
+      limit: `${stage.name}/upper`,
+      outcome,
+      observed,
+      possible: observed,
+      bounds: { atMost: upper },
+      margin: upper + forgivenTo - observed,
+      unit,
+      uncertainty: knownUncertainty(j, highest.sensor),
+      sensor: highest.sensor.name,
+      fromMs: highest.ms,
+      untilMs: highest.ms,
+      isForgiven,
+      because: upperSentence(outcome, highest.sensor.name, observed, upper, unit, isForgiven),
+    },
+  ];
+}
+
+function upperSentence(
+  outcome: Outcome,
+  sensor: string,
+  observed: number,
+  upper: number,
+  unit: string,
+  isForgiven: boolean,
+): string {
+  const reached = `${sensor} reached ${say(observed, 2)} ${unit}`;
+  if (outcome === 'not-met')
+    return `${reached}, ${say(observed - upper, 2)} ${unit} above the ${upper} ${unit} allowed.`;
+  const forgiven = isForgiven ? ', short and small enough to be forgiven' : '';
+  const settled = outcome === 'met' ? '' : '; what follows, or what a gap hides, is not settled';
+  return `${reached}${forgiven}; at most ${upper} ${unit} allowed${settled}.`;
+}
+
+function isDone(j: Judgement, s: JudgedSensor, course: DwellCourse, k: number): boolean {
+  if (s.untilMs !== Number.POSITIVE_INFINITY) return true;
+  return course.entered[k] === null ? showsCooling(j) : course.left[k]?.isFinal === true;
+}
+
+/** From its entering to its leaving; on the way to a hotter dwell, to when it was last at or below `upper` − 1 °C. */
+function stretchInside(j: Judgement, s: JudgedSensor, course: DwellCourse, k: number): Interval | null {
+  const from = course.entered[k] ?? null;
+  if (from === null) return null;
+  const left = course.left[k] ?? null;
+  const until = left?.ms ?? Math.min(j.log.until, s.untilMs);
+  const band = bandC(j, course.stage, s, course.shift);
+  const isWayUp = course.next.hotterLowerC !== null && left !== null && s.track.valueAt(until) >= band.upperC;
+  return { from, until: isWayUp ? lastBackBelow(j, s, band, from, until) : until };
+}
+
+function overshoots(
+  j: Judgement,
+  s: JudgedSensor,
+  course: DwellCourse,
+  k: number,
+  forgive: ForgivenessC | null,
+): { isBroken: boolean } {
+  const stretch = stretchInside(j, s, course, k);
+  if (stretch === null) return { isBroken: false };
+  const { upperC } = bandC(j, course.stage, s, course.shift);
+  const isForgiven = forgiver(forgive);
+  for (const over of s.track.crossings(upperC, '>').intervals()) {
+    const from = Math.max(over.from, stretch.from);
+    const until = Math.min(over.until, stretch.until);
+    const highest = from > until ? -1 : s.track.highestBetween(from, until);
+    if (highest < 0 || !isOutside(s.track.reading(highest), upperC, course.shift)) continue;
+    if (!isForgiven(until - from, round9(s.track.reading(highest) - upperC))) return { isBroken: true };
+  }
+  return { isBroken: false };
+}
+
+/** Above the limit; with the limit moved outwards by U, outside by U is outside. */
+function isOutside(reading: number, limit: number, shift: -1 | 0 | 1): boolean {
+  return shift === -1 ? reading >= limit : reading > limit;
+}
+
+function mayOvershoot(
+  j: Judgement,
+  s: JudgedSensor,
+  course: DwellCourse,
+  k: number,
+  forgive: ForgivenessC | null,
+): boolean {
+  const stretch = stretchInside(j, s, course, k);
+  if (stretch === null) return false;
+  const { upperC } = bandC(j, course.stage, s, course.shift);
+  return s.gaps.some((gap) => {
+    if (gap.from >= stretch.until || gap.until <= stretch.from) return false;
+    const hottest = furthest(gap, 1, j.changesAtMost, stretch);
+    if (hottest === null || hottest <= upperC) return false;
+    return forgive === null || hottest - upperC > forgive.byC || gap.until - gap.from > forgive.forMs;
+  });
+}
+
+function highestOf(j: Judgement, course: DwellCourse): { sensor: JudgedSensor; readingC: number; ms: number } | null {
+  let best: { sensor: JudgedSensor; readingC: number; ms: number } | null = null;
+  j.sensors.forEach((sensor, k) => {
+    const stretch = stretchInside(j, sensor, course, k);
+    const at = stretch === null ? -1 : sensor.track.highestBetween(stretch.from, stretch.until);
+    if (at < 0 || (best !== null && sensor.track.reading(at) <= best.readingC)) return;
+    best = { sensor, readingC: sensor.track.reading(at), ms: sensor.track.timeMs(at) };
+  });
+  return best;
+}
+
+/** U of a sensor in the cycle's unit; null where unknown. */
+export function knownUncertainty(j: Judgement, s: JudgedSensor): number | null {
+  const { uncertainty } = s.channel;
+  return uncertainty === null ? null : temperatureDifferenceFromCelsius(uncertainty, j.cycle.units.temperature);
+}
+
+/** `<dwell>/lower`: where the cycle allows no dip, one that is not forgiven breaks it. */
+export function dwellLowerLimit(j: Judgement, dwells: Dwells, index: number): Found[] {
+  const stage = dwells.stages[index]!;
+  if (stage.below !== 'not-allowed') return [];
+  const unit = j.cycle.units.temperature;
+  const lower = round9(stage.target - stage.minus);
+  const { time, clock } = dwells.at(index, 'least');
+  const outcomes = dwells.shifts.map((shift) => dipsOutcome(j, dwells, index, shift));
+  const outcome = outcomes.every((each) => each === outcomes[0]) ? outcomes[0]! : 'cannot-tell';
+  const seen = time.dips.filter(({ depthC }) => depthC !== null);
+  const deepest = seen.reduce<(typeof seen)[number] | null>(
+    (worst, dip) => (worst === null || dip.depthC! > worst.depthC! ? dip : worst),
+    null,
+  );
+  const observed = deepest === null ? null : round9(lower - temperatureDifferenceFromCelsius(deepest.depthC!, unit));
+  const stops = seen.filter(({ isForgiven }) => !isForgiven).length;
+  return [
+    {
+      limit: `${stage.name}/lower`,
+      outcome,
+      observed,
+      possible: observed,
+      bounds: { atLeast: lower },
+      unit,
+      sensor: deepest?.sensor ?? clock.openedBy,
+      fromMs: deepest?.from ?? time.opensMs,
+      untilMs: deepest?.until ?? time.closesMs,
+      isForgiven: outcome === 'met' && seen.length > 0,
+      because:
+        outcome === 'not-met'
+          ? `${deepest?.sensor ?? 'The clock'} fell ${say(lower - observed!, 2)} ${unit} below ${lower} ${unit}; no dip is allowed${stops > 1 ? ` (${stops} dips)` : ''}.`
+          : `No dip below ${lower} ${unit} is allowed; ${seen.length === 0 ? 'none was seen' : 'those seen are forgiven'}${outcome === 'met' ? '' : ', but the dwell is not seen whole'}.`,
+    },
+  ];
+}
+
+function dipsOutcome(j: Judgement, dwells: Dwells, index: number, shift: -1 | 0 | 1): Outcome {
+  const least = dwells.at(index, 'least', shift);
+  const most = dwells.at(index, 'most', shift);
+  if (least.time.dips.some(({ isForgiven, depthC }) => !isForgiven && depthC !== null)) return 'not-met';
+  if (least.time.dips.some(({ depthC }) => depthC === null)) return 'cannot-tell';
+  return least.clock.closing?.isFinal === true && most.clock.closing?.isFinal === true && least.time.opensMs !== null
+    ? 'met'
+    : unfinished(j);
+}

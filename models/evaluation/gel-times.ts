@@ -1,0 +1,45 @@
+import { type CureFill, type FollowedCure, followCure } from './cure-followers.ts';
+import type { JudgedSensor, Judgement } from './judgement.ts';
+
+/** The earliest estimated gel of a judged sensor, as early and as late as gaps allow. */
+export interface GelTimes {
+  readonly earlyMs: number | null;
+  readonly lateMs: number | null;
+  readonly unknown: string | null;
+}
+
+export function gelTimes(j: Judgement): GelTimes {
+  const unknown = gelUnknown(j);
+  if (unknown !== null) return { earlyMs: null, lateMs: null, unknown };
+  return { earlyMs: earliestGel(j, 'hot'), lateMs: earliestGel(j, 'cold'), unknown: null };
+}
+
+function gelUnknown(j: Judgement): string | null {
+  if (j.resin === null) return 'no resin set was given, so gel cannot be estimated';
+  if (j.resin.gel === undefined) return `the set ${j.resin.code} gives no degree of cure at gel`;
+  return estimated(j).length === 0 ? 'no judged sensor is left to estimate gel by' : null;
+}
+
+function earliestGel(j: Judgement, fill: CureFill): number | null {
+  const instants = estimated(j).flatMap((s) => {
+    const { gelS } = cureOf(j, s, fill).progress;
+    return gelS === null ? [] : [j.log.from + 1000 * gelS];
+  });
+  return instants.length === 0 ? null : Math.min(...instants);
+}
+
+/** Judged sensors that give a cure estimate: those with readings that nobody excluded. */
+export function estimated(j: Judgement): JudgedSensor[] {
+  return j.sensors.filter(({ track, untilMs }) => untilMs === Number.POSITIVE_INFINITY && track.length > 0);
+}
+
+export function cureOf(j: Judgement, s: JudgedSensor, fill: CureFill): FollowedCure {
+  const subject = {
+    track: s.track,
+    resin: j.resin!,
+    startDegree: j.part?.startDegree ?? null,
+    longestGapMs: j.longestGapMs,
+    changesAtMost: j.changesAtMost,
+  };
+  return followCure(j.digest, subject, s.gaps.length === 0 ? 'line' : fill);
+}

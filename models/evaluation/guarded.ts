@@ -1,0 +1,17 @@
+import type { Outcome } from './evaluation.ts';
+
+/**
+ * A limit decided with its guard band: met where it is met with the limit moved inwards by U, not met where it is not
+ * met with the limit moved outwards by U, and between the two nobody can tell.
+ *
+ * `decide` judges with the limit moved by so many U, inwards where positive. At −1 a reading that lies outside by
+ * exactly U is outside.
+ * Source: ISO 14253-1, JCGM 106 (guarded acceptance and guarded rejection).
+ */
+export function guarded(isGuarded: boolean, decide: (shift: -1 | 0 | 1) => Outcome): Outcome {
+  const asWritten = decide(0);
+  if (!isGuarded) return asWritten;
+  const inside = decide(1);
+  if (inside !== 'not-met') return inside;
+  return decide(-1) === 'not-met' ? 'not-met' : 'cannot-tell';
+}

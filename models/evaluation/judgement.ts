@@ -1,0 +1,95 @@
+import type { Resin } from '../cure/resin.ts';
+import type { Cycle } from '../cycle/cycle.ts';
+import type { RunChannel } from '../run/channel.ts';
+import type { RunDigest } from '../run/digest.ts';
+import { type Gap, gapsOf } from '../run/gaps.ts';
+import type { Interval } from '../run/intervals.ts';
+import type { LoadPart } from '../run/load.ts';
+import { celsiusDifferenceFrom, type TemperatureUnit } from '../units.ts';
+
+/** A thermocouple a part is judged by, believed until its exclusion. */
+export interface JudgedSensor {
+  readonly name: string;
+  readonly channel: RunChannel;
+  readonly track: RunChannel['track'];
+  /** Instant of its exclusion; `Infinity` where it is believed to the end. */
+  readonly untilMs: number;
+  /** Expanded uncertainty in °C; 0 where unknown: then it is judged as indicated. */
+  readonly uncertaintyC: number;
+  readonly gaps: readonly Gap[];
+}
+
+/** Everything the limits of one part look at, under one set of exclusions. */
+export interface Judgement {
+  readonly digest: RunDigest;
+  readonly cycle: Cycle;
+  readonly part: LoadPart | null;
+  readonly resin: Resin | null;
+  readonly log: Interval;
+  /** The run goes on: what has not ended is pending. */
+  readonly isOpen: boolean;
+  readonly longestGapMs: number;
+  /** In °C per ms. */
+  readonly changesAtMost: number;
+  /** Pa; null where not recorded. */
+  readonly barometerPa: number | null;
+  readonly sensors: readonly JudgedSensor[];
+  readonly air: readonly JudgedSensor[];
+  readonly ownSensors: boolean;
+}
+
+export function longestGapMs(cycle: Cycle, digest: RunDigest): number {
+  const written = cycle.log?.longestGap;
+  if (written !== undefined) return written * 60_000;
+  return Math.max(5 * (digest.medianIntervalMs() ?? 0), 60_000);
+}
+
+/** °C per ms. */
+export function changesAtMost(cycle: Cycle): number {
+  const unit = cycle.units.temperature;
+  const written = cycle.log?.changesAtMost ?? inUnit(unit, 20, 36);
+  return celsiusDifferenceFrom(written, unit) / 60_000;
+}
+
+/** A figure of the rules that is given for both units. */
+export function inUnit(unit: TemperatureUnit, forCelsius: number, forFahrenheit: number): number {
+  return unit === '°C' ? forCelsius : forFahrenheit;
+}
+
+/** The figures of the rules, in °C, for a cycle written in one unit. */
+export interface RuleFigures {
+  /** How far below `upper` counts as having come back: 1 °C, 2 °F. */
+  readonly chatterC: number;
+  /** Rise of the leading sensor that is heat-on: 5 °C, 9 °F. */
+  readonly heatOnC: number;
+  /** Fall below the hottest that shows the cooling: 15 °C, 27 °F. */
+  readonly coolingC: number;
+}
+
+export function ruleFigures(unit: TemperatureUnit): RuleFigures {
+  return {
+    chatterC: celsiusDifferenceFrom(inUnit(unit, 1, 2), unit),
+    heatOnC: celsiusDifferenceFrom(inUnit(unit, 5, 9), unit),
+    coolingC: celsiusDifferenceFrom(inUnit(unit, 15, 27), unit),
+  };
+}
+
+/** A channel as a judged sensor, believed until an instant. */
+export function judgedSensor(
+  channel: RunChannel,
+  digest: RunDigest,
+  believedUntilMs: number,
+  gapMs: number,
+  isGuarded: boolean,
+): JudgedSensor {
+  const whole = gapsOf(channel.track, gapMs, digest.log);
+  // An exclusion ends a sensor's gap. Where too little of the gap is left to be one, the sensor counts to its last reading.
+  const cut = whole.find(({ from, until }) => from < believedUntilMs && believedUntilMs <= until);
+  const isShort = cut !== undefined && cut.before !== null && believedUntilMs - cut.from <= gapMs;
+  const untilMs = isShort ? cut.from : believedUntilMs;
+  const gaps = whole
+    .filter((gap) => gap.from < untilMs)
+    .map((gap) => (gap.until > untilMs ? { ...gap, until: untilMs, after: null } : gap));
+  const uncertaintyC = isGuarded ? (channel.uncertainty ?? 0) : 0;
+  return { name: channel.layout.name, channel, track: channel.track, untilMs, uncertaintyC, gaps };
+}

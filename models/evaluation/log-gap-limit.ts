@@ -1,0 +1,88 @@
+import { gapsOf } from '../run/gaps.ts';
+import type { Interval } from '../run/intervals.ts';
+import { celsiusFrom } from '../units.ts';
+import type { Dwells } from './dwells.ts';
+import { type EventSources, eventTime, heatOnMs } from './events.ts';
+import { type Found, say, unfinished } from './finding.ts';
+import type { Judgement } from './judgement.ts';
+import { channelsFor } from './pressure-scale.ts';
+
+/** `log/gap`, where the cycle writes how long a gap may be: nobody can tell while a longer one lies on a used channel. */
+export function logGapLimit(sources: EventSources): Found[] {
+  const { j, dwells } = sources;
+  const longest = j.cycle.log?.longestGap;
+  if (longest === undefined) return [];
+  const span = { from: heatOnMs(j) ?? j.log.from, until: lastEndMs(sources) };
+  let worst: { name: string; gap: Interval } | null = null;
+  for (const { name, gaps } of usedChannels(j, dwells)) {
+    for (const gap of gaps) {
+      const isLong = gap.until - gap.from > j.longestGapMs;
+      if (!isLong || gap.from >= span.until || gap.until <= span.from) continue;
+      if (worst === null || gap.until - gap.from > worst.gap.until - worst.gap.from) worst = { name, gap };
+    }
+  }
+  const observed = worst === null ? null : (worst.gap.until - worst.gap.from) / 60_000;
+  return [
+    {
+      limit: 'log/gap',
+      outcome: worst !== null ? 'cannot-tell' : j.isOpen ? unfinished(j) : 'met',
+      observed,
+      possible: observed,
+      bounds: { atMost: longest },
+      unit: 'min',
+      sensor: worst?.name ?? null,
+      fromMs: worst?.gap.from ?? null,
+      untilMs: worst?.gap.until ?? null,
+      because:
+        worst === null
+          ? `No channel that a limit uses was silent for more than ${longest} min between heat-on and the end of the cycle.`
+          : `${worst.name} has no reading for ${say(observed!)} min; a gap of at most ${longest} min is allowed.`,
+    },
+  ];
+}
+
+/** The end of the last window or stage; the log's end where one is not seen to end. */
+function lastEndMs(sources: EventSources): number {
+  const { j, dwells } = sources;
+  const ends = [
+    stagesEndMs(j, dwells),
+    ...(j.cycle.windows ?? []).map(({ until }) => eventTime(sources, until).lateMs),
+  ];
+  return ends.some((end) => end === null) ? j.log.until : Math.max(...ends.map((end) => end!));
+}
+
+function stagesEndMs(j: Judgement, dwells: Dwells): number | null {
+  const last = j.cycle.stages.at(-1);
+  if (last?.kind === 'cool' && last.until !== undefined) {
+    const untilC = celsiusFrom(last.until, j.cycle.units.temperature);
+    const ends = j.sensors
+      .filter(({ untilMs, track }) => untilMs === Number.POSITIVE_INFINITY && track.length > 0)
+      .map(({ track }) =>
+        track.crossings(untilC, '<=').firstOn(track.timeMs(track.highestBetween(j.log.from, j.log.until))),
+      );
+    return ends.length === 0 || ends.some((end) => end === null) ? null : Math.max(...ends.map((end) => end!));
+  }
+  return last?.kind === 'dwell' ? dwells.closesMs(dwells.stages.length - 1, 'least') : null;
+}
+
+function usedChannels(j: Judgement, { stages }: Dwells): { name: string; gaps: readonly Interval[] }[] {
+  const { cycle } = j;
+  const usesAir =
+    stages.some(({ clock, longest }) =>
+      [clock, longest?.clock].some((one) => one?.opens === 'air-enters' || one?.closes === 'air-leaves'),
+    ) || cycle.stages.some((stage) => stage.kind !== 'dwell' && stage.rate?.of === 'air');
+  const events = (cycle.windows ?? []).flatMap(({ from, until }) => [from.at, until.at]);
+  const uses = (quantity: 'pressure' | 'vacuum') =>
+    (cycle.windows ?? []).some((window) => window.quantity === quantity) ||
+    events.some((at) => at.startsWith(quantity));
+  const usesPressure = uses('pressure') || cycle.cure?.pressureBeforeGel !== undefined;
+  const others = [
+    ...(usesPressure ? channelsFor(j, 'pressure') : []),
+    ...(uses('vacuum') ? channelsFor(j, 'vacuum') : []),
+  ];
+  return [
+    ...j.sensors,
+    ...(usesAir ? j.air : []),
+    ...others.map(({ layout, track }) => ({ name: layout.name, gaps: gapsOf(track, j.longestGapMs, j.log) })),
+  ];
+}

@@ -1,0 +1,41 @@
+import { ALLOWANCE } from './dips.ts';
+import type { Outcome } from './evaluation.ts';
+import { type Found, isAtMost, say } from './finding.ts';
+import type { Judgement } from './judgement.ts';
+
+/** Limits on what was recorded before the run: `leak-test`, `material/out-life`, `instruments/calibration`. */
+export function recordLimits(j: Judgement): Found[] {
+  const { leakTest, material, instruments } = j.cycle;
+  const notRecorded = (limit: string): Found => ({ limit, outcome: 'cannot-tell', unit: '', because: 'Not recorded.' });
+  return [
+    ...(leakTest === undefined ? [] : [leakTestLimit(j)]),
+    ...(material?.outLife === true ? [notRecorded('material/out-life')] : []),
+    ...(instruments?.calibration === true ? [notRecorded('instruments/calibration')] : []),
+  ];
+}
+
+function leakTestLimit(j: Judgement): Found {
+  const asked = j.cycle.leakTest!;
+  const unit = j.cycle.units.vacuum ?? '';
+  const bounds = { atMost: asked.lossAtMost };
+  const known = { limit: 'leak-test', bounds, unit };
+  const record = j.part?.leakTest;
+  if (record === undefined) return { ...known, outcome: 'cannot-tell', because: 'Not recorded.' };
+  // An absolute figure rises as the bag leaks, one below ambient falls.
+  const isAbsolute = unit.endsWith(' abs');
+  const lost = isAbsolute ? record.end - record.start : record.start - record.end;
+  const loss = (lost * asked.over) / record.minutes;
+  const start = asked.startAtLeast;
+  const isDeepEnough = start === undefined || (isAbsolute ? record.start <= start : record.start >= start);
+  const keepsLoss = isAtMost(loss, asked.lossAtMost + ALLOWANCE);
+  const outcome: Outcome = isDeepEnough && keepsLoss ? 'met' : 'not-met';
+  const scaled = record.minutes === asked.over ? '' : `, as ${say(loss, 3)} in ${asked.over} min`;
+  const weak = isDeepEnough ? '' : ` It started at ${record.start} ${unit}; ${start} ${unit} asked.`;
+  return {
+    ...known,
+    outcome,
+    observed: loss,
+    possible: loss,
+    because: `The bag lost ${say(lost, 3)} ${unit} in ${record.minutes} min${scaled}; at most ${asked.lossAtMost} ${unit} in ${asked.over} min allowed.${weak}`,
+  };
+}

@@ -1,0 +1,89 @@
+import { existsSync, readdirSync, readFileSync } from 'node:fs';
+import { join } from 'node:path';
+import { describe, expect, it } from 'vitest';
+import { DomainError } from '../../models/errors.ts';
+import type { Evaluation, Finding } from '../../models/evaluation/evaluation.ts';
+import { openRecordedRun } from '../support/recorded-run.ts';
+
+// Recorded runs with outcomes known by construction (noise and defects put into a made curve), written for the rules
+// of cycle and verdict by an independent implementation. Source of each: `what` in its expected.json.
+const FOLDERS = ['recorded', 'practice']
+  .filter((name) => existsSync(join(import.meta.dirname, name)))
+  .map((name) => join(import.meta.dirname, name))
+  .flatMap((folder) =>
+    readdirSync(folder, { withFileTypes: true })
+      .filter((entry) => entry.isDirectory())
+      .map((entry) => join(folder, entry.name)),
+  );
+
+interface ExpectedFinding {
+  limit: string;
+  outcome: string;
+  observed?: number;
+  within?: number;
+  possible?: number;
+  possibleWithin?: number;
+  margin?: number;
+  sensor?: string;
+}
+
+interface Expected {
+  what: string;
+  exit: number;
+  verdict?: string;
+  findings?: ExpectedFinding[];
+  parts?: Record<string, { verdict: string; findings: ExpectedFinding[] }>;
+  notFindings?: string[];
+  faults?: Record<string, string>;
+  repairs?: boolean;
+  stderr?: string[];
+}
+
+describe('a recorded run', () => {
+  it('was found at all', () => expect(FOLDERS.length).toBeGreaterThanOrEqual(56));
+
+  for (const folder of FOLDERS) {
+    const expected: Expected = JSON.parse(readFileSync(join(folder, 'expected.json'), 'utf8'));
+    it(expected.what, () => {
+      if (expected.exit === 65) {
+        expect(() => openRecordedRun(folder).judge()).toThrow(DomainError);
+        for (const word of expected.stderr ?? []) expect(() => openRecordedRun(folder).judge()).toThrow(word);
+        return;
+      }
+      compare(openRecordedRun(folder).judge(), expected);
+    });
+  }
+});
+
+function compare(evaluation: Evaluation, expected: Expected): void {
+  const all = evaluation.parts.flatMap(({ findings }) => findings);
+  if (expected.verdict !== undefined) expect(evaluation.verdict).toBe(expected.verdict);
+  compareFindings(all, expected.findings ?? []);
+  for (const [name, part] of Object.entries(expected.parts ?? {})) {
+    const judged = evaluation.parts.find((one) => one.part === name);
+    expect(judged?.verdict, name).toBe(part.verdict);
+    compareFindings(judged?.findings ?? [], part.findings);
+  }
+  if (expected.verdict === 'conforms') expect(all.filter(({ outcome }) => outcome !== 'met')).toEqual([]);
+  for (const outcome of expected.notFindings ?? []) expect(all.filter((one) => one.outcome === outcome)).toEqual([]);
+  for (const [channel, kind] of Object.entries(expected.faults ?? {})) {
+    const sensor = evaluation.sensors.find((one) => one.channel === channel);
+    expect(sensor?.faults.map((fault) => fault.kind)).toContain(kind);
+  }
+  if (expected.repairs) expect(evaluation.log.repairs).not.toEqual([]);
+}
+
+function compareFindings(findings: readonly Finding[], expected: readonly ExpectedFinding[]): void {
+  for (const one of expected) {
+    const found = findings.find(({ limit }) => limit === one.limit);
+    expect(found, one.limit).toBeDefined();
+    expect(`${found!.outcome} (${found!.because})`).toContain(`${one.outcome} (`);
+    if (one.observed !== undefined)
+      expect(Math.abs(found!.observed! - one.observed)).toBeLessThanOrEqual(one.within! + 1e-9);
+    if (one.possible !== undefined)
+      expect(Math.abs(found!.possible! - one.possible)).toBeLessThanOrEqual(one.possibleWithin!);
+    if (one.margin !== undefined) expect(Math.abs(found!.margin! - one.margin)).toBeLessThanOrEqual(0.02);
+    if (one.sensor !== undefined) expect(found!.sensor).toBe(one.sensor);
+    expect(found!.because).not.toBe('');
+  }
+}
