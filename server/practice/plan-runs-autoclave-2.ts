@@ -1,0 +1,128 @@
+import { stocks } from './plan-loads.ts';
+import { STOCKS } from './plan-practices.ts';
+import type { PlannedRun } from './plan-run.ts';
+
+/** Autoclave 2, rudder stocks. Its log gives vacuum absolute, so the barometer is written down. */
+
+const HERE = { vessel: 'Autoclave 2', practice: 'stocks', isBarometerRecorded: true } as const;
+const SOUND = { verdict: 'conforms' } as const;
+
+export const AUTOCLAVE_2_RUNS: readonly PlannedRun[] = [
+  {
+    ...HERE,
+    run: 'A2-0101',
+    startsAt: '2025-11-12T07:00:00Z',
+    workOrder: 'W-2102',
+    operator: 'operator 2',
+    parts: stocks(201, 2, 'K-17'),
+    barometerMbar: 1009,
+    expected: SOUND,
+  },
+  {
+    ...HERE,
+    run: 'A2-0102',
+    startsAt: '2025-12-10T07:02:30Z',
+    workOrder: 'W-2111',
+    operator: 'operator 1',
+    parts: stocks(203, 2, 'K-17'),
+    barometerMbar: 1018,
+    expected: SOUND,
+  },
+  {
+    ...HERE,
+    run: 'A2-0103',
+    startsAt: '2026-01-21T07:05:00Z',
+    workOrder: 'W-2119',
+    operator: 'operator 3',
+    parts: stocks(205, 2, 'K-18'),
+    barometerMbar: 1001,
+    isBarometerRecorded: false,
+    expected: { verdict: 'cannot-tell', cannotTell: ['window/bag vacuum until venting'] },
+  },
+  {
+    ...HERE,
+    run: 'A2-0104',
+    startsAt: '2026-03-04T07:01:00Z',
+    workOrder: 'W-2133',
+    operator: 'operator 2',
+    parts: stocks(207, 2, 'K-20'),
+    barometerMbar: 1007,
+    faults: [{ kind: 'reversed', channel: 'TC5' }],
+    decisions: [
+      {
+        channel: 'TC5',
+        decision: 'exclude',
+        fromMin: 0,
+        reason: 'Falls as its neighbours rise: wired the wrong way round at the panel, found and set right',
+        by: 'inspector 2',
+      },
+    ],
+    expected: SOUND,
+  },
+  {
+    ...HERE,
+    run: 'A2-0105',
+    startsAt: '2026-04-15T06:00:30Z',
+    workOrder: 'W-2146',
+    operator: 'operator 1',
+    parts: stocks(209, 1, 'K-21'),
+    barometerMbar: 1013,
+    programme: {
+      segments: [
+        { kind: 'soak', minutes: 14 },
+        { kind: 'ramp', toC: 122, cPerMin: 0.9 },
+        { kind: 'soak', minutes: 20, onceLaggingC: 110 },
+        { kind: 'ramp', toC: 173, cPerMin: 1.2 },
+        { kind: 'soak', minutes: 170, onceLaggingC: 169.5 },
+        { kind: 'ramp', toC: 45, cPerMin: 1.3 },
+      ],
+    },
+    notes: [{ minute: 10, text: 'Levelling dwell cut short on the controller, old programme card', by: 'operator 1' }],
+    expected: { verdict: 'does-not-conform', notMet: ['levelling dwell/time', 'cure dwell/upper', 'ceiling'] },
+  },
+  {
+    ...HERE,
+    run: 'A2-0106',
+    startsAt: '2026-05-20T06:03:00Z',
+    workOrder: 'W-2157',
+    operator: 'operator 2',
+    parts: stocks(210, 2, 'K-24'),
+    barometerMbar: 1004,
+    faults: [{ kind: 'offset', channel: 'TC2', byC: -9.5 }],
+    expected: { verdict: 'cannot-tell' },
+  },
+  {
+    ...HERE,
+    run: 'A2-0107',
+    startsAt: '2026-07-01T06:01:30Z',
+    workOrder: 'W-2175',
+    operator: 'operator 3',
+    parts: stocks(212, 2, 'K-24'),
+    barometerMbar: 1016,
+    expected: SOUND,
+  },
+  {
+    ...HERE,
+    run: 'A2-0108',
+    startsAt: '2026-08-26T06:04:00Z',
+    workOrder: 'W-2190',
+    operator: 'operator 1',
+    parts: stocks(214, 2, 'K-26'),
+    barometerMbar: 1010,
+    recorderMishaps: [{ kind: 'stops', atMin: 381 }],
+    notes: [{ minute: 381, text: 'Memory card full; nothing logged from here on', by: 'operator 1' }],
+    expected: { verdict: 'cannot-tell' },
+  },
+  {
+    ...HERE,
+    run: 'A2-0109',
+    startsAt: '2026-10-07T06:02:00Z',
+    workOrder: 'W-2201',
+    operator: 'operator 2',
+    parts: stocks(216, 2, 'K-27'),
+    barometerMbar: 1008,
+    pressure: STOCKS.pressure!,
+    faults: [{ kind: 'in-the-air', channel: 'TC6', fromMin: 0 }],
+    expected: { verdict: 'cannot-tell' },
+  },
+];
