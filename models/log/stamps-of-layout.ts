@@ -6,6 +6,8 @@ const MS_PER: Readonly<Record<'s' | 'min' | 'h', number>> = { s: 1000, min: 60_0
 const DAY_MS = 86_400_000;
 /** Day 0 of the 1900 system of spreadsheets, right from 1 March 1900 on: ISO/IEC 29500-1:2016, 18.17.4.1. */
 const SERIAL_DAY_ZERO_MS = Date.UTC(1899, 11, 30);
+/** How a workbook's cells come that are shown as dates, whatever they look like there. */
+const SHOWN_DATE = 'yyyy-MM-dd HH:mm:ss.SSS';
 const LAST_SERIAL_DAY = 2_958_465; // 9999-12-31
 
 /** Reads the stamps of a layout: local times as the clock showed them, or instants where `isAbsolute`. */
@@ -19,10 +21,12 @@ export function stampsOfLayout(time: TimeLayout, decimal: '.' | ',', charset: 'u
       read: (bytes, length) => startMs + Math.round(sumOfFigures(bytes, length, decimal) * unitMs),
     };
   }
+  const shown = stampReader(SHOWN_DATE, charset);
   return {
     isAbsolute: false,
     read(bytes, length) {
       const days = sumOfFigures(bytes, length, decimal);
+      if (Number.isNaN(days)) return shown.read(bytes, length);
       return days >= 1 && days <= LAST_SERIAL_DAY + 1 ? SERIAL_DAY_ZERO_MS + Math.round(days * DAY_MS) : Number.NaN;
     },
   };
