@@ -51,13 +51,13 @@ export function problemOffline(cause: unknown): ProblemError {
 export async function problemFrom(response: Response): Promise<ProblemError> {
   const body = await readProblem(response);
   return new ProblemError({
-    code: lastSegment(text(body['type'])) ?? 'unknown',
+    code: lastSegment(text(body.type)) ?? 'unknown',
     status: response.status,
-    title: text(body['title']) ?? `The server answered ${response.status}`,
-    detail: text(body['detail']) ?? 'It gave no reason.',
-    facts: (body['facts'] ?? {}) as ProblemFacts,
-    errors: Array.isArray(body['errors']) ? (body['errors'] as Pointed[]) : [],
-    instance: text(body['instance']),
+    title: text(body.title) ?? `The server answered ${response.status}`,
+    detail: text(body.detail) ?? 'It gave no reason.',
+    facts: (body.facts ?? {}) as ProblemFacts,
+    errors: Array.isArray(body.errors) ? (body.errors as Pointed[]) : [],
+    instance: text(body.instance),
   });
 }
 

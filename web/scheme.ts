@@ -11,7 +11,7 @@ const systemIsDark = matchMedia('(prefers-color-scheme: dark)');
 export function followScheme(onChange: () => void = () => undefined): () => void {
   const apply = () => {
     const choice = schemeChoice.value;
-    document.documentElement.dataset['scheme'] =
+    document.documentElement.dataset.scheme =
       choice === 'as-system' ? (systemIsDark.matches ? 'dark' : 'light') : choice;
     onChange();
   };

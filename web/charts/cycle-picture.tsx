@@ -27,7 +27,9 @@ export function CyclePicture({ cycle, lit }: { cycle: Cycle; lit: string | null 
           </svg>
         )}
       </div>
-      <figcaption class="soft small">Drawn to be read, not to scale: one course that would keep every limit.</figcaption>
+      <figcaption class="soft small">
+        Drawn to be read, not to scale: one course that would keep every limit.
+      </figcaption>
     </figure>
   );
 }
@@ -48,7 +50,17 @@ function Course({ cycle, shape, width, lit }: { cycle: Cycle; shape: CycleShape;
   );
 }
 
-function Axis({ cycle, shape, y, width }: { cycle: Cycle; shape: CycleShape; y: (t: number) => number; width: number }) {
+function Axis({
+  cycle,
+  shape,
+  y,
+  width,
+}: {
+  cycle: Cycle;
+  shape: CycleShape;
+  y: (t: number) => number;
+  width: number;
+}) {
   const levels = [...new Set([shape.lowest, ...shape.stages.map((s) => s.untilTemperature)])].sort((a, b) => a - b);
   const apart = levels.filter((level, n) => n === 0 || y(levels[n - 1] ?? 0) - y(level) > 15);
   return (

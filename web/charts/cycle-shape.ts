@@ -41,7 +41,11 @@ export function shapeOfCycle(cycle: Cycle): CycleShape {
     untilMin: minuteOf(window.until, stages, lengthMin),
   }));
   const dwells = cycle.stages.filter((stage) => stage.kind === 'dwell');
-  const highest = Math.max(...dwells.map(upperOf), ...stages.map((s) => s.untilTemperature), cycle.ceiling ?? -Infinity);
+  const highest = Math.max(
+    ...dwells.map(upperOf),
+    ...stages.map((s) => s.untilTemperature),
+    cycle.ceiling ?? -Infinity,
+  );
   return { stages, windows, lengthMin, lowest: ambient(cycle), highest };
 }
 
@@ -54,7 +58,13 @@ function stagesOf(cycle: Cycle): ShapeStage[] {
     const untilTemperature = endOf(cycle, stage, n, temperature);
     const travel = Math.abs(untilTemperature - temperature);
     const minutes = stage.kind === 'dwell' ? dwellMinutes(stage) : travelMinutes(cycle, stage, travel, longest);
-    const shape = { stage, fromMin: minute, untilMin: minute + minutes, fromTemperature: temperature, untilTemperature };
+    const shape = {
+      stage,
+      fromMin: minute,
+      untilMin: minute + minutes,
+      fromTemperature: temperature,
+      untilTemperature,
+    };
     minute += minutes;
     temperature = untilTemperature;
     return shape;
@@ -65,7 +75,8 @@ function endOf(cycle: Cycle, stage: Stage, n: number, temperature: number): numb
   if (stage.kind === 'dwell') return stage.target;
   const next = cycle.stages.slice(n + 1).find((later) => later.kind === 'dwell');
   if (next?.kind === 'dwell') return next.target;
-  if (stage.kind === 'cool') return stage.until ?? Math.min(temperature, temperatureFromCelsius(60, cycle.units.temperature));
+  if (stage.kind === 'cool')
+    return stage.until ?? Math.min(temperature, temperatureFromCelsius(60, cycle.units.temperature));
   return stage.rate ? Math.max(...stage.rate.over) : temperature;
 }
 

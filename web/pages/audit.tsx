@@ -16,7 +16,10 @@ import { count } from '../words/figures.ts';
 export function AuditPage() {
   usePageTitle('Audit trail');
   const reading = useRead<Audit>(auditPath());
-  const [earlier, setEarlier] = useState<{ lines: readonly AuditLine[]; next: number | null }>({ lines: [], next: null });
+  const [earlier, setEarlier] = useState<{ lines: readonly AuditLine[]; next: number | null }>({
+    lines: [],
+    next: null,
+  });
   const [verified, setVerified] = useState<AuditVerification | null>(null);
   const checking = usePost(async () => setVerified(await readJson<AuditVerification>(AUDIT_VERIFY_PATH)));
   const adding = usePost(async (before: number) => {

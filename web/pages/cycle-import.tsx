@@ -38,8 +38,8 @@ export default function CycleImportPage() {
     <Notebook>
       <PageHead title="Bring in a cycle">
         <p class="soft">
-          A document of the form dwellbook-cycle/1. It is read as you type; nothing is kept until you say so, and it is a
-          draft until it is released.
+          A document of the form dwellbook-cycle/1. It is read as you type; nothing is kept until you say so, and it is
+          a draft until it is released.
         </p>
       </PageHead>
       <form
@@ -49,7 +49,11 @@ export default function CycleImportPage() {
           if (read.cycle) void saving.post(read.cycle);
         }}
       >
-        <FileButton label="Choose a document" accept=".json,application/json" onFile={async (file) => change(await file.text())} />
+        <FileButton
+          label="Choose a document"
+          accept=".json,application/json"
+          onFile={async (file) => change(await file.text())}
+        />
         <AreaField
           label="Cycle document"
           class="document-text"

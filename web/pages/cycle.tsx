@@ -11,14 +11,15 @@ import { RunEntry } from '../parts/run-entry.tsx';
 import { Shown } from '../parts/shown.tsx';
 import { StatusTag } from '../parts/status-tag.tsx';
 import { When } from '../parts/when.tsx';
+import { Wide } from '../parts/wide.tsx';
 import { useRead } from '../use-read.ts';
 import { CycleEntry } from './cycles.tsx';
 
 /** One issue of a cycle, in picture and in words beside it. */
 export default function CyclePage() {
   const { params } = useRoute();
-  const code = params['code'] ?? '';
-  const issue = params['issue'] ?? '';
+  const code = params.code ?? '';
+  const issue = params.issue ?? '';
   usePageTitle(`${code} issue ${issue}`);
   const reading = useRead<CycleView>(cyclePath(code, issue));
   const view = reading.value;
@@ -79,9 +80,9 @@ function Body({ view, again }: { view: CycleView; again: () => void }) {
         </p>
         <details>
           <summary>As it was written</summary>
-          <pre class="table-scroll" tabIndex={0}>
-            {JSON.stringify(view.document, null, 2)}
-          </pre>
+          <Wide label="The document as it was written">
+            <pre>{JSON.stringify(view.document, null, 2)}</pre>
+          </Wide>
         </details>
       </section>
     </>

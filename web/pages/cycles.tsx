@@ -1,5 +1,5 @@
-import { CYCLES_PATH } from '../../server/contract/paths.ts';
 import type { CycleLine, Cycles } from '../../server/contract/cycles.ts';
+import { CYCLES_PATH } from '../../server/contract/paths.ts';
 import { usePageTitle } from '../page-title.ts';
 import { Entry, Notebook, PageHead } from '../parts/notebook.tsx';
 import { Shown } from '../parts/shown.tsx';
@@ -28,8 +28,8 @@ export function CyclesPage() {
             <div class="empty">
               <h2>No cycle is on record yet</h2>
               <p>
-                A run can be kept without one, but not judged. Bring in the cycle as a document: limits, stage by stage, in
-                the units of the specification it comes from.
+                A run can be kept without one, but not judged. Bring in the cycle as a document: limits, stage by stage,
+                in the units of the specification it comes from.
               </p>
             </div>
           ) : (

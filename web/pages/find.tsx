@@ -10,7 +10,7 @@ import { useRead } from '../use-read.ts';
 /** Where a scanned or typed code leads; one exact hit is gone to at once. */
 export function FindPage() {
   const { query, route } = useLocation();
-  const code = query['code']?.trim() ?? '';
+  const code = query.code?.trim() ?? '';
   const reading = useRead<Found>(code === '' ? null : findPath(code));
   usePageTitle(`Find ${code}`);
   const exact = reading.value?.hits.filter((hit) => hit.exact) ?? [];
@@ -38,8 +38,8 @@ function Hits({ found }: { found: Found }) {
       <div class="empty">
         <p>Nothing on record carries this code or contains it.</p>
         <p>
-          Look through <a href="/runs">runs</a>, <a href="/parts">parts</a> or <a href="/cycles">cycles</a>, or check the
-          code: 0 and O, 1 and l are easily mistaken.
+          Look through <a href="/runs">runs</a>, <a href="/parts">parts</a> or <a href="/cycles">cycles</a>, or check
+          the code: 0 and O, 1 and l are easily mistaken.
         </p>
       </div>
     );

@@ -9,8 +9,8 @@ import { ImportDiscard } from '../parts/import-discard.tsx';
 import { PreviewProblem, PreviewView } from '../parts/import-preview.tsx';
 import { ImportRecord } from '../parts/import-record.tsx';
 import { LayoutChannels } from '../parts/layout-channels.tsx';
-import { LayoutEditor, type LayoutEditing } from '../parts/layout-editor.tsx';
 import { LayoutChoice } from '../parts/layout-choice.tsx';
+import { type LayoutEditing, LayoutEditor } from '../parts/layout-editor.tsx';
 import { Notebook, PageHead } from '../parts/notebook.tsx';
 import { Shown } from '../parts/shown.tsx';
 import { Waiting } from '../parts/waiting.tsx';
@@ -23,7 +23,7 @@ import { withMissing } from '../words/layout-edits.ts';
 /** One file: how it is read stands beside its first lines, and can be corrected until it is right. */
 export default function ImportFilePage() {
   const { params } = useRoute();
-  const id = Number(params['id']);
+  const id = Number(params.id);
   const reading = useRead<ImportView>(importPath(id));
   const view = reading.value;
   usePageTitle(view ? `Read ${view.name}` : 'Read a file');
@@ -61,7 +61,8 @@ function Body({ view }: { view: ImportView }) {
       </p>
     );
   }
-  if (view.state === 'discarded') return <p class="notice">This file was set aside. Import it again if it is needed.</p>;
+  if (view.state === 'discarded')
+    return <p class="notice">This file was set aside. Import it again if it is needed.</p>;
   if (!view.proposal) {
     return (
       <div class="stack">
@@ -118,7 +119,8 @@ function Reading({ view, proposal }: { view: ImportView; proposal: NonNullable<I
         <h2>What the whole file then says</h2>
         {open.length > 0 && (
           <p class="notice amber">
-            {count(open.length, 'question')} must be answered first: {listed(open.map(({ key }) => placeName(key, layout)))}.
+            {count(open.length, 'question')} must be answered first:{' '}
+            {listed(open.map(({ key }) => placeName(key, layout)))}.
           </p>
         )}
         {isReading && <Waiting what={`Reading ${view.name} whole`} />}

@@ -40,12 +40,13 @@ export function ImportPage() {
     <Notebook>
       <PageHead title="Import a log">
         <p class="soft">
-          The file as the recorder wrote it: text with commas, semicolons or tabs, or .xlsx. Its bytes are kept unchanged,
-          with their SHA-256.
+          The file as the recorder wrote it: text with commas, semicolons or tabs, or .xlsx. Its bytes are kept
+          unchanged, with their SHA-256.
         </p>
       </PageHead>
-      <div
+      <fieldset
         class="drop"
+        aria-label="Bring a file here"
         data-over={isOver ? 'yes' : 'no'}
         onDragOver={(event) => {
           event.preventDefault();
@@ -63,7 +64,7 @@ export function ImportPage() {
         />
         <p class="soft">or drop it here. Nothing becomes a run before you have seen how it is read.</p>
         {sending.isUnderWay && file && <Waiting what={`Sending ${file.name}, ${bytes(file.size)}`} />}
-      </div>
+      </fieldset>
       {sending.problem && (
         <Problem
           problem={sending.problem}

@@ -13,7 +13,7 @@ import { zone } from '../workshop.ts';
 /** Says who was where in a run: parts, their bags, and which thermocouple was on which part. */
 export default function LoadPage() {
   const { params } = useRoute();
-  const run = Number(params['run']);
+  const run = Number(params.run);
   usePageTitle(`Load of run ${run}`);
   const reading = useRead<RunView>(runPath(run));
   const view = reading.value;

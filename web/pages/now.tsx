@@ -1,5 +1,5 @@
-import { NOW_PATH } from '../../server/contract/paths.ts';
 import type { Now } from '../../server/contract/now.ts';
+import { NOW_PATH } from '../../server/contract/paths.ts';
 import { usePageTitle } from '../page-title.ts';
 import { FirstSteps } from '../parts/first-steps.tsx';
 import { Needs } from '../parts/needs.tsx';

@@ -1,6 +1,6 @@
 import { useLocation } from 'preact-iso';
-import { Notebook, PageHead } from '../parts/notebook.tsx';
 import { usePageTitle } from '../page-title.ts';
+import { Notebook, PageHead } from '../parts/notebook.tsx';
 
 export function NowherePage() {
   const { path } = useLocation();

@@ -1,6 +1,6 @@
 import { useRoute } from 'preact-iso';
-import { partPath } from '../../server/contract/paths.ts';
 import type { PartView } from '../../server/contract/parts.ts';
+import { partPath } from '../../server/contract/paths.ts';
 import { usePageTitle } from '../page-title.ts';
 import { AuditEntries } from '../parts/audit-entries.tsx';
 import { Notebook, PageHead } from '../parts/notebook.tsx';
@@ -16,7 +16,7 @@ import { zone } from '../workshop.ts';
 /** A part's whole cure history: everything that touched it, everything that shares it, and what is not on record. */
 export function PartPage() {
   const { params } = useRoute();
-  const serial = params['serial'] ?? '';
+  const serial = params.serial ?? '';
   usePageTitle(`Part ${serial}`);
   const reading = useRead<PartView>(partPath(serial));
   const view = reading.value;

@@ -1,7 +1,7 @@
 import { useState } from 'preact/hooks';
 import { useLocation } from 'preact-iso';
-import { partsPath, withQuery } from '../../server/contract/paths.ts';
 import type { PartLine, Parts } from '../../server/contract/parts.ts';
+import { partsPath, withQuery } from '../../server/contract/paths.ts';
 import { usePageTitle } from '../page-title.ts';
 import { TextField } from '../parts/field.tsx';
 import { Entry, Notebook, PageHead } from '../parts/notebook.tsx';
@@ -15,7 +15,7 @@ import { count } from '../words/figures.ts';
 export function PartsPage() {
   usePageTitle('Parts');
   const { query, route } = useLocation();
-  const q = query['q'] ?? '';
+  const q = query.q ?? '';
   const [typed, setTyped] = useState(q);
   const reading = useRead<Parts>(partsPath({ q }));
   const look = (event: Event) => {
@@ -73,7 +73,9 @@ function PartEntry({ part }: { part: PartLine }) {
           part.title,
           part.drawing,
           part.quantity > 1 ? `${part.quantity} pieces` : '',
-          part.runs.length === 0 ? 'no run on record' : `${part.runs.length === 1 ? 'run' : 'runs'} ${part.runs.join(', ')}`,
+          part.runs.length === 0
+            ? 'no run on record'
+            : `${part.runs.length === 1 ? 'run' : 'runs'} ${part.runs.join(', ')}`,
         ]
           .filter(Boolean)
           .join(' · ')}

@@ -17,8 +17,8 @@ export function RecordersPage() {
     <Notebook>
       <PageHead title="Recorders">
         <p class="soft">
-          A recorder writes its files always in the same way. Its layout is kept from the first file that was read, so that
-          the next one needs no questions.
+          A recorder writes its files always in the same way. Its layout is kept from the first file that was read, so
+          that the next one needs no questions.
         </p>
       </PageHead>
       <Shown reading={reading} what="Reading the recorders">
@@ -57,7 +57,7 @@ export function RecordersPage() {
 
 export function RecorderPage() {
   const { params } = useRoute();
-  const name = params['name'] ?? '';
+  const name = params.name ?? '';
   usePageTitle(`Recorder ${name}`);
   const reading = useRead<Recorder>(recorderPath(name));
   return (

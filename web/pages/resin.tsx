@@ -14,7 +14,7 @@ import { asWritten } from '../words/figures.ts';
 /** A resin set as it is: where it comes from, what it may be used for, its figures. */
 export default function ResinPage() {
   const { params } = useRoute();
-  const code = params['code'] ?? '';
+  const code = params.code ?? '';
   usePageTitle(`Resin ${code}`);
   const reading = useRead<ResinView>(resinPath(code));
   const view = reading.value;
@@ -98,7 +98,11 @@ function Figures({ resin }: { resin: Resin }) {
       <dt>Law of the rate</dt>
       <dd>{law}</dd>
       {Object.entries(constants).map(([name, value]) => (
-        <Line key={name} name={name} value={Array.isArray(value) ? value.join(', ') : `${asWritten(value)}${unitOf(name)}`} />
+        <Line
+          key={name}
+          name={name}
+          value={Array.isArray(value) ? value.join(', ') : `${asWritten(value)}${unitOf(name)}`}
+        />
       ))}
       <Line name="Gas constant" value={asWritten(resin.gasConstant, 'J/(mol K)')} />
       <Line name="Degree of cure at the start" value={asWritten(resin.initialDegree)} />

@@ -17,8 +17,8 @@ export function ResinsPage() {
     <Notebook>
       <PageHead title="Resins">
         <p class="soft">
-          One set is one study’s parameters, never mixed with another’s. What is worked out with a set is an estimate, and
-          every page says so.
+          One set is one study’s parameters, never mixed with another’s. What is worked out with a set is an estimate,
+          and every page says so.
         </p>
       </PageHead>
       <Shown reading={reading} what="Reading the resins">

@@ -11,7 +11,7 @@ import { useRead } from '../use-read.ts';
 /** One run: what it came to, why, and all it rests on. */
 export default function RunPage() {
   const { params } = useRoute();
-  const run = Number(params['run']);
+  const run = Number(params.run);
   usePageTitle(`Run ${run}`);
   const reading = useRead<RunView>(runPath(run));
   if (!reading.value) {

@@ -30,7 +30,7 @@ export function RunsPage() {
   const reading = useRead<Runs>(runsPath(query));
   const vessels = useRead<Vessels>(VESSELS_PATH).value?.vessels ?? [];
   const change = (next: Query) => route(withQuery('/runs', { ...query, ...next }), true);
-  const which = query['verdict'] ? `verdict=${query['verdict']}` : query['state'] ? `state=${query['state']}` : '';
+  const which = query.verdict ? `verdict=${query.verdict}` : query.state ? `state=${query.state}` : '';
   return (
     <Notebook>
       <PageHead title="Runs">
@@ -53,26 +53,21 @@ export function RunsPage() {
         />
         <ChoiceField
           label="Vessel"
-          choices={[
-            { value: '', text: 'any vessel' },
-            ...vessels.map(({ name }) => ({ value: name, text: name })),
-          ]}
-          value={query['vessel'] ?? ''}
+          choices={[{ value: '', text: 'any vessel' }, ...vessels.map(({ name }) => ({ value: name, text: name }))]}
+          value={query.vessel ?? ''}
           onValue={(vessel) => change({ vessel })}
         />
-        <TextField
-          label="Cycle"
-          value={query['cycle'] ?? ''}
-          onLeave={(cycle) => change({ cycle: cycle.trim() })}
-        />
-        <TextField
-          label="Part"
-          value={query['part'] ?? ''}
-          onLeave={(part) => change({ part: part.trim() })}
-        />
+        <TextField label="Cycle" value={query.cycle ?? ''} onLeave={(cycle) => change({ cycle: cycle.trim() })} />
+        <TextField label="Part" value={query.part ?? ''} onLeave={(part) => change({ part: part.trim() })} />
       </form>
       <Shown reading={reading} what="Reading the runs">
-        {(runs) => (runs.total === 0 ? <NoRuns isFiltered={Object.keys(query).length > 0} /> : <Lines first={runs} query={query} />)}
+        {(runs) =>
+          runs.total === 0 ? (
+            <NoRuns isFiltered={Object.keys(query).length > 0} />
+          ) : (
+            <Lines first={runs} query={query} />
+          )
+        }
       </Shown>
     </Notebook>
   );

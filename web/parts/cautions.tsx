@@ -7,8 +7,9 @@ export function Cautions() {
     <footer class="cautions">
       {shop?.practice && <p class="practice">{shop.sentence}</p>}
       <p>
-        Dwellbook compares logged readings with a written cycle. It is no release of a part, and says nothing about whether
-        a vessel is safe to open. The governing specification, the material maker, local code and licensed practice decide.
+        Dwellbook compares logged readings with a written cycle. It is no release of a part, and says nothing about
+        whether a vessel is safe to open. The governing specification, the material maker, local code and licensed
+        practice decide.
       </p>
       {shop && (
         <p>

@@ -1,6 +1,6 @@
+import { limitTitle } from '../../models/cycle/limits-of-cycle.ts';
 import type { Evaluation, Finding, PartEvaluation } from '../../models/evaluation/evaluation.ts';
 import type { RunView } from '../../server/contract/runs.ts';
-import { limitTitle } from '../../models/cycle/limits-of-cycle.ts';
 import { asWritten, figure, listed } from '../words/figures.ts';
 import { asked, isEstimate, limitName, observedFigure, worstFirst } from '../words/limits.ts';
 import { sentence } from '../words/verdicts.ts';
@@ -24,13 +24,17 @@ export function FindingList({
   return (
     <section aria-label={`Findings${part.part ? ` for ${part.part}` : ''}, worst first`}>
       <p class="judged-by">
-        <b>{part.part ? <a href={`/parts/${encodeURIComponent(part.part)}`}>{part.part}</a> : 'The load'}</b> · judged by{' '}
-        {part.judgedBy.length > 0 ? listed(part.judgedBy) : 'no thermocouple'}
+        <b>{part.part ? <a href={`/parts/${encodeURIComponent(part.part)}`}>{part.part}</a> : 'The load'}</b> · judged
+        by {part.judgedBy.length > 0 ? listed(part.judgedBy) : 'no thermocouple'}
         {part.ownSensors ? '' : ', none of them its own'}, {rule === 'guarded' ? 'guarded by U' : 'as indicated'}
       </p>
       <ul class="findings">
         {worstFirst(part.findings).map((finding) => (
-          <li key={finding.limit} class={`finding is-${finding.outcome}`} data-lit={lit === finding.limit ? 'yes' : 'no'}>
+          <li
+            key={finding.limit}
+            class={`finding is-${finding.outcome}`}
+            data-lit={lit === finding.limit ? 'yes' : 'no'}
+          >
             <button
               type="button"
               aria-pressed={lit === finding.limit}

@@ -1,5 +1,6 @@
 import type { Layout } from '../../models/log/layout.ts';
 import { delimiterName } from '../words/layouts.ts';
+import { Wide } from './wide.tsx';
 
 /** The file's own first lines, with what each line is taken for. */
 export function FirstLines({ name, lines, layout }: { name: string; lines: readonly string[]; layout: Layout | null }) {
@@ -8,7 +9,7 @@ export function FirstLines({ name, lines, layout }: { name: string; lines: reado
       <figcaption>
         First lines of <strong class="breakable">{name}</strong>
       </figcaption>
-      <div class="table-scroll" tabIndex={0} role="region" aria-label={`First lines of ${name}`}>
+      <Wide label={`First lines of ${name}`}>
         <ol>
           {lines.map((line, n) => {
             const taken = takenFor(n + 1, layout);
@@ -21,7 +22,7 @@ export function FirstLines({ name, lines, layout }: { name: string; lines: reado
             );
           })}
         </ol>
-      </div>
+      </Wide>
       {layout && <p class="soft small">Cells apart by {delimiterName(layout.delimiter ?? ',')}.</p>}
     </figure>
   );

@@ -5,14 +5,17 @@ import { count, figure, plain } from '../words/figures.ts';
 import { passedOverWords, repairWords } from '../words/repairs.ts';
 import { zone } from '../workshop.ts';
 import { Problem } from './problem.tsx';
+import { Wide } from './wide.tsx';
 
 /** What the whole file says when it is read by this layout. */
 export function PreviewView({ preview }: { preview: Preview }) {
-  const every = preview.intervalS === null ? '' : `, one every ${plain(preview.intervalS, preview.intervalS % 1 ? 1 : 0)} s`;
+  const every =
+    preview.intervalS === null ? '' : `, one every ${plain(preview.intervalS, preview.intervalS % 1 ? 1 : 0)} s`;
   return (
     <div class="stack">
       <p class="lead">
-        {preview.scans} scans, {dayAndClock(preview.from, zone.value)}; {stretch(preview.from, preview.until, zone.value)}
+        {preview.scans} scans, {dayAndClock(preview.from, zone.value)};{' '}
+        {stretch(preview.from, preview.until, zone.value)}
         {every}.
       </p>
       {preview.repairs.length > 0 && (
@@ -23,7 +26,7 @@ export function PreviewView({ preview }: { preview: Preview }) {
         </ul>
       )}
       {preview.passedOver.length > 0 && <p class="soft">{passedOverWords(preview.passedOver)}</p>}
-      <div class="table-scroll" tabIndex={0} role="region" aria-label="First scans as read">
+      <Wide label="First scans as read">
         <table>
           <caption class="unseen">First scans as read</caption>
           <thead>
@@ -50,21 +53,15 @@ export function PreviewView({ preview }: { preview: Preview }) {
             ))}
           </tbody>
         </table>
-      </div>
+      </Wide>
       <p class="soft">{count(preview.channels.length, 'channel')} will be kept.</p>
     </div>
   );
 }
 
 /** A refusal that names its line and column, and the one cell that could be taken as no reading. */
-export function PreviewProblem({
-  problem,
-  onMissing,
-}: {
-  problem: ProblemError;
-  onMissing: (cell: string) => void;
-}) {
-  const cell = problem.facts['cell'];
+export function PreviewProblem({ problem, onMissing }: { problem: ProblemError; onMissing: (cell: string) => void }) {
+  const cell = problem.facts.cell;
   const isCell = problem.code === 'log-cell-unreadable' && typeof cell === 'string';
   return (
     <div class="stack">

@@ -52,10 +52,7 @@ export function ImportRecord({
           <TextField label="Recorder it came from" maxLength={120} value={recorder} onValue={setRecorder} />
           <ChoiceField
             label="Vessel"
-            choices={[
-              { value: '', text: 'not said' },
-              ...vessels.map(({ name }) => ({ value: name, text: name })),
-            ]}
+            choices={[{ value: '', text: 'not said' }, ...vessels.map(({ name }) => ({ value: name, text: name }))]}
             value={vessel}
             onValue={setVessel}
             hint={
@@ -79,7 +76,9 @@ export function ImportRecord({
           <input type="checkbox" checked={isKept} onChange={(event) => setIsKept(event.currentTarget.checked)} />
           Keep this layout for {recorder.trim() || 'the recorder'}, so that its next file is read without questions
         </label>
-        {recording.problem && <Problem problem={recording.problem} kept="The file and its layout are kept on this page." />}
+        {recording.problem && (
+          <Problem problem={recording.problem} kept="The file and its layout are kept on this page." />
+        )}
         <button type="submit" class="primary" disabled={!isReady || recording.isUnderWay}>
           {run.trim() === '' ? 'Make it a run, then say what was in it' : `Add it to run ${run}`}
         </button>

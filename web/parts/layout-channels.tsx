@@ -6,7 +6,23 @@ import { ROLE_WORDS } from '../words/layouts.ts';
 import { Basis } from './basis.tsx';
 import type { LayoutEditing } from './layout-editor.tsx';
 
-const UNITS = ['°C', '°F', 'bar', 'mbar', 'kPa', 'MPa', 'psi', 'inHg', 'mmHg', 'torr', 'bar abs', 'mbar abs', 'kPa abs', 'psi abs', 'torr abs'];
+const UNITS = [
+  '°C',
+  '°F',
+  'bar',
+  'mbar',
+  'kPa',
+  'MPa',
+  'psi',
+  'inHg',
+  'mmHg',
+  'torr',
+  'bar abs',
+  'mbar abs',
+  'kPa abs',
+  'psi abs',
+  'torr abs',
+];
 
 /** Each column of the file: what it is called here, its role, its unit, and what was read from it. */
 export function LayoutChannels({ editing, preview }: { editing: LayoutEditing; preview: Preview | null }) {

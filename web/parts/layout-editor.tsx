@@ -73,8 +73,10 @@ function Place({
     isOpen,
   };
   const offered = statement && statement.choices.length > 0 ? statement.choices.map(asChoice) : choices;
-  if (!offered) return <TextField {...field} {...(isLine ? { type: 'number', min: 1 } : {})} {...(list ? { list } : {})} />;
-  const all = offered.some((choice) => choice.value === value) || value === '' ? offered : [...offered, asChoice(value)];
+  if (!offered)
+    return <TextField {...field} {...(isLine ? { type: 'number', min: 1 } : {})} {...(list ? { list } : {})} />;
+  const all =
+    offered.some((choice) => choice.value === value) || value === '' ? offered : [...offered, asChoice(value)];
   return <ChoiceField {...field} choices={isOpen ? [{ value: '', text: 'choose' }, ...all] : all} />;
 }
 
@@ -90,7 +92,8 @@ function MissingCodes({ editing }: { editing: LayoutEditing }) {
       label="Cells that mean no reading"
       hint={
         <>
-          Apart by spaces; an empty cell always does. <Basis statement={statement} isAnswered={answered.has('missing')} />
+          Apart by spaces; an empty cell always does.{' '}
+          <Basis statement={statement} isAnswered={answered.has('missing')} />
         </>
       }
       value={(layout.missing ?? []).join(' ')}
@@ -128,7 +131,9 @@ function TimeFields({ editing }: { editing: LayoutEditing }) {
         }}
       />
       {kind === 'stamp' && <Place editing={editing} place="time.pattern" label="Pattern" />}
-      {kind !== 'elapsed' && <Place editing={editing} place="time.zone" label="Zone of the recorder’s clock" list="zones" />}
+      {kind !== 'elapsed' && (
+        <Place editing={editing} place="time.zone" label="Zone of the recorder’s clock" list="zones" />
+      )}
       {kind === 'elapsed' && (
         <>
           <Place

@@ -1,6 +1,7 @@
 import type { Layout } from '../../models/log/layout.ts';
 import { asWritten } from '../words/figures.ts';
 import { delimiterName, ROLE_WORDS, timeWords } from '../words/layouts.ts';
+import { Wide } from './wide.tsx';
 
 /** A layout in words, and its channels side by side. */
 export function LayoutWords({ layout }: { layout: Layout }) {
@@ -24,7 +25,7 @@ export function LayoutWords({ layout }: { layout: Layout }) {
         <dt>No reading</dt>
         <dd>{['empty cell', ...(layout.missing ?? [])].join(', ')}</dd>
       </dl>
-      <div class="table-scroll">
+      <Wide label="Channels of the layout">
         <table>
           <caption class="unseen">Channels of the layout</caption>
           <thead>
@@ -48,7 +49,7 @@ export function LayoutWords({ layout }: { layout: Layout }) {
             ))}
           </tbody>
         </table>
-      </div>
+      </Wide>
     </div>
   );
 }
@@ -57,7 +58,9 @@ function changes(channel: Layout['channels'][number]): string {
   const said = [
     channel.scale === undefined ? '' : `× ${asWritten(channel.scale)}`,
     channel.offset === undefined ? '' : `+ ${asWritten(channel.offset, channel.unit)}`,
-    channel.range === undefined ? '' : `believed from ${asWritten(channel.range[0])} to ${asWritten(channel.range[1], channel.unit)}`,
+    channel.range === undefined
+      ? ''
+      : `believed from ${asWritten(channel.range[0])} to ${asWritten(channel.range[1], channel.unit)}`,
     channel.uncertainty === undefined ? '' : `U ${asWritten(channel.uncertainty, channel.unit)}`,
   ];
   return said.filter(Boolean).join(', ') || 'nothing';

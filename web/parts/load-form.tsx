@@ -1,5 +1,5 @@
 import { useLocation } from 'preact-iso';
-import type { CycleView, Cycles } from '../../server/contract/cycles.ts';
+import type { Cycles, CycleView } from '../../server/contract/cycles.ts';
 import { CYCLES_PATH, cyclePath, runLoadPath, VESSELS_PATH } from '../../server/contract/paths.ts';
 import type { RunView } from '../../server/contract/runs.ts';
 import type { Vessels } from '../../server/contract/workshop.ts';
@@ -27,9 +27,7 @@ export function LoadFormView({ run }: { run: RunView }) {
     clear();
     route(`/runs/${run.run}`);
   });
-  const offered = cycles.filter(
-    (line) => line.status === 'released' || (line.code === code && line.issue === issue),
-  );
+  const offered = cycles.filter((line) => line.status === 'released' || (line.code === code && line.issue === issue));
   const save = (event: Event) => {
     event.preventDefault();
     void saving.post();
@@ -68,10 +66,7 @@ export function LoadFormView({ run }: { run: RunView }) {
           />
           <ChoiceField
             label="Vessel"
-            choices={[
-              { value: '', text: 'not said' },
-              ...vessels.map(({ name }) => ({ value: name, text: name })),
-            ]}
+            choices={[{ value: '', text: 'not said' }, ...vessels.map(({ name }) => ({ value: name, text: name }))]}
             value={form.vessel}
             onValue={(vessel) => change({ vessel })}
           />

@@ -55,7 +55,14 @@ export function LoadParts({
       <ol class="load-parts">
         {form.parts.map((part, n) => (
           <li key={part.id}>
-            <PartLine part={part} n={n + 1} bagLines={bagLines} cycle={cycle} onChange={(next) => change(part.id, next)} onRemove={() => remove(part.id)} />
+            <PartLine
+              part={part}
+              n={n + 1}
+              bagLines={bagLines}
+              cycle={cycle}
+              onChange={(next) => change(part.id, next)}
+              onRemove={() => remove(part.id)}
+            />
           </li>
         ))}
       </ol>
@@ -79,18 +86,28 @@ function PartLine({
   onRemove: () => void;
 }) {
   const asksLeakTest = cycle?.leakTest !== undefined;
-  const hasMore = part.quantity !== '' || part.startDegree !== '' || part.tool !== '' || part.title !== '' || part.drawing !== '';
+  const hasMore =
+    part.quantity !== '' || part.startDegree !== '' || part.tool !== '' || part.title !== '' || part.drawing !== '';
   return (
     <fieldset>
       <legend>
         {n} · {part.part || 'no serial yet'}
       </legend>
       <div class="fields">
-        <TextField label="Serial" required maxLength={120} value={part.part} onValue={(value) => onChange({ part: value })} />
+        <TextField
+          label="Serial"
+          required
+          maxLength={120}
+          value={part.part}
+          onValue={(value) => onChange({ part: value })}
+        />
         {bagLines.length > 0 && (
           <ChoiceField
             label="Bag line"
-            choices={[{ value: '', text: 'all that no part names' }, ...bagLines.map((name) => ({ value: name, text: name }))]}
+            choices={[
+              { value: '', text: 'all that no part names' },
+              ...bagLines.map((name) => ({ value: name, text: name })),
+            ]}
             value={part.bagLine}
             onValue={(bagLine) => onChange({ bagLine })}
           />
@@ -100,7 +117,12 @@ function PartLine({
       <details open={hasMore}>
         <summary>Quantity, tool, drawing, degree of cure at the start{asksLeakTest ? '' : ', leak test'}</summary>
         <div class="fields">
-          <Figure label="Quantity" hint="Like parts on one record" value={part.quantity} onValue={(quantity) => onChange({ quantity })} />
+          <Figure
+            label="Quantity"
+            hint="Like parts on one record"
+            value={part.quantity}
+            onValue={(quantity) => onChange({ quantity })}
+          />
           <Figure
             label="Degree of cure at the start"
             hint="0 to 1; where the roll had aged"
@@ -109,7 +131,12 @@ function PartLine({
           />
           <TextField label="Tool" maxLength={120} value={part.tool} onValue={(tool) => onChange({ tool })} />
           <TextField label="What it is" maxLength={200} value={part.title} onValue={(title) => onChange({ title })} />
-          <TextField label="Drawing" maxLength={120} value={part.drawing} onValue={(drawing) => onChange({ drawing })} />
+          <TextField
+            label="Drawing"
+            maxLength={120}
+            value={part.drawing}
+            onValue={(drawing) => onChange({ drawing })}
+          />
           <TextField
             label="Issue of the drawing"
             maxLength={40}
@@ -139,7 +166,9 @@ function LeakTestFields({
   const isBegun = [part.leakStart, part.leakEnd, part.leakMinutes].some((value) => value.trim() !== '');
   const asks = cycle?.leakTest
     ? listed([
-        ...(cycle.leakTest.startAtLeast === undefined ? [] : [`at least ${asWritten(cycle.leakTest.startAtLeast, unit)} to start`]),
+        ...(cycle.leakTest.startAtLeast === undefined
+          ? []
+          : [`at least ${asWritten(cycle.leakTest.startAtLeast, unit)} to start`]),
         `at most ${asWritten(cycle.leakTest.lossAtMost, unit)} lost in ${asWritten(cycle.leakTest.over, 'min')}`,
       ])
     : '';
@@ -168,6 +197,12 @@ function LeakTestFields({
   );
 }
 
-function Figure(props: { label: string; hint?: string; required?: boolean; value: string; onValue: (value: string) => void }) {
+function Figure(props: {
+  label: string;
+  hint?: string;
+  required?: boolean;
+  value: string;
+  onValue: (value: string) => void;
+}) {
   return <TextField {...props} inputMode="decimal" pattern="-?[0-9]+([.,][0-9]+)?" title="A figure, such as 0.85" />;
 }

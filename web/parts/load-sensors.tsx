@@ -1,8 +1,8 @@
 import type { Cycle } from '../../models/cycle/cycle.ts';
 import type { RunView } from '../../server/contract/runs.ts';
 import { listed } from '../words/figures.ts';
-import { isAttachable, type LoadForm, type SensorForm } from '../words/load-form.ts';
 import { ROLE_WORDS } from '../words/layouts.ts';
+import { isAttachable, type LoadForm, type SensorForm } from '../words/load-form.ts';
 
 /** Which thermocouple is on which part: a grid to tap, where a number key does the same for the row in focus. */
 export function LoadSensors({
@@ -30,15 +30,22 @@ export function LoadSensors({
         <p class="soft">Parts come first.</p>
       ) : (
         <>
-          <div class="sensor-grid" onKeyDown={(event) => moveInGrid(event)}>
+          <fieldset class="sensor-grid" aria-label="Thermocouples and parts" onKeyDown={(event) => moveInGrid(event)}>
             {channels.map(({ name, role }) => {
               const sensor = form.sensors.find((one) => one.channel === name);
               if (!sensor) return null;
               return (
-                <SensorLine key={name} sensor={sensor} role={role} form={form} places={cycle?.sensors?.mustWork ?? []} onChange={(next) => change(name, next)} />
+                <SensorLine
+                  key={name}
+                  sensor={sensor}
+                  role={role}
+                  form={form}
+                  places={cycle?.sensors?.mustWork ?? []}
+                  onChange={(next) => change(name, next)}
+                />
               );
             })}
-          </div>
+          </fieldset>
           <datalist id="places">
             {(cycle?.sensors?.mustWork ?? []).map((place) => (
               <option key={place} value={place} />
@@ -72,7 +79,7 @@ function SensorLine({
     if (part) toggle(part.id);
   };
   return (
-    <div class="sensor-line" role="group" aria-label={`${sensor.channel}, ${ROLE_WORDS[role]}`} onKeyDown={byNumber}>
+    <fieldset class="sensor-line" aria-label={`${sensor.channel}, ${ROLE_WORDS[role]}`} onKeyDown={byNumber}>
       <p>
         <strong>{sensor.channel}</strong> <span class="soft small">{ROLE_WORDS[role]}</span>
       </p>
@@ -108,9 +115,11 @@ function SensorLine({
         onInput={(event) => onChange({ uncertainty: event.currentTarget.value })}
       />
       {sensor.corrections && (
-        <p class="soft small">Corrections on record: {sensor.corrections.map(([at, by]) => `${by} at ${at}`).join(', ')}.</p>
+        <p class="soft small">
+          Corrections on record: {sensor.corrections.map(([at, by]) => `${by} at ${at}`).join(', ')}.
+        </p>
       )}
-    </div>
+    </fieldset>
   );
 }
 

@@ -66,15 +66,17 @@ export function UnreadFile({ file }: { file: ImportLine }) {
           Not read yet
         </span>
       </div>
-      <p class="soft">
-        {[bytes(file.bytes), file.recorder, ORIGINS[file.origin]].filter(Boolean).join(' · ')}
-      </p>
+      <p class="soft">{[bytes(file.bytes), file.recorder, ORIGINS[file.origin]].filter(Boolean).join(' · ')}</p>
       <p>{file.problem?.detail ?? 'Its layout waits to be confirmed.'}</p>
     </Entry>
   );
 }
 
-const ORIGINS = { upload: 'handed in on a page', 'watched-folder': 'from the watched folder', command: 'from the command line' };
+const ORIGINS = {
+  upload: 'handed in on a page',
+  'watched-folder': 'from the watched folder',
+  command: 'from the command line',
+};
 
 function keyOf(need: Need): string {
   return need.kind === 'unread-file' ? `file ${need.import.id}` : `${need.kind} ${need.run.run}`;

@@ -28,7 +28,15 @@ export const MARK_OF_VERDICT: Readonly<Record<Verdict, Outcome>> = {
 export function OutcomeMark({ mark, alone = false }: { mark: Mark; alone?: boolean }) {
   const told = alone ? { role: 'img' as const, 'aria-label': OUTCOME_WORDS[mark] } : { 'aria-hidden': true as const };
   return (
-    <svg class={`outcome outcome-${mark}`} viewBox="0 0 20 20" fill="none" stroke="currentColor" stroke-width="2" {...told}>
+    // biome-ignore lint/a11y/noSvgWithoutTitle: named by aria-label where no word stands beside it
+    <svg
+      class={`outcome outcome-${mark}`}
+      viewBox="0 0 20 20"
+      fill="none"
+      stroke="currentColor"
+      stroke-width="2"
+      {...told}
+    >
       {SHAPES[mark]}
     </svg>
   );

@@ -75,7 +75,14 @@ function ResultForm({ serial, onAdded }: { serial: string; onAdded: () => void }
   return (
     <form class="stack section" onSubmit={add}>
       <div class="fields">
-        <TextField label="Test or inspection" hint="DSC residual cure, ultrasonic, proof load" required maxLength={200} value={form.test} onValue={(test) => change({ test })} />
+        <TextField
+          label="Test or inspection"
+          hint="DSC residual cure, ultrasonic, proof load"
+          required
+          maxLength={200}
+          value={form.test}
+          onValue={(test) => change({ test })}
+        />
         <ChoiceField
           label="Outcome"
           choices={['passed', 'failed', 'noted'].map((word) => ({ value: word, text: word }))}
@@ -90,7 +97,13 @@ function ResultForm({ serial, onAdded }: { serial: string; onAdded: () => void }
           wrong={at === null ? 'This time does not exist in the shop’s zone.' : null}
           onValue={(value) => change({ at: value })}
         />
-        <TextField label="Figure" inputMode="decimal" pattern="-?[0-9]+([.,][0-9]+)?" value={form.figure} onValue={(value) => change({ figure: value })} />
+        <TextField
+          label="Figure"
+          inputMode="decimal"
+          pattern="-?[0-9]+([.,][0-9]+)?"
+          value={form.figure}
+          onValue={(value) => change({ figure: value })}
+        />
         <TextField label="Unit" maxLength={40} value={form.unit} onValue={(unit) => change({ unit })} />
         <TextField label="What was seen" maxLength={2000} value={form.text} onValue={(text) => change({ text })} />
       </div>

@@ -120,7 +120,9 @@ function Findings({ evaluation }: { evaluation: NonNullable<PartRun['evaluation'
 function judgedBy(run: PartRun): string {
   const judged = run.evaluation?.judgedBy ?? [];
   const own = run.sensors.map(({ channel, place, sharedWith }) =>
-    [channel, place && `(${place})`, sharedWith.length > 0 && `shared with ${listed(sharedWith)}`].filter(Boolean).join(' '),
+    [channel, place && `(${place})`, sharedWith.length > 0 && `shared with ${listed(sharedWith)}`]
+      .filter(Boolean)
+      .join(' '),
   );
   if (own.length > 0) return own.join('; ');
   return judged.length > 0 ? `${listed(judged)}, none of them its own` : 'no thermocouple on record';

@@ -5,6 +5,7 @@ import { clock } from '../words/clock.ts';
 import { plain } from '../words/figures.ts';
 import { shownUnits, zone } from '../workshop.ts';
 import { RESIN_STATUS_WORDS } from './resin-status-tag.tsx';
+import { Wide } from './wide.tsx';
 
 /** Estimated cure of each judged thermocouple, said to be estimates, with the source they rest on. */
 export function RunEstimates({ run, evaluation }: { run: RunView; evaluation: Evaluation }) {
@@ -20,7 +21,7 @@ export function RunEstimates({ run, evaluation }: { run: RunView; evaluation: Ev
         <a href={`/resins/${encodeURIComponent(evaluation.resin.code)}`}>{evaluation.resin.code}</a>,{' '}
         {evaluation.resin.citation}. {status && RESIN_STATUS_WORDS[status]}
       </p>
-      <div class="table-scroll" tabIndex={0} role="region" aria-label="Cure at the end, estimated">
+      <Wide label="Cure at the end, estimated">
         <table>
           <thead>
             <tr>
@@ -44,16 +45,14 @@ export function RunEstimates({ run, evaluation }: { run: RunView; evaluation: Ev
               <tr key={one.channel}>
                 <th scope="row">{one.channel}</th>
                 <td class="figure-cell">{plain(one.degree, 3)}</td>
-                <td class="figure-cell">
-                  {one.tgC === null ? '–' : plain(temperatureFromCelsius(one.tgC, unit), 0)}
-                </td>
+                <td class="figure-cell">{one.tgC === null ? '–' : plain(temperatureFromCelsius(one.tgC, unit), 0)}</td>
                 <td class="figure-cell">{one.gelAt ? clock(one.gelAt, zone.value) : 'not seen'}</td>
                 <td class="figure-cell">{one.vitrifiesAt ? clock(one.vitrifiesAt, zone.value) : 'not seen'}</td>
               </tr>
             ))}
           </tbody>
         </table>
-      </div>
+      </Wide>
     </section>
   );
 }

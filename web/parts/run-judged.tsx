@@ -17,7 +17,7 @@ export function RunJudged({ run, evaluation, again }: { run: RunView; evaluation
   const [lit, setLit] = useState<string | null>(null);
   const findings = useRef<HTMLDivElement>(null);
   const parts = evaluation.document.parts;
-  const named = parts.find((one) => one.part !== null && one.part === query['part']);
+  const named = parts.find((one) => one.part !== null && one.part === query.part);
   const part = named ?? worstPart(evaluation.document);
   const choose = (name: string | null) => route(withQuery(`/runs/${run.run}`, { part: name }), true);
   return (
@@ -48,9 +48,7 @@ export function RunJudged({ run, evaluation, again }: { run: RunView; evaluation
             ))}
           </fieldset>
         )}
-        {part && (
-          <FindingList part={part} run={run} evaluation={evaluation.document} lit={lit} onLight={setLit} />
-        )}
+        {part && <FindingList part={part} run={run} evaluation={evaluation.document} lit={lit} onLight={setLit} />}
       </div>
       <div class="rest">
         <RunPapers run={run} evaluation={evaluation} again={again} />

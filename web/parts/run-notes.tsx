@@ -1,5 +1,5 @@
-import type { AddNoteRequest, RunView } from '../../server/contract/runs.ts';
 import { runNotesPath } from '../../server/contract/paths.ts';
+import type { AddNoteRequest, RunView } from '../../server/contract/runs.ts';
 import { postJson } from '../api.ts';
 import { useKeptForm } from '../kept-form.ts';
 import { usePost } from '../use-post.ts';

@@ -27,8 +27,18 @@ export function ShownToYou() {
             schemeChoice.value = value as SchemeChoice;
           }}
         />
-        <UnitField label="Temperature on charts" choice={temperatureChoice} base={units?.temperature} names={['°C', '°F']} />
-        <UnitField label="Pressure on charts" choice={pressureChoice} base={units?.pressure} names={['bar', 'kPa', 'MPa', 'psi']} />
+        <UnitField
+          label="Temperature on charts"
+          choice={temperatureChoice}
+          base={units?.temperature}
+          names={['°C', '°F']}
+        />
+        <UnitField
+          label="Pressure on charts"
+          choice={pressureChoice}
+          base={units?.pressure}
+          names={['bar', 'kPa', 'MPa', 'psi']}
+        />
         <UnitField
           label="Vacuum on charts"
           choice={vacuumChoice}

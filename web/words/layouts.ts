@@ -1,6 +1,12 @@
 import type { Layout } from '../../models/log/layout.ts';
 
-const DELIMITERS: Readonly<Record<string, string>> = { ',': 'comma', ';': 'semicolon', '\t': 'tab', ' ': 'space', '|': 'bar |' };
+const DELIMITERS: Readonly<Record<string, string>> = {
+  ',': 'comma',
+  ';': 'semicolon',
+  '\t': 'tab',
+  ' ': 'space',
+  '|': 'bar |',
+};
 
 export function delimiterName(delimiter: string): string {
   return DELIMITERS[delimiter] ?? `“${delimiter}”`;

@@ -15,7 +15,8 @@ export function missingOfPart(view: PartView): string[] {
     if (!line.workOrder) missing.push(`${run}the work order.`);
     if (sensors.length === 0) missing.push(`${run}a thermocouple of its own; it is judged by all in the load.`);
     if (!leakTest) missing.push(`${run}a leak test of its bag.`);
-    if (startDegree === null) missing.push(`${run}its degree of cure at the start; estimates begin with the resin set’s own.`);
+    if (startDegree === null)
+      missing.push(`${run}its degree of cure at the start; estimates begin with the resin set’s own.`);
     if (line.cycle && !evaluation) missing.push(`${run}a judgement.`);
   }
   if (view.results.length === 0) missing.push('Any test or inspection after cure.');

@@ -1,0 +1,90 @@
+import { execFileSync } from 'node:child_process';
+import { accessSync, constants, existsSync } from 'node:fs';
+import { platform } from 'node:process';
+import { pathToFileURL } from 'node:url';
+
+const PLACES = {
+  linux: [
+    '/usr/bin/chromium',
+    '/usr/bin/chromium-browser',
+    '/usr/bin/google-chrome',
+    '/usr/bin/google-chrome-stable',
+    '/usr/bin/microsoft-edge',
+    '/opt/google/chrome/chrome',
+    '/snap/bin/chromium',
+  ],
+  darwin: [
+    '/Applications/Chromium.app/Contents/MacOS/Chromium',
+    '/Applications/Google Chrome.app/Contents/MacOS/Google Chrome',
+    '/Applications/Microsoft Edge.app/Contents/MacOS/Microsoft Edge',
+  ],
+  win32: [
+    'C:/Program Files/Google/Chrome/Application/chrome.exe',
+    'C:/Program Files (x86)/Google/Chrome/Application/chrome.exe',
+    'C:/Program Files (x86)/Microsoft/Edge/Application/msedge.exe',
+  ],
+};
+
+/** Where a Chromium stands that the browser tests can drive; null where none does. `CHROMIUM_PATH` comes first. */
+export function findChromium(environment = process.env) {
+  const named = environment.CHROMIUM_PATH;
+  if (named) return isRunnable(named) ? named : null;
+  return (PLACES[platform] ?? []).find(isRunnable) ?? null;
+}
+
+function isRunnable(path) {
+  try {
+    accessSync(path, platform === 'win32' ? constants.F_OK : constants.X_OK);
+    return true;
+  } catch {
+    return false;
+  }
+}
+
+function canInstall() {
+  return platform === 'linux' && process.getuid?.() === 0 && existsSync('/usr/bin/apt-get');
+}
+
+function install() {
+  const apt = (...words) =>
+    execFileSync('/usr/bin/apt-get', words, {
+      stdio: 'inherit',
+      env: { ...process.env, DEBIAN_FRONTEND: 'noninteractive' },
+    });
+  apt('update');
+  apt('install', '--yes', '--no-install-recommends', 'chromium');
+}
+
+function say(text) {
+  process.stdout.write(`${text}\n`);
+}
+
+/** Finds Chromium, or installs Debian's where that is possible, or says plainly what to do. */
+function main() {
+  const named = process.env.CHROMIUM_PATH;
+  if (named && !isRunnable(named)) {
+    say(`CHROMIUM_PATH is ${named}, but nothing that can be run stands there.`);
+    say('Set it to the full path of Chromium, Chrome or Edge, or unset it to have the usual places looked through.');
+    return 1;
+  }
+  if (findChromium() === null && canInstall()) {
+    say('The browser tests need Chromium; installing it with apt-get.');
+    try {
+      install();
+    } catch (error) {
+      say(`apt-get could not install it: ${error instanceof Error ? error.message : error}`);
+    }
+  }
+  const found = findChromium();
+  if (found !== null) {
+    say(`Browser tests use ${found}`);
+    return 0;
+  }
+  say('The browser tests need Chromium, Chrome or Edge, and none was found in the usual places. Either');
+  say('  install one (Debian and Ubuntu: sudo apt-get install chromium; Fedora: sudo dnf install chromium;');
+  say('  macOS: brew install --cask chromium; Windows: winget install Google.Chrome), or');
+  say('  name one that is elsewhere: CHROMIUM_PATH=/path/to/chromium npm test');
+  return 1;
+}
+
+if (process.argv[1] && import.meta.url === pathToFileURL(process.argv[1]).href) process.exitCode = main();

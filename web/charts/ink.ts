@@ -1,0 +1,34 @@
+/** Colours and letters of the page, as the canvas needs them; read again when light turns dark. */
+export interface Ink {
+  readonly ink: string;
+  readonly soft: string;
+  readonly faint: string;
+  readonly hairline: string;
+  readonly paper: string;
+  readonly accent: string;
+  readonly band: string;
+  readonly red: string;
+  readonly amber: string;
+  readonly other: string;
+  readonly hatch: string;
+  readonly font: string;
+}
+
+export function readInk(): Ink {
+  const style = getComputedStyle(document.documentElement);
+  const of = (name: string) => style.getPropertyValue(name).trim();
+  return {
+    ink: of('--ink'),
+    soft: of('--ink-soft'),
+    faint: of('--ink-faint'),
+    hairline: of('--hairline'),
+    paper: of('--paper'),
+    accent: of('--accent'),
+    band: of('--chart-band'),
+    red: of('--red'),
+    amber: of('--amber'),
+    other: of('--chart-other'),
+    hatch: of('--chart-hatch'),
+    font: of('--font'),
+  };
+}
