@@ -18,9 +18,8 @@ import { ceilingLimit, spreadLimit } from './temperature-limits.ts';
 import { windowLimit, windowStretch } from './windows.ts';
 
 /** What one part comes to under one set of exclusions: its findings in the order of the cycle. */
-export function judgePart(j: Judgement): Finding[] {
-  const sources = sourcesOf(j);
-  const { dwells } = sources;
+export function judgePart(sources: EventSources): Finding[] {
+  const { j, dwells } = sources;
   const found: Found[] = [];
   let dwellAt = 0;
   j.cycle.stages.forEach((stage, stageAt) => {
@@ -48,7 +47,8 @@ export function judgePart(j: Judgement): Finding[] {
   return found.map(finding);
 }
 
-function sourcesOf(j: Judgement): EventSources {
+/** What the limits of a part are worked out from, worked out itself only once. */
+export function sourcesOf(j: Judgement): EventSources {
   return { j, dwells: new Dwells(j), gel: gelTimes(j) };
 }
 
@@ -60,8 +60,8 @@ export interface PartRecord {
   readonly cure: readonly CureEstimate[];
 }
 
-export function recordPart(j: Judgement): PartRecord {
-  const sources = sourcesOf(j);
+export function recordPart(sources: EventSources): PartRecord {
+  const { j } = sources;
   return {
     stages: stageRecords(j, sources.dwells),
     windows: windowRecords(sources),

@@ -20,7 +20,7 @@ import type {
   Verdict,
 } from './evaluation.ts';
 import { iso, say, worst } from './finding.ts';
-import { judgePart, recordPart } from './judge-part.ts';
+import { judgePart, recordPart, sourcesOf } from './judge-part.ts';
 import { changesAtMost, type Judgement, judgedSensor, longestGapMs } from './judgement.ts';
 
 /** Everything a judgement rests on besides the readings. */
@@ -106,6 +106,7 @@ function evaluatePart(
   changes: Map<string, Set<string>>,
 ): PartEvaluation {
   const asIs = judgementOf(setting, part, new Map());
+  const sources = sourcesOf(asIs);
   const relevant = suspects.filter(({ channel }) => [...asIs.sensors, ...asIs.air].some((s) => s.channel === channel));
   const findings =
     asIs.sensors.length === 0
@@ -116,9 +117,10 @@ function evaluatePart(
             part,
             new Map(without.map(({ channel, faults }) => [channel.layout.name, faults[0]!.fromMs])),
           );
-          return j.sensors.every(({ untilMs }) => untilMs <= j.log.from) ? null : judgePart(j);
+          if (j.sensors.every(({ untilMs }) => untilMs <= j.log.from)) return null;
+          return judgePart(without.length === 0 ? sources : sourcesOf(j));
         });
-  const { stages, windows, heatOn, cure } = recordPart(asIs);
+  const { stages, windows, heatOn, cure } = recordPart(sources);
   return {
     part: part?.part ?? null,
     verdict: verdictOf(findings),

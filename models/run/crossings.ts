@@ -27,16 +27,22 @@ export class Crossings {
   /** Takes in the readings that came since. */
   extend(): void {
     const track = this.#track;
-    for (let i = this.#done; i < track.length; i++) {
-      const isOn = stands(track.reading(i), this.#level, this.#side);
-      if (i === 0) {
-        if (isOn) this.startMs.push(track.timeMs(0));
-        continue;
-      }
-      if (isOn === this.startMs.length > this.endMs.length) continue;
-      (isOn ? this.startMs : this.endMs).push(meets(track, i, this.#level));
+    const { length } = track;
+    if (this.#done === length) return;
+    const { value } = track.readings;
+    // Seen from below or from above, with or without the level itself: one comparison for all four sides.
+    const sign = this.#side === '>=' || this.#side === '>' ? 1 : -1;
+    const level = sign * this.#level;
+    const countsLevel = this.#side === '>=' || this.#side === '<=';
+    let wasOn = this.startMs.length > this.endMs.length;
+    for (let i = this.#done; i < length; i++) {
+      const reading = sign * value[i]!;
+      const isOn = reading > level || (countsLevel && reading === level);
+      if (isOn === wasOn) continue;
+      wasOn = isOn;
+      (isOn ? this.startMs : this.endMs).push(i === 0 ? track.timeMs(0) : meets(track, i, this.#level));
     }
-    this.#done = track.length;
+    this.#done = length;
   }
 
   /** Stretches on this side, the last one up to the last reading. */
@@ -72,12 +78,6 @@ export class Crossings {
   firstEndAfter(fromMs: number): number | null {
     return this.endMs[firstAbove(this.endMs, fromMs)] ?? null;
   }
-}
-
-export function stands(value: number, level: number, side: Side): boolean {
-  if (side === '>=') return value >= level;
-  if (side === '>') return value > level;
-  return side === '<=' ? value <= level : value < level;
 }
 
 function meets(track: Track, i: number, level: number): number {

@@ -1,4 +1,4 @@
-import type { Extremes } from './extremes.ts';
+import type { GrowingRow } from './growing-row.ts';
 import { Track } from './track.ts';
 
 export type Statistic = 'mean' | 'highest' | 'lowest' | 'spread';
@@ -13,7 +13,11 @@ export interface Member {
  * A track worked out from several, carried on as scans come. A scan at which one of them is absent has no value, save
  * for the spread: that is of those present, two at least.
  */
-export function derivedTrack(statistic: Statistic, members: readonly Member[], scanMs: Extremes): { extend(): Track } {
+export function derivedTrack(
+  statistic: Statistic,
+  members: readonly Member[],
+  scanMs: GrowingRow,
+): { extend(): Track } {
   const derived = new Track(statistic);
   const next = members.map(() => 0);
   let scan = 0;

@@ -3,7 +3,7 @@ import type { ChannelLayout, ChannelRole } from '../log/layout.ts';
 import type { Readings } from '../log/readings.ts';
 import { judgedChannels, type RunChannel } from './channel.ts';
 import { derivedTrack, type Member, type Statistic } from './derived-track.ts';
-import { Extremes } from './extremes.ts';
+import { GrowingRow } from './growing-row.ts';
 import type { Interval } from './intervals.ts';
 import type { Load } from './load.ts';
 import { MedianInterval } from './median-interval.ts';
@@ -21,7 +21,7 @@ const TEMPERATURE_ROLES: readonly ChannelRole[] = ['part', 'tool', 'air'];
 export class RunDigest {
   readonly channels: readonly RunChannel[];
   readonly load: Load | null;
-  readonly scanMs = new Extremes();
+  readonly scanMs = new GrowingRow();
   readonly watches: readonly NeighbourWatch[];
   readonly #byColumn: readonly (RunChannel | null)[];
   readonly #intervals = new MedianInterval();

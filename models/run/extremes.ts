@@ -1,59 +1,47 @@
+import { GrowingRow } from './growing-row.ts';
+
 const BLOCK = 64;
 const BLOCK_OF_BLOCKS = BLOCK * BLOCK;
 
 /** A growing row of figures that answers "lowest and highest between i and j" without looking at each. */
-export class Extremes {
-  length = 0;
-  value = new Float64Array(1024);
-  #low: number[] = [];
-  #high: number[] = [];
-  #lowOfBlocks: number[] = [];
-  #highOfBlocks: number[] = [];
+export class Extremes extends GrowingRow {
+  readonly #blocks = new Summary(BLOCK);
+  readonly #blocksOfBlocks = new Summary(BLOCK_OF_BLOCKS);
 
-  /** Appends one figure. `NaN` keeps its place and is neither lowest nor highest. */
-  push(value: number): void {
-    const i = this.length++;
-    if (i === this.value.length) {
-      const grown = new Float64Array(2 * i);
-      grown.set(this.value);
-      this.value = grown;
-    }
-    this.value[i] = value;
-    note(this.#low, this.#high, Math.floor(i / BLOCK), value);
-    note(this.#lowOfBlocks, this.#highOfBlocks, Math.floor(i / BLOCK_OF_BLOCKS), value);
-  }
-
-  /** Index of the highest figure in [from, until], the first of equals; −1 where there is none. */
+  /** Index of the highest figure in [from, until], the first of equals; −1 where there is none but `NaN`. */
   indexOfHighest(from: number, until: number): number {
     return this.#search(from, until, 1);
   }
 
-  /** Index of the lowest figure in [from, until], the first of equals; −1 where there is none. */
+  /** Index of the lowest figure in [from, until], the first of equals; −1 where there is none but `NaN`. */
   indexOfLowest(from: number, until: number): number {
     return this.#search(from, until, -1);
   }
 
   #search(from: number, until: number, sign: 1 | -1): number {
-    const blocks = sign > 0 ? this.#high : this.#low;
-    const blocksOfBlocks = sign > 0 ? this.#highOfBlocks : this.#lowOfBlocks;
+    this.#blocks.extend(this);
+    this.#blocksOfBlocks.extend(this);
+    const blocks = sign > 0 ? this.#blocks.high : this.#blocks.low;
+    const blocksOfBlocks = sign > 0 ? this.#blocksOfBlocks.high : this.#blocksOfBlocks.low;
+    const { value } = this;
     let best = -1;
     let bestValue = Number.NEGATIVE_INFINITY;
     const end = Math.min(until, this.length - 1);
     let i = Math.max(0, from);
     while (i <= end) {
       if (i % BLOCK_OF_BLOCKS === 0 && i + BLOCK_OF_BLOCKS - 1 <= end) {
-        if (!(sign * blocksOfBlocks[i / BLOCK_OF_BLOCKS]! > bestValue)) {
+        if (!(sign * blocksOfBlocks.value[i / BLOCK_OF_BLOCKS]! > bestValue)) {
           i += BLOCK_OF_BLOCKS;
           continue;
         }
       }
-      if (i % BLOCK === 0 && i + BLOCK - 1 <= end && !(sign * blocks[i / BLOCK]! > bestValue)) {
+      if (i % BLOCK === 0 && i + BLOCK - 1 <= end && !(sign * blocks.value[i / BLOCK]! > bestValue)) {
         i += BLOCK;
         continue;
       }
       const stop = Math.min(end, (Math.floor(i / BLOCK) + 1) * BLOCK - 1);
       for (; i <= stop; i++) {
-        const candidate = sign * this.value[i]!;
+        const candidate = sign * value[i]!;
         if (candidate > bestValue) {
           bestValue = candidate;
           best = i;
@@ -64,11 +52,26 @@ export class Extremes {
   }
 }
 
-function note(low: number[], high: number[], block: number, value: number): void {
-  if (block === low.length) {
-    low.push(Number.POSITIVE_INFINITY);
-    high.push(Number.NEGATIVE_INFINITY);
+/** Lowest and highest of every full block of a row. */
+class Summary {
+  readonly low = new GrowingRow();
+  readonly high = new GrowingRow();
+  readonly #size: number;
+
+  constructor(size: number) {
+    this.#size = size;
   }
-  if (value < low[block]!) low[block] = value;
-  if (value > high[block]!) high[block] = value;
+
+  extend({ value, length }: GrowingRow): void {
+    for (let start = this.low.length * this.#size; start + this.#size <= length; start += this.#size) {
+      let low = Number.POSITIVE_INFINITY;
+      let high = Number.NEGATIVE_INFINITY;
+      for (let i = start; i < start + this.#size; i++) {
+        if (value[i]! < low) low = value[i]!;
+        if (value[i]! > high) high = value[i]!;
+      }
+      this.low.push(low);
+      this.high.push(high);
+    }
+  }
 }

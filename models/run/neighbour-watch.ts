@@ -51,7 +51,9 @@ export class NeighbourWatch {
   readonly #air: readonly Track[];
   readonly #taken: Int32Array;
   readonly #airTaken: Int32Array;
-  readonly #present: number[] = [];
+  /** The readings of this scan, and which sensors have one, in rising order. */
+  readonly #reading: Float64Array;
+  readonly #rising: Int32Array;
   #isHeating = false;
 
   constructor(channels: readonly RunChannel[], air: readonly RunChannel[]) {
@@ -59,32 +61,63 @@ export class NeighbourWatch {
     this.#air = air.map(({ track }) => track);
     this.#taken = new Int32Array(channels.length);
     this.#airTaken = new Int32Array(air.length);
+    this.#reading = new Float64Array(channels.length);
+    this.#rising = Int32Array.from(channels, (_, i) => i);
   }
 
   accept(timeMs: number, scan: number): void {
     const { comparisons } = this;
-    const present = this.#present;
-    present.length = 0;
-    for (let i = 0; i < comparisons.length; i++) {
-      const { track } = comparisons[i]!;
-      if (track.length > this.#taken[i]!) present.push(track.reading(track.length - 1));
-    }
-    present.sort((a, b) => a - b);
+    const present = this.#takeScan();
     const air = this.#airAt(scan);
-    if (!this.#isHeating) this.#isHeating = comparisons.some((c) => hasRisen(c));
+    if (present < 2) return;
+    for (let rank = 0; rank < present; rank++) {
+      const i = this.#rising[rank]!;
+      const median = this.#medianWithout(rank, present);
+      compare(comparisons[i]!, timeMs, this.#reading[i]!, median, air, present - 1, this.#isHeating);
+    }
+  }
+
+  /** Takes each sensor's reading of this scan and puts them in order, the absent ones last. */
+  #takeScan(): number {
+    const { comparisons } = this;
+    let present = 0;
     for (let i = 0; i < comparisons.length; i++) {
       const comparison = comparisons[i]!;
-      const { track } = comparison;
-      if (track.length === this.#taken[i]) {
+      const { length } = comparison.track;
+      if (length === this.#taken[i]) {
+        this.#reading[i] = Number.POSITIVE_INFINITY;
         comparison.equalReadings = 0;
         continue;
       }
-      this.#taken[i] = track.length;
-      const reading = track.reading(track.length - 1);
+      this.#taken[i] = length;
+      const reading = comparison.track.reading(length - 1);
+      this.#reading[i] = reading;
       comparison.start ??= reading;
-      if (present.length < 2) continue;
-      compare(comparison, timeMs, reading, medianWithout(present, reading), air, present.length - 1, this.#isHeating);
+      if (reading >= comparison.start + HEAT_ON_RISE) this.#isHeating = true;
+      present++;
     }
+    // The order of the scan before is nearly right already, so insertion is the quickest way to put it right.
+    for (let k = 1; k < comparisons.length; k++) {
+      const i = this.#rising[k]!;
+      const reading = this.#reading[i]!;
+      let at = k;
+      for (; at > 0 && this.#reading[this.#rising[at - 1]!]! > reading; at--) this.#rising[at] = this.#rising[at - 1]!;
+      this.#rising[at] = i;
+    }
+    return present;
+  }
+
+  /** Median of the present readings without the one of a rank. */
+  #medianWithout(rank: number, present: number): number {
+    const n = present - 1;
+    const half = n >> 1;
+    const upper = this.#readingAt(half < rank ? half : half + 1);
+    if (n % 2 === 1) return upper;
+    return (this.#readingAt(half - 1 < rank ? half - 1 : half) + upper) / 2;
+  }
+
+  #readingAt(rank: number): number {
+    return this.#reading[this.#rising[rank]!]!;
   }
 
   /** Mean of the air channels that have a reading at this scan; null where none has. */
@@ -101,18 +134,6 @@ export class NeighbourWatch {
     }
     return count === 0 ? null : sum / count;
   }
-}
-
-function hasRisen({ track, start }: Comparison): boolean {
-  return start !== null && track.reading(track.length - 1) >= start + HEAT_ON_RISE;
-}
-
-/** Median of a rising list without one of its elements. */
-function medianWithout(rising: readonly number[], one: number): number {
-  const left = rising.indexOf(one);
-  const at = (i: number): number => rising[i < left ? i : i + 1]!;
-  const n = rising.length - 1;
-  return n % 2 === 1 ? at((n - 1) / 2) : (at(n / 2 - 1) + at(n / 2)) / 2;
 }
 
 function compare(

@@ -2,7 +2,7 @@ import { Extremes } from './extremes.ts';
 import type { Track } from './track.ts';
 
 /** Readings between two fresh sums: keeps what rounding adds up far below 1e-9 of a slope. */
-const FRESH_EVERY = 256;
+const FRESH_EVERY = 512;
 /** Part of a window by which an end may miss a reading through binary rounding. */
 const ALLOWANCE = 1e-9;
 

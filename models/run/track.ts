@@ -1,6 +1,7 @@
 import { Crossings, type Side } from './crossings.ts';
 import { Extremes } from './extremes.ts';
 import { type Gap, LongIntervals } from './gaps.ts';
+import { GrowingRow } from './growing-row.ts';
 import { Slopes } from './slopes.ts';
 
 /**
@@ -11,11 +12,16 @@ import { Slopes } from './slopes.ts';
  */
 export class Track {
   readonly name: string;
-  readonly #times = new Extremes();
+  readonly #times = new GrowingRow();
   readonly readings = new Extremes();
   /** Number of the scan each reading belongs to. */
-  readonly #scans = new Extremes();
-  readonly #crossings = new Map<string, Crossings>();
+  readonly #scans = new GrowingRow();
+  readonly #crossings: Readonly<Record<Side, Map<number, Crossings>>> = {
+    '>=': new Map(),
+    '>': new Map(),
+    '<=': new Map(),
+    '<': new Map(),
+  };
   readonly #slopes = new Map<string, Slopes>();
   readonly #longIntervals = new Map<number, LongIntervals>();
 
@@ -93,11 +99,11 @@ export class Track {
 
   /** Where the track stands on one side of a level, brought up to the last reading. */
   crossings(level: number, side: Side): Crossings {
-    const key = `${side}${level}`;
-    let crossings = this.#crossings.get(key);
+    const bySide = this.#crossings[side];
+    let crossings = bySide.get(level);
     if (crossings === undefined) {
       crossings = new Crossings(this, level, side);
-      this.#crossings.set(key, crossings);
+      bySide.set(level, crossings);
     }
     crossings.extend();
     return crossings;
