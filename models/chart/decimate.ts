@@ -1,4 +1,5 @@
 import { DomainError } from '../errors.ts';
+import { scanAtOrAfter } from './scan-at.ts';
 
 export interface DecimateOptions {
   /** Window to be drawn, ms; the readings just outside are kept so that the line reaches its edges. */
@@ -65,8 +66,8 @@ interface Stretch {
 }
 
 function presentStretch(timeMs: Float64Array, value: Float64Array, { fromMs, untilMs }: DecimateOptions): Stretch {
-  let first = firstAtOrAfter(timeMs, fromMs);
-  let last = firstAtOrAfter(timeMs, untilMs);
+  let first = scanAtOrAfter(timeMs, fromMs);
+  let last = scanAtOrAfter(timeMs, untilMs);
   if (last === timeMs.length || timeMs[last]! > untilMs) last -= 1;
   let present = 0;
   for (let i = first; i <= last; i++) if (!Number.isNaN(value[i]!)) present += 1;
@@ -212,15 +213,4 @@ class Kept {
     this.#kept[this.#count] = value;
     this.#count += 1;
   }
-}
-
-function firstAtOrAfter(timeMs: Float64Array, instantMs: number): number {
-  let low = 0;
-  let high = timeMs.length;
-  while (low < high) {
-    const mid = (low + high) >> 1;
-    if (timeMs[mid]! < instantMs) low = mid + 1;
-    else high = mid;
-  }
-  return low;
 }

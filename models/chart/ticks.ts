@@ -4,7 +4,8 @@ import { round9 } from '../units.ts';
 export function roundTicks(lowest: number, highest: number, count: number): number[] {
   const step = roundStep((highest - lowest) / Math.max(1, count));
   const ticks: number[] = [];
-  for (let k = Math.ceil(lowest / step - 1e-9) + 0; k * step <= highest + 1e-9 * step; k++) ticks.push(round9(k * step));
+  for (let k = Math.ceil(lowest / step - 1e-9) + 0; k * step <= highest + 1e-9 * step; k++)
+    ticks.push(round9(k * step));
   return ticks;
 }
 

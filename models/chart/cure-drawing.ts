@@ -1,0 +1,78 @@
+import type { PartEvaluation } from '../evaluation/evaluation.ts';
+import type { Dot, LineRole, Strip } from './chart.ts';
+import type { CureCourse } from './chart-inputs.ts';
+import { decimate } from './decimate.ts';
+import { labelOfLine } from './line-roles.ts';
+import type { DrawnLine } from './lines.ts';
+import { type Conversion, converted, drawn } from './shown-unit.ts';
+import { hoursAt, type TimeScale } from './time-scale.ts';
+
+interface CureLine {
+  readonly strip: Extract<Strip, 'cure' | 'tg'>;
+  readonly figures: Float64Array;
+  readonly conversion: Conversion;
+}
+
+/** Estimated degree of cure and Tg along each channel. */
+export function cureLines(
+  courses: readonly CureCourse[],
+  roleOf: (channel: string) => LineRole,
+  tgConversion: Conversion,
+  scale: TimeScale,
+  options: { readonly points: number; readonly longestGapMs: number },
+): DrawnLine[] {
+  return courses.flatMap((course) =>
+    linesOf(course, tgConversion).map(({ strip, figures, conversion }): DrawnLine => {
+      const { fromMs, untilMs } = scale;
+      const kept = decimate(course.timeMs, figures, { ...options, fromMs, untilMs });
+      const role = roleOf(course.channel);
+      return {
+        line: {
+          channel: course.channel,
+          strip,
+          role,
+          state: 'working',
+          excludedFromH: null,
+          label: labelOfLine(course.channel, role),
+          hours: Array.from(kept.timeMs, (ms) => hoursAt(scale, ms)),
+          value: Array.from(kept.value, (value) => (Number.isNaN(value) ? null : drawn(converted(value, conversion)))),
+        },
+        gaps: [],
+      };
+    }),
+  );
+}
+
+function linesOf({ degree, tgC }: CureCourse, tgConversion: Conversion): CureLine[] {
+  const lines: CureLine[] = [{ strip: 'cure', figures: degree, conversion: { slope: 1, intercept: 0 } }];
+  if (tgC !== null) lines.push({ strip: 'tg', figures: tgC, conversion: tgConversion });
+  return lines;
+}
+
+/** Estimated gel and vitrification on the degree's course. */
+export function cureDots(part: PartEvaluation, courses: readonly CureCourse[], scale: TimeScale): Dot[] {
+  return part.cure.flatMap(({ channel, gelAt, vitrifiesAt }) => {
+    const course = courses.find((one) => one.channel === channel);
+    if (course === undefined) return [];
+    return (
+      [
+        ['gel', gelAt, 'gels'],
+        ['vitrification', vitrifiesAt, 'vitrifies'],
+      ] as const
+    ).flatMap(([kind, instant, verb]): Dot[] => {
+      if (instant === null) return [];
+      const ms = Date.parse(instant);
+      const value = drawn(degreeAt(course, ms));
+      return [{ kind, strip: 'cure', atH: hoursAt(scale, ms), value, channel, text: `${channel} ${verb}` }];
+    });
+  });
+}
+
+/** Degree of cure at an instant, on the straight line between scans, held beyond the ends. */
+function degreeAt({ timeMs, degree }: CureCourse, ms: number): number {
+  const after = timeMs.findIndex((t) => t >= ms);
+  if (after === 0) return degree[0] ?? 0;
+  if (after < 0) return degree.at(-1) ?? 0;
+  const share = (ms - timeMs[after - 1]!) / (timeMs[after]! - timeMs[after - 1]!);
+  return degree[after - 1]! + share * (degree[after]! - degree[after - 1]!);
+}
