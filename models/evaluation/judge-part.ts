@@ -75,7 +75,7 @@ function stageRecords(j: Judgement, dwells: Dwells): StageRecord[] {
   return j.cycle.stages.map(({ name, kind }): StageRecord => {
     if (kind !== 'dwell')
       return { name, kind, opens: null, closes: null, minutes: null, openedBy: null, closedBy: null, dips: [] };
-    const { time, clock } = dwells.at(dwellAt++, 'least');
+    const { course, time, clock } = dwells.at(dwellAt++, 'least');
     return {
       name,
       kind,
@@ -85,6 +85,14 @@ function stageRecords(j: Judgement, dwells: Dwells): StageRecord[] {
       openedBy: clock.openedBy,
       closedBy: clock.closing?.by ?? null,
       dips: time.dips.filter(({ depthC }) => depthC !== null).map((dip) => dipRecord(j, dip)),
+      sensors: j.sensors.map((sensor, k) => {
+        const left = course.left[k];
+        return {
+          channel: sensor.name,
+          entered: iso(course.entered[k] ?? null),
+          left: left?.isFinal ? iso(left.ms) : null,
+        };
+      }),
     };
   });
 }
