@@ -2,6 +2,7 @@ import { DomainError } from '../errors.ts';
 import { textBytes } from './decode-bytes.ts';
 import type { LogEncoding } from './layout.ts';
 import type { LogFile } from './log-file.ts';
+import { firstInvalidUtf8, startOfCutCharacter } from './utf8.ts';
 
 /** A window on a file's text, as bytes of UTF-8 or Windows-1252, moved forward by whoever reads it. */
 export interface ByteSource {
@@ -30,7 +31,6 @@ const CARRIAGE_RETURN = 13;
 export function openSource(file: LogFile, encoding: LogEncoding, windowBytes = 1 << 18): ByteSource {
   const pieces = textBytes(file, encoding);
   const charset = encoding === 'windows-1252' ? 'windows-1252' : 'utf-8';
-  const validator = charset === 'utf-8' ? new TextDecoder('utf-8', { fatal: true }) : null;
   let waiting: Uint8Array = new Uint8Array(0);
   let bytes = new Uint8Array(windowBytes + 1);
   let end = 0;
@@ -78,15 +78,13 @@ export function openSource(file: LogFile, encoding: LogEncoding, windowBytes = 1
     more(from, line) {
       keep(from);
       if (end >= LONGEST_LINE_BYTES) throw lineTooLong(file.name, line);
-      const kept = end;
+      const checkFrom = charset === 'utf-8' ? startOfCutCharacter(bytes, end) : end;
       fill();
-      const zero = bytes.subarray(kept, end).indexOf(0);
-      if (zero >= 0) throw zeroByte(file.name, line + countLineEnds(bytes, kept + zero));
-      try {
-        validator?.decode(bytes.subarray(kept, end), { stream: true });
-      } catch {
-        throw notUtf8(file.name, line + countLineEnds(bytes, firstBadLine(bytes, end)));
-      }
+      const zero = bytes.subarray(checkFrom, end).indexOf(0);
+      if (zero >= 0) throw zeroByte(file.name, line + countLineEnds(bytes, checkFrom + zero));
+      if (charset !== 'utf-8') return;
+      const wrong = firstInvalidUtf8(bytes, checkFrom, end);
+      if (wrong < end) throw notUtf8(file.name, line + countLineEnds(bytes, wrong));
     },
     close: () => void pieces.return(),
   };
@@ -99,22 +97,6 @@ function countLineEnds(bytes: Uint8Array, until: number): number {
     if (bytes[i] === LINE_FEED || (bytes[i] === CARRIAGE_RETURN && bytes[i + 1] !== LINE_FEED)) count++;
   }
   return count;
-}
-
-/** Where the first line begins that is not UTF-8. */
-function firstBadLine(bytes: Uint8Array, end: number): number {
-  for (let from = 0; from < end; ) {
-    let next = from;
-    while (next < end && bytes[next] !== LINE_FEED && bytes[next] !== CARRIAGE_RETURN) next++;
-    next = Math.min(end, next + 1);
-    try {
-      new TextDecoder('utf-8', { fatal: true }).decode(bytes.subarray(from, next), { stream: next === end });
-    } catch {
-      return from;
-    }
-    from = next;
-  }
-  return end;
 }
 
 function lineTooLong(file: string, line: number): DomainError {

@@ -1,7 +1,7 @@
 import { DomainError } from '../errors.ts';
 import { byStart, cutPieces, doOverlap, type Piece } from './pieces.ts';
 import { placeOf, type RepairList } from './repair-list.ts';
-import type { ScanTable } from './scan-table.ts';
+import type { Scans } from './scan-table.ts';
 
 const DAY_MS = 86_400_000;
 
@@ -18,7 +18,7 @@ const DAY_MS = 86_400_000;
  */
 export function mendStepsBack(
   sequence: readonly number[],
-  table: ScanTable,
+  log: Scans,
   timeMs: Float64Array,
   intervalMs: number,
   files: readonly string[],
@@ -81,7 +81,7 @@ export function mendStepsBack(
   }
 
   function ambiguous(piece: Piece): DomainError {
-    const { file, line } = placeOf(table, files, sequence[piece.from]!);
+    const { file, line } = placeOf(log, files, sequence[piece.from]!);
     return new DomainError(
       'log-time-ambiguous',
       `${file}, line ${line}: the time steps back, and nothing tells whether the clock was set back or the lines stand out ` +

@@ -84,7 +84,7 @@ export function plainRowReader(
     if (at >= end) return isOver ? NOT_PLAIN : UNFINISHED;
     const stampMs = joinedStamp(bytes);
     if (Number.isNaN(stampMs)) return NOT_PLAIN;
-    table.stampMs[table.count] = stampMs;
+    table.stampMs[table.place] = stampMs;
     return endRow(bytes, at, end, isOver, READ);
   }
 
@@ -120,13 +120,13 @@ export function plainRowReader(
       byte = bytes[++at]!;
     }
     if (digits === 0 || digits > MOST_DIGITS || !(byte === delimiter || isLineEnd(byte))) {
-      table.values[channel]![table.count] = Number.NaN;
+      table.values[channel]![table.place] = Number.NaN;
       return isQuoted ? -1 : endOfMissing(bytes, from);
     }
     const size = figure / TEN_TO[decimals]!;
     const value = isNegative ? 0 - size : size;
     reader.decimals = decimals;
-    table.values[channel]![table.count] = isBelievable(bytes, from, at, value, channel) ? value : Number.NaN;
+    table.values[channel]![table.place] = isBelievable(bytes, from, at, value, channel) ? value : Number.NaN;
     return at;
   }
 

@@ -7,7 +7,7 @@ import type { PassedOverList } from './passed-over.ts';
 import { BLANK, plainRowReader, READ, UNFINISHED } from './plain-row.ts';
 import { readTop } from './read-top.ts';
 import { rowCursor } from './row-cursor.ts';
-import { makeRoom, type ScanTable } from './scan-table.ts';
+import { nextScan, type ScanTable, scansTaken } from './scan-table.ts';
 import { stampsOfLayout } from './stamps-of-layout.ts';
 import { unusualRows } from './unusual-rows.ts';
 
@@ -27,13 +27,12 @@ export function readFile(
     const stamps = stampsOfLayout(layout.time, layout.decimal ?? '.', source.charset);
     const plain = plainRowReader(top.plan, layout, missing, stamps, table);
     const unusual = unusualRows(file.name, top, layout, missing, stamps, table, passedOver);
-    const firstScan = table.count;
+    const firstScan = scansTaken(table);
     for (;;) {
-      makeRoom(table);
       const outcome = plain.read(source.bytes, cursor.from, source.end, source.isOver);
       if (outcome === READ) {
         unusual.beforeReading(plain.decimals);
-        table.line[table.count++] = cursor.line++;
+        nextScan(table, cursor.line++);
         cursor.from = plain.next;
       } else if (outcome === BLANK) {
         passedOver.add('blank', cursor.line++);
@@ -48,7 +47,7 @@ export function readFile(
       }
     }
     unusual.finish();
-    if (table.count === firstScan) {
+    if (scansTaken(table) === firstScan) {
       throw new DomainError('log-no-readings', `${file.name} holds no reading`, { file: file.name });
     }
   } finally {

@@ -5,7 +5,7 @@ import { passedOverList } from './passed-over.ts';
 import { readFile } from './read-file.ts';
 import type { PassedOver, ReadLog } from './readings.ts';
 import { repairTimes } from './repair-times.ts';
-import { createScanTable } from './scan-table.ts';
+import { createScanTable, finishScans, scansTaken } from './scan-table.ts';
 
 export interface ReadLogOptions {
   /** How many bytes are held at a time; any number reads the same. Default 256 KiB. */
@@ -23,21 +23,20 @@ export function readLog(files: readonly LogFile[], layout: Layout, { windowBytes
   const table = createScanTable(layout.channels.length);
   const passedOver: PassedOver[] = [];
   for (const [index, file] of files.entries()) {
-    table.firstOfFile.push(table.count);
+    table.firstOfFile.push(scansTaken(table));
     readFile(file, layout, table, passedOverList(index, passedOver), windowBytes);
   }
-  const { timeMs, scans, repairs } = repairTimes(
-    table,
-    layout,
-    files.map(({ name }) => name),
-  );
-  const channels = layout.channels.map((channel, k) => ({ channel, value: picked(table.values[k]!, scans) }));
+  const scans = finishScans(table);
+  const names = files.map(({ name }) => name);
+  const { timeMs, order, repairs } = repairTimes(scans, layout, names);
+  const channels = layout.channels.map((channel, k) => ({ channel, value: inOrder(scans.values[k]!, order) }));
   return { readings: { timeMs, channels }, repairs, passedOver };
 }
 
-/** The figures of the scans that stay, in their order. */
-function picked(figures: Float64Array, scans: Uint32Array): Float64Array {
-  const value = new Float64Array(scans.length);
-  for (let i = 0; i < scans.length; i++) value[i] = figures[scans[i]!]!;
+/** The figures of the scans that stay, in their order; null is all of them as they stand. */
+function inOrder(figures: Float64Array, order: Uint32Array | null): Float64Array {
+  if (!order) return figures;
+  const value = new Float64Array(order.length);
+  for (let i = 0; i < order.length; i++) value[i] = figures[order[i]!]!;
   return value;
 }

@@ -1,5 +1,5 @@
 import type { Repair, RepairKind } from './readings.ts';
-import { fileOf, type ScanTable } from './scan-table.ts';
+import { fileOf, type Scans } from './scan-table.ts';
 
 /** Most entries of one kind for one file; beyond that they become one. */
 const MOST_ENTRIES = 20;
@@ -11,18 +11,18 @@ export interface RepairList {
   add(kind: RepairKind, scans: readonly number[], because: string): void;
 }
 
-export function repairList(table: ScanTable): RepairList {
+export function repairList(log: Scans): RepairList {
   const repairs: Repair[] = [];
   return {
     repairs,
     add(kind, scans, because) {
-      for (const [file, first] of table.firstOfFile.entries()) {
-        const until = table.firstOfFile[file + 1] ?? table.count;
+      for (const [file, first] of log.firstOfFile.entries()) {
+        const until = log.firstOfFile[file + 1] ?? log.count;
         const ofFile = scans.filter((scan) => scan >= first && scan < until).sort((a, b) => a - b);
         const stretches = neighbours(ofFile);
         const few = stretches.length <= MOST_ENTRIES ? stretches : [ofFile];
         for (const stretch of few) {
-          const lines = [table.line[stretch[0]!]!, table.line[stretch.at(-1)!]!] as const;
+          const lines = [log.line[stretch[0]!]!, log.line[stretch.at(-1)!]!] as const;
           repairs.push({ kind, file, lines, scans: stretch.length, because });
         }
       }
@@ -31,8 +31,8 @@ export function repairList(table: ScanTable): RepairList {
 }
 
 /** `t.csv, line 302`, for refusals. */
-export function placeOf(table: ScanTable, files: readonly string[], scan: number): { file: string; line: number } {
-  return { file: files[fileOf(table, scan)] ?? '', line: table.line[scan]! };
+export function placeOf(log: Scans, files: readonly string[], scan: number): { file: string; line: number } {
+  return { file: files[fileOf(log, scan)] ?? '', line: log.line[scan]! };
 }
 
 /** Stretches of scans that stand next to each other, or one apart as where every other is touched. */

@@ -6,7 +6,7 @@ import type { Repair } from './readings.ts';
 import { placeOf, repairList } from './repair-list.ts';
 import { instantsInZone } from './repeated-hour.ts';
 import { partSameStamps } from './same-stamp.ts';
-import type { ScanTable } from './scan-table.ts';
+import type { Scans } from './scan-table.ts';
 import { leaveOutSentTwice } from './scans-sent-twice.ts';
 import { stampsOfLayout } from './stamps-of-layout.ts';
 import { findZone } from './time-zone.ts';
@@ -15,8 +15,8 @@ import { findZone } from './time-zone.ts';
 export interface RepairedTimes {
   /** [n] ms since 1970-01-01T00:00:00Z, strictly rising. */
   readonly timeMs: Float64Array;
-  /** [n] places in the table. */
-  readonly scans: Uint32Array;
+  /** [n] the scans that stay, in their order; null is all of them as they stand. */
+  readonly order: Uint32Array | null;
   readonly repairs: readonly Repair[];
 }
 
@@ -24,24 +24,21 @@ export interface RepairedTimes {
  * Turns stamps into instants that strictly rise, by the five repairs in their order: the hour that comes twice, scans
  * sent twice, pieces out of order, a clock set back, scans of one stamp. Each is listed with its lines.
  */
-export function repairTimes(table: ScanTable, layout: Layout, files: readonly string[]): RepairedTimes {
-  const list = repairList(table);
+export function repairTimes(log: Scans, layout: Layout, files: readonly string[]): RepairedTimes {
+  const list = repairList(log);
   const { time } = layout;
   const isAbsolute = 'elapsed' in time || stampsOfLayout(time, '.', 'utf-8').isAbsolute;
-  const timeMs =
-    isAbsolute || !('zone' in time)
-      ? table.stampMs.slice(0, table.count)
-      : instantsInZone(table, findZone(time.zone), files, list);
-  if (doRise(timeMs)) return { timeMs, scans: Uint32Array.from(timeMs, (_, i) => i), repairs: list.repairs };
+  const timeMs = isAbsolute || !('zone' in time) ? log.stampMs : instantsInZone(log, findZone(time.zone), files, list);
+  if (doRise(timeMs)) return { timeMs, order: null, repairs: list.repairs };
 
   let sequence: readonly number[] = Array.from(timeMs, (_, i) => i);
   const intervalMs = medianIntervalMs(sequence, timeMs);
-  sequence = leaveOutSentTwice(sequence, table, timeMs, intervalMs, list);
-  sequence = mendStepsBack(sequence, table, timeMs, intervalMs, files, list);
-  sequence = partSameStamps(sequence, table, timeMs, list);
+  sequence = leaveOutSentTwice(sequence, log, timeMs, intervalMs, list);
+  sequence = mendStepsBack(sequence, log, timeMs, intervalMs, files, list);
+  sequence = partSameStamps(sequence, log, timeMs, list);
   const mendedMs = Float64Array.from(sequence, (scan) => timeMs[scan]!);
-  if (!doRise(mendedMs)) throw tooDense(table, files, sequence, mendedMs);
-  return { timeMs: mendedMs, scans: Uint32Array.from(sequence), repairs: list.repairs };
+  if (!doRise(mendedMs)) throw tooDense(log, files, sequence, mendedMs);
+  return { timeMs: mendedMs, order: Uint32Array.from(sequence), repairs: list.repairs };
 }
 
 function doRise(timeMs: Float64Array): boolean {
@@ -51,13 +48,13 @@ function doRise(timeMs: Float64Array): boolean {
 
 /** More scans than milliseconds under one stamp: no recorder of a cure writes that. */
 function tooDense(
-  table: ScanTable,
+  log: Scans,
   files: readonly string[],
   sequence: readonly number[],
   timeMs: Float64Array,
 ): DomainError {
   const place = timeMs.findIndex((time, i) => i > 0 && !(time > timeMs[i - 1]!));
-  const { file, line } = placeOf(table, files, sequence[place]!);
+  const { file, line } = placeOf(log, files, sequence[place]!);
   return new DomainError('log-time-ambiguous', `${file}, line ${line}: too many scans have one stamp to be spread`, {
     file,
     line,

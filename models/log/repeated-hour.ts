@@ -1,6 +1,6 @@
 import { DomainError } from '../errors.ts';
 import { placeOf, type RepairList } from './repair-list.ts';
-import type { ScanTable } from './scan-table.ts';
+import type { Scans } from './scan-table.ts';
 import type { Zone } from './time-zone.ts';
 
 /**
@@ -13,24 +13,24 @@ import type { Zone } from './time-zone.ts';
  * @throws {DomainError} `log-time-skipped` for a time that the zone's clocks never showed; `log-time-ambiguous` for a
  *   log that begins in a repeated hour and never steps back in it.
  */
-export function instantsInZone(table: ScanTable, zone: Zone, files: readonly string[], list: RepairList): Float64Array {
-  const instantMs = new Float64Array(table.count);
+export function instantsInZone(log: Scans, zone: Zone, files: readonly string[], list: RepairList): Float64Array {
+  const instantMs = new Float64Array(log.count);
   const repeated: number[] = [];
   /** The scan that began in a repeated hour, while nothing has proved which one. */
   let unproved = -1;
   let previousMs = Number.NEGATIVE_INFINITY;
-  for (let scan = 0; scan < table.count; scan++) {
-    const localMs = table.stampMs[scan]!;
+  for (let scan = 0; scan < log.count; scan++) {
+    const localMs = log.stampMs[scan]!;
     const firstMs = zone.instantOf(localMs);
-    if (Number.isNaN(firstMs)) throw skipped(table, zone, files, scan);
+    if (Number.isNaN(firstMs)) throw skipped(log, zone, files, scan);
     const secondMs = zone.secondInstantOf(localMs);
     let chosenMs = firstMs;
     if (Number.isNaN(secondMs)) {
-      if (unproved >= 0) throw ambiguous(table, zone, files, unproved);
+      if (unproved >= 0) throw ambiguous(log, zone, files, unproved);
     } else {
       repeated.push(scan);
       if (scan === 0 || secondMs < previousMs) {
-        if (unproved >= 0) throw ambiguous(table, zone, files, unproved);
+        if (unproved >= 0) throw ambiguous(log, zone, files, unproved);
         unproved = scan;
       } else if (firstMs < previousMs) {
         chosenMs = secondMs;
@@ -40,7 +40,7 @@ export function instantsInZone(table: ScanTable, zone: Zone, files: readonly str
     instantMs[scan] = chosenMs;
     previousMs = chosenMs;
   }
-  if (unproved >= 0) throw ambiguous(table, zone, files, unproved);
+  if (unproved >= 0) throw ambiguous(log, zone, files, unproved);
   list.add(
     'repeated-hour',
     repeated,
@@ -49,9 +49,9 @@ export function instantsInZone(table: ScanTable, zone: Zone, files: readonly str
   return instantMs;
 }
 
-function skipped(table: ScanTable, zone: Zone, files: readonly string[], scan: number): DomainError {
-  const { file, line } = placeOf(table, files, scan);
-  const time = wallClock(table.stampMs[scan]!);
+function skipped(log: Scans, zone: Zone, files: readonly string[], scan: number): DomainError {
+  const { file, line } = placeOf(log, files, scan);
+  const time = wallClock(log.stampMs[scan]!);
   return new DomainError(
     'log-time-skipped',
     `${file}, line ${line}: clocks in ${zone.name} never showed ${time}. ` +
@@ -60,9 +60,9 @@ function skipped(table: ScanTable, zone: Zone, files: readonly string[], scan: n
   );
 }
 
-function ambiguous(table: ScanTable, zone: Zone, files: readonly string[], scan: number): DomainError {
-  const { file, line } = placeOf(table, files, scan);
-  const time = wallClock(table.stampMs[scan]!);
+function ambiguous(log: Scans, zone: Zone, files: readonly string[], scan: number): DomainError {
+  const { file, line } = placeOf(log, files, scan);
+  const time = wallClock(log.stampMs[scan]!);
   return new DomainError(
     'log-time-ambiguous',
     `${file}, line ${line}: clocks in ${zone.name} showed ${time} twice, and nothing in the log tells which is meant. ` +

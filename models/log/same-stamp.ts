@@ -1,6 +1,6 @@
 import { medianIntervalMs } from './pieces.ts';
 import type { RepairList } from './repair-list.ts';
-import type { ScanTable } from './scan-table.ts';
+import type { Scans } from './scan-table.ts';
 import { areEqual, KEPT_FIRST } from './scans-sent-twice.ts';
 
 /** Scans of one stamp: places `from` to before `until` of a sequence. */
@@ -20,19 +20,19 @@ interface Group {
  */
 export function partSameStamps(
   sequence: readonly number[],
-  table: ScanTable,
+  log: Scans,
   timeMs: Float64Array,
   list: RepairList,
 ): readonly number[] {
   const groups = groupsOf(sequence, timeMs);
   if (groups.length === sequence.length) return sequence;
   const differing = groups.filter(({ from, until }) =>
-    sequence.slice(from + 1, until).some((scan) => !areEqual(table, scan, sequence[from]!)),
+    sequence.slice(from + 1, until).some((scan) => !areEqual(log, scan, sequence[from]!)),
   ).length;
   const areCoarse = differing * 2 >= groups.length || (differing * 10 >= groups.length && differing >= 3);
   return areCoarse && groups.length > 1
     ? spread(sequence, groups, timeMs, list)
-    : keepFirst(sequence, groups, table, list);
+    : keepFirst(sequence, groups, log, list);
 }
 
 function groupsOf(sequence: readonly number[], timeMs: Float64Array): Group[] {
@@ -76,7 +76,7 @@ function spread(
 function keepFirst(
   sequence: readonly number[],
   groups: readonly Group[],
-  table: ScanTable,
+  log: Scans,
   list: RepairList,
 ): readonly number[] {
   const kept: number[] = [];
@@ -85,7 +85,7 @@ function keepFirst(
   for (const { from, until } of groups) {
     const first = sequence[from]!;
     kept.push(first);
-    for (const scan of sequence.slice(from + 1, until)) (areEqual(table, scan, first) ? equal : different).push(scan);
+    for (const scan of sequence.slice(from + 1, until)) (areEqual(log, scan, first) ? equal : different).push(scan);
   }
   list.add(
     'scan-left-out',

@@ -1,6 +1,6 @@
 import { cutPieces, type Piece } from './pieces.ts';
 import type { RepairList } from './repair-list.ts';
-import type { ScanTable } from './scan-table.ts';
+import type { Scans } from './scan-table.ts';
 
 /**
  * Leaves out scans that equal one of another piece in stamp and values, as where files overlap or a recorder sends twice.
@@ -12,12 +12,12 @@ import type { ScanTable } from './scan-table.ts';
  */
 export function leaveOutSentTwice(
   sequence: readonly number[],
-  table: ScanTable,
+  log: Scans,
   timeMs: Float64Array,
   intervalMs: number,
   list: RepairList,
 ): readonly number[] {
-  const firsts = new Set(table.firstOfFile);
+  const firsts = new Set(log.firstOfFile);
   const pieces = cutPieces(sequence, timeMs, intervalMs, (scan) => firsts.has(scan));
   const shared = piecesWithCommonTimes(pieces);
   if (shared.size === 0) return sequence;
@@ -33,7 +33,7 @@ export function leaveOutSentTwice(
     for (const scan of sequence.slice(piece.from, piece.until)) {
       const others = scansByStamp.get(timeMs[scan]!) ?? [];
       if (others.length === 0) continue;
-      const twin = others.find((other) => areEqual(table, scan, other.scan));
+      const twin = others.find((other) => areEqual(log, scan, other.scan));
       if (twin) partners.add(twin.piece);
       (twin ? equal : different).push(scan);
     }
@@ -64,8 +64,8 @@ export function leaveOutSentTwice(
 
 export const KEPT_FIRST = 'These scans have the stamp of another with different values; the first of them was kept.';
 
-export function areEqual(table: ScanTable, scan: number, other: number): boolean {
-  return table.values.every((figures) => Object.is(figures[scan], figures[other]));
+export function areEqual(log: Scans, scan: number, other: number): boolean {
+  return log.values.every((figures) => Object.is(figures[scan], figures[other]));
 }
 
 /** Pieces that have at least an instant in common with another, by index. */

@@ -5,7 +5,7 @@ import type { MissingCodes } from './missing-codes.ts';
 import type { PassedOverList } from './passed-over.ts';
 import { firstReadingLine, type Top } from './read-top.ts';
 import { rowErrors } from './row-errors.ts';
-import type { ScanTable } from './scan-table.ts';
+import { nextScan, type ScanTable, scansTaken } from './scan-table.ts';
 import type { Row } from './split-row.ts';
 import type { StampReader } from './stamp-reader.ts';
 import { type JudgedRow, judgeRow, looksStamped } from './text-row.ts';
@@ -78,7 +78,7 @@ export function unusualRows(
     const isGood = judged.isWhole && hasStamp && judged.badCell === null && row.badQuote === null;
     if (isGood && (!row.isCutOff || isProvedWhole(row))) {
       beforeReading(decimalsOf(row.cells[plan.cells - 1]!));
-      table.line[table.count++] = line;
+      nextScan(table, line);
       return;
     }
     if (isGood) {
@@ -116,7 +116,7 @@ export function unusualRows(
   function finish(): void {
     if (!waiting) return;
     const isOneLine = waiting.from === waiting.until;
-    if (table.count === table.firstOfFile.at(-1)) throw waiting.error;
+    if (scansTaken(table) === table.firstOfFile.at(-1)) throw waiting.error;
     if (waiting.brokenOff && !isOneLine) throw waiting.brokenOff;
     passedOver.add(waiting.brokenOff ? 'truncated-last-line' : 'after-last-reading', waiting.from, waiting.until);
   }
