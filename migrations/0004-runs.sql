@@ -46,6 +46,7 @@ CREATE TABLE source_files (
 ) STRICT, WITHOUT ROWID;
 
 CREATE INDEX source_files_by_file ON source_files (file_id);
+CREATE INDEX source_files_by_name ON source_files (name);
 
 -- Readings of one column over a stretch of scans. Column 0 is the time, 1 the layout's first channel.
 CREATE TABLE reading_blocks (

@@ -27,7 +27,8 @@ CREATE TABLE evaluations (
   because          TEXT NOT NULL CHECK (because <> ''),
   engine           TEXT NOT NULL CHECK (engine <> ''),
   verdict          TEXT NOT NULL CHECK (verdict IN ('conforms', 'does-not-conform', 'cannot-tell', 'pending')),
-  undecided        INTEGER NOT NULL CHECK (undecided >= 0),
+  -- Channels of suspected sensors nobody had decided on.
+  undecided        TEXT NOT NULL CHECK (json_valid(undecided)),
   not_met          TEXT NOT NULL CHECK (json_valid(not_met)),
   cannot_tell      TEXT NOT NULL CHECK (json_valid(cannot_tell)),
   readings_sha256  TEXT NOT NULL CHECK (length(readings_sha256) = 64),

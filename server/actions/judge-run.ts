@@ -7,7 +7,7 @@ import { insertEvaluation } from '../store/evaluations.ts';
 import { requireRun } from '../store/runs.ts';
 import { type ActionParts, deedOf } from './action-parts.ts';
 import type { EvaluateLog } from './evaluate-log.ts';
-import { type Changes, gatherInputs, type JudgementInputs } from './judgement-inputs.ts';
+import { type Changes, gatherInputs, type RunInputs } from './run-inputs.ts';
 
 /** Parts of an action that ends in a judgement. */
 export interface JudgingParts extends ActionParts {
@@ -54,10 +54,18 @@ export async function judgeRun(parts: JudgingParts, run: number, because = 'judg
   );
 }
 
-async function evaluateInputs(evaluate: EvaluateLog, inputs: JudgementInputs): Promise<Evaluation> {
+async function evaluateInputs(evaluate: EvaluateLog, inputs: RunInputs): Promise<Evaluation> {
   const { cycle, load, resin, decisions } = inputs;
-  const { exclusions, kept } = decisions;
-  const evaluation = await evaluate(inputs.readLog(), { cycle, load, resin, exclusions, kept });
+  const { exclusions, believed } = decisions;
+  const evaluation = await evaluate(inputs.readLog(), {
+    cycle,
+    load,
+    resin,
+    exclusions,
+    believed,
+    barometer: null,
+    open: false,
+  });
   return {
     ...evaluation,
     log: { ...evaluation.log, sha256: inputs.logSha256 },
@@ -69,7 +77,7 @@ function writeEvaluation(
   parts: ActionParts,
   run: number,
   because: string,
-  inputs: JudgementInputs,
+  inputs: RunInputs,
   document: Evaluation,
 ): number {
   const { db } = parts;

@@ -23,3 +23,9 @@ export function sha256OfDocument(document: unknown): string {
 export function sha256Of(bytes: string | Uint8Array): string {
   return createHash('sha256').update(bytes).digest('hex');
 }
+
+/** One hash for several things in order: that of their hashes, a line each. Of one thing it is its own. */
+export function oneHash(hashes: readonly string[]): string {
+  const [only] = hashes;
+  return hashes.length === 1 && only !== undefined ? only : sha256Of(hashes.map((hash) => `${hash}\n`).join(''));
+}

@@ -41,7 +41,7 @@ export function insertEvaluation(db: Db, { run, because, engine, inputs, documen
       because,
       engine,
       verdict: document.verdict,
-      undecided: document.decisions.length,
+      undecided: JSON.stringify([...new Set(document.decisions.map(({ channel }) => channel))]),
       notMet: JSON.stringify(limitsWith(document, 'not-met')),
       cannotTell: JSON.stringify(limitsWith(document, 'cannot-tell')),
       ...inputs,

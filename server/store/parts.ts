@@ -69,11 +69,8 @@ export function listParts(db: Db, { q = '', limit }: { q?: string | undefined; l
   const total = db.prepare<object, number>(`${MATCHES} SELECT count(*) FROM matches`).pluck().get(values) ?? 0;
   const rows = db
     .prepare<object, PartRow>(
-      `${MATCHES} SELECT matches.*,
-         (SELECT verdict FROM evaluation_parts
-          WHERE part_id = matches.id ORDER BY evaluation_id DESC LIMIT 1) AS verdict,
-         EXISTS (SELECT 1 FROM part_results WHERE part_id = matches.id AND outcome = 'failed') AS failed
-       FROM matches ORDER BY from_ms DESC, serial LIMIT @limit`,
+      `${MATCHES} SELECT parts.*, ${VERDICT} AS verdict, ${FAILED} AS failed
+       FROM matches AS parts ORDER BY from_ms DESC, serial LIMIT @limit`,
     )
     .all({ ...values, limit });
   return { parts: rows.map((row) => lineOf(db, row)), total };
@@ -89,6 +86,35 @@ export function readRunsOfPart(db: Db, partId: number): number[] {
     .pluck()
     .all(partId);
 }
+
+/** Parts by serial, and those whose particulars name a tool now. */
+export function readSharers(
+  db: Db,
+  serials: readonly string[],
+  tool: string | null,
+): { serial: string; verdict: PartLine['verdict']; failedTest: boolean; onTool: boolean }[] {
+  return db
+    .prepare<object, { serial: string; verdict: PartLine['verdict']; failed: number; onTool: number }>(
+      `WITH about AS (SELECT part_id, tool, max(id) FROM part_particulars GROUP BY part_id)
+       SELECT serial, coalesce(about.tool = @tool, 0) AS onTool, ${VERDICT} AS verdict, ${FAILED} AS failed
+       FROM parts LEFT JOIN about ON about.part_id = parts.id
+       WHERE about.tool = @tool OR serial IN (SELECT value FROM json_each(@serials)) ORDER BY serial`,
+    )
+    .all({ serials: JSON.stringify(serials), tool })
+    .map(({ serial, verdict, failed, onTool }) => ({
+      serial,
+      verdict,
+      failedTest: failed === 1,
+      onTool: onTool === 1,
+    }));
+}
+
+/** Of a part's latest judged run; of that run's latest judgement. */
+const VERDICT = `(
+  SELECT evaluation_parts.verdict FROM evaluation_parts JOIN evaluations ON evaluations.id = evaluation_id
+  JOIN runs ON runs.id = run_id WHERE part_id = parts.id ORDER BY from_ms DESC, evaluation_id DESC LIMIT 1)`;
+
+const FAILED = "EXISTS (SELECT 1 FROM part_results WHERE part_id = parts.id AND outcome = 'failed')";
 
 interface PartRow {
   readonly id: number;

@@ -28,6 +28,14 @@ export function requireRecorder(db: Db, name: string): { readonly id: number; re
   return row;
 }
 
+/** The layout a recorder's files are read by; refused where none is kept. */
+export function requireKeptLayout(db: Db, name: string): Layout {
+  requireRecorder(db, name);
+  const layout = findRecorder(db, name)?.layout;
+  if (layout) return layout.document;
+  throw new DomainError('layout-not-provable', `No layout is kept for the recorder "${name}" yet`, { recorder: name });
+}
+
 export function insertRecorder(db: Db, name: string, vesselId: number | null): void {
   if (db.prepare('SELECT 1 FROM recorders WHERE name = ?').get(name) !== undefined) {
     throw new DomainError('already-recorded', `There is a recorder called "${name}" already`, { recorder: name });

@@ -22,15 +22,21 @@ export function findRunLine(db: Db, run: number): RunLine | undefined {
   return row === undefined ? undefined : lineOf(db, row);
 }
 
+/** A run that waits for a person, with the channels of the sensors to decide on. */
+export interface RunInNeed {
+  readonly run: RunLine;
+  readonly undecided: readonly string[];
+}
+
 /** Runs that wait for a person, latest first: without a load, with a suspect to decide, or that cannot be told. */
-export function listRunsInNeed(db: Db, limit: number): RunLine[] {
+export function listRunsInNeed(db: Db, limit: number): RunInNeed[] {
   return db
     .prepare<[number], LineRow>(
-      `${SELECT} WHERE loads.id IS NULL OR loads.cycle_id IS NULL OR evaluations.undecided > 0
+      `${SELECT} WHERE loads.id IS NULL OR loads.cycle_id IS NULL OR evaluations.undecided <> '[]'
          OR evaluations.verdict = 'cannot-tell' ORDER BY runs.from_ms DESC, runs.id DESC LIMIT ?`,
     )
     .all(limit)
-    .map((row) => lineOf(db, row));
+    .map((row) => ({ run: lineOf(db, row), undecided: JSON.parse(row.undecided ?? '[]') }));
 }
 
 const FROM = `
@@ -55,7 +61,7 @@ interface LineRow {
   readonly code: string | null;
   readonly issue: string | null;
   readonly verdict: RunLine['verdict'];
-  readonly undecided: number | null;
+  readonly undecided: string | null;
   readonly not_met: string | null;
   readonly cannot_tell: string | null;
 }
@@ -73,7 +79,7 @@ function lineOf(db: Db, row: LineRow): RunLine {
     parts: row.load_id === null ? [] : readSerials(db, row.load_id),
     state: row.load_id === null ? 'awaiting-load' : code === null ? 'awaiting-cycle' : 'judged',
     verdict: row.verdict,
-    undecided: row.undecided ?? 0,
+    undecided: JSON.parse(row.undecided ?? '[]').length,
     notMet: JSON.parse(row.not_met ?? '[]'),
     cannotTell: JSON.parse(row.cannot_tell ?? '[]'),
   };

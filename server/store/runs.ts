@@ -48,3 +48,14 @@ export function findRunOfFile(db: Db, sha256: string): number | null {
       .get(sha256) ?? null
   );
 }
+
+/** Recorded files of a name: the run, and the bytes they are told by. */
+export function findRecordedByName(db: Db, name: string): { run: number; bytes: number; sha256: string }[] {
+  return db
+    .prepare<[string], { run: number; bytes: number; sha256: string }>(
+      `SELECT DISTINCT run_id AS run, files.bytes, files.sha256
+       FROM source_files JOIN run_sources ON run_sources.id = source_id JOIN files ON files.id = file_id
+       WHERE source_files.name = ?`,
+    )
+    .all(name);
+}

@@ -32,6 +32,11 @@ export function findWorkshop(db: Db): WorkshopRow | null {
   return { name: row.name, zone: row.zone, units, practice: row.practice };
 }
 
+/** The zone of the workshop's clock; that of this machine before anyone has said. */
+export function zoneOfWorkshop(db: Db): string {
+  return findWorkshop(db)?.zone ?? Intl.DateTimeFormat().resolvedOptions().timeZone;
+}
+
 /** Writes the workshop's one row; `practice` is set when the row is made and never after. */
 export function writeWorkshop(db: Db, { name, zone, units }: SetWorkshopRequest, practice: string | null = null): void {
   db.prepare(

@@ -3,7 +3,7 @@ import type { Cycle } from '../../models/cycle/cycle.ts';
 import type { ReadLog } from '../../models/log/readings.ts';
 import type { Exclusion, Load } from '../../models/run/load.ts';
 import type { RunSource, SensorDecision } from '../contract/runs.ts';
-import { sha256Of, sha256OfDocument } from '../store/canonical.ts';
+import { oneHash, sha256OfDocument } from '../store/canonical.ts';
 import { type CycleRow, readCycleDocument, requireCycle } from '../store/cycles.ts';
 import type { Db } from '../store/database.ts';
 import { readDecisions } from '../store/decisions.ts';
@@ -17,12 +17,12 @@ import { mergeLogs } from './merge-logs.ts';
 export interface DecisionsDocument {
   readonly format: 'dwellbook-decisions/1';
   readonly exclusions: readonly Exclusion[];
-  /** Channels whose suspicion somebody set aside. */
-  readonly kept: readonly string[];
+  /** Channels that somebody decided to go on believing. */
+  readonly believed: readonly string[];
 }
 
 /** Everything a run is judged by, with its hashes. */
-export interface JudgementInputs {
+export interface RunInputs {
   readonly load: Load;
   readonly cycle: Cycle;
   readonly resin: Resin | null;
@@ -42,7 +42,7 @@ export interface Changes {
 }
 
 /** The inputs of a run's judgement; null while it has no load or no cycle. */
-export function gatherInputs(db: Db, run: number, changes: Changes = {}): JudgementInputs | null {
+export function gatherInputs(db: Db, run: number, changes: Changes = {}): RunInputs | null {
   const stored = findLoad(db, run);
   const load = changes.load ?? stored?.document;
   const cycleRow = changes.cycle === undefined ? cycleOf(db, stored?.cycle ?? null) : changes.cycle;
@@ -78,12 +78,6 @@ function cycleOf(db: Db, named: { readonly code: string; readonly issue: string 
   return named === null ? null : requireCycle(db, named.code, named.issue);
 }
 
-/** Of several sources: the hash of their hashes, a line each. */
-function oneHash(hashes: readonly string[]): string {
-  const [only] = hashes;
-  return hashes.length === 1 && only !== undefined ? only : sha256Of(hashes.map((hash) => `${hash}\n`).join(''));
-}
-
 /** The latest decision of each channel, in the order of the channels' names. */
 function decisionsDocument(decisions: readonly SensorDecision[]): DecisionsDocument {
   const latest = new Map(decisions.map((decision) => [decision.channel, decision]));
@@ -93,6 +87,6 @@ function decisionsDocument(decisions: readonly SensorDecision[]): DecisionsDocum
     exclusions: ordered.flatMap(({ channel, from, reason, deed }) =>
       from === null ? [] : [{ channel, from, reason, by: deed.by }],
     ),
-    kept: ordered.filter(({ decision }) => decision === 'keep').map(({ channel }) => channel),
+    believed: ordered.filter(({ decision }) => decision === 'keep').map(({ channel }) => channel),
   };
 }

@@ -1,0 +1,102 @@
+import { existsSync, mkdirSync } from 'node:fs';
+import { createServer, type Server } from 'node:http';
+import { join } from 'node:path';
+import { fileURLToPath } from 'node:url';
+import { DomainError } from '../../models/errors.ts';
+import { createEvaluator } from '../actions/evaluator.ts';
+import type { JudgingParts } from '../actions/judge-run.ts';
+import { createApp } from '../app.ts';
+import type { Db } from '../store/database.ts';
+import { openDatabase } from '../store/database.ts';
+import { builtInPerson } from './built-in-person.ts';
+import { databasePath } from './data-folder.ts';
+import { createLog } from './log.ts';
+
+export interface ServerOptions {
+  readonly folder: string;
+  readonly host: string;
+  readonly port: number;
+  /** Folder watched for finished files; null: none. */
+  readonly watchedFolder: string | null;
+  /** Seconds a file must not have grown to be finished. */
+  readonly settleS: number;
+  /** Done once the database is open, before anything listens. */
+  readonly prepare?: (parts: JudgingParts) => Promise<void>;
+}
+
+/** A log of 24 channels once a second for two days has some 30 MB. */
+const MOST_FILE_BYTES = 512 * 1024 * 1024;
+
+/** Serves a workshop until the process is told to end; then closes everything in order. */
+export async function serveWorkshop(options: ServerOptions): Promise<void> {
+  const log = createLog();
+  const db = openDatabase(databasePath(options.folder), { at: new Date().toISOString() });
+  const evaluator = createEvaluator();
+  const parts = { db, clock: Date.now, actor: builtInPerson(), evaluate: evaluator.evaluate };
+  await options.prepare?.(parts);
+  const incomingFolder = join(options.folder, 'incoming');
+  mkdirSync(incomingFolder, { recursive: true });
+  const app = createApp({
+    ...parts,
+    log,
+    siteFolder: findSite(),
+    incomingFolder,
+    watchedFolder: options.watchedFolder,
+    mostUploadBytes: MOST_FILE_BYTES,
+  });
+  const server = await listen(createServer(app), options);
+  process.stdout.write(`Dwellbook is at ${addressOf(server, options.host)}\n`);
+  const watched = await startWatching(options, { ...parts, log });
+  await told('SIGINT', 'SIGTERM');
+  server.close();
+  server.closeAllConnections();
+  await watched?.close();
+  await evaluator.close();
+  closeDatabase(db);
+}
+
+function findSite(): string | null {
+  const folder = fileURLToPath(new URL('../../web/', import.meta.url));
+  return existsSync(join(folder, 'index.html')) ? folder : null;
+}
+
+function listen(server: Server, { host, port }: ServerOptions): Promise<Server> {
+  return new Promise((resolve, reject) => {
+    server.once('error', (error: NodeJS.ErrnoException) => {
+      const because = error.code === 'EADDRINUSE' ? 'something else listens there already' : error.message;
+      reject(
+        new DomainError(
+          'state-conflict',
+          `Cannot listen at ${host} port ${port}: ${because}`,
+          { host, port },
+          { cause: error },
+        ),
+      );
+    });
+    server.listen(port, host, () => resolve(server));
+  });
+}
+
+function addressOf(server: Server, host: string): string {
+  const address = server.address();
+  const port = typeof address === 'object' && address !== null ? address.port : 0;
+  return `http://${host.includes(':') ? `[${host}]` : host}:${port}`;
+}
+
+async function startWatching(options: ServerOptions, parts: JudgingParts & { log: ReturnType<typeof createLog> }) {
+  const { watchedFolder, settleS } = options;
+  if (watchedFolder === null) return null;
+  const { watchFolder } = await import('../live/watched-folder.ts');
+  return watchFolder({ ...parts, folder: watchedFolder, settleMs: settleS * 1000, mostBytes: MOST_FILE_BYTES });
+}
+
+function told(...signals: NodeJS.Signals[]): Promise<void> {
+  return new Promise((resolve) => {
+    for (const signal of signals) process.once(signal, () => resolve());
+  });
+}
+
+function closeDatabase(db: Db): void {
+  db.pragma('wal_checkpoint(TRUNCATE)');
+  db.close();
+}

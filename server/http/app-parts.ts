@@ -1,0 +1,14 @@
+import type { JudgingParts } from '../actions/judge-run.ts';
+
+/** What the server is made of. Everything is opened by who makes it. */
+export interface AppParts extends JudgingParts {
+  /** Folder of the built pages; null where none are served. */
+  readonly siteFolder: string | null;
+  /** Folder an upload is written to while it arrives. */
+  readonly incomingFolder: string;
+  /** Folder watched for finished files; null where none is. */
+  readonly watchedFolder: string | null;
+  /** Most bytes an upload may have. */
+  readonly mostUploadBytes: number;
+  readonly log: { info(facts: object, message: string): void; error(facts: object, message: string): void };
+}

@@ -1,0 +1,15 @@
+import { cycleHandlers } from './cycle-handlers.ts';
+import type { Handlers } from './handler.ts';
+import { importHandlers } from './import-handlers.ts';
+import { partHandlers } from './part-handlers.ts';
+import { runHandlers } from './run-handlers.ts';
+import { workshopHandlers } from './workshop-handlers.ts';
+
+/** One handler for every operation of the contract: one that lacks does not compile. */
+export const HANDLERS: Handlers = {
+  ...workshopHandlers,
+  ...importHandlers,
+  ...runHandlers,
+  ...cycleHandlers,
+  ...partHandlers,
+};

@@ -1,0 +1,43 @@
+import { rm } from 'node:fs/promises';
+import { basename } from 'node:path';
+import { discardImport } from '../actions/discard-import.ts';
+import { fileAtPath } from '../actions/file-at-path.ts';
+import { fileOfImport } from '../actions/incoming-file.ts';
+import { receiveFile, refuseRecorded } from '../actions/receive-file.ts';
+import { recordRun } from '../actions/record-run.ts';
+import { listWaitingImports, requireImport } from '../store/imports.ts';
+import type { SomeHandlers } from './handler.ts';
+import { importLineOf, importView } from './import-view.ts';
+import { numberIn } from './number-in.ts';
+import { previewOf } from './preview.ts';
+import { saveUpload } from './save-upload.ts';
+
+export const importHandlers: SomeHandlers<
+  'listImports' | 'uploadFile' | 'readImport' | 'previewImport' | 'recordRun' | 'discardImport'
+> = {
+  listImports: ({ db }) => ({ imports: listWaitingImports(db).map(importLineOf) }),
+  async uploadFile(parts, { query, body }) {
+    const path = await saveUpload(parts, body);
+    try {
+      const file = fileAtPath(path, basename(query.name));
+      refuseRecorded(parts, file);
+      const id = receiveFile(parts, { file, origin: 'upload', recorder: query.recorder });
+      return await importView(parts.db, requireImport(parts.db, id));
+    } finally {
+      await rm(path, { force: true });
+    }
+  },
+  readImport: ({ db }, { params }) => importView(db, requireImport(db, numberIn(params, 'import'))),
+  previewImport({ db }, { params, body }) {
+    return previewOf(fileOfImport(db, requireImport(db, numberIn(params, 'import'))), body.layout);
+  },
+  async recordRun(parts, { params, body }) {
+    const row = requireImport(parts.db, numberIn(params, 'import'));
+    const files = [fileOfImport(parts.db, row)];
+    return { run: await recordRun(parts, { ...body, files, importId: row.id }) };
+  },
+  discardImport(parts, { params, body }) {
+    discardImport(parts, numberIn(params, 'import'), body.reason);
+    return { imports: listWaitingImports(parts.db).map(importLineOf) };
+  },
+};

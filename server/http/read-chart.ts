@@ -1,0 +1,65 @@
+import type * as z from 'zod';
+import type { RunChart } from '../../models/chart/chart.ts';
+import type { CureCourse } from '../../models/chart/chart-inputs.ts';
+import { chartOfRun } from '../../models/chart/chart-of-run.ts';
+import { DomainError } from '../../models/errors.ts';
+import type { PartEvaluation } from '../../models/evaluation/evaluation.ts';
+import type { ReadLog } from '../../models/log/readings.ts';
+import { gatherInputs, readRunLog } from '../actions/run-inputs.ts';
+import type { chartQuery } from '../contract/chart.ts';
+import type { Db } from '../store/database.ts';
+import { findLatestEvaluation } from '../store/evaluations.ts';
+import { findLoad } from '../store/loads.ts';
+import { requireRun } from '../store/runs.ts';
+import { readSources } from '../store/sources.ts';
+import { zoneOfWorkshop } from '../store/workshop.ts';
+import { cureCourses } from './cure-courses.ts';
+import { remember } from './remember.ts';
+
+/** What is to be drawn of a run, or of a stretch of it, for one part. */
+export function readChart(db: Db, run: number, query: z.output<typeof chartQuery>): RunChart {
+  requireRun(db, run);
+  const inputs = gatherInputs(db, run);
+  const evaluation = findLatestEvaluation(db, run)?.document ?? null;
+  const part = partOf(evaluation?.parts ?? [], query.part);
+  const { readings } = readLogOnce(db, run);
+  const load = inputs?.load ?? findLoad(db, run)?.document ?? null;
+  const cure = remember<readonly CureCourse[]>(db, `cure ${run} ${part?.part} ${JSON.stringify(inputs?.hashes)}`, () =>
+    inputs === null || inputs.resin === null || part === null
+      ? []
+      : cureCourses(readings, inputs.load, inputs.resin, part),
+  );
+  return chartOfRun({
+    readings,
+    cycle: inputs?.cycle ?? null,
+    evaluation,
+    part,
+    load,
+    cure,
+    zone: zoneOfWorkshop(db),
+    view: viewOf(query, readings.timeMs),
+    points: query.points,
+  });
+}
+
+/** Zooming asks for the same readings again and again; they never change while the run's sources do not. */
+function readLogOnce(db: Db, run: number): ReadLog {
+  const sources = readSources(db, run);
+  const key = `log ${run} ${sources.map(({ chainSha256, layoutSha256 }) => `${chainSha256} ${layoutSha256}`).join(' ')}`;
+  return remember(db, key, () => readRunLog(db, sources));
+}
+
+function partOf(parts: readonly PartEvaluation[], serial: string | undefined): PartEvaluation | null {
+  if (serial === undefined) return parts[0] ?? null;
+  const part = parts.find((one) => one.part === serial);
+  if (part !== undefined) return part;
+  throw new DomainError('not-found', `Part "${serial}" was not judged in this run`, { part: serial });
+}
+
+function viewOf({ from, until }: z.output<typeof chartQuery>, timeMs: Float64Array) {
+  if (from === undefined && until === undefined) return null;
+  const fromMs = from === undefined ? (timeMs[0] ?? 0) : Date.parse(from);
+  const untilMs = until === undefined ? (timeMs.at(-1) ?? 0) : Date.parse(until);
+  if (fromMs < untilMs) return { fromMs, untilMs };
+  throw new DomainError('invalid-request', 'The stretch to be drawn ends before it begins', { fromMs, untilMs });
+}

@@ -1,0 +1,87 @@
+import { mkdirSync } from 'node:fs';
+import { createServer } from 'node:http';
+import type { AddressInfo } from 'node:net';
+import { join } from 'node:path';
+import { afterEach } from 'vitest';
+import { evaluateLog } from '../../models/evaluation/judge.ts';
+import { createApp } from '../../server/app.ts';
+import { ROLES } from '../../server/contract/roles.ts';
+import type { AppParts } from '../../server/http/app-parts.ts';
+import { freshDatabase, freshFolder } from './fresh-database.ts';
+
+export const NOW = '2026-03-10T08:00:00.000Z';
+
+const running: (() => Promise<void>)[] = [];
+
+afterEach(async () => {
+  for (const stop of running.splice(0)) await stop();
+});
+
+export interface LiveApp {
+  readonly parts: AppParts;
+  readonly faults: object[];
+  readonly get: (path: string, headers?: Record<string, string>) => Promise<Answer>;
+  readonly post: (path: string, body: unknown) => Promise<Answer>;
+  readonly send: (path: string, init: RequestInit) => Promise<Answer>;
+}
+
+export interface Answer {
+  readonly status: number;
+  readonly headers: Headers;
+  readonly text: string;
+  // biome-ignore lint/suspicious/noExplicitAny: a test compares bodies whole
+  readonly body: any;
+}
+
+/** The real app with a real database, on a socket of this machine; its clock stands still. */
+export async function liveApp(changes: Partial<AppParts> = {}): Promise<LiveApp> {
+  const folder = freshFolder();
+  const incomingFolder = join(folder, 'incoming');
+  mkdirSync(incomingFolder);
+  const faults: object[] = [];
+  const parts: AppParts = {
+    db: freshDatabase(),
+    clock: () => Date.parse(NOW),
+    actor: { name: 'inspector 2', roles: ROLES },
+    evaluate: async (log, inputs) => evaluateLog(log, inputs),
+    siteFolder: null,
+    incomingFolder,
+    watchedFolder: null,
+    mostUploadBytes: 1_000_000,
+    log: { info: () => undefined, error: (facts) => faults.push(facts) },
+    ...changes,
+  };
+  const server = createServer(createApp(parts));
+  await new Promise<void>((resolve) => server.listen(0, '127.0.0.1', resolve));
+  running.push(
+    () =>
+      new Promise((resolve) => {
+        server.close(() => resolve());
+        server.closeAllConnections();
+      }),
+  );
+  const origin = `http://127.0.0.1:${(server.address() as AddressInfo).port}`;
+  const send = async (path: string, init: RequestInit): Promise<Answer> => {
+    const response = await fetch(`${origin}${path}`, init);
+    const text = await response.text();
+    const isJson = /json/.test(response.headers.get('content-type') ?? '');
+    return { status: response.status, headers: response.headers, text, body: isJson ? JSON.parse(text) : null };
+  };
+  return {
+    parts,
+    faults,
+    send,
+    get: (path, headers = {}) => send(path, { headers }),
+    post: (path, body) =>
+      send(path, { method: 'POST', headers: { 'content-type': 'application/json' }, body: JSON.stringify(body) }),
+  };
+}
+
+/** Posts a file as a browser does. */
+export function upload(app: LiveApp, path: string, bytes: string | Uint8Array): Promise<Answer> {
+  return app.send(path, {
+    method: 'POST',
+    headers: { 'content-type': 'application/octet-stream' },
+    body: typeof bytes === 'string' ? bytes : new Uint8Array(bytes),
+  });
+}
