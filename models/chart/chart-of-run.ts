@@ -66,7 +66,7 @@ export function chartOfRun(inputs: ChartInputs): RunChart {
     lines: placeLabels(all, strips),
     ...limits,
     hatches: hatchesOf(lines, scale),
-    dots: part === null ? [] : cureDots(part, cure, scale),
+    dots: part === null ? [] : cureDots(part, cure, clock, scale),
     table: runTable({
       ...{ cycle, part, channels, tgConversion, clock, scale },
       units: drawable.units,

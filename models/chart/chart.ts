@@ -52,7 +52,7 @@ export interface Band {
 /** A rate over the temperatures and times it covers: where a sensor that keeps to it can be. */
 export interface Wedge {
   readonly stage: string;
-  /** Corners in order: the first sensor's start, the fastest way up or down, the slowest, the last sensor's start. */
+  /** Corners in order: the first sensor's start, the end of the fastest way, then back along the slowest. */
   readonly corners: readonly Corner[];
   readonly text: string;
   readonly limits: readonly string[];
@@ -111,6 +111,7 @@ export interface Dot {
   readonly atH: number;
   readonly value: number;
   readonly channel: string;
+  /** `TC3 gels 11:29`; empty where others of its kind are written out. */
   readonly text: string;
 }
 

@@ -4,6 +4,8 @@ import { DomainError } from '../errors.ts';
 export interface ClockTime {
   /** `09:22`, with seconds where they are not zero. */
   readonly time: (ms: number) => string;
+  /** `09:22`, the minute begun. */
+  readonly minute: (ms: number) => string;
   /** `3 March 2026`. */
   readonly day: (ms: number) => string;
 }
@@ -15,6 +17,7 @@ export function clockTimeIn(zone: string): ClockTime {
   const day = formatIn(zone, { day: 'numeric', month: 'long', year: 'numeric' });
   return {
     time: (ms) => (Math.round(ms / 1000) % 60 === 0 ? time : withSeconds).format(Math.round(ms / 1000) * 1000),
+    minute: (ms) => time.format(ms),
     day: (ms) => day.format(ms),
   };
 }

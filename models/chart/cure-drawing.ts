@@ -1,6 +1,7 @@
 import type { PartEvaluation } from '../evaluation/evaluation.ts';
 import type { Dot, LineRole, Strip } from './chart.ts';
 import type { CureCourse } from './chart-inputs.ts';
+import type { ClockTime } from './clock-time.ts';
 import { decimate } from './decimate.ts';
 import { labelOfLine } from './line-roles.ts';
 import type { DrawnLine } from './lines.ts';
@@ -49,21 +50,29 @@ function linesOf({ degree, tgC }: CureCourse, tgConversion: Conversion): CureLin
   return lines;
 }
 
-/** Estimated gel and vitrification on the degree's course. */
-export function cureDots(part: PartEvaluation, courses: readonly CureCourse[], scale: TimeScale): Dot[] {
-  return part.cure.flatMap(({ channel, gelAt, vitrifiesAt }) => {
-    const course = courses.find((one) => one.channel === channel);
-    if (course === undefined) return [];
-    return (
-      [
-        ['gel', gelAt, 'gels'],
-        ['vitrification', vitrifiesAt, 'vitrifies'],
-      ] as const
-    ).flatMap(([kind, instant, verb]): Dot[] => {
-      if (instant === null) return [];
-      const ms = Date.parse(instant);
-      const value = drawn(degreeAt(course, ms));
-      return [{ kind, strip: 'cure', atH: hoursAt(scale, ms), value, channel, text: `${channel} ${verb}` }];
+/** Estimated gel and vitrification on the degree's course; the first and the last of each kind are written out. */
+export function cureDots(
+  part: PartEvaluation,
+  courses: readonly CureCourse[],
+  clock: ClockTime,
+  scale: TimeScale,
+): Dot[] {
+  return (['gel', 'vitrification'] as const).flatMap((kind) => {
+    const came = part.cure
+      .flatMap(({ channel, gelAt, vitrifiesAt }) => {
+        const course = courses.find((one) => one.channel === channel);
+        const instant = kind === 'gel' ? gelAt : vitrifiesAt;
+        return course === undefined || instant === null ? [] : [{ channel, course, ms: Date.parse(instant) }];
+      })
+      .sort((a, b) => a.ms - b.ms);
+    return came.map(({ channel, course, ms }, i): Dot => {
+      const words = `${channel} ${kind === 'gel' ? 'gels' : 'vitrifies'} ${clock.minute(ms)}`;
+      return {
+        ...{ kind, channel, strip: 'cure' },
+        atH: hoursAt(scale, ms),
+        value: drawn(degreeAt(course, ms)),
+        text: i === 0 || i === came.length - 1 ? words : '',
+      };
     });
   });
 }

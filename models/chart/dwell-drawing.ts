@@ -6,6 +6,7 @@ import { type DrawnChannel, shownAt } from './drawn-channel.ts';
 import { findingOf, worstOf } from './outcomes.ts';
 import { type Conversion, converted, drawn } from './shown-unit.ts';
 import { hoursOf, hoursOrEnd, type TimeScale } from './time-scale.ts';
+import { wholeMinutes } from './whole-minutes.ts';
 
 /** What is drawn of dwells: the band between opening and closing, the clock's marks, the dips. */
 export interface DwellDrawing {
@@ -27,7 +28,7 @@ export function drawDwells(
   for (const stage of cycle.stages) {
     const record = part.stages.find(({ name }) => name === stage.name);
     if (stage.kind !== 'dwell' || record === undefined || record.opens === null) continue;
-    bands.push(bandOf(cycle, stage, record, part, conversion, scale));
+    bands.push(bandOf(stage, record, part, conversion, scale));
     marks.push(...marksOf(record, channels, scale));
     dips.push(...dipsOf(stage, record, conversion, scale));
   }
@@ -35,7 +36,6 @@ export function drawDwells(
 }
 
 function bandOf(
-  cycle: Cycle,
   stage: DwellStage,
   record: StageRecord,
   part: PartEvaluation,
@@ -51,7 +51,7 @@ function bandOf(
     low: drawn(converted(lowerOf(stage), conversion)),
     high: drawn(converted(upperOf(stage), conversion)),
     text: bandText(stage, record, part),
-    limit: cycle.stages.includes(stage) && stage.time !== undefined ? `${stage.name}/time` : `${stage.name}/upper`,
+    limit: stage.time === undefined ? `${stage.name}/upper` : `${stage.name}/time`,
     outcome: worstOf(part, limits),
   };
 }
@@ -64,11 +64,6 @@ function bandText(stage: DwellStage, record: StageRecord, part: PartEvaluation):
   const least = time?.atLeast ?? null;
   const isShort = time !== undefined && time.outcome !== 'met' && least !== null && minutes < least;
   return `${stage.name} · ${wholeMinutes(minutes)}${isShort ? ` of ${figure(least)}` : ''} min`;
-}
-
-/** Minutes rounded down: 119.8 is not 120. */
-export function wholeMinutes(minutes: number): string {
-  return figure(minutes < 10 ? Math.floor(minutes * 10 + 1e-6) / 10 : Math.floor(minutes + 1e-6));
 }
 
 function marksOf(record: StageRecord, channels: readonly DrawnChannel[], scale: TimeScale): Mark[] {

@@ -12,8 +12,8 @@ import { hoursAt, type TimeScale } from './time-scale.ts';
  * Rates as wedges over the temperatures and times they cover.
  *
  * Every judged sensor starts its range between the first and the last of them; one that keeps to the rates stays
- * between the fastest way from the first start and the slowest from the last. Where only one of the rates is written
- * the other side is where the sensors were.
+ * between the fastest way from the first start and the slowest from the last. The wedge ends where the last of them
+ * got through the range.
  */
 export function rateWedges(
   cycle: Cycle,
@@ -68,20 +68,19 @@ function corners(
   const lastMs = Math.max(...runs.map(({ startMs }) => startMs));
   const endMs = Math.max(...runs.map((run) => run.endMs));
   const fastMs = atMost === undefined ? firstMs : firstMs + lastsMs(atMost);
-  // A slowest rate of nothing lets a sensor take any time.
-  if (atLeast === undefined || atLeast === 0) {
-    const untilMs = Math.max(endMs, fastMs);
-    return [
-      [firstMs, from],
-      [fastMs, to],
-      [untilMs, to],
-      [untilMs, from],
-    ];
-  }
-  return [
+  const untilMs = Math.max(endMs, fastMs);
+  const fast: [number, number][] = [
     [firstMs, from],
     [fastMs, to],
-    [lastMs + lastsMs(atLeast), to],
-    [lastMs, from],
+  ];
+  // Without a slowest rate a sensor may take any time; with one, what it allows beyond the last sensor is of no use.
+  const slowMs = atLeast === undefined || atLeast === 0 ? Number.POSITIVE_INFINITY : lastMs + lastsMs(atLeast);
+  if (slowMs <= untilMs) return [...fast, [slowMs, to], [lastMs, from]];
+  const reached = from + (to - from) * ((untilMs - lastMs) / (slowMs - lastMs));
+  return [
+    ...fast,
+    [untilMs, to],
+    [untilMs, reached],
+    ...(reached === from ? [] : [[lastMs, from] as [number, number]]),
   ];
 }

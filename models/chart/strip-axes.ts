@@ -12,7 +12,7 @@ export interface InView {
   readonly untilH: number;
 }
 
-const TICKS: Readonly<Record<Strip, number>> = { temperature: 6, pressure: 3, vacuum: 3, cure: 2, tg: 3 };
+const TICKS: Readonly<Record<Strip, number>> = { temperature: 10, pressure: 4, vacuum: 5, cure: 2, tg: 4 };
 
 /** Least height of a strip's axis, so that noise of a steady reading does not fill it. */
 const LEAST_SPAN: Readonly<Record<Strip, number>> = { temperature: 8, pressure: 0.2, vacuum: 0.02, cure: 1, tg: 20 };

@@ -7,12 +7,19 @@ const MOST_TICKS = 9;
 
 /** Ticks on hours from hour 0, with the clock time beneath and the day where it changes. */
 export function timeAxis(clock: ClockTime, { zeroMs, fromMs, untilMs }: TimeScale): TimeTick[] {
+  const ticksS = timeTicksS((fromMs - zeroMs) / 1000, (untilMs - zeroMs) / 1000, MOST_TICKS);
+  const inMinutes = ticksS.every((seconds) => seconds % 60 === 0);
   let day: string | null = null;
-  return timeTicksS((fromMs - zeroMs) / 1000, (untilMs - zeroMs) / 1000, MOST_TICKS).map((seconds) => {
+  return ticksS.map((seconds) => {
     const ms = zeroMs + seconds * 1000;
     const own = clock.day(ms);
     const isNew = own !== day;
     day = own;
-    return { atH: seconds / 3600, hours: hoursWords(seconds), clock: clock.time(ms), day: isNew ? own : null };
+    return {
+      atH: seconds / 3600,
+      hours: hoursWords(seconds),
+      clock: inMinutes ? clock.minute(ms) : clock.time(ms),
+      day: isNew ? own : null,
+    };
   });
 }
