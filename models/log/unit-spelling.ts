@@ -46,14 +46,17 @@ export function unitFromSpelling(spelling: string): SpelledUnit | null {
     .normalize('NFKC')
     .toLowerCase()
     .replace(/[\s._^/·-]/g, '');
-  const temperature = TEMPERATURE_SPELLINGS[bare.replace(DEGREES, '')];
-  if (temperature !== undefined && Object.hasOwn(TEMPERATURE_SPELLINGS, bare.replace(DEGREES, ''))) {
-    return { unit: temperature, quantity: 'temperature', reference: null };
+  const scale = bare.replace(DEGREES, '');
+  if (Object.hasOwn(TEMPERATURE_SPELLINGS, scale)) {
+    return { unit: TEMPERATURE_SPELLINGS[scale]!, quantity: 'temperature', reference: null };
   }
-  const match = REFERENCE.exec(bare)!;
-  const name = match[1]!;
-  if (!Object.hasOwn(PRESSURE_SPELLINGS, name)) return null;
-  return { unit: PRESSURE_SPELLINGS[name]!, quantity: 'pressure', reference: referenceFrom(match[2]) };
+  if (Object.hasOwn(PRESSURE_SPELLINGS, bare)) return pressure(bare, undefined);
+  const [, name = '', suffix] = /^(.+?)\(?(g|gauge|gage|rel|a|abs|absolute|vac|vacuum)\)?$/u.exec(bare) ?? [];
+  return Object.hasOwn(PRESSURE_SPELLINGS, name) ? pressure(name, suffix) : null;
+}
+
+function pressure(name: string, suffix: string | undefined): SpelledUnit {
+  return { unit: PRESSURE_SPELLINGS[name]!, quantity: 'pressure', reference: referenceFrom(suffix) };
 }
 
 /**
@@ -61,8 +64,6 @@ export function unitFromSpelling(spelling: string): SpelledUnit | null {
  * the `Â°` of UTF-8 read as Windows-1252. NFKC turns `º` into `o`, `˚` into a space and U+030A, `℃` into `°C`.
  */
 const DEGREES = /^(?:â?°|o|\u030a|\?|\ufffd+|deg(?:ree)?s?|grad|grd)(?=.)/u;
-
-const REFERENCE = /^(.*?)\(?(g|gauge|gage|rel|a|abs|absolute|vac|vacuum)?\)?$/u;
 
 function referenceFrom(suffix: string | undefined): 'gauge' | 'absolute' | null {
   if (suffix === undefined || suffix.startsWith('vac')) return null;

@@ -27,6 +27,7 @@ function endOfAscii(bytes: Uint8Array, from: number, until: number): number {
     if (bytes[at]! >= 0x80) return at;
     at++;
   }
+  if (at === until) return until;
   const words = new Int32Array(bytes.buffer, bytes.byteOffset + at, (until - at) >> 2);
   let word = 0;
   while (word < words.length && (words[word]! & NOT_ASCII) === 0) word++;
