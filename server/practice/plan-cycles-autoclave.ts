@@ -151,7 +151,7 @@ export const RS_175_A: Cycle = {
     {
       name: 'slow heat-up',
       kind: 'heat',
-      rate: { atLeast: 0.2, atMost: 1.5, over: [50, 110], average: 'window', window: 15, of: 'every' },
+      rate: { atLeast: 0.2, atMost: 2, over: [50, 110], average: 'window', window: 15, of: 'every' },
     },
     {
       name: 'levelling dwell',

@@ -161,6 +161,37 @@ export const BLANKET_1_RECORDER: Recorder = {
   },
 };
 
+/** New, and not set up in the product yet: one stamp column, semicolons, decimal commas. */
+export const OVEN_1_RECORDER: Recorder = {
+  name: 'Oven 1 recorder',
+  vessel: 'Oven 1',
+  intervalS: 30,
+  temperature: { decimals: 1, noise: 0.15 },
+  pressure: { decimals: 1, noise: 0 },
+  vacuum: { decimals: 0, noise: 2 },
+  absent: '----',
+  lineEnd: '\r\n',
+  extension: 'csv',
+  preamble: ['Oven 1;{run}'],
+  layout: {
+    format: 'dwellbook-layout/1',
+    name: 'Oven 1 recorder',
+    delimiter: ';',
+    decimal: ',',
+    header: 2,
+    units: 3,
+    time: { columns: ['Stamp'], pattern: 'dd.MM.yyyy HH:mm:ss', zone: 'Europe/London' },
+    channels: [
+      ...thermocouples(6, '°C', (n) => `Part ${n}`),
+      { column: 'Air', name: 'air', role: 'air', unit: '°C' },
+      { column: 'Bag 1', name: 'VAC 1', role: 'vacuum', unit: 'mbar' },
+      { column: 'Bag 2', name: 'VAC 2', role: 'vacuum', unit: 'mbar' },
+    ],
+    missing: ['----'],
+  },
+};
+
+/** Those the product knows. */
 export const RECORDERS: readonly Recorder[] = [
   AUTOCLAVE_1_RECORDER,
   AUTOCLAVE_2_RECORDER,

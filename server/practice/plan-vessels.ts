@@ -49,6 +49,9 @@ export const OVEN_2: PracticeVessel = {
   },
 };
 
+/** Taken into use at the end of the year; its recorder is not set up in the product yet. */
+export const OVEN_1: PracticeVessel = { ...OVEN_2, name: 'Oven 1' };
+
 export const PRESS_1: PracticeVessel = {
   name: 'Press 1',
   kind: 'press',
@@ -77,4 +80,4 @@ export const BLANKET_1: PracticeVessel = {
   },
 };
 
-export const VESSELS: readonly PracticeVessel[] = [AUTOCLAVE_1, AUTOCLAVE_2, OVEN_2, PRESS_1, BLANKET_1];
+export const VESSELS: readonly PracticeVessel[] = [AUTOCLAVE_1, AUTOCLAVE_2, OVEN_1, OVEN_2, PRESS_1, BLANKET_1];

@@ -1,6 +1,6 @@
 import { KINDS, TOOLS, ZONES } from './plan-kinds.ts';
 import { AMBIENT_C, PRACTICES, type Practice } from './plan-practices.ts';
-import { RECORDERS } from './plan-recorders.ts';
+import { OVEN_1_RECORDER, RECORDERS } from './plan-recorders.ts';
 import { ROLLS } from './plan-rolls.ts';
 import type { PlannedPart, PlannedRun } from './plan-run.ts';
 import { VESSELS } from './plan-vessels.ts';
@@ -16,7 +16,7 @@ const SOUND_LEAK_PER_MIN = 0.004;
 /** A run of the workshop's plan, with everything filled in that is as usual. */
 export function simulationOf(planned: PlannedRun): SimulationPlan {
   const practice: Practice = PRACTICES[planned.practice];
-  const recorder = named(RECORDERS, ({ vessel }) => vessel === planned.vessel, planned.vessel);
+  const recorder = named([...RECORDERS, OVEN_1_RECORDER], ({ vessel }) => vessel === planned.vessel, planned.vessel);
   const vessel = named(VESSELS, ({ name }) => name === planned.vessel, planned.vessel);
   return {
     run: planned.run,

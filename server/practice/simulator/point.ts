@@ -47,7 +47,7 @@ export interface PointState {
  * released where it arises, `heatJPerM3` for each unit of degree of cure.
  *
  * Limits: explicit; refuses a step longer than 1.8 times the fastest node's time (the midpoint rule is stable to 2).
- * Source: Incropera et al., Fundamentals of Heat and Mass Transfer, 6th ed., §5.1 and §5.10 (lumped and explicit nodes).
+ * Source: Incropera et al., Fundamentals of Heat and Mass Transfer, 6th ed., ch. 5 (lumped and explicit nodes).
  */
 export function beginPoint(point: Point, startC: number, rate: ReactionRate, heatJPerM3: number): PointState {
   const { nodes } = point;
@@ -65,7 +65,8 @@ export function beginPoint(point: Point, startC: number, rate: ReactionRate, hea
   const slope = new Float64Array(size);
   const middle = new Float64Array(size);
 
-  const findSlope = (at: Float64Array, airC: number, h: number, ambientC: number): void => {
+  // The half step takes the rate of cure of the step before: still of second order, and half the exponentials.
+  const findSlope = (at: Float64Array, airC: number, h: number, ambientC: number, isHalfStep: boolean): void => {
     const bagWPerM2K = 1 / (1 / h + point.bagM2KPerW + halfM2KPerW);
     const toolC = at[0]!;
     const firstC = at[1]!;
@@ -75,7 +76,7 @@ export function beginPoint(point: Point, startC: number, rate: ReactionRate, hea
     for (let n = 0; n < nodes; n++) {
       const hereC = at[1 + n]!;
       const out = n + 1 < nodes ? betweenWPerM2K * (hereC - at[2 + n]!) : bagWPerM2K * (hereC - airC);
-      const cureRate = rate(hereC + 273.15, at[1 + nodes + n]!);
+      const cureRate = isHalfStep ? slope[1 + nodes + n]! : rate(hereC + 273.15, at[1 + nodes + n]!);
       slope[1 + n] = (flow - out + reactionJPerM2 * cureRate) / nodeJPerM2K;
       slope[1 + nodes + n] = cureRate;
       flow = out;
@@ -87,9 +88,9 @@ export function beginPoint(point: Point, startC: number, rate: ReactionRate, hea
     const h = hWPerM2K * point.position;
     const fastestPerS = Math.max(nodePerS, (2 * (h + toolToFirstWPerM2K)) / point.toolJPerM2K);
     if (fastestPerS * stepS > LONGEST_STEP) throw new Error(`a step of ${stepS} s is too long for nodes of ${nodeM} m`);
-    findSlope(state, airFromC, h, ambientC);
+    findSlope(state, airFromC, h, ambientC, true);
     for (let i = 0; i < size; i++) middle[i] = state[i]! + (stepS / 2) * slope[i]!;
-    findSlope(middle, (airFromC + airToC) / 2, h, ambientC);
+    findSlope(middle, (airFromC + airToC) / 2, h, ambientC, false);
     for (let i = 0; i < size; i++) state[i]! += stepS * slope[i]!;
   };
   return {

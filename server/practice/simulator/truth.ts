@@ -1,5 +1,5 @@
 import type { Cycle, DwellStage } from '../../../models/cycle/cycle.ts';
-import { celsiusDifferenceFrom, celsiusFrom, round9 } from '../../../models/units.ts';
+import { celsiusFrom, round9 } from '../../../models/units.ts';
 import { lastUp, level, nextDown, nextUp, type Row } from './crossings.ts';
 import type { History } from './history.ts';
 import type { SimulationPlan } from './simulation-plan.ts';
@@ -66,9 +66,21 @@ export function minutesAllIn(truth: Truth, dwell: string, channels: readonly str
   return Math.max(0, closes - opens);
 }
 
-/** Stretches between two minutes in which any of the sensors is under a temperature. */
-export function minutesUnder(truth: Truth, belowC: number, channels: readonly string[], between: [number, number]) {
-  const stretches: { fromMin: number; untilMin: number; deepestC: number }[] = [];
+/** A stretch in which some sensor was under a temperature. */
+export interface Dip {
+  readonly fromMin: number;
+  untilMin: number;
+  deepestC: number;
+}
+
+/** Every stretch between two minutes in which any of the sensors is under a temperature. */
+export function dipsUnder(
+  truth: Truth,
+  belowC: number,
+  channels: readonly string[],
+  between: readonly [number, number],
+): readonly Readonly<Dip>[] {
+  const stretches: Dip[] = [];
   const { history } = truth;
   const rows = channels.map((channel) => history.junctionC[truth.channels.indexOf(channel)]!);
   const stepMin = history.stepS / 60;
@@ -131,9 +143,4 @@ function highest(row: Row, fromMin: number, untilMin: number): number {
   for (let n = Math.ceil(fromMin / row.stepMin); n * row.stepMin <= untilMin; n++)
     most = Math.max(most, row.values[n]!);
   return most;
-}
-
-/** Greatest difference in °C that a written difference allows. */
-export function differenceC(difference: number, { units }: Cycle): number {
-  return celsiusDifferenceFrom(difference, units.temperature);
 }

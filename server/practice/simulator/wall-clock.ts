@@ -40,41 +40,39 @@ export function wallClockIn(zone: string): (instantMs: number) => WallClock {
 /** Writes a clock by a Unicode TR 35 pattern; knows the letters the practice recorders use. */
 export function stampBy(pattern: string): (clock: WallClock) => string {
   const tokens = pattern.match(/'[^']*'|([A-Za-z])\1*|[^A-Za-z']+/g) ?? [];
-  return (clock) => tokens.map((token) => written(token, clock)).join('');
+  const writers = tokens.map(writerOf);
+  return (clock) => {
+    let stamp = '';
+    for (const write of writers) stamp += write(clock);
+    return stamp;
+  };
 }
 
-function written(token: string, clock: WallClock): string {
-  if (token.startsWith("'")) return token.slice(1, -1);
-  const two = (n: number) => String(n).padStart(2, '0');
-  switch (token) {
-    case 'yyyy':
-      return String(clock.year);
-    case 'yy':
-      return two(clock.year % 100);
-    case 'MM':
-      return two(clock.month);
-    case 'M':
-      return String(clock.month);
-    case 'dd':
-      return two(clock.day);
-    case 'd':
-      return String(clock.day);
-    case 'HH':
-      return two(clock.hour);
-    case 'hh':
-      return two(((clock.hour + 11) % 12) + 1);
-    case 'h':
-      return String(((clock.hour + 11) % 12) + 1);
-    case 'mm':
-      return two(clock.minute);
-    case 'ss':
-      return two(clock.second);
-    case 'a':
-      return clock.hour < 12 ? 'AM' : 'PM';
-    default:
-      if (/[A-Za-z]/.test(token)) throw new Error(`no practice recorder writes "${token}"`);
-      return token;
-  }
+const TWO_DIGITS = Array.from({ length: 100 }, (_, n) => String(n).padStart(2, '0'));
+const MONTHS = ['Jan', 'Feb', 'Mar', 'Apr', 'May', 'Jun', 'Jul', 'Aug', 'Sep', 'Oct', 'Nov', 'Dec'];
+
+const WRITERS: Readonly<Record<string, (clock: WallClock) => string | undefined>> = {
+  yyyy: ({ year }) => String(year),
+  yy: ({ year }) => TWO_DIGITS[year % 100],
+  MMM: ({ month }) => MONTHS[month - 1],
+  MM: ({ month }) => TWO_DIGITS[month],
+  M: ({ month }) => String(month),
+  dd: ({ day }) => TWO_DIGITS[day],
+  d: ({ day }) => String(day),
+  HH: ({ hour }) => TWO_DIGITS[hour],
+  hh: ({ hour }) => TWO_DIGITS[((hour + 11) % 12) + 1],
+  h: ({ hour }) => String(((hour + 11) % 12) + 1),
+  mm: ({ minute }) => TWO_DIGITS[minute],
+  ss: ({ second }) => TWO_DIGITS[second],
+  a: ({ hour }) => (hour < 12 ? 'AM' : 'PM'),
+};
+
+function writerOf(token: string): (clock: WallClock) => string | undefined {
+  if (token.startsWith("'")) return () => token.slice(1, -1);
+  const known = WRITERS[token];
+  if (known !== undefined) return known;
+  if (/[A-Za-z]/.test(token)) throw new Error(`no practice recorder writes "${token}"`);
+  return () => token;
 }
 
 function offsetsOf(zone: string): (instantMs: number) => number {
