@@ -4,26 +4,26 @@ import type { Db } from '../store/database.ts';
 import { findBrokenDocument } from '../store/documents.ts';
 import { findBrokenEvaluation } from '../store/evaluations.ts';
 import { findBrokenFile } from '../store/files.ts';
-import { findBrokenSource } from '../store/sources.ts';
+import { countSources, findBrokenSource } from '../store/sources.ts';
 
 /** Recomputes every hash there is: the audit trail, readings, files, documents and evaluations. */
 export function verifyChains(db: Db): AuditVerification {
   const trail = findBrokenAuditLine(db);
-  const readings = findBrokenSource(db);
-  const file = findBrokenFile(db);
-  const document = findBrokenDocument(db);
-  const evaluation = findBrokenEvaluation(db);
-  const broken = [
-    trail.firstBroken === null ? null : `audit line ${trail.firstBroken}`,
-    readings.firstBroken === null ? null : `readings of ${readings.firstBroken}`,
-    file === null ? null : `file ${file}`,
-    document === null ? null : `document ${document}`,
-    evaluation === null ? null : `evaluation ${evaluation}`,
-  ].find((place) => place !== null);
-  return {
-    holds: broken === undefined,
-    lines: trail.lines,
-    sources: readings.sources,
-    firstBroken: broken ?? null,
-  };
+  const firstBroken =
+    (trail.firstBroken === null ? null : `audit line ${trail.firstBroken}`) ??
+    broken('readings of', () => findBrokenSource(db)) ??
+    broken('file', () => findBrokenFile(db)) ??
+    broken('document', () => findBrokenDocument(db)) ??
+    broken('evaluation', () => findBrokenEvaluation(db));
+  return { holds: firstBroken === null, lines: trail.lines, sources: countSources(db), firstBroken };
+}
+
+function broken(kind: string, find: () => string | number | null): string | null {
+  try {
+    const first = find();
+    return first === null ? null : `${kind} ${first}`;
+  } catch (error) {
+    // What cannot even be unpacked does not hold either; the reason is all there is to say.
+    return `${kind} that cannot be read: ${error instanceof Error ? error.message : String(error)}`;
+  }
 }

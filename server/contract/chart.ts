@@ -8,3 +8,4 @@ export const chartQuery = z.strictObject({
   points: z.coerce.number().int().min(50).max(4000).default(1500),
   part: z.string().optional(),
 });
+export type ChartQuery = z.output<typeof chartQuery>;

@@ -44,6 +44,8 @@ export const runsQuery = z.strictObject({
   limit: countInQuery(200, 50),
 });
 
+export type RunsQuery = z.output<typeof runsQuery>;
+
 export const runs = z.object({ runs: z.array(runLine), total: z.number(), next: z.number().nullable() });
 export type Runs = z.infer<typeof runs>;
 

@@ -5,9 +5,13 @@ import { VERSION } from '../contract/version.ts';
 
 /** The OpenAPI 3.1 description of the server, made from its contract. */
 export function openApi(): object {
+  const schemas: Record<string, object> = {};
   const paths: Record<string, Record<string, object>> = {};
   for (const [operationId, operation] of Object.entries(OPERATIONS) as [string, Operation][]) {
-    paths[operation.path] = { ...paths[operation.path], [operation.method]: describe(operationId, operation) };
+    paths[operation.path] = {
+      ...paths[operation.path],
+      [operation.method]: hoisted(describe(operationId, operation), schemas),
+    };
   }
   return {
     openapi: '3.1.0',
@@ -19,7 +23,25 @@ export function openApi(): object {
     },
     jsonSchemaDialect: 'https://json-schema.org/draft/2020-12/schema',
     paths,
+    components: { schemas },
   };
+}
+
+/** Named schemas stand once, under components; a reference is to the whole description, not to one schema. */
+function hoisted(value: unknown, schemas: Record<string, object>): object {
+  const walk = (inner: unknown): unknown => {
+    if (Array.isArray(inner)) return inner.map(walk);
+    if (typeof inner !== 'object' || inner === null) return inner;
+    const { $defs, ...rest } = inner as { $defs?: Record<string, object> };
+    for (const [name, schema] of Object.entries($defs ?? {})) schemas[name] = walk(schema) as object;
+    return Object.fromEntries(
+      Object.entries(rest).map(([key, member]) => [
+        key,
+        key === '$ref' ? String(member).replace('#/$defs/', '#/components/schemas/') : walk(member),
+      ]),
+    );
+  };
+  return walk(value) as object;
 }
 
 function describe(operationId: string, operation: Operation): object {

@@ -1,4 +1,3 @@
-import type * as z from 'zod';
 import type { RunChart } from '../../models/chart/chart.ts';
 import type { CureCourse } from '../../models/chart/chart-inputs.ts';
 import { chartOfRun } from '../../models/chart/chart-of-run.ts';
@@ -6,7 +5,7 @@ import { DomainError } from '../../models/errors.ts';
 import type { PartEvaluation } from '../../models/evaluation/evaluation.ts';
 import type { ReadLog } from '../../models/log/readings.ts';
 import { gatherInputs, readRunLog } from '../actions/run-inputs.ts';
-import type { chartQuery } from '../contract/chart.ts';
+import type { ChartQuery } from '../contract/chart.ts';
 import type { Db } from '../store/database.ts';
 import { findLatestEvaluation } from '../store/evaluations.ts';
 import { findLoad } from '../store/loads.ts';
@@ -17,7 +16,7 @@ import { cureCourses } from './cure-courses.ts';
 import { remember } from './remember.ts';
 
 /** What is to be drawn of a run, or of a stretch of it, for one part. */
-export function readChart(db: Db, run: number, query: z.output<typeof chartQuery>): RunChart {
+export function readChart(db: Db, run: number, query: ChartQuery): RunChart {
   requireRun(db, run);
   const inputs = gatherInputs(db, run);
   const evaluation = findLatestEvaluation(db, run)?.document ?? null;
@@ -56,7 +55,7 @@ function partOf(parts: readonly PartEvaluation[], serial: string | undefined): P
   throw new DomainError('not-found', `Part "${serial}" was not judged in this run`, { part: serial });
 }
 
-function viewOf({ from, until }: z.output<typeof chartQuery>, timeMs: Float64Array) {
+function viewOf({ from, until }: ChartQuery, timeMs: Float64Array) {
   if (from === undefined && until === undefined) return null;
   const fromMs = from === undefined ? (timeMs[0] ?? 0) : Date.parse(from);
   const untilMs = until === undefined ? (timeMs.at(-1) ?? 0) : Date.parse(until);

@@ -15,6 +15,7 @@ export function findCode(db: Db, code: string): Found {
 }
 
 const SELECT = `
+  SELECT kind, title, page, exact FROM (
   SELECT 'run' AS kind, 'Run ' || id AS title, '/runs' || char(31) || id AS page, 1 AS exact, 1 AS rank
     FROM runs WHERE id = @run
   UNION ALL
@@ -44,7 +45,7 @@ const SELECT = `
     FROM source_files JOIN run_sources ON run_sources.id = source_id JOIN files ON files.id = file_id
     WHERE name LIKE @start ESCAPE '\\' OR (length(@code) >= 8 AND files.sha256 LIKE lower(@start) ESCAPE '\\')
     ORDER BY exact DESC, run_id DESC LIMIT 20)
-  ORDER BY exact DESC, rank, title LIMIT 60`;
+  ) ORDER BY exact DESC, rank, title LIMIT 60`;
 
 /** The pieces of an address are kept apart by a unit separator until each has been made safe for one. */
 function encodePage(page: string): string {

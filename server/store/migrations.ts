@@ -1,8 +1,8 @@
 import { createHash } from 'node:crypto';
 import { readdirSync, readFileSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
+import type Database from 'better-sqlite3';
 import { DomainError } from '../../models/errors.ts';
-import type { Db } from './database.ts';
 
 export interface Migration {
   /** `0001-audit`: also the order they are applied in. */
@@ -23,7 +23,7 @@ export function readMigrations(folder = new URL('../../migrations/', import.meta
 }
 
 /** Applies what is missing, each step whole or not at all, and refuses a database with a step it does not know. */
-export function applyMigrations(db: Db, at: string, migrations = readMigrations()): readonly string[] {
+export function applyMigrations(db: Database.Database, at: string, migrations = readMigrations()): readonly string[] {
   // Looked at first without a lock: a database that is up to date is opened without a write.
   const applied = appliedNames(db);
   refuseNewer(applied, migrations);
@@ -36,7 +36,7 @@ export function applyMigrations(db: Db, at: string, migrations = readMigrations(
   return migrations.filter((migration) => applyOne(db, at, migration)).map(({ name }) => name);
 }
 
-function applyOne(db: Db, at: string, { name, sql, sha256 }: Migration): boolean {
+function applyOne(db: Database.Database, at: string, { name, sql, sha256 }: Migration): boolean {
   return db
     .transaction(() => {
       if (appliedNames(db).has(name)) return false;
@@ -47,7 +47,7 @@ function applyOne(db: Db, at: string, { name, sql, sha256 }: Migration): boolean
     .immediate();
 }
 
-function appliedNames(db: Db): ReadonlySet<string> {
+function appliedNames(db: Database.Database): ReadonlySet<string> {
   const exists = db.prepare("SELECT 1 FROM sqlite_schema WHERE name = 'migrations'").get() !== undefined;
   return new Set(exists ? db.prepare<[], string>('SELECT name FROM migrations').pluck().all() : []);
 }

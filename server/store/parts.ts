@@ -131,7 +131,7 @@ const MATCHES = `
   WITH latest AS (SELECT run_id, max(id) AS id FROM loads GROUP BY run_id),
   cured AS (
     SELECT part_id, max(runs.from_ms) AS from_ms, max(quantity) AS quantity, group_concat(work_order, ' ') AS orders
-    FROM latest JOIN load_parts ON load_id = latest.id JOIN runs ON runs.id = run_id
+    FROM latest JOIN load_parts ON load_id = latest.id JOIN runs ON runs.id = latest.run_id
     JOIN loads ON loads.id = latest.id GROUP BY part_id),
   about AS (SELECT part_id, title, drawing, max(id) FROM part_particulars GROUP BY part_id),
   matches AS (

@@ -1,12 +1,9 @@
-import type * as z from 'zod';
-import type { RunLine, Runs, runsQuery } from '../contract/runs.ts';
+import type { RunLine, Runs, RunsQuery } from '../contract/runs.ts';
 import type { Db } from './database.ts';
 import { isoFromMs } from './instants.ts';
 
-export type RunsQuery = Partial<z.infer<typeof runsQuery>>;
-
 /** Runs on one line each, latest first. */
-export function listRuns(db: Db, query: RunsQuery = {}): Runs {
+export function listRuns(db: Db, query: Partial<RunsQuery> = {}): Runs {
   const { after = 0, limit = 50 } = query;
   const { where, values } = conditionsOf(query);
   const total = db.prepare<object, number>(`SELECT count(*) ${FROM} ${where}`).pluck().get(values) ?? 0;
@@ -105,7 +102,7 @@ function readSerials(db: Db, loadId: number): string[] {
     .all(loadId);
 }
 
-function conditionsOf(query: RunsQuery): { where: string; values: Record<string, unknown> } {
+function conditionsOf(query: Partial<RunsQuery>): { where: string; values: Record<string, unknown> } {
   const conditions: string[] = [];
   const values: Record<string, unknown> = {};
   const add = (condition: string, name: string, value: unknown) => {

@@ -23,7 +23,7 @@ export interface NewSource {
 export function insertSource(db: Db, source: NewSource): { readonly n: number; readonly chainSha256: string } {
   const { timeMs } = source.log.readings;
   const chainSha256 = chainOfReadings(source.log.readings);
-  const n = 1 + countSources(db, source.runId);
+  const n = 1 + countSourcesOf(db, source.runId);
   const sourceId = Number(
     db
       .prepare(
@@ -98,19 +98,20 @@ export function readSourceLog(db: Db, source: RunSource & { readonly id: number 
 }
 
 /** The first source whose stored readings no longer have the hash they were recorded with. */
-export function findBrokenSource(db: Db): { sources: number; firstBroken: string | null } {
-  const rows = db.prepare<[], SourceRow>('SELECT *, NULL AS recorder FROM run_sources ORDER BY id').all();
-  for (const row of rows) {
+export function findBrokenSource(db: Db): string | null {
+  for (const row of db.prepare<[], SourceRow>('SELECT *, NULL AS recorder FROM run_sources ORDER BY id').all()) {
     const { channels } = readDocument<Layout>(db, row.layout_sha256);
     const readings = readReadings(db, row.id, row.scans, channels);
-    if (chainOfReadings(readings) !== row.chain_sha256) {
-      return { sources: rows.length, firstBroken: `run ${row.run_id}, source ${row.n}` };
-    }
+    if (chainOfReadings(readings) !== row.chain_sha256) return `run ${row.run_id}, source ${row.n}`;
   }
-  return { sources: rows.length, firstBroken: null };
+  return null;
 }
 
-function countSources(db: Db, runId: number): number {
+export function countSources(db: Db): number {
+  return db.prepare<[], number>('SELECT count(*) FROM run_sources').pluck().get() ?? 0;
+}
+
+function countSourcesOf(db: Db, runId: number): number {
   return db.prepare<[number], number>('SELECT count(*) FROM run_sources WHERE run_id = ?').pluck().get(runId) ?? 0;
 }
 

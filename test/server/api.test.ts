@@ -1,27 +1,16 @@
 import { describe, expect, it } from 'vitest';
+import { evaluateLog } from '../../models/evaluation/judge.ts';
+import { readLog } from '../../models/log/read-log.ts';
+import { VERSION } from '../../server/contract/version.ts';
 import { sha256Of, sha256OfDocument } from '../../server/store/canonical.ts';
-import { type LiveApp, liveApp, NOW, upload } from './live-app.ts';
+import { liveApp, NOW, upload } from './live-app.ts';
 import { recordedCase } from './recorded-case.ts';
+import { loadCase, recordCase } from './workshop-steps.ts';
 
 const DEED = { at: NOW, by: 'inspector 2' };
+const SHA256 = expect.stringMatching(/^[0-9a-f]{64}$/);
 
-/** Brings in a recorded run as a person would: vessel, cycle, file, run. */
-async function recordCase(app: LiveApp, name: string): Promise<number> {
-  const { log, layout, cycle } = recordedCase(name);
-  await app.post('/api/vessels', { name: 'Autoclave 1', kind: 'autoclave' });
-  await app.post('/api/cycles', { document: cycle });
-  const received = await upload(app, '/api/imports?name=run.csv', log);
-  expect(received.status, received.text).toBe(201);
-  const recorded = await app.post(`/api/imports/${received.body.id}/run`, {
-    layout,
-    recorder: 'recorder 1',
-    vessel: 'Autoclave 1',
-  });
-  expect(recorded.status, recorded.text).toBe(201);
-  return recorded.body.run;
-}
-
-describe('from a file to a verdict', () => {
+describe('from a file to a run', () => {
   it('makes a run of an uploaded file, awaiting its load', async () => {
     const app = await liveApp();
     const { log, layout } = recordedCase('must-work');
@@ -50,7 +39,7 @@ describe('from a file to a verdict', () => {
           layout,
           layoutSha256: sha256OfDocument(layout),
           files: [{ n: 1, name: 'run.csv', bytes: log.length, sha256: sha256Of(log) }],
-          chainSha256: expect.stringMatching(/^[0-9a-f]{64}$/),
+          chainSha256: SHA256,
           scans: 806,
           from: '2026-03-03T08:14:00.000Z',
           until: '2026-03-03T14:56:30.000Z',
@@ -74,5 +63,275 @@ describe('from a file to a verdict', () => {
     });
     const now = await app.get('/api/now');
     expect(now.body.needs).toEqual([{ kind: 'awaiting-load', run: now.body.lastRuns[0] }]);
+    expect(now.body.vessels).toEqual([
+      { name: 'Autoclave 1', kind: 'autoclave', lastRun: now.body.lastRuns[0], recentRuns: 1, recentConforming: 0 },
+    ]);
+  });
+
+  it('gives back the file byte for byte, and its readings in their units', async () => {
+    const app = await liveApp();
+    const { log } = recordedCase('must-work');
+    const run = await recordCase(app, 'must-work');
+    const file = await app.get(`/api/runs/${run}/file/1`);
+    expect(file.text).toBe(log.toString());
+    expect(file.headers.get('content-disposition')).toBe('attachment; filename=run.csv');
+    const csv = await app.get(`/api/runs/${run}/readings.csv`);
+    const rows = csv.text.trimEnd().split('\r\n');
+    const { readings } = readLog([{ name: 'run.csv', chunks: [log] }], recordedCase('must-work').layout);
+    expect(rows.length).toBe(807);
+    expect(rows[0]).toBe(
+      ['time_utc', ...readings.channels.map(({ channel }) => `${channel.name} [${channel.unit}]`)].join(','),
+    );
+    expect(rows[806]).toBe(
+      ['2026-03-03T14:56:30.000Z', ...readings.channels.map(({ value }) => String(value[805]))].join(','),
+    );
+    expect((await app.get(`/api/runs/${run}/file/2`)).status).toBe(404);
+  });
+
+  it('knows a file by its bytes, whatever it is called', async () => {
+    const app = await liveApp();
+    const { log, layout } = recordedCase('must-work');
+    const first = await upload(app, '/api/imports?name=a.csv', log);
+    const again = await upload(app, '/api/imports?name=b.csv', log);
+    expect(again.body.id).toBe(first.body.id);
+    const { body } = await app.post(`/api/imports/${first.body.id}/run`, { layout });
+    const late = await upload(app, '/api/imports?name=c.csv', log);
+    expect(late.status).toBe(409);
+    expect(late.body).toEqual({
+      type: '/problems/already-recorded',
+      title: 'Already recorded',
+      status: 409,
+      detail: 'c.csv is recorded already, as run 1',
+      facts: { file: 'c.csv', run: body.run, sha256: sha256Of(log) },
+    });
+    expect((await app.get('/api/workshop')).body.counts.runs).toBe(1);
+    expect((await app.get('/api/imports')).body).toEqual({ imports: [] });
+  });
+});
+
+describe('from a load to a verdict', () => {
+  it('judges the run as the engine does, and keeps the hash of every input', async () => {
+    const app = await liveApp();
+    const { log, layout, cycle, load } = recordedCase('must-work');
+    const run = await recordCase(app, 'must-work');
+    const set = await loadCase(app, run, 'must-work', { load: load() });
+    expect(set.status, set.text).toBe(201);
+    const { evaluation, ...view } = set.body;
+    const engine = evaluateLog(readLog([{ name: 'run.csv', chunks: [log] }], layout), {
+      cycle,
+      load: load(),
+      resin: null,
+      exclusions: [],
+      barometer: null,
+      open: false,
+    });
+    const cycleSha256 = sha256OfDocument(cycle);
+    expect(evaluation).toEqual({
+      id: 1,
+      deed: DEED,
+      engine: VERSION,
+      verdict: engine.verdict,
+      because: 'load set',
+      inputs: {
+        readings: view.sources[0].chainSha256,
+        layout: sha256OfDocument(layout),
+        load: sha256OfDocument(load()),
+        cycle: cycleSha256,
+        resin: null,
+        decisions: sha256OfDocument({ format: 'dwellbook-decisions/1', exclusions: [], believed: [] }),
+      },
+      sha256: SHA256,
+      document: JSON.parse(
+        JSON.stringify({
+          ...engine,
+          log: { ...engine.log, sha256: sha256Of(log) },
+          cycle: { ...engine.cycle, sha256: cycleSha256 },
+        }),
+      ),
+    });
+    expect(view.state).toBe('judged');
+    expect(view.parts).toEqual(['P-A']);
+    expect(view.margin.map(({ text }: { text: string }) => text)).toContain('heat-on');
+  });
+
+  it('judges anew when a suspect is decided on, and keeps the earlier judgement', async () => {
+    const app = await liveApp();
+    const run = await recordCase(app, 'stuck');
+    const before = (await loadCase(app, run, 'stuck')).body;
+    expect(before.undecided).toBeGreaterThan(0);
+    const [suspect] = before.evaluation.document.decisions;
+    const now = await app.get('/api/now');
+    expect(now.body.needs).toEqual([
+      { kind: 'undecided-suspect', run: now.body.lastRuns[0], channels: [suspect.channel] },
+    ]);
+    const decision = { channel: suspect.channel, kind: suspect.kind, from: suspect.from, reason: 'reads the same' };
+    const after = (await app.post(`/api/runs/${run}/exclusions`, { decision: 'exclude', ...decision })).body;
+    expect(after.decisions).toEqual([{ decision: 'exclude', ...decision, deed: DEED }]);
+    expect(after.undecided).toBe(0);
+    expect(after.evaluations.map(({ id, because }: { id: number; because: string }) => [id, because])).toEqual([
+      [2, `${suspect.channel} excluded`],
+      [1, 'load set'],
+    ]);
+    expect((await app.get(`/api/runs/${run}/evaluations/1`)).body).toEqual(before.evaluation);
+    const kept = await app.post(`/api/runs/${run}/exclusions`, {
+      decision: 'keep',
+      channel: suspect.channel,
+      reason: 'was sound after all',
+    });
+    expect(kept.body.undecided).toBe(0);
+    expect(kept.body.evaluation.document.sensors).not.toEqual(after.evaluation.document.sensors);
+  });
+
+  it('gives the old answer when an old run is judged again', async () => {
+    const app = await liveApp();
+    const run = await recordCase(app, 'must-work');
+    const { evaluation } = (await loadCase(app, run, 'must-work')).body;
+    const again = await app.post(`/api/runs/${run}/evaluations`, { reason: 'to be sure' });
+    expect(again.status).toBe(201);
+    expect({ ...again.body, id: 1, because: 'load set' }).toEqual(evaluation);
+  });
+
+  it('draws the run, whole and a stretch of it', async () => {
+    const app = await liveApp();
+    const run = await recordCase(app, 'cure-estimates');
+    await loadCase(app, run, 'cure-estimates');
+    const whole = (await app.get(`/api/runs/${run}/chart`)).body;
+    expect(whole.lines.length).toBeGreaterThan(3);
+    expect(whole.bands.length).toBeGreaterThan(0);
+    const part = (
+      await app.get(
+        `/api/runs/${run}/chart?part=SR-0417&from=2026-03-03T09:00:00Z&until=2026-03-03T10:00:00Z&points=50`,
+      )
+    ).body;
+    expect(part.untilH - part.fromH).toBeCloseTo(1, 9);
+    expect(part.part).toBe('SR-0417');
+    const wrong = await app.get(`/api/runs/${run}/chart?part=NOBODY`);
+    expect(wrong.status).toBe(404);
+  });
+});
+
+describe('from a part to its history', () => {
+  it('shows everything that touched it and who shares it', async () => {
+    const app = await liveApp();
+    const { load } = recordedCase('two-bag-lines');
+    const run = await recordCase(app, 'two-bag-lines');
+    const parts = load().parts.map(({ part }) => part);
+    const particulars = parts.map((part) => ({ part, title: 'Strut', drawing: 'SR-D-12', tool: 'T-7' }));
+    const set = await loadCase(app, run, 'two-bag-lines', { load: load(), particulars });
+    expect(set.status, set.text).toBe(201);
+    const [serial = '', mate = ''] = parts;
+    const result = { at: NOW, test: 'proof load', outcome: 'failed', figure: 41.5, unit: 'kN', text: 'broke' };
+    await app.post(`/api/parts/${mate}/results`, result);
+    const part = (await app.get(`/api/parts/${serial}`)).body;
+    const line = (await app.get('/api/runs')).body.runs[0];
+    expect(part).toEqual({
+      serial,
+      title: 'Strut',
+      drawing: 'SR-D-12',
+      drawingIssue: null,
+      tool: 'T-7',
+      quantity: 1,
+      verdict: set.body.evaluation.document.parts[0].verdict,
+      runs: [
+        {
+          line,
+          evaluation: set.body.evaluation.document.parts[0],
+          evaluatedAt: NOW,
+          sensors: load()
+            .sensors.filter((sensor) => sensor.parts?.includes(serial))
+            .map(({ channel, place = null, parts: on = [] }) => ({
+              channel,
+              place,
+              sharedWith: on.filter((one) => one !== serial),
+            })),
+          bagLine: load().parts[0]?.bagLine ?? null,
+          startDegree: null,
+          leakTest: null,
+          workOrder: load().workOrder ?? null,
+          loadMates: [mate],
+          files: set.body.sources[0].files,
+          cycleSha256: set.body.cycleIssue.sha256,
+          decisions: [],
+        },
+      ],
+      results: [],
+      shares: [
+        {
+          serial: mate,
+          verdict: set.body.evaluation.document.parts[1].verdict,
+          failedTest: true,
+          what: expect.arrayContaining([`run ${run}`, 'tool T-7']),
+        },
+      ],
+      audit: expect.arrayContaining([expect.objectContaining({ verb: 'set-load', by: 'inspector 2' })]),
+    });
+    const failed = (await app.get(`/api/parts/${mate}`)).body;
+    expect(failed.results).toEqual([{ ...result, deed: DEED }]);
+    const listed = (await app.get('/api/parts?q=SR-D-12')).body;
+    expect(listed.total).toBe(2);
+    expect(listed.parts.map(({ serial: one, failedTest }: never) => [one, failedTest])).toEqual(
+      expect.arrayContaining([
+        [serial, false],
+        [mate, true],
+      ]),
+    );
+  });
+
+  it('is found by any code on it', async () => {
+    const app = await liveApp();
+    const run = await recordCase(app, 'must-work');
+    await loadCase(app, run, 'must-work');
+    const find = async (code: string) => (await app.get(`/api/find?code=${encodeURIComponent(code)}`)).body.hits;
+    expect(await find('sr-0417')).toEqual([{ kind: 'part', title: 'SR-0417', page: '/parts/SR-0417', exact: true }]);
+    expect(await find('W-2231')).toEqual([
+      { kind: 'work-order', title: 'Work order W-2231, run 1', page: '/runs/1', exact: true },
+    ]);
+    expect(await find('1')).toContainEqual({ kind: 'run', title: 'Run 1', page: '/runs/1', exact: true });
+    expect(await find('SR-180')).toContainEqual({
+      kind: 'cycle',
+      title: 'SR-180 issue B',
+      page: '/cycles/SR-180/B',
+      exact: true,
+    });
+    expect(await find('run.csv')).toContainEqual({
+      kind: 'file',
+      title: 'run.csv, run 1',
+      page: '/runs/1',
+      exact: true,
+    });
+    expect(await find('Autoclave')).toContainEqual({
+      kind: 'vessel',
+      title: 'Autoclave 1',
+      page: '/runs?vessel=Autoclave%201',
+      exact: false,
+    });
+    expect(await find('%')).toEqual([]);
+  });
+});
+
+describe('the audit trail', () => {
+  it('names who did what to what, and every chain holds', async () => {
+    const app = await liveApp();
+    const run = await recordCase(app, 'must-work');
+    await loadCase(app, run, 'must-work');
+    await app.post(`/api/runs/${run}/notes`, { text: 'Door opened at once', at: '2026-03-03T14:00:00Z' });
+    const { lines } = (await app.get('/api/audit')).body;
+    expect(lines.map(({ n, by, verb, subject }: never) => [n, by, verb, subject])).toEqual(
+      [
+        [8, 'inspector 2', 'add-note', 'run/1'],
+        [7, 'inspector 2', 'judge-run', 'run/1'],
+        [6, 'inspector 2', 'set-load', 'run/1'],
+        [5, 'inspector 2', 'record-run', 'run/1'],
+        [4, 'inspector 2', 'keep-layout', 'recorder/recorder 1'],
+        [3, 'inspector 2', 'add-recorder', 'recorder/recorder 1'],
+        [2, 'inspector 2', 'receive-file', 'import/1'],
+        [1, 'inspector 2', 'import-cycle', 'cycle/SR-180/B'],
+      ]
+        .map(([n, ...rest]) => [Number(n) + 1, ...rest])
+        .concat([[1, 'inspector 2', 'add-vessel', 'vessel/Autoclave 1']]),
+    );
+    expect((await app.get('/api/audit/verify')).body).toEqual({ holds: true, lines: 9, sources: 1, firstBroken: null });
+    app.parts.db.exec('DROP TRIGGER evaluations_are_never_updated; UPDATE evaluations SET packed = zeroblob(9)');
+    await expect(app.get('/api/audit/verify')).resolves.toMatchObject({ status: 200, body: { holds: false } });
   });
 });

@@ -2,24 +2,30 @@ import { mkdirSync } from 'node:fs';
 import { createServer } from 'node:http';
 import type { AddressInfo } from 'node:net';
 import { join } from 'node:path';
-import { afterEach } from 'vitest';
+import { afterEach, expect } from 'vitest';
 import { evaluateLog } from '../../models/evaluation/judge.ts';
 import { createApp } from '../../server/app.ts';
 import { ROLES } from '../../server/contract/roles.ts';
 import type { AppParts } from '../../server/http/app-parts.ts';
 import { freshDatabase, freshFolder } from './fresh-database.ts';
+import { expectContractKept } from './keeps-contract.ts';
 
 export const NOW = '2026-03-10T08:00:00.000Z';
 
 const running: (() => Promise<void>)[] = [];
 
+const faults: object[] = [];
+
 afterEach(async () => {
   for (const stop of running.splice(0)) await stop();
+  // A fault of the program is never what a test is about, unless it took it out of the list itself.
+  expect(faults.splice(0)).toEqual([]);
 });
 
 export interface LiveApp {
   readonly parts: AppParts;
-  readonly faults: object[];
+  /** Faults of the program so far; takes them out, for a test that makes one on purpose. */
+  readonly takeFaults: () => object[];
   readonly get: (path: string, headers?: Record<string, string>) => Promise<Answer>;
   readonly post: (path: string, body: unknown) => Promise<Answer>;
   readonly send: (path: string, init: RequestInit) => Promise<Answer>;
@@ -38,7 +44,6 @@ export async function liveApp(changes: Partial<AppParts> = {}): Promise<LiveApp>
   const folder = freshFolder();
   const incomingFolder = join(folder, 'incoming');
   mkdirSync(incomingFolder);
-  const faults: object[] = [];
   const parts: AppParts = {
     db: freshDatabase(),
     clock: () => Date.parse(NOW),
@@ -65,11 +70,13 @@ export async function liveApp(changes: Partial<AppParts> = {}): Promise<LiveApp>
     const response = await fetch(`${origin}${path}`, init);
     const text = await response.text();
     const isJson = /json/.test(response.headers.get('content-type') ?? '');
-    return { status: response.status, headers: response.headers, text, body: isJson ? JSON.parse(text) : null };
+    const body = isJson ? JSON.parse(text) : null;
+    if (isJson && path.startsWith('/api/')) expectContractKept(init.method ?? 'GET', path, response.status, body);
+    return { status: response.status, headers: response.headers, text, body };
   };
   return {
     parts,
-    faults,
+    takeFaults: () => faults.splice(0),
     send,
     get: (path, headers = {}) => send(path, { headers }),
     post: (path, body) =>
