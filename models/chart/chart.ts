@@ -111,7 +111,7 @@ export interface Dot {
   readonly atH: number;
   readonly value: number;
   readonly channel: string;
-  /** `TC3 gels 11:29`; empty where others of its kind are written out. */
+  /** `TC3 gels 11:29`; empty where another of its kind says it. */
   readonly text: string;
 }
 

@@ -50,7 +50,7 @@ function linesOf({ degree, tgC }: CureCourse, tgConversion: Conversion): CureLin
   return lines;
 }
 
-/** Estimated gel and vitrification on the degree's course; the first and the last of each kind are written out. */
+/** Estimated gel and vitrification on the degree's course; each kind is written out once, at its last. */
 export function cureDots(
   part: PartEvaluation,
   courses: readonly CureCourse[],
@@ -66,15 +66,26 @@ export function cureDots(
       })
       .sort((a, b) => a.ms - b.ms);
     return came.map(({ channel, course, ms }, i): Dot => {
-      const words = `${channel} ${kind === 'gel' ? 'gels' : 'vitrifies'} ${clock.minute(ms)}`;
+      const isLast = i === came.length - 1;
       return {
         ...{ kind, channel, strip: 'cure' },
         atH: hoursAt(scale, ms),
         value: drawn(degreeAt(course, ms)),
-        text: i === 0 || i === came.length - 1 ? words : '',
+        text: isLast ? dotText(kind, came, clock) : '',
       };
     });
   });
+}
+
+/** `TC3 gels 11:29`, or where several do: `gel 11:21 (TC1) to 11:29 (TC3)`. */
+function dotText(
+  kind: Dot['kind'],
+  came: readonly { readonly channel: string; readonly ms: number }[],
+  clock: ClockTime,
+): string {
+  const [first, last] = [came[0]!, came.at(-1)!];
+  if (came.length === 1) return `${last.channel} ${kind === 'gel' ? 'gels' : 'vitrifies'} ${clock.minute(last.ms)}`;
+  return `${kind} ${clock.minute(first.ms)} (${first.channel}) to ${clock.minute(last.ms)} (${last.channel})`;
 }
 
 /** Degree of cure at an instant, on the straight line between scans, held beyond the ends. */

@@ -1,5 +1,6 @@
 import { DomainError } from '../errors.ts';
-import { scanAtOrAfter } from './scan-at.ts';
+import { Kept } from './kept-readings.ts';
+import { type Stretch, silencesOf, stretchToDraw } from './silences.ts';
 
 export interface DecimateOptions {
   /** Window to be drawn, ms; the readings just outside are kept so that the line reaches its edges. */
@@ -48,169 +49,67 @@ export function decimate(timeMs: Float64Array, value: Float64Array, options: Dec
   if (!(untilMs > fromMs)) {
     throw new DomainError('option-out-of-range', 'The window to be drawn is empty', { fromMs, untilMs });
   }
-  const stretch = presentStretch(timeMs, value, options);
-  const gaps = gapsIn(timeMs, value, stretch, options);
-  const room = stretch.present + gaps.length + 2;
-  const buckets = room <= Math.floor(points) ? Number.POSITIVE_INFINITY : Math.floor(points / 6);
-  const kept = new Kept(timeMs, value, Math.floor(points));
-  select(timeMs, value, stretch, buckets, options, kept);
+  const stretch = stretchToDraw(timeMs, value, options);
+  const { present, gaps } = silencesOf(timeMs, value, stretch, options);
+  const room = Math.floor(points);
+  const kept = new Kept(timeMs, value, room);
+  if (present + gaps.length + 2 <= room) keepAll(timeMs, value, stretch, options, kept);
+  else keepExtremes(timeMs, value, stretch, options, kept);
   return { ...kept.entries(), gaps };
 }
 
-interface Stretch {
-  /** First and last scan to be looked at: those in the window and the present readings beside it. */
-  readonly first: number;
-  readonly last: number;
-  /** How many readings are present there. */
-  readonly present: number;
-}
-
-function presentStretch(timeMs: Float64Array, value: Float64Array, { fromMs, untilMs }: DecimateOptions): Stretch {
-  let first = scanAtOrAfter(timeMs, fromMs);
-  let last = scanAtOrAfter(timeMs, untilMs);
-  if (last === timeMs.length || timeMs[last]! > untilMs) last -= 1;
-  let present = 0;
-  for (let i = first; i <= last; i++) if (!Number.isNaN(value[i]!)) present += 1;
-  for (let i = first - 1; i >= 0; i--) {
-    if (Number.isNaN(value[i]!)) continue;
-    first = i;
-    present += 1;
-    break;
-  }
-  for (let i = last + 1; i < timeMs.length; i++) {
-    if (Number.isNaN(value[i]!)) continue;
-    last = i;
-    present += 1;
-    break;
-  }
-  return { first, last, present };
-}
-
-function gapsIn(
+function keepAll(
   timeMs: Float64Array,
   value: Float64Array,
   { first, last }: Stretch,
-  { fromMs, untilMs, longestGapMs }: DecimateOptions,
-): { fromMs: number; untilMs: number }[] {
-  const gaps: { fromMs: number; untilMs: number }[] = [];
-  const add = (from: number, until: number) => {
-    const clipped = { fromMs: Math.max(from, fromMs), untilMs: Math.min(until, untilMs) };
-    if (clipped.untilMs > clipped.fromMs) gaps.push(clipped);
-  };
+  { longestGapMs }: DecimateOptions,
+  kept: Kept,
+): void {
   let previousMs = Number.NaN;
   for (let i = first; i <= last; i++) {
     if (Number.isNaN(value[i]!)) continue;
     const t = timeMs[i]!;
-    // The record of a sensor that begins after the log, or ends before it, misses that end.
-    if (Number.isNaN(previousMs)) add(isFirstPresent(value, i) ? timeMs[0]! : t, t);
-    else if (t - previousMs > longestGapMs) add(previousMs, t);
+    if (t - previousMs > longestGapMs) kept.breakLine((previousMs + t) / 2);
+    kept.put(i);
     previousMs = t;
   }
-  const endMs = timeMs[timeMs.length - 1] ?? Number.NaN;
-  if (Number.isNaN(previousMs)) add(timeMs[0] ?? Number.NaN, endMs);
-  else if (previousMs < untilMs) add(previousMs, isLastPresent(value, last) ? endMs : previousMs);
-  return gaps;
 }
 
-function isFirstPresent(value: Float64Array, at: number): boolean {
-  for (let i = at - 1; i >= 0; i--) if (!Number.isNaN(value[i]!)) return false;
-  return true;
-}
-
-function isLastPresent(value: Float64Array, from: number): boolean {
-  for (let i = from + 1; i < value.length; i++) if (!Number.isNaN(value[i]!)) return false;
-  return true;
-}
-
-function select(
+function keepExtremes(
   timeMs: Float64Array,
   value: Float64Array,
   { first, last }: Stretch,
-  buckets: number,
   { fromMs, untilMs, points, longestGapMs }: DecimateOptions,
   kept: Kept,
 ): void {
+  const buckets = Math.floor(points / 6);
   const bucketMs = (untilMs - fromMs) / buckets;
   // Four readings and one break a bucket, one reading and one break on either side; the rest is for gaps inside buckets.
-  let spare = Number.isFinite(buckets) ? Math.floor(points) - 5 * buckets - 4 : 0;
-  let bucket = Number.NaN;
-  let previous = -1;
+  let spare = Math.floor(points) - 5 * buckets - 4;
+  let bucket = -1;
+  let bucketEndMs = Number.NEGATIVE_INFINITY;
+  let previousMs = Number.NaN;
   for (let i = first; i <= last; i++) {
-    if (Number.isNaN(value[i]!)) continue;
+    const reading = value[i]!;
+    if (Number.isNaN(reading)) continue;
     const t = timeMs[i]!;
-    const own = bucketOf(t, i);
-    const isBreak = previous >= 0 && t - timeMs[previous]! > longestGapMs;
-    const opensGroup = own !== bucket || (isBreak && spare >= 5);
-    if (opensGroup) {
-      if (own === bucket) spare -= 5;
+    const isBreak = t - previousMs > longestGapMs;
+    if (t >= bucketEndMs || (isBreak && spare >= 5)) {
       kept.flush();
-      if (isBreak) kept.breakLine((timeMs[previous]! + t) / 2);
-      bucket = own;
+      if (isBreak) kept.breakLine((previousMs + t) / 2);
+      if (t < bucketEndMs) spare -= 5;
+      else bucketEndMs = endOfBucket(t);
     }
-    kept.take(i);
-    previous = i;
+    kept.take(i, reading);
+    previousMs = t;
   }
   kept.flush();
 
-  function bucketOf(t: number, i: number): number {
-    if (!Number.isFinite(buckets)) return i;
-    if (t < fromMs) return -1;
-    if (t > untilMs) return buckets;
-    return Math.min(buckets - 1, Math.floor((t - fromMs) / bucketMs));
-  }
-}
-
-/** The entries kept so far, and the group that is being gathered. */
-class Kept {
-  readonly #timeMs: Float64Array;
-  readonly #value: Float64Array;
-  readonly #keptMs: Float64Array;
-  readonly #kept: Float64Array;
-  #count = 0;
-  #first = -1;
-  #lowest = -1;
-  #highest = -1;
-  #last = -1;
-
-  constructor(timeMs: Float64Array, value: Float64Array, points: number) {
-    this.#timeMs = timeMs;
-    this.#value = value;
-    this.#keptMs = new Float64Array(points);
-    this.#kept = new Float64Array(points);
-  }
-
-  take(i: number): void {
-    if (this.#first < 0) {
-      this.#first = i;
-      this.#lowest = i;
-      this.#highest = i;
-    } else if (this.#value[i]! < this.#value[this.#lowest]!) this.#lowest = i;
-    else if (this.#value[i]! > this.#value[this.#highest]!) this.#highest = i;
-    this.#last = i;
-  }
-
-  flush(): void {
-    if (this.#first < 0) return;
-    const inner = this.#lowest < this.#highest ? [this.#lowest, this.#highest] : [this.#highest, this.#lowest];
-    let previous = -1;
-    for (const i of [this.#first, ...inner, this.#last]) {
-      if (i !== previous) this.#put(this.#timeMs[i]!, this.#value[i]!);
-      previous = i;
-    }
-    this.#first = -1;
-  }
-
-  breakLine(timeMs: number): void {
-    this.#put(timeMs, Number.NaN);
-  }
-
-  entries(): { timeMs: Float64Array; value: Float64Array } {
-    return { timeMs: this.#keptMs.subarray(0, this.#count), value: this.#kept.subarray(0, this.#count) };
-  }
-
-  #put(timeMs: number, value: number): void {
-    this.#keptMs[this.#count] = timeMs;
-    this.#kept[this.#count] = value;
-    this.#count += 1;
+  function endOfBucket(t: number): number {
+    if (t < fromMs) return fromMs;
+    if (t > untilMs) return Number.POSITIVE_INFINITY;
+    // Rounding must not put a reading back into the bucket that has just ended.
+    bucket = Math.max(bucket + 1, Math.min(buckets - 1, Math.floor((t - fromMs) / bucketMs)));
+    return bucket >= buckets - 1 ? untilMs + 1e-3 : fromMs + (bucket + 1) * bucketMs;
   }
 }

@@ -16,6 +16,8 @@ export interface DrawnChannel {
   /** Strip's unit from a figure; rises or falls throughout, so that an extreme figure is an extreme value. */
   readonly shown: (figure: number) => number;
   readonly isFalling: boolean;
+  /** Least and greatest figure; null where there is none. */
+  readonly range: readonly [number, number] | null;
 }
 
 /** A channel with its scale, its corrections and the strip's unit taken into account. */
@@ -37,13 +39,16 @@ export function drawnChannel(
     return {
       ...channel,
       figures,
+      range: rangeOf(figures),
       shown: (figure) => converted(corrected(figure), conversion),
       isFalling: (layout.scale ?? 1) * conversion.slope < 0,
     };
   }
+  const readings = figures.map(corrected);
   return {
     ...channel,
-    figures: figures.map(corrected),
+    figures: readings,
+    range: rangeOf(readings),
     shown: (reading) => converted(reading, conversion),
     isFalling: conversion.slope < 0,
   };
@@ -55,6 +60,17 @@ function keepOrder(points: readonly (readonly [number, number])[]): boolean {
     const before = points[i - 1];
     return before === undefined || correction - before[1] > before[0] - at;
   });
+}
+
+function rangeOf(figures: Float64Array): readonly [number, number] | null {
+  let least = Number.POSITIVE_INFINITY;
+  let greatest = Number.NEGATIVE_INFINITY;
+  for (let i = 0; i < figures.length; i++) {
+    const figure = figures[i]!;
+    if (figure < least) least = figure;
+    if (figure > greatest) greatest = figure;
+  }
+  return least <= greatest ? [least, greatest] : null;
 }
 
 /** What a channel shows at an instant, on the straight line between its readings; null outside them. */

@@ -12,46 +12,45 @@ export interface RunOverRange {
  * value is reached, from the last crossing of the first before it. Null where it never crossed the first.
  */
 export function runOverRange(
-  { timeMs, figures, shown, isFalling }: DrawnChannel,
+  channel: DrawnChannel,
   [from, to]: readonly [number, number],
   sinceMs: number,
 ): RunOverRange | null {
-  const isRise = to > from !== isFalling;
-  const start = levelOf(figures, shown, from, isRise);
-  const end = levelOf(figures, shown, to, isRise);
-  const isPast = (figure: number, level: number) => (isRise ? figure >= level : figure <= level);
+  const { timeMs, figures, isFalling } = channel;
+  // Figures are turned so that the way always leads up.
+  const up = to > from !== isFalling ? 1 : -1;
+  const start = up * levelOf(channel, from, up);
+  const end = up * levelOf(channel, to, up);
+  if (start === Number.POSITIVE_INFINITY) return null;
   let previous = -1;
+  let before = Number.NaN;
   let startMs = Number.NaN;
   for (let i = scanAtOrAfter(timeMs, sinceMs); i < timeMs.length; i++) {
-    const figure = figures[i]!;
-    if (Number.isNaN(figure)) continue;
-    const t = timeMs[i]!;
-    if (previous >= 0) {
-      const [t0, f0] = [timeMs[previous]!, figures[previous]!];
-      const crossing = (level: number) => t0 + ((level - f0) / (figure - f0)) * (t - t0);
-      if (!isPast(f0, start) && isPast(figure, start)) startMs = crossing(start);
-      if (!Number.isNaN(startMs) && isPast(figure, end)) {
-        return { startMs, endMs: isPast(f0, end) ? t0 : crossing(end) };
-      }
+    const height = up * figures[i]!;
+    if (height >= start && before < start) startMs = crossing(timeMs, previous, before, i, height, start);
+    if (height >= end && !Number.isNaN(startMs)) {
+      return { startMs, endMs: before < end ? crossing(timeMs, previous, before, i, height, end) : timeMs[previous]! };
     }
+    if (Number.isNaN(height)) continue;
     previous = i;
+    before = height;
   }
   return Number.isNaN(startMs) ? null : { startMs, endMs: timeMs[previous]! };
+}
+
+/** Instant at which the straight line between two readings meets a level. */
+function crossing(timeMs: Float64Array, i0: number, h0: number, i1: number, h1: number, level: number): number {
+  return timeMs[i0]! + ((level - h0) / (h1 - h0)) * (timeMs[i1]! - timeMs[i0]!);
 }
 
 /**
  * The figure at which a channel shows a value, found by halving between its least and greatest figure and given a
  * hair's breadth on the near side, so that a reading of exactly that value is there; infinite where it never is.
  */
-function levelOf(figures: Float64Array, shown: (figure: number) => number, value: number, isRise: boolean): number {
-  let low = Number.POSITIVE_INFINITY;
-  let high = Number.NEGATIVE_INFINITY;
-  for (const figure of figures) {
-    if (figure < low) low = figure;
-    if (figure > high) high = figure;
-  }
-  const direction = shown(high) >= shown(low) ? 1 : -1;
-  const above = (figure: number) => direction * (shown(figure) - value);
+function levelOf({ range, shown, isFalling }: DrawnChannel, value: number, up: 1 | -1): number {
+  if (range === null) return up * Number.POSITIVE_INFINITY;
+  let [low, high] = range;
+  const above = (figure: number) => (isFalling ? value - shown(figure) : shown(figure) - value);
   if (above(high) < -1e-9) return Number.POSITIVE_INFINITY;
   if (above(low) > 1e-9) return Number.NEGATIVE_INFINITY;
   const hair = 1e-9 * (high - low);
@@ -60,5 +59,5 @@ function levelOf(figures: Float64Array, shown: (figure: number) => number, value
     if (above(middle) < 0) low = middle;
     else high = middle;
   }
-  return isRise ? high - hair : high + hair;
+  return up > 0 ? high - hair : high + hair;
 }

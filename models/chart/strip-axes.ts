@@ -12,7 +12,7 @@ export interface InView {
   readonly untilH: number;
 }
 
-const TICKS: Readonly<Record<Strip, number>> = { temperature: 10, pressure: 4, vacuum: 5, cure: 2, tg: 4 };
+const TICKS: Readonly<Record<Strip, number>> = { temperature: 10, pressure: 4, vacuum: 4, cure: 2, tg: 4 };
 
 /** Least height of a strip's axis, so that noise of a steady reading does not fill it. */
 const LEAST_SPAN: Readonly<Record<Strip, number>> = { temperature: 8, pressure: 0.2, vacuum: 0.02, cure: 1, tg: 20 };
@@ -25,10 +25,16 @@ export function axisOf(strip: Strip, unit: string, lines: readonly Unplaced[], v
 
 function rangeOf(strip: Strip, lines: readonly Unplaced[], view: InView): { low: number; high: number } {
   if (strip === 'cure') return { low: 0, high: 1 };
-  const values = lines.flatMap((line) => line.value.filter((value): value is number => value !== null));
-  let low = values.reduce((least, value) => Math.min(least, value), Number.POSITIVE_INFINITY);
-  let high = values.reduce((greatest, value) => Math.max(greatest, value), Number.NEGATIVE_INFINITY);
-  if (values.length === 0) return { low: 0, high: 1 };
+  let low = Number.POSITIVE_INFINITY;
+  let high = Number.NEGATIVE_INFINITY;
+  for (const { value } of lines) {
+    for (const one of value) {
+      if (one === null) continue;
+      if (one < low) low = one;
+      if (one > high) high = one;
+    }
+  }
+  if (low > high) return { low: 0, high: 1 };
   const span = high - low;
   for (const band of view.bands) {
     if (band.strip !== strip || band.untilH < view.fromH || band.fromH > view.untilH) continue;
