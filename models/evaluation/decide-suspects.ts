@@ -15,14 +15,15 @@ const TRIED_WHOLE = 4;
  * Findings while suspects are undecided: worked out with them and without every set of them.
  *
  * A finding that comes out the same whatever is decided stands; one that does not cannot be told, and hangs on the
- * decision. `judge` answers null where no sensor would be left.
+ * decision. Where none would be left, what
+ * hangs on sensors is open.
  */
 export function withUndecided(
   suspects: readonly Suspect[],
   changes: Map<string, Set<string>>,
-  judge: (without: readonly Suspect[]) => Finding[] | null,
+  judge: (without: readonly Suspect[]) => Finding[],
 ): Finding[] {
-  const asIs = judge([]) ?? [];
+  const asIs = judge([]);
   const variants = setsOf(suspects).map((without) => ({ without, findings: judge(without) }));
   return asIs.map((finding) => {
     const differing = variants.filter(({ findings }) => outcomeOf(findings, finding) !== finding.outcome);
@@ -31,9 +32,9 @@ export function withUndecided(
     for (const { channel } of smallest.without) note(changes, channel.layout.name, finding.limit);
     const { channel, faults } = smallest.without[0]!;
     const name = channel.layout.name;
-    const other = smallest.findings?.find(({ limit }) => limit === finding.limit);
+    const other = smallest.findings.find(({ limit }) => limit === finding.limit);
     const without = smallest.without.map((suspect) => suspect.channel.layout.name).join(' and ');
-    const then = other === undefined ? 'no sensor is left to judge by' : `${words(other.outcome)} (${figureOf(other)})`;
+    const then = other === undefined ? 'the limit does not arise' : `${words(other.outcome)} (${figureOf(other)})`;
     return {
       ...finding,
       outcome: 'cannot-tell' as const,
@@ -45,8 +46,7 @@ export function withUndecided(
 }
 
 /** The outcome of the same limit without the suspects; the finding's own where the limit does not exist then. */
-function outcomeOf(findings: Finding[] | null, { limit, outcome }: Finding): Outcome {
-  if (findings === null) return 'cannot-tell';
+function outcomeOf(findings: readonly Finding[], { limit, outcome }: Finding): Outcome {
   return findings.find((one) => one.limit === limit)?.outcome ?? outcome;
 }
 

@@ -8,7 +8,7 @@ import type { Dwells } from './dwells.ts';
 import type { Outcome } from './evaluation.ts';
 import { type Found, say, unfinished } from './finding.ts';
 import { guarded } from './guarded.ts';
-import type { JudgedSensor, Judgement } from './judgement.ts';
+import { isExcluded, type JudgedSensor, type Judgement, someBelieved } from './judgement.ts';
 
 /** `<dwell>/upper`: the highest reading of any judged sensor between its entering and its leaving. */
 export function dwellUpperLimit(j: Judgement, dwells: Dwells, index: number): Found[] {
@@ -71,7 +71,7 @@ function upperSentence(
 }
 
 function isDone(j: Judgement, s: JudgedSensor, course: DwellCourse, k: number): boolean {
-  if (s.untilMs !== Number.POSITIVE_INFINITY) return true;
+  if (isExcluded(s)) return someBelieved(j) || course.left[k]?.isFinal === true;
   return course.entered[k] === null ? showsCooling(j) : course.left[k]?.isFinal === true;
 }
 

@@ -3,7 +3,7 @@ import { credited } from '../run/gaps.ts';
 import { firstHold, type Interval } from '../run/intervals.ts';
 import { celsiusFrom, round9 } from '../units.ts';
 import { type Fill, sensorStanding } from './holding.ts';
-import { type JudgedSensor, type Judgement, ruleFigures } from './judgement.ts';
+import { isExcluded, type JudgedSensor, type Judgement, ruleFigures } from './judgement.ts';
 
 /** How a dwell's band is moved for a guarded decision, in expanded uncertainties: 1 inwards, −1 outwards. */
 export type Shift = -1 | 0 | 1;
@@ -152,6 +152,7 @@ export function leaves(
       return { ms: inGap(j, s, ms, band.upperC, -1, rule.fill), isFinal: true };
     }
     if (s.track.valueAt(endMs) > band.upperC - ruleFigures(j.cycle.units.temperature).chatterC) {
+      if (isExcluded(s)) return null;
       const ms = wayOut(j, s, band, enteredMs, endMs);
       return ms === null ? null : { ms: inGap(j, s, ms, band.upperC, -1, rule.fill), isFinal: false };
     }
@@ -191,6 +192,8 @@ function leavesDownwards(
   if (ms === null && limitMs === colderMs) ms = inside.firstEndAfter(limitMs);
   if (ms === null || ms < enteredMs || ms > endMs) return null;
   const isSettled = limitMs < endMs || cooledMs === limitMs || hasCooled(j, s, endMs);
+  // A sensor that was excluded while it might still have come back does not close a clock.
+  if (!isSettled && isExcluded(s)) return null;
   return { ms: inGap(j, s, ms, lowerC, 1, fill), isFinal: isSettled || !j.isOpen };
 }
 

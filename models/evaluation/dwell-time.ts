@@ -5,7 +5,7 @@ import { airSubject, type ClockCourse, DEFAULT_CLOCK, meanSubject } from './cloc
 import { type ClockDip, countedIn, type Depth, dipsIn, forgivenessC } from './dips.ts';
 import { bandC, type DwellCourse } from './dwell-course.ts';
 import { type Fill, sensorStanding } from './holding.ts';
-import { type JudgedSensor, type Judgement, ruleFigures } from './judgement.ts';
+import { isExcluded, type JudgedSensor, type Judgement, ruleFigures } from './judgement.ts';
 
 /** The time a dwell's clock counted, gaps filled one way. */
 export interface DwellTime {
@@ -46,10 +46,6 @@ export function dwellTime(j: Judgement, course: DwellCourse, clock: ClockCourse)
   );
   const minutes = longest === null ? 0 : (longest.until - longest.from) / 60_000;
   return { ...known, minutes, hasEnded, counted: longest };
-}
-
-function isExcluded(s: JudgedSensor): boolean {
-  return s.untilMs !== Number.POSITIVE_INFINITY;
 }
 
 /** The least of what every judged sensor gathered between its own entering and leaving, in minutes. */

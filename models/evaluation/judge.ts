@@ -22,6 +22,7 @@ import type {
 import { iso, say, worst } from './finding.ts';
 import { judgePart, recordPart, sourcesOf } from './judge-part.ts';
 import { changesAtMost, type Judgement, judgedSensor, longestGapMs } from './judgement.ts';
+import { usesAir } from './log-gap-limit.ts';
 
 /** Everything a judgement rests on besides the readings. */
 export interface JudgementInputs {
@@ -107,7 +108,8 @@ function evaluatePart(
 ): PartEvaluation {
   const asIs = judgementOf(setting, part, new Map());
   const sources = sourcesOf(asIs);
-  const relevant = suspects.filter(({ channel }) => [...asIs.sensors, ...asIs.air].some((s) => s.channel === channel));
+  const looked = usesAir(setting.inputs.cycle) ? [...asIs.sensors, ...asIs.air] : asIs.sensors;
+  const relevant = suspects.filter(({ channel }) => looked.some((s) => s.channel === channel));
   const findings =
     asIs.sensors.length === 0
       ? nothingToJudge(setting.inputs.cycle)
@@ -117,7 +119,6 @@ function evaluatePart(
             part,
             new Map(without.map(({ channel, faults }) => [channel.layout.name, faults[0]!.fromMs])),
           );
-          if (j.sensors.every(({ untilMs }) => untilMs <= j.log.from)) return null;
           return judgePart(without.length === 0 ? sources : sourcesOf(j));
         });
   const { stages, windows, heatOn, cure } = recordPart(sources);

@@ -12,11 +12,20 @@ export interface JudgedSensor {
   readonly name: string;
   readonly channel: RunChannel;
   readonly track: RunChannel['track'];
-  /** Instant of its exclusion; `Infinity` where it is believed to the end. */
+  /** Its last reading before an exclusion, or the exclusion itself where that fell into a gap; `Infinity`: none. */
   readonly untilMs: number;
   /** Expanded uncertainty in °C; 0 where unknown: then it is judged as indicated. */
   readonly uncertaintyC: number;
   readonly gaps: readonly Gap[];
+}
+
+export function isExcluded(s: JudgedSensor): boolean {
+  return s.untilMs !== Number.POSITIVE_INFINITY;
+}
+
+/** Whether a sensor is left that is believed to the end. */
+export function someBelieved({ sensors }: Judgement): boolean {
+  return sensors.some((s) => !isExcluded(s));
 }
 
 /** Everything the limits of one part look at, under one set of exclusions. */
@@ -82,14 +91,17 @@ export function judgedSensor(
   gapMs: number,
   isGuarded: boolean,
 ): JudgedSensor {
-  const whole = gapsOf(channel.track, gapMs, digest.log);
-  // An exclusion ends a sensor's gap. Where too little of the gap is left to be one, the sensor counts to its last reading.
-  const cut = whole.find(({ from, until }) => from < believedUntilMs && believedUntilMs <= until);
-  const isShort = cut !== undefined && cut.before !== null && believedUntilMs - cut.from <= gapMs;
-  const untilMs = isShort ? cut.from : believedUntilMs;
+  const { track } = channel;
+  const whole = gapsOf(track, gapMs, digest.log);
+  // Earlier readings keep counting: the sensor counts to its last reading before the exclusion, and what the line does
+  // from there to a reading nobody believes is nobody's business. A gap that was one before the exclusion stays one.
+  const last = track.indexFrom(believedUntilMs) - 1;
+  const lastMs = last < 0 ? Number.NEGATIVE_INFINITY : track.timeMs(last);
+  const untilMs =
+    believedUntilMs !== Number.POSITIVE_INFINITY && believedUntilMs - lastMs <= gapMs ? lastMs : believedUntilMs;
   const gaps = whole
     .filter((gap) => gap.from < untilMs)
     .map((gap) => (gap.until > untilMs ? { ...gap, until: untilMs, after: null } : gap));
   const uncertaintyC = isGuarded ? (channel.uncertainty ?? 0) : 0;
-  return { name: channel.layout.name, channel, track: channel.track, untilMs, uncertaintyC, gaps };
+  return { name: channel.layout.name, channel, track, untilMs, uncertaintyC, gaps };
 }

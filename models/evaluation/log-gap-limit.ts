@@ -1,3 +1,4 @@
+import type { Cycle } from '../cycle/cycle.ts';
 import { gapsOf } from '../run/gaps.ts';
 import type { Interval } from '../run/intervals.ts';
 import { celsiusFrom } from '../units.ts';
@@ -9,12 +10,12 @@ import { channelsFor } from './pressure-scale.ts';
 
 /** `log/gap`, where the cycle writes how long a gap may be: nobody can tell while a longer one lies on a used channel. */
 export function logGapLimit(sources: EventSources): Found[] {
-  const { j, dwells } = sources;
+  const { j } = sources;
   const longest = j.cycle.log?.longestGap;
   if (longest === undefined) return [];
   const span = { from: heatOnMs(j) ?? j.log.from, until: lastEndMs(sources) };
   let worst: { name: string; gap: Interval } | null = null;
-  for (const { name, gaps } of usedChannels(j, dwells)) {
+  for (const { name, gaps } of usedChannels(j)) {
     for (const gap of gaps) {
       const isLong = gap.until - gap.from > j.longestGapMs;
       if (!isLong || gap.from >= span.until || gap.until <= span.from) continue;
@@ -65,12 +66,8 @@ function stagesEndMs(j: Judgement, dwells: Dwells): number | null {
   return last?.kind === 'dwell' ? dwells.closesMs(dwells.stages.length - 1, 'least') : null;
 }
 
-function usedChannels(j: Judgement, { stages }: Dwells): { name: string; gaps: readonly Interval[] }[] {
+function usedChannels(j: Judgement): { name: string; gaps: readonly Interval[] }[] {
   const { cycle } = j;
-  const usesAir =
-    stages.some(({ clock, longest }) =>
-      [clock, longest?.clock].some((one) => one?.opens === 'air-enters' || one?.closes === 'air-leaves'),
-    ) || cycle.stages.some((stage) => stage.kind !== 'dwell' && stage.rate?.of === 'air');
   const events = (cycle.windows ?? []).flatMap(({ from, until }) => [from.at, until.at]);
   const uses = (quantity: 'pressure' | 'vacuum') =>
     (cycle.windows ?? []).some((window) => window.quantity === quantity) ||
@@ -82,7 +79,17 @@ function usedChannels(j: Judgement, { stages }: Dwells): { name: string; gaps: r
   ];
   return [
     ...j.sensors,
-    ...(usesAir ? j.air : []),
+    ...(usesAir(cycle) ? j.air : []),
     ...others.map(({ layout, track }) => ({ name: layout.name, gaps: gapsOf(track, j.longestGapMs, j.log) })),
   ];
+}
+
+/** Whether a clock or a rate of the cycle looks at the air. */
+export function usesAir({ stages }: Cycle): boolean {
+  return stages.some((stage) => {
+    if (stage.kind !== 'dwell') return stage.rate?.of === 'air';
+    return [stage.clock, stage.longest?.clock].some(
+      (clock) => clock?.opens === 'air-enters' || clock?.closes === 'air-leaves',
+    );
+  });
 }

@@ -12,7 +12,7 @@ import type { Outcome } from './evaluation.ts';
 import { heatOnMs } from './events.ts';
 import { type Found, say, unfinished } from './finding.ts';
 import { guarded } from './guarded.ts';
-import type { JudgedSensor, Judgement } from './judgement.ts';
+import { type JudgedSensor, type Judgement, someBelieved } from './judgement.ts';
 
 /** `ceiling`: no judged sensor above it, over the whole log. */
 export function ceilingLimit(j: Judgement): Found[] {
@@ -38,7 +38,7 @@ export function ceilingLimit(j: Judgement): Found[] {
           : readingC > limit(sensor);
       if (seen.some(isOver)) return 'not-met';
       if (j.sensors.some((s) => mayExceed(j, s, limit(s)))) return 'cannot-tell';
-      return j.isOpen ? 'pending' : 'met';
+      return j.isOpen || !someBelieved(j) ? unfinished(j) : 'met';
     },
   );
   const observed = temperatureFromCelsius(highest.readingC, unit);
@@ -90,7 +90,7 @@ export function spreadLimit(j: Judgement, dwells: Dwells): Found[] {
     if (isOver) return 'not-met';
     if (widest === null) return unfinished(j);
     if (stretches.some((stretch) => mayPart(j, stretch, limit))) return 'cannot-tell';
-    return isComplete ? 'met' : unfinished(j);
+    return isComplete && someBelieved(j) ? 'met' : unfinished(j);
   });
   const observed = widest === null ? null : temperatureDifferenceFromCelsius(widest.spreadC, unit);
   const during = { heating: 'while heating', dwells: 'in the dwells', run: 'over the run' }[spread.during];
