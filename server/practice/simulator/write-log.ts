@@ -80,7 +80,8 @@ function stamper(layout: Layout, startMs: number): (instantMs: number) => string
   const { time } = layout;
   if ('elapsed' in time) {
     const unitMs = { s: 1000, min: 60_000, h: 3_600_000 }[time.elapsed];
-    return (instantMs) => [decimal(((instantMs - startMs) / unitMs).toFixed(2), layout)];
+    const decimals = { s: 0, min: 2, h: 5 }[time.elapsed];
+    return (instantMs) => [decimal(((instantMs - startMs) / unitMs).toFixed(decimals), layout)];
   }
   const clock = wallClockIn(time.zone);
   if ('serialDays' in time) return (instantMs) => [decimal(serialDay(clock(instantMs)).toFixed(6), layout)];
