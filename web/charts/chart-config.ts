@@ -48,6 +48,7 @@ function datasetOf(line: Line, ink: Ink): ChartDataset<'line', Point[]> {
     yAxisID: line.strip,
     pointRadius: 0,
     spanGaps: false,
+    borderJoinStyle: 'round',
     segment: {
       borderDash: ({ p0 }: ScriptableLineSegmentContext) => ((p0.parsed.x ?? 0) >= until ? [1, 4] : undefined),
     },

@@ -82,8 +82,8 @@ function RateWedge({ cycle, s, rate, x, y }: { cycle: Cycle; s: ShapeStage; rate
     s.fromMin + ((temperature - s.fromTemperature) / travel) * (s.untilMin - s.fromMin);
   const corner = minuteAt(first);
   const drawn = Math.abs(last - first) / Math.max(1e-9, minuteAt(last) - corner);
-  const fast = rate.atMost === undefined ? drawn * 1.6 : Math.min(perMinute(rate.atMost), drawn * 3);
-  const slow = rate.atLeast === undefined ? drawn * 0.62 : Math.max(perMinute(rate.atLeast), drawn / 2.2);
+  const fast = rate.atMost === undefined ? drawn * 1.3 : Math.min(perMinute(rate.atMost), drawn * 3);
+  const slow = rate.atLeast === undefined ? drawn / 1.3 : Math.max(perMinute(rate.atLeast), drawn / 1.3);
   const reach = (speed: number) => corner + Math.abs(last - first) / speed;
   const heating = last > first;
   return (
@@ -94,9 +94,9 @@ function RateWedge({ cycle, s, rate, x, y }: { cycle: Cycle; s: ShapeStage; rate
       />
       <text
         class="rate"
-        x={heating ? x(minuteAt((first + last) / 2)) - 10 : x(minuteAt((first + last) / 2)) + 10}
-        y={y((first + last) / 2)}
-        text-anchor={heating ? 'end' : 'start'}
+        x={heating ? x(corner) + 12 : x(minuteAt(last)) - 12}
+        y={y(heating ? first : last) + 4}
+        text-anchor={heating ? 'start' : 'end'}
       >
         {bandWords(rate, rateUnitOf(cycle))}
       </text>

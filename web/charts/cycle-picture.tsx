@@ -9,7 +9,7 @@ import { useWidth } from './use-width.ts';
 
 const LEFT = 48;
 const TOP = 44;
-const COURSE_HEIGHT = 230;
+const COURSE_HEIGHT = 280;
 const WINDOW_HEIGHT = 52;
 
 /** The cycle as a sketch: the course between its bands, rates as wedges, windows as brackets below. */

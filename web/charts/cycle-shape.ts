@@ -24,6 +24,7 @@ export interface ShapeWindow {
 export interface CycleShape {
   readonly stages: readonly ShapeStage[];
   readonly windows: readonly ShapeWindow[];
+  /** Minutes the picture holds: to the end of the last stage, and room for its slowest way. */
   readonly lengthMin: number;
   readonly lowest: number;
   readonly highest: number;
@@ -31,14 +32,14 @@ export interface CycleShape {
 
 export function shapeOfCycle(cycle: Cycle): CycleShape {
   const stages = stagesOf(cycle);
-  const lengthMin = stages.at(-1)?.untilMin ?? 1;
+  const endMin = stages.at(-1)?.untilMin ?? 1;
   const windows = (cycle.windows ?? []).map((window) => ({
     name: window.name,
     quantity: window.quantity,
     atLeast: window.atLeast ?? null,
     atMost: window.atMost ?? null,
-    fromMin: minuteOf(window.from, stages, lengthMin),
-    untilMin: minuteOf(window.until, stages, lengthMin),
+    fromMin: minuteOf(window.from, stages, endMin),
+    untilMin: minuteOf(window.until, stages, endMin),
   }));
   const dwells = cycle.stages.filter((stage) => stage.kind === 'dwell');
   const highest = Math.max(
@@ -46,7 +47,10 @@ export function shapeOfCycle(cycle: Cycle): CycleShape {
     ...stages.map((s) => s.untilTemperature),
     cycle.ceiling ?? -Infinity,
   );
-  return { stages, windows, lengthMin, lowest: ambient(cycle), highest };
+  const last = stages.at(-1);
+  // Room for the slow side of a last rate.
+  const spareMin = last && last.stage.kind !== 'dwell' ? (last.untilMin - last.fromMin) * 0.3 : 0;
+  return { stages, windows, lengthMin: endMin + spareMin, lowest: ambient(cycle), highest };
 }
 
 function stagesOf(cycle: Cycle): ShapeStage[] {
@@ -85,14 +89,14 @@ function dwellMinutes(dwell: DwellStage): number {
   return atLeast ?? atMost ?? dwell.longest?.atMost ?? 60;
 }
 
-/** At the middle of the rates asked for, kept between a fifth and twice the longest dwell so that it can be seen. */
+/** At the middle of the rates asked for, kept between a third and twice the longest dwell so that it can be seen. */
 function travelMinutes(cycle: Cycle, stage: Stage, travel: number, longest: number): number {
   const rate = stage.kind === 'dwell' ? undefined : stage.rate;
   const perHour = cycle.units.rate?.endsWith('/h') ? 60 : 1;
   const slow = rate?.atLeast ?? rate?.atMost ?? 2 * perHour;
   const fast = rate?.atMost ?? slow;
   const minutes = (travel * perHour * 2) / (slow + fast);
-  return Math.min(Math.max(minutes, longest / 5), longest * 2);
+  return Math.min(Math.max(minutes, longest / 3), longest * 2);
 }
 
 function ambient(cycle: Cycle): number {

@@ -50,8 +50,11 @@ function drawWedge(pen: Pen, wedge: Wedge, isLit: boolean): void {
   ctx.beginPath();
   for (const [hours, value] of wedge.corners) ctx.lineTo(pen.x(hours), pen.y('temperature', value));
   ctx.closePath();
+  ctx.save();
+  ctx.globalAlpha = isLit ? 1 : 0.55;
   ctx.fillStyle = ink.band;
-  for (let coats = isLit ? 3 : 1; coats > 0; coats -= 1) ctx.fill();
+  for (let coats = isLit ? 2 : 1; coats > 0; coats -= 1) ctx.fill();
+  ctx.restore();
 }
 
 /** Names of dwell bands stand above the strip, where no course runs. */

@@ -22,8 +22,7 @@ function drawStripName(pen: Pen, { strip, title, unit }: StripAxis): void {
   ctx.textAlign = strip === 'temperature' ? 'right' : 'left';
   ctx.textBaseline = 'middle';
   ctx.fillStyle = ink.soft;
-  const text = strip === 'temperature' ? unit : [title, unit].filter(Boolean).join(', ');
-  ctx.fillText(text, strip === 'temperature' ? left - 8 : left, top - 14);
+  ctx.fillText(strip === 'temperature' ? unit : title, strip === 'temperature' ? left - 8 : left, top - 14);
 }
 
 /** Names moved apart so that none overlaps; where more are drawn than fit, the weakest are left to the table. */

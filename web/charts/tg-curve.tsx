@@ -1,4 +1,5 @@
 import { useRef } from 'preact/hooks';
+import { roundTicks } from '../../models/chart/ticks.ts';
 import { glassTransitionK } from '../../models/cure/glass-transition.ts';
 import type { GlassTransition } from '../../models/cure/resin.ts';
 import { celsiusFromKelvin, temperatureFromCelsius } from '../../models/units.ts';
@@ -6,7 +7,8 @@ import { plain } from '../words/figures.ts';
 import { shownUnits } from '../workshop.ts';
 import { useWidth } from './use-width.ts';
 
-const HEIGHT = 260;
+const HEIGHT = 280;
+const TOP = 34;
 const LEFT = 52;
 const BOTTOM = 34;
 
@@ -25,7 +27,7 @@ export function TgCurve({
     temperatureFromCelsius(celsiusFromKelvin(glassTransitionK(alpha, glassTransition)), unit);
   const [low, high] = [tgAt(0), tgAt(1)];
   const x = (alpha: number) => LEFT + alpha * (width - LEFT - 12);
-  const y = (tg: number) => HEIGHT - BOTTOM - ((tg - low) / (high - low)) * (HEIGHT - BOTTOM - 24);
+  const y = (tg: number) => HEIGHT - BOTTOM - ((tg - low) / (high - low)) * (HEIGHT - BOTTOM - TOP);
   const points = Array.from({ length: 61 }, (_, n) => `${x(n / 60)},${y(tgAt(n / 60))}`).join(' ');
   const told = [0, 0.25, 0.5, 0.75, 1].map((alpha) => `${alpha}: ${plain(tgAt(alpha), 0)}`).join('; ');
   return (
@@ -37,7 +39,7 @@ export function TgCurve({
               <text x={0} y={14}>
                 Tg, {unit}
               </text>
-              {[low, (low + high) / 2, high].map((tg) => (
+              {roundTicks(low, high, 5).map((tg) => (
                 <g key={tg}>
                   <line x1={LEFT} x2={width - 12} y1={y(tg)} y2={y(tg)} />
                   <text x={LEFT - 8} y={y(tg) + 5} text-anchor="end">

@@ -7,7 +7,6 @@ import { postJson } from '../api.ts';
 import { useKeptForm } from '../kept-form.ts';
 import { usePost } from '../use-post.ts';
 import { clockWithSeconds, instantOfWallClock, wallClock } from '../words/clock.ts';
-import { listed } from '../words/figures.ts';
 import { limitName } from '../words/limits.ts';
 import { sentence } from '../words/verdicts.ts';
 import { workshop, zone } from '../workshop.ts';
@@ -76,24 +75,28 @@ function Decide({ run, decision, onDecided }: { run: RunView; decision: OpenDeci
       </h2>
       <p>
         {sentence(decision.because)}{' '}
-        {changes.length > 0 ? `On it hangs: ${listed(changes)}.` : 'No finding would change.'}
+        {changes.length > 0
+          ? `${changes.length === 1 ? 'On it hangs' : 'On it hang'}: ${changes.join('; ')}.`
+          : 'No finding would change.'}
       </p>
-      <AreaField
-        label="Reason"
-        rows={2}
-        maxLength={2000}
-        value={form.reason}
-        wrong={isMissing && form.reason.trim() === '' ? 'Say why: the record keeps it.' : null}
-        onValue={(reason) => setForm({ ...form, reason })}
-      />
-      <TextField
-        label={`Not to be believed from, clock in ${zone.value}`}
-        type="datetime-local"
-        step={1}
-        value={form.from}
-        wrong={fromMs === null ? 'This time does not exist in the shop’s zone.' : null}
-        onValue={(from) => setForm({ ...form, from })}
-      />
+      <div class="decide">
+        <AreaField
+          label="Reason"
+          rows={1}
+          maxLength={2000}
+          value={form.reason}
+          wrong={isMissing && form.reason.trim() === '' ? 'Say why: the record keeps it.' : null}
+          onValue={(reason) => setForm({ ...form, reason })}
+        />
+        <TextField
+          label="Not to be believed from"
+          type="datetime-local"
+          step={1}
+          value={form.from}
+          wrong={fromMs === null ? 'This time does not exist in the shop’s zone.' : null}
+          onValue={(from) => setForm({ ...form, from })}
+        />
+      </div>
       {deciding.problem && <Problem problem={deciding.problem} kept="Your reason is kept on this page." />}
       <div class="row">
         <button type="button" disabled={deciding.isUnderWay} onClick={() => decide('exclude')}>

@@ -2,7 +2,7 @@ import { limitTitle } from '../../models/cycle/limits-of-cycle.ts';
 import type { Evaluation, Finding, PartEvaluation } from '../../models/evaluation/evaluation.ts';
 import type { RunView } from '../../server/contract/runs.ts';
 import { asWritten, figure, listed } from '../words/figures.ts';
-import { asked, isEstimate, limitName, observedFigure, worstFirst } from '../words/limits.ts';
+import { isEstimate, limitName, observedFigure, worstFirst } from '../words/limits.ts';
 import { sentence } from '../words/verdicts.ts';
 import { OUTCOME_WORDS, OutcomeMark } from './outcome-mark.tsx';
 
@@ -67,7 +67,7 @@ function titleOf(run: RunView, finding: Finding): string {
 }
 
 function reasonOf(finding: Finding, evaluation: Evaluation): string {
-  const said = [asked(finding), sentence(finding.because)];
+  const said = [sentence(finding.because)];
   if (finding.outcome === 'met' && finding.margin !== null && finding.unit !== '') {
     said.push(`${figure(finding.margin, finding.unit)} to spare.`);
   }
@@ -76,7 +76,6 @@ function reasonOf(finding: Finding, evaluation: Evaluation): string {
     said.push(`${figure(finding.possible, finding.unit)} at best, counting what gaps may hide.`);
   }
   if (finding.uncertainty !== null) said.push(`U (k = 2) ${asWritten(finding.uncertainty, finding.unit)}.`);
-  if (finding.awaits) said.push(`Hangs on the decision about ${finding.awaits}.`);
   if (isEstimate(finding.limit) && evaluation.resin) {
     said.push(`An estimate by set ${evaluation.resin.code}, ${evaluation.resin.status}.`);
   }

@@ -91,7 +91,9 @@ function PartLine({
   return (
     <fieldset>
       <legend>
-        {n} · {part.part || 'no serial yet'}
+        <span class="unseen">Part </span>
+        {n}
+        <span class="unseen">, {part.part}</span>
       </legend>
       <div class="fields">
         <TextField
@@ -114,6 +116,9 @@ function PartLine({
         )}
         {asksLeakTest && <LeakTestFields part={part} cycle={cycle} onChange={onChange} />}
       </div>
+      <button type="button" class="quiet take-out" onClick={onRemove} aria-label={`Take ${part.part} out of the load`}>
+        Take out
+      </button>
       <details open={hasMore}>
         <summary>Quantity, tool, drawing, degree of cure at the start{asksLeakTest ? '' : ', leak test'}</summary>
         <div class="fields">
@@ -146,9 +151,6 @@ function PartLine({
           {!asksLeakTest && <LeakTestFields part={part} cycle={cycle} onChange={onChange} />}
         </div>
       </details>
-      <button type="button" class="link" onClick={onRemove} aria-label={`Take ${part.part} out of the load`}>
-        Take out
-      </button>
     </fieldset>
   );
 }

@@ -3,6 +3,7 @@ import type { RunView } from '../../server/contract/runs.ts';
 import { listed } from '../words/figures.ts';
 import { ROLE_WORDS } from '../words/layouts.ts';
 import { isAttachable, type LoadForm, type SensorForm } from '../words/load-form.ts';
+import { TextField } from './field.tsx';
 
 /** Which thermocouple is on which part: a grid to tap, where a number key does the same for the row in focus. */
 export function LoadSensors({
@@ -17,7 +18,9 @@ export function LoadSensors({
   onChange: (next: Partial<LoadForm>) => void;
 }) {
   const judgedBy = cycle?.judgedBy ?? 'part';
-  const channels = run.channels.filter(isAttachable).sort((a, b) => rank(a.role, judgedBy) - rank(b.role, judgedBy));
+  const attachable = run.channels.filter((channel) => isAttachable(channel, judgedBy));
+  const others = run.channels.filter((channel) => !attachable.includes(channel));
+  const channels = [...attachable].sort((a, b) => rank(a.role, judgedBy) - rank(b.role, judgedBy));
   const change = (channel: string, next: Partial<SensorForm>) =>
     onChange({ sensors: form.sensors.map((sensor) => (sensor.channel === channel ? { ...sensor, ...next } : sensor)) });
   return (
@@ -52,6 +55,7 @@ export function LoadSensors({
             ))}
           </datalist>
           <JudgedBy form={form} run={run} judgedBy={judgedBy} />
+          {others.length > 0 && <Others channels={others} form={form} onChange={change} />}
         </>
       )}
     </section>
@@ -120,6 +124,35 @@ function SensorLine({
         </p>
       )}
     </fieldset>
+  );
+}
+
+/** Channels that are on no part still have an uncertainty, where it is known. */
+function Others({
+  channels,
+  form,
+  onChange,
+}: {
+  channels: RunView['channels'];
+  form: LoadForm;
+  onChange: (channel: string, next: Partial<SensorForm>) => void;
+}) {
+  return (
+    <details>
+      <summary>Uncertainty of the other channels</summary>
+      <div class="fields">
+        {channels.map(({ name, unit }) => (
+          <TextField
+            key={name}
+            label={`${name}, U (k = 2), ${unit}`}
+            inputMode="decimal"
+            pattern="[0-9]+([.,][0-9]+)?"
+            value={form.sensors.find(({ channel }) => channel === name)?.uncertainty ?? ''}
+            onValue={(uncertainty) => onChange(name, { uncertainty })}
+          />
+        ))}
+      </div>
+    </details>
   );
 }
 

@@ -2,7 +2,8 @@ import type { ProblemError } from '../problem-error.ts';
 
 /** An error says what happened, what was kept and what to do; facts as the server gave them. */
 export function Problem({ problem, again, kept }: { problem: ProblemError; again?: () => void; kept?: string }) {
-  const facts = Object.entries(problem.facts);
+  // What the sentence says already is not said again.
+  const facts = Object.entries(problem.facts).filter(([, value]) => !problem.detail.includes(String(value)));
   return (
     <div class="notice grave" role="alert">
       <h2>{problem.title}</h2>

@@ -12,7 +12,7 @@ export function figure(value: number | null | undefined, unit: string, digits = 
 /** Just as many digits as keep it apart from the limits it is compared with, and never fewer than the unit's own. */
 export function figureAgainst(value: number | null, unit: string, limits: readonly (number | null)[]): string {
   if (value === null) return '–';
-  let digits = digitsOf(unit);
+  let digits = unit === '' && Number.isInteger(value) ? 0 : digitsOf(unit);
   const isTooCoarse = () =>
     limits.some((limit) => limit !== null && limit !== value && plain(limit, digits) === plain(value, digits));
   while (digits < 6 && isTooCoarse()) digits += 1;

@@ -1,19 +1,19 @@
 import type { Finding } from '../../models/evaluation/evaluation.ts';
-import { band, figureAgainst, raised } from './figures.ts';
+import { figureAgainst, raised } from './figures.ts';
 
 const NAMES: Readonly<Record<string, string>> = {
   ceiling: 'Ceiling',
   spread: 'Spread',
-  'sensors/working': 'Working sensors',
-  'sensors/own': 'Sensors of its own',
-  'sensors/must-work': 'Sensors that must work',
-  'log/gap': 'Gaps in the log',
+  'sensors/working': 'Sensors, working',
+  'sensors/own': 'Sensors, own',
+  'sensors/must-work': 'Sensors, must work',
+  'log/gap': 'Log, longest gap',
   'leak-test': 'Bag leak test',
   'cure/degree': 'Degree of cure, estimate',
-  'cure/tg': 'Glass transition, estimate',
+  'cure/tg': 'Tg, estimate',
   'cure/pressure-before-gel': 'Pressure before gel, estimate',
-  'material/out-life': 'Out-life of the material',
-  'instruments/calibration': 'Calibration of the instruments',
+  'material/out-life': 'Material, out-life',
+  'instruments/calibration': 'Instruments, calibration',
 };
 
 /** `dwell 2/time` as a shop says it: `Dwell 2, time`. */
@@ -31,12 +31,6 @@ export function isEstimate(limit: string): boolean {
 
 export function observedFigure(finding: Finding): string {
   return figureAgainst(finding.observed, finding.unit, [finding.atLeast, finding.atMost]);
-}
-
-/** `60 to 100 min asked` */
-export function asked(finding: Finding): string {
-  const asks = band(finding.atLeast, finding.atMost, finding.unit);
-  return asks === '' ? '' : `${raised(asks)} asked.`;
 }
 
 const WORST_FIRST = ['not-met', 'cannot-tell', 'pending', 'met'];

@@ -46,7 +46,7 @@ export function formOfRun(run: RunView): LoadForm {
   const load = run.load;
   const parts = (load?.parts ?? []).map((part, n) => partForm(n + 1, part));
   const idOf = new Map(parts.map(({ id, part }) => [part, id]));
-  const sensors = run.channels.filter(isAttachable).map(({ name }) => {
+  const sensors = run.channels.map(({ name }) => {
     const set = load?.sensors.find((sensor) => sensor.channel === name);
     return {
       channel: name,
@@ -67,9 +67,9 @@ export function formOfRun(run: RunView): LoadForm {
   };
 }
 
-/** Thermocouples that can be on a part: those on parts and tools, and the air. */
-export function isAttachable({ role }: RunView['channels'][number]): boolean {
-  return role === 'part' || role === 'tool' || role === 'air';
+/** Thermocouples that can be on a part: those laid there, those in its tool, and the air where the cycle is judged by it. */
+export function isAttachable({ role }: RunView['channels'][number], judgedBy: string): boolean {
+  return role === 'part' || role === 'tool' || role === judgedBy;
 }
 
 function partForm(id: number, part: LoadPart): PartForm {

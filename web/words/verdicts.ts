@@ -1,6 +1,6 @@
 import type { Evaluation, Finding, PartEvaluation, Verdict } from '../../models/evaluation/evaluation.ts';
 import { count, listed, raised } from './figures.ts';
-import { worstFirst } from './limits.ts';
+import { limitName, worstFirst } from './limits.ts';
 
 const WORST = ['does-not-conform', 'cannot-tell', 'pending', 'conforms'] as const satisfies readonly Verdict[];
 
@@ -24,17 +24,31 @@ export function worstPart(evaluation: Evaluation): PartEvaluation | null {
 export function verdictSentences(evaluation: Evaluation): string[] {
   const part = worstPart(evaluation);
   if (!part) return ['No part is named in its load, so nothing was judged.'];
-  return [...whyOfPart(part), ...othersOf(evaluation, part)];
+  const [first = '', ...more] = whyOfPart(part);
+  const isOneOfMany = evaluation.parts.length > 1;
+  return [isOneOfMany ? `${partName(part)}, ${lowered(first)}` : first, ...more, ...othersOf(evaluation, part)];
 }
 
 export function whyOfPart(part: PartEvaluation): string[] {
   const findings = worstFirst(part.findings);
   const worst = findings[0];
   if (!worst || worst.outcome === 'met') return [`All ${count(findings.length, 'limit')} of the cycle were met.`];
+  if (worst.awaits !== undefined) return awaiting(findings);
   const alike = findings.filter(({ outcome }) => outcome === worst.outcome).length - 1;
   const rest = alike > 0 ? [`${raised(count(alike, 'other limit'))} ${STATES[worst.outcome]}.`] : [];
   const also = otherOutcomes(findings, worst.outcome);
-  return [sentence(worst.because), ...rest, ...also];
+  return [`${limitName(worst.limit)}: ${sentence(worst.because)}`, ...rest, ...also];
+}
+
+/** Where the worst hangs on a person's decision, that decision is the reason. */
+function awaiting(findings: readonly Finding[]): string[] {
+  const channels = [...new Set(findings.flatMap(({ awaits }) => awaits ?? []))];
+  const n = findings.filter(({ awaits }) => awaits !== undefined).length;
+  const others = findings.filter(({ outcome, awaits }) => outcome !== 'met' && awaits === undefined).length;
+  return [
+    `Nobody has decided yet whether ${listed(channels)} can be believed; ${count(n, 'limit')} ${n === 1 ? 'hangs' : 'hang'} on it.`,
+    others > 0 ? `${raised(count(others, 'other limit'))} cannot be told either.` : 'Everything else was met.',
+  ];
 }
 
 const STATES: Readonly<Record<Finding['outcome'], string>> = {
@@ -66,6 +80,10 @@ function othersOf(evaluation: Evaluation, part: PartEvaluation): string[] {
 
 export function partName(part: PartEvaluation): string {
   return part.part ?? 'The load';
+}
+
+function lowered(text: string): string {
+  return text.charAt(0).toLowerCase() + text.slice(1);
 }
 
 /** A reason ends as a sentence does, whoever wrote it. */
