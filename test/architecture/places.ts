@@ -29,7 +29,11 @@ function room(may: readonly string[], packages: readonly string[] = []): Place {
 }
 
 function webRoom(may: readonly string[]): Place {
-  return { may: [...may, ...MODELS], mayTypes: ['server/contract'], packages: WEB_PACKAGES };
+  return {
+    may: [...may, ...MODELS, 'server/contract/paths.ts'],
+    mayTypes: ['server/contract'],
+    packages: WEB_PACKAGES,
+  };
 }
 
 /** `models` stands for the files directly in it (errors, units, document), `web` for those directly in web. */
@@ -62,6 +66,8 @@ export const PLACES: Readonly<Record<string, Place>> = {
   'models/forecast': room([...MODELS.filter((place) => !/chart|material|trace/.test(place))]),
 
   'server/contract': room(['server/contract', ...MODELS], ['zod']),
+  // Addresses only: it loads no schema, so that pages may build them too.
+  'server/contract/paths.ts': room([]),
   'server/store': room(['server/store', 'server/contract', ...MODELS], ['node:', 'better-sqlite3']),
   'server/files': room(['server/files', 'server/contract', ...MODELS], ['node:', 'read-excel-file']),
   'server/report': room(['server/report', 'server/contract', ...MODELS], ['node:']),
@@ -86,6 +92,7 @@ export const PLACES: Readonly<Record<string, Place>> = {
       'server/report',
       'server/live',
       'server/contract',
+      'server/contract/paths.ts',
       ...MODELS,
     ],
     ['node:', 'express', 'compression', 'helmet', 'pino', 'zod'],
@@ -113,9 +120,10 @@ export const PLACES: Readonly<Record<string, Place>> = {
   'server/main.ts': room(['server/command', 'server/app.ts', 'models'], ['node:']),
 
   web: webRoom(['web', 'web/pages', 'web/parts', 'web/charts', 'web/style']),
-  'web/pages': webRoom(['web', 'web/pages', 'web/parts', 'web/charts', 'web/style']),
-  'web/parts': webRoom(['web', 'web/parts', 'web/style']),
-  'web/charts': webRoom(['web', 'web/charts', 'web/parts', 'web/style']),
+  'web/pages': webRoom(['web', 'web/pages', 'web/parts', 'web/charts', 'web/words', 'web/style']),
+  'web/parts': webRoom(['web', 'web/parts', 'web/words', 'web/style']),
+  'web/charts': webRoom(['web', 'web/charts', 'web/parts', 'web/words', 'web/style']),
+  'web/words': webRoom(['web/words']),
   'web/style': { may: ['web/style'], packages: WEB_PACKAGES },
 
   test: { may: ['*'], packages: ['*', 'node:'] },

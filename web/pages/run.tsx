@@ -3,10 +3,10 @@ import { runPath } from '../../server/contract/paths.ts';
 import type { RunView } from '../../server/contract/runs.ts';
 import { usePageTitle } from '../page-title.ts';
 import { Notebook, PageHead } from '../parts/notebook.tsx';
-import { RunJudged } from '../parts/run-judged.tsx';
-import { RunUnjudged } from '../parts/run-unjudged.tsx';
 import { Shown } from '../parts/shown.tsx';
 import { useRead } from '../use-read.ts';
+import { RunJudged } from './run-judged.tsx';
+import { RunUnjudged } from './run-unjudged.tsx';
 
 /** One run: what it came to, why, and all it rests on. */
 export default function RunPage() {

@@ -8,6 +8,7 @@ import { Notebook, PageHead } from '../parts/notebook.tsx';
 import { Problem } from '../parts/problem.tsx';
 import { Shown } from '../parts/shown.tsx';
 import { ShownToYou } from '../parts/shown-to-you.tsx';
+import { Zones } from '../parts/zones.tsx';
 import { usePost } from '../use-post.ts';
 import { type Reading, useRead } from '../use-read.ts';
 import { count } from '../words/figures.ts';
@@ -90,16 +91,6 @@ function About({ shop }: { shop: Workshop }) {
         </div>
       </form>
     </section>
-  );
-}
-
-export function Zones() {
-  return (
-    <datalist id="zones">
-      {Intl.supportedValuesOf('timeZone').map((name) => (
-        <option key={name} value={name} />
-      ))}
-    </datalist>
   );
 }
 

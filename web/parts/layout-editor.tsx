@@ -1,10 +1,10 @@
 import type { Layout, TimeLayout } from '../../models/log/layout.ts';
 import type { ProposalStatement } from '../../server/contract/imports.ts';
-import { Zones } from '../pages/workshop.tsx';
 import { answerAt, withAnswer } from '../words/layout-edits.ts';
 import { zone } from '../workshop.ts';
 import { Basis } from './basis.tsx';
 import { ChoiceField, TextField } from './field.tsx';
+import { Zones } from './zones.tsx';
 
 export interface LayoutEditing {
   readonly layout: Layout;

@@ -3,13 +3,13 @@ import { useLocation } from 'preact-iso';
 import { withQuery } from '../../server/contract/paths.ts';
 import type { EvaluationView, RunView } from '../../server/contract/runs.ts';
 import { RunChart } from '../charts/run-chart.tsx';
+import { Decisions } from '../parts/decisions.tsx';
+import { FindingList, focusNextFinding } from '../parts/finding-list.tsx';
+import { RunHead } from '../parts/run-head.tsx';
+import { RunMargin } from '../parts/run-margin.tsx';
+import { RunPapers } from '../parts/run-papers.tsx';
+import { RunVerdict } from '../parts/run-verdict.tsx';
 import { partName, worstPart } from '../words/verdicts.ts';
-import { Decisions } from './decisions.tsx';
-import { FindingList, focusNextFinding } from './finding-list.tsx';
-import { RunHead } from './run-head.tsx';
-import { RunMargin } from './run-margin.tsx';
-import { RunPapers } from './run-papers.tsx';
-import { RunVerdict } from './run-verdict.tsx';
 
 /** A judged run: the verdict first, then what is to be decided, the chart, and the findings beside it. */
 export function RunJudged({ run, evaluation, again }: { run: RunView; evaluation: EvaluationView; again: () => void }) {

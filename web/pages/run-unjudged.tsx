@@ -1,8 +1,8 @@
 import type { RunView } from '../../server/contract/runs.ts';
 import { RunChart } from '../charts/run-chart.tsx';
-import { RunHead } from './run-head.tsx';
-import { RunMargin } from './run-margin.tsx';
-import { RunPapers } from './run-papers.tsx';
+import { RunHead } from '../parts/run-head.tsx';
+import { RunMargin } from '../parts/run-margin.tsx';
+import { RunPapers } from '../parts/run-papers.tsx';
 
 /** A run nobody has said the load or the cycle of yet: its curves, and the one thing to do. */
 export function RunUnjudged({ run, again }: { run: RunView; again: () => void }) {
