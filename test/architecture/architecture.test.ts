@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { ERROR_CODES } from '../../models/errors.ts';
 import { findCircles, findWrongDirections } from './directions.ts';
 import { findImpurities } from './impurities.ts';
 import { readSources } from './read-sources.ts';
@@ -52,5 +53,13 @@ describe('the house', () => {
   it('skips no test and leaves none alone', () => {
     const marks = new RegExp(`\\b(?:it|test|describe)\\.(?:${['skip', 'only', 'todo', 'fails'].join('|')})\\b`);
     expect(files.filter((file) => file.endsWith('.test.ts') && marks.test(sources.get(file)!))).toEqual([]);
+  });
+});
+
+describe('server/http/problem.ts', () => {
+  it('has a row for every error code', () => {
+    const table = sources.get('server/http/problem.ts') ?? '';
+    expect(ERROR_CODES.length).toBeGreaterThan(10);
+    expect(ERROR_CODES.filter((code) => !new RegExp(`['"]?\\b${code}['"]?\\s*:`).test(table))).toEqual([]);
   });
 });

@@ -23,7 +23,7 @@ export function findWrongDirections(sources: Sources): string[] {
   return wrong;
 }
 
-/** Circles of imports, each as `a -> b -> a`. */
+/** Circles of imports, each as `a -> b -> a`. Types are erased when the house is built: they close no circle. */
 export function findCircles(sources: Sources): string[] {
   const circles: string[] = [];
   const done = new Set<string>();
@@ -36,8 +36,8 @@ export function findCircles(sources: Sources): string[] {
       return;
     }
     path.push(file);
-    for (const { specifier } of readImports(sources.get(file) ?? '').imports) {
-      const target = resolveFrom(file, specifier);
+    for (const { specifier, typeOnly } of readImports(sources.get(file) ?? '').imports) {
+      const target = typeOnly ? null : resolveFrom(file, specifier);
       if (target !== null && sources.has(target)) visit(target);
     }
     path.pop();

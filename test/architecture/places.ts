@@ -21,6 +21,7 @@ const MODELS = [
   'models/trace',
   'models/forecast',
 ];
+const CONTRACT = ['server/contract', 'server/contract/paths.ts'];
 const SHARED = ['models', 'models/numerics'];
 const WEB_PACKAGES = ['preact', '@preact/signals', 'preact-iso', 'chart.js', 'date-fns', '@fontsource-variable/*'];
 
@@ -65,22 +66,22 @@ export const PLACES: Readonly<Record<string, Place>> = {
   'models/trace': room([...SHARED, 'models/trace', 'models/evaluation']),
   'models/forecast': room([...MODELS.filter((place) => !/chart|material|trace/.test(place))]),
 
-  'server/contract': room(['server/contract', ...MODELS], ['zod']),
+  'server/contract': room([...CONTRACT, ...MODELS], ['zod']),
   // Addresses only: it loads no schema, so that pages may build them too.
   'server/contract/paths.ts': room([]),
-  'server/store': room(['server/store', 'server/contract', ...MODELS], ['node:', 'better-sqlite3']),
-  'server/files': room(['server/files', 'server/contract', ...MODELS], ['node:', 'read-excel-file']),
-  'server/report': room(['server/report', 'server/contract', ...MODELS], ['node:']),
+  'server/store': room(['server/store', ...CONTRACT, ...MODELS], ['node:', 'better-sqlite3']),
+  'server/files': room(['server/files', ...CONTRACT, ...MODELS], ['node:', 'read-excel-file']),
+  'server/report': room(['server/report', ...CONTRACT, ...MODELS], ['node:']),
   'server/actions': room(
-    ['server/actions', 'server/store', 'server/files', 'server/report', 'server/contract', ...MODELS],
+    ['server/actions', 'server/store', 'server/files', 'server/report', ...CONTRACT, ...MODELS],
     ['node:'],
   ),
   'server/live': room(
-    ['server/live', 'server/actions', 'server/store', 'server/files', 'server/contract', ...MODELS],
+    ['server/live', 'server/actions', 'server/store', 'server/files', ...CONTRACT, ...MODELS],
     ['node:', 'chokidar', 'pino'],
   ),
   'server/practice': room(
-    ['server/practice', 'server/actions', 'server/store', 'server/files', 'server/contract', ...MODELS],
+    ['server/practice', 'server/actions', 'server/store', 'server/files', ...CONTRACT, ...MODELS],
     ['node:'],
   ),
   'server/http': room(
@@ -91,14 +92,13 @@ export const PLACES: Readonly<Record<string, Place>> = {
       'server/files',
       'server/report',
       'server/live',
-      'server/contract',
-      'server/contract/paths.ts',
+      ...CONTRACT,
       ...MODELS,
     ],
     ['node:', 'express', 'compression', 'helmet', 'pino', 'zod'],
   ),
   'server/app.ts': room(
-    ['server/http', 'server/live', 'server/store', 'server/actions', 'server/contract', ...MODELS],
+    ['server/http', 'server/live', 'server/store', 'server/actions', ...CONTRACT, ...MODELS],
     ['node:', 'express', 'compression', 'helmet', 'pino'],
   ),
   'server/command': room(
@@ -112,7 +112,7 @@ export const PLACES: Readonly<Record<string, Place>> = {
       'server/actions',
       'server/store',
       'server/files',
-      'server/contract',
+      ...CONTRACT,
       ...MODELS,
     ],
     ['node:', 'pino'],
