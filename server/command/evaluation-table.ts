@@ -40,7 +40,7 @@ export function evaluationTable(evaluation: Evaluation, cycle: Cycle): string {
 
 function partLines(part: PartEvaluation, cycle: Cycle): string[] {
   const name = part.part ?? 'The load';
-  const own = part.ownSensors ? '' : ', none of them its own';
+  const own = part.ownSensors || part.part === null ? '' : ', none of them its own';
   const estimates =
     part.withoutEstimates === part.verdict ? '' : `; without estimates: ${VERDICT_WORDS[part.withoutEstimates]}`;
   const rows = part.findings.map((finding) => [

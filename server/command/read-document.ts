@@ -27,13 +27,38 @@ function parseJson(text: string): unknown {
     return JSON.parse(text);
   } catch (cause) {
     if (!(cause instanceof SyntaxError)) throw cause;
-    const at = /at position (\d+)/.exec(cause.message);
-    const before = text.slice(0, at === null ? text.length : Number(at[1]));
+    const before = text.slice(0, placeOfError(text, cause));
     const line = before.split('\n').length;
     const column = before.length - before.lastIndexOf('\n');
-    throw new DomainError('document-not-json', `line ${line}, column ${column}: not JSON (${cause.message})`, {
-      line,
-      column,
-    });
+    const found = text[before.length];
+    throw new DomainError(
+      'document-not-json',
+      `line ${line}, column ${column}: not JSON; ${found === undefined ? 'it ends too early' : `"${found}" cannot stand here`}`,
+      { line, column },
+    );
+  }
+}
+
+/** The engine tells the place of some errors only; of the others it is where the text stops being a mere beginning. */
+function placeOfError(text: string, { message }: SyntaxError): number {
+  const told = /at position (\d+)/.exec(message);
+  if (told !== null) return Number(told[1]);
+  if (message.startsWith('Unexpected end')) return text.length;
+  let [good, bad] = [0, text.length];
+  while (bad - good > 1) {
+    const middle = (good + bad) >> 1;
+    if (isBeginning(text.slice(0, middle))) good = middle;
+    else bad = middle;
+  }
+  return bad - 1;
+}
+
+function isBeginning(text: string): boolean {
+  try {
+    JSON.parse(text);
+    return true;
+  } catch (error) {
+    // Only the message says whether more text could mend it.
+    return !String(error).startsWith('SyntaxError: Unexpected token');
   }
 }
