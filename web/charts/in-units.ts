@@ -69,5 +69,6 @@ function axisIn(axis: StripAxis, { unit, conversion }: Plan): StripAxis {
   if (conversion === AS_IT_STANDS) return axis;
   const ends = [converted(axis.low, conversion), converted(axis.high, conversion)];
   const [low, high] = [Math.min(...ends), Math.max(...ends)];
-  return { ...axis, unit, low, high, ticks: roundTicks(low, high, Math.max(2, axis.ticks.length - 1)) };
+  const title = axis.title.replace(axis.unit, unit);
+  return { ...axis, title, unit, low, high, ticks: roundTicks(low, high, Math.max(2, axis.ticks.length - 1)) };
 }

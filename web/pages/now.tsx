@@ -18,6 +18,7 @@ export function NowPage() {
   const today = Date.now();
   return (
     <Notebook
+      side={reading.value && reading.value.vessels.length > 0 && <VesselLines vessels={reading.value.vessels} />}
       margin={
         <p class="when">
           <b>{day(today, zone.value)}</b> {weekday(today, zone.value)}
@@ -44,7 +45,6 @@ function NowBody({ now }: { now: Now }) {
   return (
     <>
       <Needs needs={now.needs} />
-      <VesselLines vessels={now.vessels} />
       <section class="section">
         <h2>Last runs</h2>
         <ul class="entries">

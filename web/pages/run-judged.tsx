@@ -23,7 +23,7 @@ export function RunJudged({ run, evaluation, again }: { run: RunView; evaluation
   return (
     <div class="notebook with-side run-book">
       <div class="margin">
-        <RunMargin run={run} />
+        <RunMargin run={run} part={part?.part ?? null} />
       </div>
       <div class="leaf">
         <RunHead run={run} />

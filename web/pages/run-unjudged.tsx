@@ -10,7 +10,7 @@ export function RunUnjudged({ run, again }: { run: RunView; again: () => void })
   return (
     <div class="notebook run-book">
       <div class="margin">
-        <RunMargin run={run} />
+        <RunMargin run={run} part={null} />
       </div>
       <div class="leaf">
         <RunHead run={run} />

@@ -7,6 +7,7 @@ import { postJson } from '../api.ts';
 import { useKeptForm } from '../kept-form.ts';
 import { usePost } from '../use-post.ts';
 import { clockWithSeconds, instantOfWallClock, wallClock } from '../words/clock.ts';
+import { listed } from '../words/figures.ts';
 import { limitName } from '../words/limits.ts';
 import { sentence } from '../words/verdicts.ts';
 import { workshop, zone } from '../workshop.ts';
@@ -35,12 +36,24 @@ export function Decisions({
   evaluation: Evaluation;
   onDecided: () => void;
 }) {
+  const weighty = evaluation.decisions.filter(({ changes }) => changes.length > 0);
+  const idle = evaluation.decisions.filter(({ changes }) => changes.length === 0);
+  const decide = (decision: OpenDecision) => (
+    <Decide key={decision.channel} run={run} decision={decision} onDecided={onDecided} />
+  );
   if (evaluation.decisions.length === 0) return null;
   return (
     <section class="decisions" aria-label="Decisions to take">
-      {evaluation.decisions.map((decision) => (
-        <Decide key={decision.channel} run={run} decision={decision} onDecided={onDecided} />
-      ))}
+      {weighty.map(decide)}
+      {idle.length > 0 && (
+        <details>
+          <summary>
+            {listed(idle.map(({ channel }) => channel))} may not be telling the truth; no finding hangs on{' '}
+            {idle.length === 1 ? 'it' : 'them'}
+          </summary>
+          <div class="decisions">{idle.map(decide)}</div>
+        </details>
+      )}
     </section>
   );
 }

@@ -14,7 +14,6 @@ export function FirstLines({ name, lines, layout }: { name: string; lines: reado
           {lines.map((line, n) => {
             const taken = takenFor(n + 1, layout);
             return (
-              // biome-ignore lint/suspicious/noArrayIndexKey: a line is its number
               <li key={n} class={taken ? `is-${taken.kind}` : ''}>
                 <span class="taken">{taken?.word}</span>
                 <code>{line === '' ? ' ' : showTabs(line)}</code>

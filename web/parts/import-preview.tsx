@@ -44,7 +44,6 @@ export function PreviewView({ preview }: { preview: Preview }) {
               <tr key={scan.at}>
                 <th scope="row">{clockWithSeconds(scan.at, zone.value)}</th>
                 {scan.values.map((value, n) => (
-                  // biome-ignore lint/suspicious/noArrayIndexKey: a value is its column
                   <td class="figure-cell" key={n}>
                     {value === null ? 'absent' : figure(value, preview.channels[n]?.unit ?? '')}
                   </td>

@@ -29,7 +29,6 @@ export function LayoutChannels({ editing, preview }: { editing: LayoutEditing; p
   return (
     <div class="channels">
       {editing.layout.channels.map((channel, n) => (
-        // biome-ignore lint/suspicious/noArrayIndexKey: a channel's place is what its statements name
         <ChannelLine key={n} editing={editing} n={n} channel={channel} preview={preview} />
       ))}
       <datalist id="units">

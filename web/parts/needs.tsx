@@ -1,24 +1,31 @@
 import type { ImportLine } from '../../server/contract/imports.ts';
 import type { Need } from '../../server/contract/now.ts';
-import { bytes, listed } from '../words/figures.ts';
+import { bytes, count, listed } from '../words/figures.ts';
 import { Entry } from './notebook.tsx';
 import { OutcomeMark } from './outcome-mark.tsx';
 import { RunEntry } from './run-entry.tsx';
 import { When } from './when.tsx';
 
+const FIRST = 6;
+
 /** What waits for a person, most pressing first, each with the one thing to do. */
 export function Needs({ needs }: { needs: readonly Need[] }) {
+  const entry = (need: Need) => <NeedEntry key={keyOf(need)} need={need} />;
   return (
     <section>
       <h2>Needs someone</h2>
       {needs.length === 0 ? (
         <p class="soft">Nothing waits for anyone. Every run has its load, every suspect is decided.</p>
       ) : (
-        <ul class="entries needs">
-          {needs.map((need) => (
-            <NeedEntry key={keyOf(need)} need={need} />
-          ))}
-        </ul>
+        <>
+          <ul class="entries">{needs.slice(0, FIRST).map(entry)}</ul>
+          {needs.length > FIRST && (
+            <details>
+              <summary>{count(needs.length - FIRST, 'more thing')} that can wait a little</summary>
+              <ul class="entries">{needs.slice(FIRST).map(entry)}</ul>
+            </details>
+          )}
+        </>
       )}
     </section>
   );
@@ -29,21 +36,17 @@ function NeedEntry({ need }: { need: Need }) {
     case 'awaiting-load':
       return (
         <RunEntry line={need.run}>
-          <p>
-            <a class="button" href={`/runs/${need.run.run}/load`}>
-              Say what was in it
-            </a>
-          </p>
+          <a class="button" href={`/runs/${need.run.run}/load`}>
+            Say what was in it
+          </a>
         </RunEntry>
       );
     case 'undecided-suspect':
       return (
         <RunEntry line={need.run}>
-          <p>
-            <a class="button" href={`/runs/${need.run.run}`}>
-              Decide on {listed(need.channels)}
-            </a>
-          </p>
+          <a class="button" href={`/runs/${need.run.run}`}>
+            Decide on {listed(need.channels)}
+          </a>
         </RunEntry>
       );
     case 'cannot-tell':

@@ -17,7 +17,7 @@ export function RunEntry({ line, children }: { line: RunLine; children?: Compone
       </div>
       <p class="soft">{aboutRun(line)}</p>
       {whyOf(line) && <p>{whyOf(line)}</p>}
-      {children}
+      {children && <div class="act">{children}</div>}
     </Entry>
   );
 }

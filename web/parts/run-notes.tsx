@@ -21,7 +21,7 @@ export function RunNotes({ run, onAdded }: { run: RunView; onAdded: () => void }
     void adding.post();
   };
   return (
-    <section class={run.notes.length === 0 ? 'section no-print' : 'section'}>
+    <section id="notes" class={run.notes.length === 0 ? 'section no-print' : 'section'}>
       <h2>Notes</h2>
       {run.notes.length > 0 && (
         <ul class="entries">

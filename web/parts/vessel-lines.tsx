@@ -7,7 +7,7 @@ import { RunState } from './run-entry.tsx';
 export function VesselLines({ vessels }: { vessels: Now['vessels'] }) {
   if (vessels.length === 0) return null;
   return (
-    <section class="section">
+    <section>
       <h2>Vessels</h2>
       <ul class="vessels">
         {vessels.map((vessel) => (

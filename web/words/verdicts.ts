@@ -24,6 +24,10 @@ export function worstPart(evaluation: Evaluation): PartEvaluation | null {
 export function verdictSentences(evaluation: Evaluation): string[] {
   const part = worstPart(evaluation);
   if (!part) return ['No part is named in its load, so nothing was judged.'];
+  const parts = evaluation.parts;
+  if (parts.length > 1 && evaluation.verdict === 'conforms') {
+    return [`Every limit of the cycle was met, for ${listed(parts.map(partName))}.`];
+  }
   const [first = '', ...more] = whyOfPart(part);
   const isOneOfMany = evaluation.parts.length > 1;
   return [isOneOfMany ? `${partName(part)}, ${lowered(first)}` : first, ...more, ...othersOf(evaluation, part)];
@@ -32,7 +36,7 @@ export function verdictSentences(evaluation: Evaluation): string[] {
 export function whyOfPart(part: PartEvaluation): string[] {
   const findings = worstFirst(part.findings);
   const worst = findings[0];
-  if (!worst || worst.outcome === 'met') return [`All ${count(findings.length, 'limit')} of the cycle were met.`];
+  if (!worst || worst.outcome === 'met') return [`Every limit of the cycle was met: all ${findings.length}.`];
   if (worst.awaits !== undefined) return awaiting(findings);
   const alike = findings.filter(({ outcome }) => outcome === worst.outcome).length - 1;
   const rest = alike > 0 ? [`${raised(count(alike, 'other limit'))} ${STATES[worst.outcome]}.`] : [];
@@ -74,7 +78,8 @@ function othersOf(evaluation: Evaluation, part: PartEvaluation): string[] {
     const names = others.filter((other) => other.verdict === verdict).map(partName);
     if (names.length === 0) return [];
     const [one, many] = VERBS[verdict];
-    return [`${listed(names)} ${names.length === 1 ? one : many}.`];
+    const also = verdict === part.verdict ? ' either' : '';
+    return [`${listed(names)} ${names.length === 1 ? one : many}${also}.`];
   });
 }
 
