@@ -24,6 +24,9 @@ export interface ByteSource {
 /** Longest line that is read: 1 MiB, some thousand times what a recorder writes. */
 export const LONGEST_LINE_BYTES = 1 << 20;
 
+/** Many files are small: the first window is. */
+const FIRST_WINDOW_BYTES = 1 << 13;
+
 const LINE_FEED = 10;
 const CARRIAGE_RETURN = 13;
 
@@ -32,15 +35,17 @@ export function openSource(file: LogFile, encoding: LogEncoding, windowBytes = 1
   const pieces = textBytes(file, encoding);
   const charset = encoding === 'windows-1252' ? 'windows-1252' : 'utf-8';
   let waiting: Uint8Array = new Uint8Array(0);
-  let bytes = new Uint8Array(windowBytes + 1);
+  let bytes = new Uint8Array(Math.min(windowBytes, FIRST_WINDOW_BYTES) + 1);
   let end = 0;
   let isOver = false;
 
   function keep(from: number): void {
     const kept = end - from;
-    const larger = kept * 2 >= bytes.length ? new Uint8Array(bytes.length * 2) : bytes;
-    larger.set(bytes.subarray(from, end));
-    bytes = larger;
+    const isSmall = bytes.length <= windowBytes && end > 0;
+    const length = isSmall ? windowBytes + 1 : kept * 2 >= bytes.length ? bytes.length * 2 : bytes.length;
+    const next = length === bytes.length ? bytes : new Uint8Array(length);
+    next.set(bytes.subarray(from, end));
+    bytes = next;
     end = kept;
   }
 

@@ -24,7 +24,7 @@ export interface PlainRowReader {
   read(bytes: Uint8Array, from: number, end: number, isOver: boolean): RowOutcome;
   /** Where the next row begins, after `READ` and `BLANK`. */
   next: number;
-  /** Decimals of the last figure read. */
+  /** Decimals of the figure read last; −1 where it was absent. */
   decimals: number;
 }
 
@@ -121,6 +121,7 @@ export function plainRowReader(
     }
     if (digits === 0 || digits > MOST_DIGITS || !(byte === delimiter || isLineEnd(byte))) {
       table.values[channel]![table.place] = Number.NaN;
+      reader.decimals = -1;
       return isQuoted ? -1 : endOfMissing(bytes, from);
     }
     const size = figure / TEN_TO[decimals]!;

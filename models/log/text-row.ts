@@ -58,7 +58,8 @@ export function judgeRow(
   return { stampMs, stampText, isWhole, cells: cells.length, badCell, figures };
 }
 
-/** Whether the time cells hold so many digits that they must have been meant as a stamp. */
+/** Whether the time cells must have been meant as a stamp: they begin with a figure and hold at least four. */
 export function looksStamped(row: JudgedRow): boolean {
-  return !Number.isNaN(row.stampMs) || row.stampText.replace(/\D/g, '').length >= 4;
+  if (!Number.isNaN(row.stampMs)) return true;
+  return /^ *\d/.test(row.stampText) && row.stampText.replace(/\D/g, '').length >= 4;
 }

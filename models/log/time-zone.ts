@@ -40,55 +40,53 @@ interface Stretch {
 
 function namedZone(name: string): Zone {
   const offsetAt = offsetsOf(name);
-  // Around the last time asked for, clocks showed each time once and with one offset.
-  let plainFromMs = 0;
-  let plainUntilMs = 0;
-  let plainOffsetMs = 0;
+  // What was last looked up: the stretches that hold for local times from `fromMs` to before `untilMs`.
+  let fromMs = 0;
+  let untilMs = 0;
+  let stretches: readonly Stretch[] = [];
+  let onlyOffsetMs = Number.NaN;
 
-  function instantsOf(localMs: number): [number, number] {
-    const stretches = stretchesAround(localMs, offsetAt);
-    const found: number[] = [];
-    for (const { fromMs, untilMs, offsetMs } of stretches) {
-      const instantMs = localMs - offsetMs;
-      if (instantMs >= fromMs && instantMs < untilMs) found.push(instantMs);
-    }
-    if (stretches.length === 1) {
-      plainFromMs = localMs - 6 * HOUR_MS;
-      plainUntilMs = localMs + 6 * HOUR_MS;
-      plainOffsetMs = stretches[0]!.offsetMs;
-    }
-    return [found[0] ?? Number.NaN, found[1] ?? Number.NaN];
+  function lookUp(localMs: number): void {
+    fromMs = localMs - 12 * HOUR_MS;
+    untilMs = localMs + 12 * HOUR_MS;
+    stretches = stretchesAround(localMs, offsetAt);
+    onlyOffsetMs = stretches.length === 1 ? stretches[0]!.offsetMs : Number.NaN;
   }
 
-  let lastLocalMs = Number.NaN;
-  let last: [number, number] = [Number.NaN, Number.NaN];
-  function lookUp(localMs: number): [number, number] {
-    if (localMs !== lastLocalMs) {
-      last = instantsOf(localMs);
-      lastLocalMs = localMs;
+  /** The first or second instant in the stretches; NaN where there is none. */
+  function instant(localMs: number, count: 1 | 2): number {
+    let found = 0;
+    for (const stretch of stretches) {
+      const instantMs = localMs - stretch.offsetMs;
+      if (instantMs >= stretch.fromMs && instantMs < stretch.untilMs && ++found === count) return instantMs;
     }
-    return last;
+    return Number.NaN;
   }
 
   return {
     name,
-    instantOf: (localMs) =>
-      localMs >= plainFromMs && localMs < plainUntilMs ? localMs - plainOffsetMs : lookUp(localMs)[0],
-    secondInstantOf: (localMs) => (localMs >= plainFromMs && localMs < plainUntilMs ? Number.NaN : lookUp(localMs)[1]),
+    instantOf(localMs) {
+      if (!(localMs >= fromMs && localMs < untilMs)) lookUp(localMs);
+      return stretches.length === 1 ? localMs - onlyOffsetMs : instant(localMs, 1);
+    },
+    secondInstantOf(localMs) {
+      if (!(localMs >= fromMs && localMs < untilMs)) lookUp(localMs);
+      return stretches.length === 1 ? Number.NaN : instant(localMs, 2);
+    },
   };
 }
 
 /** The stretches of one offset within 36 hours of a local time: one, or more where the offset changes. */
 function stretchesAround(localMs: number, offsetAt: (instantMs: number) => number): Stretch[] {
   const firstMs = Math.floor((localMs - 36 * HOUR_MS) / HOUR_MS) * HOUR_MS;
-  const lastMs = firstMs + 74 * HOUR_MS;
+  const lastMs = firstMs + 78 * HOUR_MS;
   const stretches: Stretch[] = [];
   let fromMs = firstMs;
   let offsetMs = offsetAt(firstMs);
-  for (let atMs = firstMs; atMs < lastMs; atMs += 2 * HOUR_MS) {
-    const nextOffsetMs = offsetAt(atMs + 2 * HOUR_MS);
+  for (let atMs = firstMs; atMs < lastMs; atMs += 6 * HOUR_MS) {
+    const nextOffsetMs = offsetAt(atMs + 6 * HOUR_MS);
     if (nextOffsetMs === offsetMs) continue;
-    const changeMs = changeBetween(atMs, atMs + 2 * HOUR_MS, offsetAt);
+    const changeMs = changeBetween(atMs, atMs + 6 * HOUR_MS, offsetAt);
     stretches.push({ fromMs, untilMs: changeMs, offsetMs });
     fromMs = changeMs;
     offsetMs = nextOffsetMs;

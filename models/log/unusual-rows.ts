@@ -16,12 +16,15 @@ import { type JudgedRow, judgeRow, looksStamped } from './text-row.ts';
  * A row that might be a footer is refused only when a reading follows it, so the decision waits.
  */
 export interface UnusualRows {
-  /** Called for every plain reading, before it counts. */
+  /** Called for every reading before it counts, with the decimals of its last figure; −1 where that is absent. */
   beforeReading(decimals: number): void;
   take(row: Row, line: number): void;
   /** Called at the file's end. */
   finish(): void;
 }
+
+/** Of figures whose closing zeros are dropped one in ten has fewer decimals: this many alike were not so by chance. */
+const ENOUGH_FIGURES = 40;
 
 /** Rows that hold no reading so far as is known: a footer, if nothing follows. */
 interface Waiting {
@@ -48,14 +51,17 @@ export function unusualRows(
   let waiting: Waiting | null = null;
   /** First line behind a repeated header and the lines that belong to it. */
   let topUntil = 0;
-  /** Decimals of every figure of the last column so far; −1 before the first, −2 where they differ. */
-  let decimalsOfLast = -1;
+  /** Decimals of every figure of the last column so far, −2 where they differ, and how many there were. */
+  let decimalsOfLast = 0;
+  let figuresOfLast = 0;
 
   return { beforeReading, take, finish };
 
   function beforeReading(decimals: number): void {
     if (waiting) throw waiting.error;
-    if (lastTarget >= 0 && decimals !== decimalsOfLast) decimalsOfLast = decimalsOfLast === -1 ? decimals : -2;
+    if (lastTarget < 0 || decimals === -1) return;
+    if (decimals !== decimalsOfLast) decimalsOfLast = figuresOfLast === 0 ? decimals : -2;
+    figuresOfLast++;
   }
 
   function take(row: Row, line: number): void {
@@ -77,7 +83,8 @@ export function unusualRows(
     const hasStamp = !Number.isNaN(judged.stampMs);
     const isGood = judged.isWhole && hasStamp && judged.badCell === null && row.badQuote === null;
     if (isGood && (!row.isCutOff || isProvedWhole(row))) {
-      beforeReading(decimalsOf(row.cells[plan.cells - 1]!));
+      const last = row.cells[plan.cells - 1]!;
+      beforeReading(missing.has(last) ? -1 : decimalsOf(last));
       nextScan(table, line);
       return;
     }
@@ -131,14 +138,14 @@ export function unusualRows(
   /**
    * Whether a row that ends with the file, without a line end, cannot have lost anything: `18` may be what is left of
    * `180,4`. Its last cell must be none of ours, closed by a delimiter or a quote, a missing code that is no beginning of
-   * a number, or have as many decimals as every figure above it.
+   * a number, or have as many decimals as every one of enough figures above it.
    */
   function isProvedWhole(row: Row): boolean {
     if (row.cells.length > plan.cells || lastTarget === -1 || (row.endsQuoted && lastTarget >= 0)) return true;
     if (lastTarget < -1) return false;
     const cell = row.cells[plan.cells - 1]!;
     if (missing.has(cell)) return /^[^\d+.,-]/.test(cell);
-    return decimalsOfLast > 0 && decimalsOf(cell) === decimalsOfLast;
+    return figuresOfLast >= ENOUGH_FIGURES && decimalsOfLast > 0 && decimalsOf(cell) === decimalsOfLast;
   }
 }
 

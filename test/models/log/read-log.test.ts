@@ -29,7 +29,6 @@ describe('readLog', () => {
         .replace(/2\.0e1(\d)/g, '2.0$1e1')
         .replace('2.00e1', '2e+1'),
     ],
-    ['a last line without line end', TWO.slice(0, -1)],
     ['columns in another order', 'T2,Stamp,T1\n20.5,2026-03-03 08:14:00,20.0\n20.6,2026-03-03 08:14:30,20.1\n'],
     [
       'columns nobody asked for',
@@ -219,7 +218,10 @@ describe('lines passed over', () => {
   });
 
   it('are not a last line without line end whose figures have all their decimals', () => {
-    expect(passed((preamble + first + second).slice(0, -1))).toEqual([2]);
+    const many = Array.from({ length: 40 }, (_, i) => `2026-03-03 08:13:${10 + i};20,1;20,6\n`).join('');
+    expect(passed((preamble + many + first + second).slice(0, -1))).toEqual([42]);
+    expect(passed((preamble + many + first + second).slice(0, -2))).toEqual([41, 'truncated-last-line 47-47']);
+    expect(passed((preamble + first + second).slice(0, -1))).toEqual([1, 'truncated-last-line 7-7']);
     expect(passed(`${preamble}${first}2026-03-03 08:15:00;20,1;OPEN`)).toEqual([2]);
     expect(passed(`${preamble}${first}2026-03-03 08:15:00;20,1;"2"`)).toEqual([2]);
     expect(passed(`${preamble}${first}2026-03-03 08:15:00;20,1;2;`)).toEqual([2]);
