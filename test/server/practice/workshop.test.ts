@@ -77,6 +77,21 @@ describe('the practice workshop in its database', () => {
     expect(lineOf('2026-04-08T06:41:00Z').undecided).toBeGreaterThan(0);
   });
 
+  it('is the same to the last hash when it is written again', async () => {
+    const lastHash = async (name: string): Promise<unknown> => {
+      const again = openDatabase(join(folder, name), { at: '2025-10-20T07:00:00.000Z' });
+      await writePracticeWorkshop({
+        db: again,
+        evaluate: async (log, inputs) => evaluateLog(log, inputs),
+        runs: PLANNED_RUNS.slice(0, 3),
+      });
+      const hash = again.prepare('SELECT sha256 FROM audit ORDER BY n DESC LIMIT 1').pluck().get();
+      again.close();
+      return hash;
+    };
+    expect(await lastHash('one.sqlite')).toBe(await lastHash('other.sqlite'));
+  });
+
   it('is never written over a workshop that is there', async () => {
     await expect(write()).rejects.toThrow(/in use/);
   });
