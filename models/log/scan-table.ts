@@ -12,72 +12,83 @@ export interface Scans {
 }
 
 /**
- * Takes scans one by one. The one being written stands at `place` of `stampMs`, `line` and each of `values`, and counts
- * once `place` was passed by {@link nextScan}.
+ * Takes scans one by one. The one being written stands at `place` of `stampMs` and each of `values`, and counts once
+ * {@link nextScan} was called.
  */
 export interface ScanTable {
   place: number;
+  /** Scans in `full`. */
+  before: number;
   stampMs: Float64Array;
   line: Uint32Array;
-  readonly values: Float64Array[];
-  /** Full blocks, each of `BLOCK_SCANS`. */
-  readonly full: { stampMs: Float64Array; line: Uint32Array; values: Float64Array[] }[];
+  values: readonly Float64Array[];
+  /** Blocks that are full: kept apart, so that a long log is copied once and not at every doubling. */
+  readonly full: Block[];
   readonly firstOfFile: number[];
 }
 
-/** Scans are kept in blocks, so that a long log is copied once and not at every doubling. */
-const BLOCK_SCANS = 1 << 13;
+interface Block {
+  readonly stampMs: Float64Array;
+  readonly line: Uint32Array;
+  readonly values: readonly Float64Array[];
+}
+
+const FIRST_BLOCK_SCANS = 1 << 8;
+const LARGEST_BLOCK_SCANS = 1 << 13;
 
 export function createScanTable(channels: number): ScanTable {
+  return { place: 0, before: 0, ...emptyBlock(channels, FIRST_BLOCK_SCANS), full: [], firstOfFile: [] };
+}
+
+function emptyBlock(channels: number, scans: number): Block {
   return {
-    place: 0,
-    stampMs: new Float64Array(BLOCK_SCANS),
-    line: new Uint32Array(BLOCK_SCANS),
-    values: Array.from({ length: channels }, () => new Float64Array(BLOCK_SCANS)),
-    full: [],
-    firstOfFile: [],
+    stampMs: new Float64Array(scans),
+    line: new Uint32Array(scans),
+    values: Array.from({ length: channels }, () => new Float64Array(scans)),
   };
 }
 
 /** Scans taken so far. */
 export function scansTaken(table: ScanTable): number {
-  return table.full.length * BLOCK_SCANS + table.place;
+  return table.before + table.place;
 }
 
 /** The scan at `place`, which stood on `line`, is done. */
 export function nextScan(table: ScanTable, line: number): void {
   table.line[table.place++] = line;
-  if (table.place < BLOCK_SCANS) return;
-  table.full.push({ stampMs: table.stampMs, line: table.line, values: [...table.values] });
-  table.stampMs = new Float64Array(BLOCK_SCANS);
-  table.line = new Uint32Array(BLOCK_SCANS);
-  for (let channel = 0; channel < table.values.length; channel++) {
-    table.values[channel] = new Float64Array(BLOCK_SCANS);
-  }
+  const size = table.line.length;
+  if (table.place < size) return;
+  const { stampMs, line: lines, values } = table;
+  table.full.push({ stampMs, line: lines, values });
+  table.before += size;
   table.place = 0;
+  Object.assign(table, emptyBlock(values.length, Math.min(size * 2, LARGEST_BLOCK_SCANS)));
 }
 
-/** All scans in one piece. Empties the table as it goes, so that no more than one channel is held twice. */
+/** All scans in one piece. */
 export function finishScans(table: ScanTable): Scans {
   const count = scansTaken(table);
+  const blocks = [...table.full.splice(0), lastBlock(table)];
   const stampMs = new Float64Array(count);
   const line = new Uint32Array(count);
-  for (const [block, full] of table.full.entries()) {
-    stampMs.set(full.stampMs, block * BLOCK_SCANS);
-    line.set(full.line, block * BLOCK_SCANS);
+  const values = table.values.map(() => new Float64Array(count));
+  let from = 0;
+  while (blocks.length > 0) {
+    const block = blocks.shift()!; // let go as it is copied, so that a long log is not held twice
+    stampMs.set(block.stampMs, from);
+    line.set(block.line, from);
+    for (const [channel, figures] of values.entries()) figures.set(block.values[channel]!, from);
+    from += block.line.length;
   }
-  stampMs.set(table.stampMs.subarray(0, table.place), count - table.place);
-  line.set(table.line.subarray(0, table.place), count - table.place);
-  const values = table.values.map((last, channel) => {
-    const figures = new Float64Array(count);
-    for (const [block, full] of table.full.entries()) {
-      figures.set(full.values[channel]!, block * BLOCK_SCANS);
-      full.values[channel] = new Float64Array(0);
-    }
-    figures.set(last.subarray(0, table.place), count - table.place);
-    return figures;
-  });
   return { count, stampMs, line, values, firstOfFile: table.firstOfFile };
+}
+
+function lastBlock({ place, stampMs, line, values }: ScanTable): Block {
+  return {
+    stampMs: stampMs.subarray(0, place),
+    line: line.subarray(0, place),
+    values: values.map((figures) => figures.subarray(0, place)),
+  };
 }
 
 /** The file a scan came from, as its index in the order the files were given. */

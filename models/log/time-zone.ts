@@ -110,9 +110,25 @@ function changeBetween(fromMs: number, untilMs: number, offsetAt: (instantMs: nu
 
 /** The zone's offset from UTC in ms at an instant, as the platform's copy of the IANA database has it. */
 function offsetsOf(name: string): (instantMs: number) => number {
-  let format: Intl.DateTimeFormat;
+  const format = clockOf(name);
+  return (instantMs) => {
+    const shown: Record<string, number> = {};
+    for (const { type, value } of format.formatToParts(instantMs)) shown[type] = Number(value);
+    const { year = 0, month = 1, day = 1, hour = 0, minute = 0, second = 0 } = shown;
+    return Date.UTC(year, month - 1, day, hour, minute, second) - instantMs;
+  };
+}
+
+/** Making one costs more than reading a small log. */
+const clocks = new Map<string, Intl.DateTimeFormat>();
+const MOST_CLOCKS = 50;
+
+function clockOf(name: string): Intl.DateTimeFormat {
+  const known = clocks.get(name);
+  if (known) return known;
+  if (clocks.size >= MOST_CLOCKS) clocks.clear();
   try {
-    format = new Intl.DateTimeFormat('en-US', {
+    const clock = new Intl.DateTimeFormat('en-US', {
       timeZone: name,
       calendar: 'gregory',
       numberingSystem: 'latn',
@@ -124,6 +140,8 @@ function offsetsOf(name: string): (instantMs: number) => number {
       minute: 'numeric',
       second: 'numeric',
     });
+    clocks.set(name, clock);
+    return clock;
   } catch (cause) {
     throw new DomainError(
       'zone-unknown',
@@ -132,10 +150,4 @@ function offsetsOf(name: string): (instantMs: number) => number {
       { cause },
     );
   }
-  return (instantMs) => {
-    const shown: Record<string, number> = {};
-    for (const { type, value } of format.formatToParts(instantMs)) shown[type] = Number(value);
-    const { year = 0, month = 1, day = 1, hour = 0, minute = 0, second = 0 } = shown;
-    return Date.UTC(year, month - 1, day, hour, minute, second) - instantMs;
-  };
 }
