@@ -15,40 +15,16 @@ export function checkUnits(cycle: Cycle): void {
       if (event.at.startsWith('pressure-')) declared(units.pressure, 'pressure', `${path}.${key}`);
       if (event.at.startsWith('vacuum-')) declared(units.vacuum, 'vacuum', `${path}.${key}`);
     }
-    checkZeroPoint(cycle, window, path);
+    if (isAbsolute(units[window.quantity])) notNegative(window, path);
   }
   if (cure?.pressureBeforeGel !== undefined) declared(units.pressure, 'pressure', 'cure.pressureBeforeGel');
-  if (leakTest !== undefined) {
-    declared(units.vacuum, 'vacuum', 'leakTest');
-    if (leakTest.startAtLeast !== undefined && isAbsolute(units.vacuum)) {
-      refuse(
-        'leakTest.startAtLeast',
-        `a vacuum below ambient, but units.vacuum is "${units.vacuum}"`,
-        leakTest.startAtLeast,
-      );
-    }
-  }
+  if (leakTest !== undefined) declared(units.vacuum, 'vacuum', 'leakTest');
 }
 
 function declared(unit: string | undefined, quantity: 'pressure' | 'vacuum', neededBy: string): void {
   if (unit !== undefined) return;
   const key = `units.${quantity}`;
   throw new DomainError('document-missing-key', `${key} is missing; ${neededBy} is written in it`, { key });
-}
-
-function checkZeroPoint({ units }: Cycle, window: WindowLimit, path: string): void {
-  if (window.quantity === 'pressure') {
-    if (isAbsolute(units.pressure)) notNegative(window, path);
-    return;
-  }
-  // A better vacuum is a lower absolute pressure: atLeast alone would pass a bag at ambient.
-  if (isAbsolute(units.vacuum) && window.atMost === undefined) {
-    refuse(
-      `${path}.atLeast`,
-      `atMost, which is the vacuum limit in "${units.vacuum}" (atLeast only beside it, against too deep a vacuum)`,
-      window.atLeast,
-    );
-  }
 }
 
 function notNegative({ atLeast = 0, atMost = 0 }: WindowLimit, path: string): void {

@@ -1,4 +1,4 @@
-import { object, oneOf, type Read, refuse } from '../document.ts';
+import { object, oneOf, type Read } from '../document.ts';
 import type { Cycle } from './cycle.ts';
 
 /** Units of vessel pressure a cycle may be written in: gauge, or absolute with ` abs`. */
@@ -9,14 +9,9 @@ export const CYCLE_VACUUM_UNITS = ['bar', 'kPa', 'mbar', 'inHg', 'mmHg', 'mbar a
 
 /** The units a cycle is written in, each declared once. */
 export const units: Read<Cycle['units']> = object((fields) => {
-  const temperature = fields.required('temperature', oneOf(['°C', '°F']));
-  const rate = fields.optional('rate', oneOf(['°C/min', '°F/min', '°C/h', '°F/h']));
-  if (rate.rate !== undefined && !rate.rate.startsWith(temperature)) {
-    refuse(fields.pathOf('rate'), `a rate of the temperature's own unit, ${temperature}`, rate.rate);
-  }
   return {
-    temperature,
-    ...rate,
+    temperature: fields.required('temperature', oneOf(['°C', '°F'])),
+    ...fields.optional('rate', oneOf(['°C/min', '°F/min', '°C/h', '°F/h'])),
     ...fields.optional('pressure', oneOf(CYCLE_PRESSURE_UNITS)),
     ...fields.optional('vacuum', oneOf(CYCLE_VACUUM_UNITS)),
   };

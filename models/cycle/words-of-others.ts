@@ -1,4 +1,4 @@
-import type { Cycle } from './cycle.ts';
+import type { Bounds, Cycle } from './cycle.ts';
 import { vacuumWords } from './words-of-event.ts';
 import { bandWords, figure, listWords } from './words-of-figures.ts';
 
@@ -86,7 +86,9 @@ function leakTestSentences(cycle: Cycle): string[] {
   const start =
     leakTest.startAtLeast === undefined
       ? []
-      : [`The bag vacuum is ${bandWords({ atLeast: leakTest.startAtLeast }, vacuumWords(cycle))} as the test starts.`];
+      : [
+          `The bag vacuum is ${bandWords(startBounds(leakTest.startAtLeast, vacuumWords(cycle)), vacuumWords(cycle))} as the test starts.`,
+        ];
   return [
     ...start,
     `It loses at most ${figure(leakTest.lossAtMost)} ${unit} in ${figure(leakTest.over)} min; a test of another length is compared by its loss per minute.`,
@@ -112,4 +114,9 @@ function cureSentences({ cure, units }: Cycle): string[] {
     );
   }
   return [...sentences, `Estimates by the resin set ${cure.resin}: a model, not a measurement.`];
+}
+
+/** A deeper vacuum is more below ambient and less absolute. */
+function startBounds(start: number, unit: string): Bounds {
+  return unit.endsWith(' abs') ? { atMost: start } : { atLeast: start };
 }

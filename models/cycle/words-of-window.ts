@@ -12,6 +12,9 @@ export function windowSentences(cycle: Cycle, window: WindowLimit): string[] {
     `${what} is ${bandWords(window, isVacuum ? vacuumWords(cycle) : unit)}, ends included.`,
     `From: ${eventWords(cycle, window.from)}. Until: ${eventWords(cycle, window.until)}.`,
   ];
+  if (isVacuum && unit.endsWith(' abs') && window.atMost === undefined) {
+    sentences.push('It only keeps the vacuum from being too deep: a bag at ambient would meet it.');
+  }
   if (window.forgive !== undefined) {
     sentences.push(forgivenessSentence('excursions', window.forgive, unit));
   }

@@ -14,7 +14,7 @@ import {
   type Shift,
 } from './dwell-course.ts';
 import { allStand, type Fill, oneStands, sensorStanding } from './holding.ts';
-import type { JudgedSensor, Judgement } from './judgement.ts';
+import { isExcluded, type JudgedSensor, type Judgement } from './judgement.ts';
 
 /** The clock a dwell has where none is written. */
 export const DEFAULT_CLOCK: Clock = { opens: 'lagging-enters', closes: 'first-leaves' };
@@ -89,7 +89,7 @@ function closes(j: Judgement, course: DwellCourse, rule: Clock['closes']): Clock
     return leaving !== null && leaving.ms <= s.untilMs ? [{ ...leaving, by: s.name }] : [];
   });
   if (rule === 'first-leaves') return extreme(believed, (a, b) => a.ms < b.ms);
-  const awaited = j.sensors.filter((s, k) => s.untilMs === Number.POSITIVE_INFINITY && course.left[k] === null);
+  const awaited = j.sensors.filter((s, k) => !isExcluded(s) && course.left[k] === null);
   return awaited.length > 0 ? null : extreme(believed, (a, b) => a.ms > b.ms);
 }
 
@@ -122,6 +122,7 @@ export function derivedSubject(
     channel,
     track,
     untilMs: Number.POSITIVE_INFINITY,
+    lastMs: track.lastMs,
     uncertaintyC: Math.max(...sensors.map(({ uncertaintyC }) => uncertaintyC)),
     gaps: gapsOf(track, j.longestGapMs, j.log),
   };

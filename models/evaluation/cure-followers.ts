@@ -27,7 +27,7 @@ export interface CureSubject {
 
 /** No gap takes a temperature beyond what a thermocouple can read, in °C. */
 const COLDEST_C = -200;
-const HOTTEST_C = 1300;
+export const HOTTEST_C = 1300;
 
 const followersOf = new WeakMap<RunDigest, Map<string, Follower>>();
 const resinNumbers = new WeakMap<Resin, number>();

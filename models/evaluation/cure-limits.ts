@@ -1,6 +1,8 @@
+import { glassTransitionK } from '../cure/glass-transition.ts';
 import { gapsOf } from '../run/gaps.ts';
 import { overlaps } from '../run/intervals.ts';
-import { celsiusFromKelvin, temperatureFromCelsius } from '../units.ts';
+import { celsiusFromKelvin, kelvinFromCelsius, temperatureFromCelsius } from '../units.ts';
+import { HOTTEST_C } from './cure-followers.ts';
 import { showsCooling } from './dwell-time.ts';
 import type { CureEstimate, Outcome } from './evaluation.ts';
 import { type EventSources, eventTime } from './events.ts';
@@ -62,8 +64,9 @@ function leastEstimate(j: Judgement, limit: string, atLeast: number, unit: strin
     return { ...known, outcome: 'cannot-tell', because: `Nothing to tell: ${why}.` };
   }
   const low = Math.min(...sensors.map((s) => estimate(s, 'cold')!));
-  const isUnbounded = sensors.some(({ gaps }) => gaps.some(({ before, after }) => before === null || after === null));
-  const high = isUnbounded ? null : Math.min(...sensors.map((s) => estimate(s, 'hot')!));
+  // What came before a sensor's first reading bounds nothing; after its last one it may have gone on getting hotter.
+  const isUnbounded = sensors.some(({ gaps }) => gaps.some(({ before }) => before === null));
+  const high = isUnbounded ? null : Math.min(...sensors.map((s) => hottestEnd(j, s, figure)!));
   const outcome = decide(j, low, high, atLeast);
   const digits = unit === '' ? 3 : 1;
   const source = `estimate by the set ${j.resin.code}, ${j.resin.source.citation} (${j.resin.source.status})`;
@@ -81,6 +84,17 @@ function leastEstimate(j: Judgement, limit: string, atLeast: number, unit: strin
     untilMs: j.log.until,
     because: `Least at ${least.s.name}: ${say(least.value, digits)}${unit === '' ? '' : ` ${unit}`} at the end of the log, ${atLeast}${unit === '' ? '' : ` ${unit}`} asked${gap}; ${source}.`,
   };
+}
+
+/** The figure at the end of the log, had the sensor got hotter after its last reading as fast as it can. */
+function hottestEnd(j: Judgement, s: JudgedSensor, figure: Figure): number | null {
+  const { progress } = cureOf(j, s, 'hot');
+  const silentMs = j.log.until - s.lastMs;
+  if (silentMs <= 0) return figure(progress.alpha(), progress.tgK());
+  const hottestK = kelvinFromCelsius(Math.min(HOTTEST_C, s.track.valueAt(s.lastMs) + silentMs * j.changesAtMost));
+  const alpha = progress.alphaAt((j.log.until - j.log.from) / 1000, hottestK);
+  const { glassTransition } = j.resin!;
+  return figure(alpha, glassTransition === undefined ? null : glassTransitionK(alpha, glassTransition));
 }
 
 function decide(j: Judgement, low: number, high: number | null, atLeast: number): Outcome {
@@ -110,11 +124,8 @@ function pressureBeforeGel(sources: EventSources, atLeast: number): Found {
     const sinceMs = channel.track.crossings(level, '>=').firstOn(j.log.from);
     const hasReached = sinceMs !== null && sinceMs <= gelEarlyMs;
     const lowest = hasReached ? channel.track.lowestBetween(sinceMs, gelEarlyMs) : -1;
-    const lowestPa =
-      lowest < 0
-        ? channel.track.valueAt(gelEarlyMs)
-        : Math.min(channel.track.reading(lowest), channel.track.valueAt(gelEarlyMs));
     const fell = hasReached && lowest >= 0 && channel.track.reading(lowest) < level;
+    const shownPa = fell ? channel.track.reading(lowest) : channel.track.valueAt(gelEarlyMs);
     const isLate = sinceMs === null || sinceMs > gelLateMs;
     const gaps = gapsOf(channel.track, j.longestGapMs, j.log);
     const open = gelEarlyMs !== gelLateMs || overlaps(gaps, { from: sinceMs ?? j.log.from, until: gelLateMs });
@@ -126,8 +137,8 @@ function pressureBeforeGel(sources: EventSources, atLeast: number): Found {
         : hasReached && !open
           ? 'met'
           : 'cannot-tell';
-    if (scale.figureFrom(lowestPa) < observed) {
-      observed = scale.figureFrom(lowestPa);
+    if (scale.figureFrom(shownPa) < observed) {
+      observed = scale.figureFrom(shownPa);
       sensor = channel.layout.name;
     }
     if (each === 'not-met' || outcome === 'met') outcome = each;

@@ -72,7 +72,7 @@ function upperSentence(
 
 function isDone(j: Judgement, s: JudgedSensor, course: DwellCourse, k: number): boolean {
   if (isExcluded(s)) return someBelieved(j) || course.left[k]?.isFinal === true;
-  return course.entered[k] === null ? showsCooling(j) : course.left[k]?.isFinal === true;
+  return course.entered[k] === null ? !j.isOpen || showsCooling(j) : course.left[k]?.isFinal === true;
 }
 
 /** From its entering to its leaving; on the way to a hotter dwell, to when it was last at or below `upper` − 1 °C. */
@@ -80,10 +80,9 @@ function stretchInside(j: Judgement, s: JudgedSensor, course: DwellCourse, k: nu
   const from = course.entered[k] ?? null;
   if (from === null) return null;
   const left = course.left[k] ?? null;
-  const until = left?.ms ?? Math.min(j.log.until, s.untilMs);
-  const band = bandC(j, course.stage, s, course.shift);
-  const isWayUp = course.next.hotterLowerC !== null && left !== null && s.track.valueAt(until) >= band.upperC;
-  return { from, until: isWayUp ? lastBackBelow(j, s, band, from, until) : until };
+  const until = left?.ms ?? s.lastMs;
+  if (left?.isUpwards !== true) return { from, until };
+  return { from, until: lastBackBelow(j, s, bandC(j, course.stage, s, course.shift), from, until) };
 }
 
 function overshoots(

@@ -11,6 +11,8 @@ export type Shift = -1 | 0 | 1;
 /** The instant a sensor left a dwell; not final where the record stops before that is settled. */
 export interface Leaving {
   readonly ms: number;
+  /** Through `upper`, towards a hotter dwell. */
+  readonly isUpwards: boolean;
   readonly isFinal: boolean;
 }
 
@@ -119,7 +121,7 @@ function firstInColder(j: Judgement, entered: readonly (number | null)[], next: 
     const enteredMs = entered[k];
     if (enteredMs === null || enteredMs === undefined) return Number.POSITIVE_INFINITY;
     const ms = s.track.crossings(colderUpperC - shift * s.uncertaintyC, '<=').firstOn(enteredMs);
-    return ms === null || ms > s.untilMs ? Number.POSITIVE_INFINITY : ms;
+    return ms === null || ms > s.lastMs ? Number.POSITIVE_INFINITY : ms;
   });
   return Math.min(...instants);
 }
@@ -142,19 +144,19 @@ export function leaves(
 ): Leaving | null {
   if (enteredMs === null) return null;
   const band = bandC(j, stage, s, rule.shift);
-  const endMs = Math.min(s.track.lastMs, s.untilMs);
+  const endMs = s.lastMs;
   const hotterLowerC = rule.next.hotterLowerC;
   if (hotterLowerC !== null) {
     const midpointC = (band.upperC + hotterLowerC + rule.shift * s.uncertaintyC) / 2;
     const midpointMs = s.track.crossings(midpointC, '>=').firstOn(enteredMs);
     if (midpointMs !== null && midpointMs <= endMs) {
       const ms = wayOut(j, s, band, enteredMs, midpointMs) ?? midpointMs;
-      return { ms: inGap(j, s, ms, band.upperC, -1, rule.fill), isFinal: true };
+      return { ms: inGap(j, s, ms, band.upperC, -1, rule.fill), isUpwards: true, isFinal: true };
     }
     if (s.track.valueAt(endMs) > band.upperC - ruleFigures(j.cycle.units.temperature).chatterC) {
       if (isExcluded(s)) return null;
       const ms = wayOut(j, s, band, enteredMs, endMs);
-      return ms === null ? null : { ms: inGap(j, s, ms, band.upperC, -1, rule.fill), isFinal: false };
+      return ms === null ? null : { ms: inGap(j, s, ms, band.upperC, -1, rule.fill), isUpwards: true, isFinal: false };
     }
   }
   return leavesDownwards(j, s, band, enteredMs, endMs, rule);
@@ -194,7 +196,7 @@ function leavesDownwards(
   const isSettled = limitMs < endMs || cooledMs === limitMs || hasCooled(j, s, endMs);
   // A sensor that was excluded while it might still have come back does not close a clock.
   if (!isSettled && isExcluded(s)) return null;
-  return { ms: inGap(j, s, ms, lowerC, 1, fill), isFinal: isSettled || !j.isOpen };
+  return { ms: inGap(j, s, ms, lowerC, 1, fill), isUpwards: false, isFinal: isSettled || !j.isOpen };
 }
 
 function hasCooled(j: Judgement, s: JudgedSensor, endMs: number): boolean {

@@ -99,7 +99,7 @@ function depthBelow(
   fill: Fill,
 ): { depthC: number | null; sensor: string | null } {
   if (fill === 'least' && overlaps(s.gaps, dip)) return { depthC: null, sensor: s.name };
-  const lowest = s.track.lowestBetween(dip.from, Math.min(dip.until, s.untilMs));
+  const lowest = s.track.lowestBetween(dip.from, Math.min(dip.until, s.lastMs));
   return { depthC: lowest < 0 ? 0 : Math.max(0, round9(lowerC - s.track.reading(lowest))), sensor: s.name };
 }
 
@@ -132,7 +132,7 @@ export function coldestSensor(
 ): { name: string; hottestC: number; shortC: number } | null {
   let coldest: { name: string; hottestC: number; shortC: number } | null = null;
   for (const s of j.sensors) {
-    const hottest = s.track.highestBetween(j.log.from, Math.min(j.log.until, s.untilMs));
+    const hottest = s.track.highestBetween(j.log.from, s.lastMs);
     if (hottest < 0) continue;
     const hottestC = s.track.reading(hottest);
     if (coldest !== null && coldest.hottestC <= hottestC) continue;

@@ -120,8 +120,8 @@ function coolingSinceMs(j: Judgement, dwells: Dwells, fill: Fill): number | null
   const last = dwells.stages.length - 1;
   if (last >= 0 && dwells.opensMs(last, fill) !== null) return dwells.closesMs(last, fill);
   let hottest: { readingC: number; ms: number } | null = null;
-  for (const { track, untilMs } of j.sensors) {
-    const at = track.highestBetween(j.log.from, Math.min(j.log.until, untilMs));
+  for (const { track, lastMs } of j.sensors) {
+    const at = track.highestBetween(j.log.from, lastMs);
     if (at >= 0 && (hottest === null || track.reading(at) > hottest.readingC)) {
       hottest = { readingC: track.reading(at), ms: track.timeMs(at) };
     }
@@ -144,7 +144,7 @@ function pressureMs(j: Judgement, event: Extract<CycleEvent, { value: number }>,
     let ms = firstHold(stands(sign), j.log.from);
     if (!isReaching && ms !== null) {
       const above = channel.track.crossings(level, sign > 0 ? '>' : '<').firstOn(j.log.from);
-      ms = above === null ? null : firstHold(stands(sign > 0 ? -1 : 1), above);
+      ms = above === null ? null : (stands(sign > 0 ? -1 : 1).find(({ from }) => from > above)?.from ?? null);
     }
     if (ms === null) return null;
     lastMs = Math.max(lastMs, ms);

@@ -1,5 +1,5 @@
 import { type CureFill, type FollowedCure, followCure } from './cure-followers.ts';
-import type { JudgedSensor, Judgement } from './judgement.ts';
+import { isExcluded, type JudgedSensor, type Judgement } from './judgement.ts';
 
 /** The earliest estimated gel of a judged sensor, as early and as late as gaps allow. */
 export interface GelTimes {
@@ -30,7 +30,7 @@ function earliestGel(j: Judgement, fill: CureFill): number | null {
 
 /** Judged sensors that give a cure estimate: those with readings that nobody excluded. */
 export function estimated(j: Judgement): JudgedSensor[] {
-  return j.sensors.filter(({ track, untilMs }) => untilMs === Number.POSITIVE_INFINITY && track.length > 0);
+  return j.sensors.filter((s) => !isExcluded(s) && s.track.length > 0);
 }
 
 export function cureOf(j: Judgement, s: JudgedSensor, fill: CureFill): FollowedCure {

@@ -1,7 +1,7 @@
 import { type ChangeBound, credited, type Gap } from '../run/gaps.ts';
-import { type Interval, intersection, union, within } from '../run/intervals.ts';
+import { holdsAt, type Interval, intersection, union, within } from '../run/intervals.ts';
 import type { Track } from '../run/track.ts';
-import type { JudgedSensor, Judgement } from './judgement.ts';
+import { isExcluded, type JudgedSensor, type Judgement } from './judgement.ts';
 
 /**
  * How gaps are filled: `least` counts nothing in them, `most` all that the ends and the bound on change allow.
@@ -37,12 +37,16 @@ function hasReadingAt(track: Track, instantMs: number): boolean {
   return i < track.length && track.timeMs(i) === instantMs;
 }
 
-/** When a judged sensor stood at or beyond a level of its own, up to its exclusion. */
+/**
+ * When a judged sensor stood at or beyond a level of its own, up to its exclusion. Between its last believed reading
+ * and the exclusion it stays where it was: what the line does from there to a reading nobody believes does not count.
+ */
 export function sensorStanding(j: Judgement, s: JudgedSensor, level: number, sign: 1 | -1, fill: Fill): Interval[] {
   const stretches = standing(s.track, s.gaps, level, sign, fill, j.changesAtMost);
-  return s.untilMs === Number.POSITIVE_INFINITY
-    ? stretches
-    : within(stretches, { from: Number.NEGATIVE_INFINITY, until: s.untilMs });
+  if (!isExcluded(s)) return stretches;
+  const believed = within(stretches, { from: Number.NEGATIVE_INFINITY, until: s.lastMs });
+  const isShort = s.untilMs - s.lastMs <= j.longestGapMs;
+  return isShort && holdsAt(believed, s.lastMs) ? union(believed, [{ from: s.lastMs, until: s.untilMs }]) : believed;
 }
 
 /** Instants at which all of the sensors that still count stand. Where none is left, nothing holds. */

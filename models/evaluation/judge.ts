@@ -234,14 +234,17 @@ function sensorStates(
   });
 }
 
+/** Suspects on whom a finding hangs; whatever is decided on the others, nothing changes. */
 function openDecisions(
   suspects: readonly Suspect[],
   changes: ReadonlyMap<string, ReadonlySet<string>>,
 ): OpenDecision[] {
   return suspects.flatMap(({ channel, faults }) => {
     const { name } = channel.layout;
+    const changed = changes.get(name);
+    if (changed === undefined) return [];
     const { kind, fromMs, because } = faults[0]!;
-    return [{ channel: name, kind, from: iso(fromMs)!, because, changes: [...(changes.get(name) ?? [])] }];
+    return [{ channel: name, kind, from: iso(fromMs)!, because, changes: [...changed] }];
   });
 }
 

@@ -12,8 +12,10 @@ export interface JudgedSensor {
   readonly name: string;
   readonly channel: RunChannel;
   readonly track: RunChannel['track'];
-  /** Its last reading before an exclusion, or the exclusion itself where that fell into a gap; `Infinity`: none. */
+  /** The instant of its exclusion; `Infinity`: none. */
   readonly untilMs: number;
+  /** Its last reading that counts; `-Infinity`: none. */
+  readonly lastMs: number;
   /** Expanded uncertainty in °C; 0 where unknown: then it is judged as indicated. */
   readonly uncertaintyC: number;
   readonly gaps: readonly Gap[];
@@ -87,21 +89,19 @@ export function ruleFigures(unit: TemperatureUnit): RuleFigures {
 export function judgedSensor(
   channel: RunChannel,
   digest: RunDigest,
-  believedUntilMs: number,
+  untilMs: number,
   gapMs: number,
   isGuarded: boolean,
 ): JudgedSensor {
   const { track } = channel;
   const whole = gapsOf(track, gapMs, digest.log);
-  // Earlier readings keep counting: the sensor counts to its last reading before the exclusion, and what the line does
-  // from there to a reading nobody believes is nobody's business. A gap that was one before the exclusion stays one.
-  const last = track.indexFrom(believedUntilMs) - 1;
-  const lastMs = last < 0 ? Number.NEGATIVE_INFINITY : track.timeMs(last);
-  const untilMs =
-    believedUntilMs !== Number.POSITIVE_INFINITY && believedUntilMs - lastMs <= gapMs ? lastMs : believedUntilMs;
+  const last = track.indexFrom(untilMs) - 1;
   const gaps = whole
     .filter((gap) => gap.from < untilMs)
-    .map((gap) => (gap.until > untilMs ? { ...gap, until: untilMs, after: null } : gap));
+    .map((gap) => (gap.until > untilMs ? { ...gap, until: untilMs, after: null } : gap))
+    // An exclusion ends a sensor's gap: what is left of it may be too short to be one.
+    .filter((gap) => gap.until < untilMs || gap.before === null || gap.until - gap.from > gapMs);
   const uncertaintyC = isGuarded ? (channel.uncertainty ?? 0) : 0;
-  return { name: channel.layout.name, channel, track, untilMs, uncertaintyC, gaps };
+  const lastMs = last < 0 ? Number.NEGATIVE_INFINITY : track.timeMs(last);
+  return { name: channel.layout.name, channel, track, untilMs, lastMs, uncertaintyC, gaps };
 }

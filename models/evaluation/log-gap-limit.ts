@@ -5,7 +5,7 @@ import { celsiusFrom } from '../units.ts';
 import type { Dwells } from './dwells.ts';
 import { type EventSources, eventTime, heatOnMs } from './events.ts';
 import { type Found, say, unfinished } from './finding.ts';
-import type { Judgement } from './judgement.ts';
+import { isExcluded, type Judgement } from './judgement.ts';
 import { channelsFor } from './pressure-scale.ts';
 
 /** `log/gap`, where the cycle writes how long a gap may be: nobody can tell while a longer one lies on a used channel. */
@@ -57,7 +57,7 @@ function stagesEndMs(j: Judgement, dwells: Dwells): number | null {
   if (last?.kind === 'cool' && last.until !== undefined) {
     const untilC = celsiusFrom(last.until, j.cycle.units.temperature);
     const ends = j.sensors
-      .filter(({ untilMs, track }) => untilMs === Number.POSITIVE_INFINITY && track.length > 0)
+      .filter((s) => !isExcluded(s) && s.track.length > 0)
       .map(({ track }) =>
         track.crossings(untilC, '<=').firstOn(track.timeMs(track.highestBetween(j.log.from, j.log.until))),
       );

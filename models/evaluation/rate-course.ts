@@ -3,7 +3,7 @@ import type { Interval } from '../run/intervals.ts';
 import { overlaps } from '../run/intervals.ts';
 import { celsiusFrom } from '../units.ts';
 import type { Dwells } from './dwells.ts';
-import type { JudgedSensor, Judgement } from './judgement.ts';
+import { isExcluded, type JudgedSensor, type Judgement } from './judgement.ts';
 
 export type RampStage = (HeatStage | CoolStage) & { readonly rate: RateLimit };
 
@@ -33,7 +33,7 @@ export function rateCourse(j: Judgement, s: JudgedSensor, stage: RampStage, sinc
     sensor: s,
     stretch: null,
     ranWhole: false,
-    isOver: s.untilMs !== Number.POSITIVE_INFINITY,
+    isOver: isExcluded(s),
     touchesGap: false,
     slowest: null,
     fastest: null,
@@ -41,19 +41,18 @@ export function rateCourse(j: Judgement, s: JudgedSensor, stage: RampStage, sinc
     fastestMs: null,
   };
   if (s.track.length === 0) return none;
-  const endMs = Math.min(s.track.lastMs, s.untilMs);
+  const endMs = s.lastMs;
   const beyondSecond = s.track.crossings(second, sign > 0 ? '>=' : '<=');
   const reachedMs = beyondSecond.firstOn(Math.max(sinceMs, s.track.firstMs));
   const hasReached = reachedMs !== null && reachedMs <= endMs;
   const stop = hasReached ? reachedMs : turningPoint(s, sinceMs, endMs, sign);
   if (stop === null) return none;
   const beyondFirst = s.track.crossings(first, sign > 0 ? '>=' : '<=');
-  const startedMs = beyondFirst.lastStartUntil(stop);
-  const isCrossing = startedMs !== null && startedMs > s.track.firstMs;
-  const start = startedMs ?? s.track.firstMs;
-  const ranWhole = hasReached && isCrossing;
-  const hasRun = startedMs !== null || sign * (s.track.valueAt(stop) - first) >= 0;
-  if (!hasRun || stop <= start) return none;
+  const start = beyondFirst.lastStartUntil(stop);
+  const cameBackMs = beyondFirst.lastEndUntil(stop);
+  const isBeyondFirst = start !== null && (cameBackMs === null || cameBackMs < start);
+  if (!isBeyondFirst || stop <= start) return none;
+  const ranWhole = hasReached && start > s.track.firstMs;
   const stretch = { from: start, until: stop };
   return { ...none, ...slopesIn(j, s, rate, stretch, sign), stretch, ranWhole, isOver: none.isOver || hasReached };
 }

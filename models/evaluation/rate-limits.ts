@@ -4,7 +4,7 @@ import { airSubject, derivedSubject, meanSubject } from './clock.ts';
 import type { Dwells } from './dwells.ts';
 import type { Outcome } from './evaluation.ts';
 import { type Found, isAtLeast, isAtMost, say, unfinished } from './finding.ts';
-import type { JudgedSensor, Judgement } from './judgement.ts';
+import { isExcluded, type JudgedSensor, type Judgement } from './judgement.ts';
 import { entersBefore, type RampStage, type RateCourse, rateCourse } from './rate-course.ts';
 
 /** `<stage>/slowest` and `<stage>/fastest` of one stage of heating or cooling. */
@@ -66,13 +66,13 @@ function extremeRate(
     sensor: extreme?.sensor.name ?? null,
     fromMs: startMs,
     untilMs: endMs,
-    because: sentence(stage, which, extreme, rate, unit, bounds, outcome, j.isOpen),
+    because: sentence(j, stage, which, extreme, rate, unit, bounds, outcome),
   };
 }
 
 /** A sensor that did not run the whole range says nothing of the slowest rate. */
 function counts(course: RateCourse): boolean {
-  return course.ranWhole || course.sensor.untilMs !== Number.POSITIVE_INFINITY;
+  return course.ranWhole || isExcluded(course.sensor);
 }
 
 function decide(
@@ -83,7 +83,7 @@ function decide(
   keeps: (rate: number) => boolean,
 ): Outcome {
   if (extreme !== null && !keeps(extreme[which]!)) return 'not-met';
-  const believed = courses.filter(({ sensor }) => sensor.untilMs === Number.POSITIVE_INFINITY);
+  const believed = courses.filter(({ sensor }) => !isExcluded(sensor));
   const someRanWhole = courses.some(({ ranWhole }) => ranWhole);
   if (extreme === null || (believed.length === 0 && !someRanWhole)) return unfinished(j);
   if (courses.some(({ touchesGap }) => touchesGap)) return 'cannot-tell';
@@ -95,6 +95,7 @@ function decide(
 }
 
 function sentence(
+  j: Judgement,
   { rate, name }: RampStage,
   which: 'slowest' | 'fastest',
   extreme: RateCourse | null,
@@ -102,13 +103,12 @@ function sentence(
   unit: string,
   { atLeast, atMost }: Bounds,
   outcome: Outcome,
-  isOpen: boolean,
 ): string {
-  const temperature = unit.slice(0, 2);
+  const { temperature } = j.cycle.units;
   const range = `from ${rate.over[0]} to ${rate.over[1]} ${temperature}`;
   const asked = atLeast !== undefined ? `at least ${atLeast} ${unit} asked` : `at most ${atMost} ${unit} allowed`;
   if (extreme === null) {
-    return isOpen ? `${name} has not run ${range} yet; ${asked}.` : `No sensor is seen to run ${range}; ${asked}.`;
+    return j.isOpen ? `${name} has not run ${range} yet; ${asked}.` : `No sensor is seen to run ${range}; ${asked}.`;
   }
   const average = rate.average === 'window' ? `over ${rate.window} min` : 'from end to end';
   const part = extreme.ranWhole

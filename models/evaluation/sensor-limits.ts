@@ -3,7 +3,7 @@ import type { Dwells } from './dwells.ts';
 import type { Outcome } from './evaluation.ts';
 import { heatOnMs } from './events.ts';
 import { type Found, unfinished } from './finding.ts';
-import type { JudgedSensor, Judgement } from './judgement.ts';
+import { isExcluded, type JudgedSensor, type Judgement } from './judgement.ts';
 
 /** `sensors/working`, `sensors/own` and `sensors/must-work`. */
 export function sensorLimits(j: Judgement, dwells: Dwells): Found[] {
@@ -131,8 +131,8 @@ function mustWorkLimit(j: Judgement, dwells: Dwells, places: readonly string[], 
 /** Whether one of the sensors was the coldest when it was lost, or opened a dwell as the last to come in. */
 function wasLagging(j: Judgement, dwells: Dwells, sensors: readonly JudgedSensor[]): boolean {
   return sensors.some((s) => {
-    if (s.untilMs === Number.POSITIVE_INFINITY || s.track.length === 0) return false;
-    const at = (one: JudgedSensor) => one.track.valueAt(s.untilMs);
+    if (!isExcluded(s) || s.track.length === 0) return false;
+    const at = (one: JudgedSensor) => one.track.valueAt(s.lastMs);
     const others = j.sensors.filter((other) => other !== s && other.untilMs >= s.untilMs && other.track.length > 0);
     const isColdest = others.length > 0 && others.every((other) => at(other) >= at(s));
     return isColdest || dwells.stages.some((_, i) => dwells.at(i, 'least').clock.openedBy === s.name);

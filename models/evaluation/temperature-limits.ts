@@ -21,7 +21,7 @@ export function ceilingLimit(j: Judgement): Found[] {
   const unit = units.temperature;
   const ceilingC = celsiusFrom(ceiling, unit);
   const seen = j.sensors.flatMap((sensor) => {
-    const at = sensor.track.highestBetween(j.log.from, Math.min(j.log.until, sensor.untilMs));
+    const at = sensor.track.highestBetween(j.log.from, sensor.lastMs);
     return at < 0 ? [] : [{ sensor, readingC: sensor.track.reading(at), ms: sensor.track.timeMs(at) }];
   });
   const known = { limit: 'ceiling', bounds: { atMost: ceiling }, unit };
@@ -167,7 +167,7 @@ function rootSumOfTwoSquares(uncertainties: readonly number[]): number {
 }
 
 function extremesAt(j: Judgement, ms: number): string {
-  const believed = j.sensors.filter(({ untilMs, track }) => untilMs > ms && track.length > 0);
+  const believed = j.sensors.filter(({ lastMs, track }) => lastMs >= ms && track.length > 0);
   const hottest = believed.reduce((a, b) => (b.track.valueAt(ms) > a.track.valueAt(ms) ? b : a));
   return hottest.name;
 }

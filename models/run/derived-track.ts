@@ -3,7 +3,7 @@ import { Track } from './track.ts';
 
 export type Statistic = 'mean' | 'highest' | 'lowest' | 'spread';
 
-/** A track that counts up to an instant, included; `Infinity`: to the end. */
+/** A track that counts until an instant: `Infinity`, or that of its exclusion. */
 export interface Member {
   readonly track: Track;
   readonly untilMs: number;
@@ -50,7 +50,7 @@ function valueAtScan(
     const at = next[m]!;
     const isPresent = at < track.length && track.scan(at) === scan;
     if (isPresent) next[m] = at + 1;
-    if (timeMs > untilMs) continue;
+    if (timeMs >= untilMs) continue;
     if (!isPresent) {
       isComplete = false;
       continue;

@@ -69,6 +69,13 @@ describe('wordsOfCycle', () => {
       'leakTest.startAtLeast': undefined,
     });
     expect(words(absolute).windows[0]?.sentences[0]).toContain('at most 200 mbar abs');
+    const tooDeep = exampleWith({ 'units.vacuum': 'mbar abs', 'windows[0].atLeast': 50, 'leakTest.startAtLeast': 120 });
+    expect(words(tooDeep).windows[0]?.sentences.join(' ')).toContain('a bag at ambient would meet it');
+    expect(
+      words(tooDeep)
+        .others.flatMap(({ sentences }) => sentences)
+        .join(' '),
+    ).toContain('at most 120 mbar abs');
   });
 
   it('speaks every default of a cycle that writes only what it must', () => {
