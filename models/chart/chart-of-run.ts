@@ -83,18 +83,17 @@ const NOTHING: LimitsDrawn = { bands: [], wedges: [], marks: [], dips: [], breac
 function limitsDrawn(
   cycle: Cycle,
   part: PartEvaluation,
-  { channels, fromWritten }: DrawnChannels,
+  { channels, inWritten }: DrawnChannels,
   scale: TimeScale,
 ): LimitsDrawn {
-  const conversion = fromWritten.get('temperature') ?? AS_IT_STANDS;
-  const dwells = drawDwells(cycle, part, channels, conversion, scale);
-  const bands: Band[] = [...dwells.bands, ...limitBands(cycle, part, fromWritten, scale)];
+  const dwells = drawDwells(cycle, part, channels, scale);
+  const bands: Band[] = [...dwells.bands, ...limitBands(cycle, part, inWritten, scale)];
   return {
     bands,
-    wedges: rateWedges(cycle, part, channels, conversion, scale),
+    wedges: rateWedges(cycle, part, channels, scale),
     marks: [...heatOnMark(scale), ...dwells.marks],
     dips: dwells.dips,
-    ...findingStretches(cycle, part, channels, fromWritten, scale),
+    ...findingStretches(cycle, part, channels, inWritten, scale),
   };
 }
 

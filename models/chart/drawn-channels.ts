@@ -17,8 +17,8 @@ export interface DrawnChannels {
   readonly channels: readonly DrawnChannel[];
   /** Unit of each strip that is drawn. */
   readonly units: ReadonlyMap<Strip, string>;
-  /** How the cycle's figures read on a strip; null where that needs a barometer nobody recorded. */
-  readonly fromWritten: ReadonlyMap<Strip, Conversion | null>;
+  /** Strips in the cycle's own unit: its limits have a level there. The others need a barometer nobody recorded. */
+  readonly inWritten: ReadonlySet<Strip>;
   readonly notDrawn: readonly { readonly channel: string; readonly because: string }[];
 }
 
@@ -44,14 +44,14 @@ export function drawnChannels(
 ): DrawnChannels {
   const channels: DrawnChannel[] = [];
   const units = new Map<Strip, string>();
-  const fromWritten = new Map<Strip, Conversion | null>();
+  const inWritten = new Set<Strip>();
   const notDrawn: { channel: string; because: string }[] = [];
   for (const strip of ['temperature', 'pressure', 'vacuum'] as const) {
     const own = readings.channels.filter(({ channel }) => stripOf(channel) === strip);
     const unit = unitOfStrip(strip, own, written[strip], barometerPa);
     if (unit === null) continue;
     units.set(strip, unit);
-    fromWritten.set(strip, written[strip] === undefined ? null : between(strip, written[strip], unit, barometerPa));
+    if (unit === written[strip]) inWritten.add(strip);
     for (const { channel, value } of own) {
       const conversion = between(strip, channel.unit, unit, barometerPa);
       if (conversion === null) {
@@ -62,7 +62,7 @@ export function drawnChannels(
       channels.push(drawnChannel(channel, strip, readings.timeMs, value, conversion, sensor));
     }
   }
-  return { channels, units, fromWritten, notDrawn };
+  return { channels, units, inWritten, notDrawn };
 }
 
 function stripOf({ role, unit }: ChannelLayout): Physical | null {

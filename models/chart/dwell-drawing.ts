@@ -4,7 +4,7 @@ import type { PartEvaluation, StageRecord } from '../evaluation/evaluation.ts';
 import type { Band, DipArc, Mark } from './chart.ts';
 import { type DrawnChannel, shownAt } from './drawn-channel.ts';
 import { findingOf, worstOf } from './outcomes.ts';
-import { type Conversion, converted, drawn } from './shown-unit.ts';
+import { drawn } from './shown-unit.ts';
 import { hoursOf, hoursOrEnd, type TimeScale } from './time-scale.ts';
 import { wholeMinutes } from './whole-minutes.ts';
 
@@ -19,7 +19,6 @@ export function drawDwells(
   cycle: Cycle,
   part: PartEvaluation,
   channels: readonly DrawnChannel[],
-  conversion: Conversion,
   scale: TimeScale,
 ): DwellDrawing {
   const bands: Band[] = [];
@@ -28,28 +27,22 @@ export function drawDwells(
   for (const stage of cycle.stages) {
     const record = part.stages.find(({ name }) => name === stage.name);
     if (stage.kind !== 'dwell' || record === undefined || record.opens === null) continue;
-    bands.push(bandOf(stage, record, part, conversion, scale));
+    bands.push(bandOf(stage, record, part, scale));
     marks.push(...marksOf(record, channels, scale));
-    dips.push(...dipsOf(stage, record, conversion, scale));
+    dips.push(...dipsOf(stage, record, scale));
   }
   return { bands, marks, dips };
 }
 
-function bandOf(
-  stage: DwellStage,
-  record: StageRecord,
-  part: PartEvaluation,
-  conversion: Conversion,
-  scale: TimeScale,
-): Band {
+function bandOf(stage: DwellStage, record: StageRecord, part: PartEvaluation, scale: TimeScale): Band {
   const limits = ['time', 'longest', 'upper', 'lower'].map((limit) => `${stage.name}/${limit}`);
   return {
     strip: 'temperature',
     kind: 'dwell',
     fromH: hoursOrEnd(scale, record.opens),
     untilH: hoursOrEnd(scale, record.closes),
-    low: drawn(converted(lowerOf(stage), conversion)),
-    high: drawn(converted(upperOf(stage), conversion)),
+    low: lowerOf(stage),
+    high: upperOf(stage),
     text: bandText(stage, record, part),
     limit: stage.time === undefined ? `${stage.name}/upper` : `${stage.name}/time`,
     outcome: worstOf(part, limits),
@@ -89,13 +82,13 @@ function marksOf(record: StageRecord, channels: readonly DrawnChannel[], scale: 
   return marks;
 }
 
-function dipsOf(stage: DwellStage, record: StageRecord, conversion: Conversion, scale: TimeScale): DipArc[] {
+function dipsOf(stage: DwellStage, record: StageRecord, scale: TimeScale): DipArc[] {
   return record.dips.map((dip) => ({
     stage: stage.name,
     fromH: hoursOrEnd(scale, dip.from),
     untilH: hoursOrEnd(scale, dip.until),
-    level: drawn(converted(lowerOf(stage), conversion)),
-    depth: drawn(dip.depth * conversion.slope),
+    level: lowerOf(stage),
+    depth: dip.depth,
     isForgiven: dip.forgiven,
     sensor: dip.sensor,
     text: `${figure(Math.round(dip.minutes * 10) / 10)} min${dip.forgiven ? ', forgiven' : ''}`,

@@ -4,7 +4,6 @@ import type { Breach, Stretch, Strip } from './chart.ts';
 import type { DrawnChannel } from './drawn-channel.ts';
 import { type Excursion, excursionAround } from './excursion.ts';
 import { breachText, edgeOf } from './limit-edges.ts';
-import { type Conversion, converted, drawn } from './shown-unit.ts';
 import { hoursAt, type TimeScale } from './time-scale.ts';
 
 /** Where each finding looks, and where limits are broken. */
@@ -17,7 +16,7 @@ export function findingStretches(
   cycle: Cycle,
   part: PartEvaluation,
   channels: readonly DrawnChannel[],
-  fromWritten: ReadonlyMap<Strip, Conversion | null>,
+  inWritten: ReadonlySet<Strip>,
   scale: TimeScale,
 ): FindingStretches {
   const stretches: Stretch[] = [];
@@ -26,9 +25,7 @@ export function findingStretches(
     if (finding.from === null) continue;
     const { limit, outcome, sensor } = finding;
     const strip = stripOfLimit(cycle, finding, channels);
-    const edge = edgeOf(cycle, finding);
-    const conversion = fromWritten.get(strip);
-    const level = edge === null || !conversion ? null : converted(edge, conversion);
+    const level = inWritten.has(strip) ? edgeOf(cycle, finding) : null;
     const looked = { fromMs: Date.parse(finding.from), untilMs: Date.parse(finding.until ?? finding.from) };
     const isBroken = outcome === 'not-met' && level !== null;
     const { fromMs, untilMs } = isBroken ? beyond(finding, part, channels, level, looked, scale) : looked;
@@ -41,7 +38,7 @@ export function findingStretches(
     if (isBroken) {
       const { fromH, untilH } = stretch;
       const text = breachText(finding, (untilMs - fromMs) / 60_000);
-      breaches.push({ strip, fromH, untilH, level: drawn(level), text, limit, sensor });
+      breaches.push({ strip, fromH, untilH, level, text, limit, sensor });
     }
   }
   return { stretches, breaches };

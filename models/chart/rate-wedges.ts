@@ -5,7 +5,7 @@ import type { Corner, Wedge } from './chart.ts';
 import type { DrawnChannel } from './drawn-channel.ts';
 import { worstOf } from './outcomes.ts';
 import { runOverRange } from './run-over-range.ts';
-import { type Conversion, converted, drawn } from './shown-unit.ts';
+import { drawn } from './shown-unit.ts';
 import { hoursAt, type TimeScale } from './time-scale.ts';
 
 /**
@@ -19,13 +19,12 @@ export function rateWedges(
   cycle: Cycle,
   part: PartEvaluation,
   channels: readonly DrawnChannel[],
-  conversion: Conversion,
   scale: TimeScale,
 ): Wedge[] {
   return cycle.stages.flatMap((stage, i): Wedge[] => {
     if (stage.kind === 'dwell' || stage.rate === undefined) return [];
     const sinceMs = openingBefore(cycle, part, i) ?? scale.logFromMs;
-    const over = stage.rate.over.map((temperature) => converted(temperature, conversion)) as [number, number];
+    const { over } = stage.rate;
     const runs = subjects(stage.rate, part, channels).flatMap((channel) => runOverRange(channel, over, sinceMs) ?? []);
     if (runs.length === 0) return [];
     const limits = [`${stage.name}/slowest`, `${stage.name}/fastest`];
@@ -61,9 +60,8 @@ function corners(
   runs: readonly { readonly startMs: number; readonly endMs: number }[],
 ): [number, number][] {
   const { atLeast, atMost } = stage.rate ?? {};
-  const [a, b] = stage.rate?.over ?? [0, 0];
   const minutesPerUnit = rateUnitOf(cycle).endsWith('/h') ? 60 : 1;
-  const lastsMs = (rate: number) => (Math.abs(b - a) / rate) * minutesPerUnit * 60_000;
+  const lastsMs = (rate: number) => (Math.abs(to - from) / rate) * minutesPerUnit * 60_000;
   const firstMs = Math.min(...runs.map(({ startMs }) => startMs));
   const lastMs = Math.max(...runs.map(({ startMs }) => startMs));
   const endMs = Math.max(...runs.map((run) => run.endMs));

@@ -2,8 +2,8 @@ import { type Fields, number, object, type Read, refuse } from '../document.ts';
 import type { Bounds, Forgiveness } from './cycle.ts';
 
 /** `atLeast` and `atMost` of an object that has one of them or both, in order. */
-export function boundsIn(fields: Fields, path: string, bound: Read<number>): Bounds {
-  const bounds: Bounds = { ...fields.optional('atLeast', bound), ...fields.optional('atMost', bound) };
+export function boundsIn(fields: Fields, path: string, least: Read<number>, most: Read<number> = least): Bounds {
+  const bounds: Bounds = { ...fields.optional('atLeast', least), ...fields.optional('atMost', most) };
   if (bounds.atLeast === undefined && bounds.atMost === undefined) {
     return refuse(path, 'atLeast, atMost or both', {});
   }
@@ -13,9 +13,12 @@ export function boundsIn(fields: Fields, path: string, bound: Read<number>): Bou
   return bounds;
 }
 
-/** `{ "atLeast": 60, "atMost": 80 }`, neither below zero. */
+/** `{ "atLeast": 60, "atMost": 80 }` of a quantity that cannot be negative, and that a most of nothing would forbid. */
 export const bounds: Read<Bounds> = (value, path) =>
-  object((fields) => boundsIn(fields, path, number({ atLeast: 0 })))(value, path);
+  object((fields) => boundsIn(fields, path, NOT_NEGATIVE, ABOVE_NOTHING))(value, path);
+
+export const NOT_NEGATIVE = number({ atLeast: 0 });
+export const ABOVE_NOTHING = number({ above: 0 });
 
 /** `{ "by": 2, "for": 3, "times": 2, "inTotal": 5 }`. */
 export const forgiveness: Read<Forgiveness> = object((fields) => ({

@@ -1,7 +1,7 @@
 import { type Fields, number, object, oneOf, pairOf, type Read, refuse, text } from '../document.ts';
 import { DomainError } from '../errors.ts';
 import type { Clock, CoolStage, DwellStage, HeatStage, RateLimit, Stage } from './cycle.ts';
-import { bounds, boundsIn, forgiveness, notEmpty } from './parse-bounds.ts';
+import { ABOVE_NOTHING, bounds, boundsIn, forgiveness, NOT_NEGATIVE, notEmpty } from './parse-bounds.ts';
 
 /** One stage of a cycle: `heat`, `dwell` or `cool`. */
 export const stage: Read<Stage> = object((fields) => {
@@ -81,7 +81,7 @@ function rate(kind: 'heat' | 'cool'): Read<RateLimit> {
         refuse(fields.pathOf('average'), '"window", since a window is written beside it', average);
       }
       return {
-        ...boundsIn(fields, path, number({ atLeast: 0 })),
+        ...boundsIn(fields, path, NOT_NEGATIVE, ABOVE_NOTHING),
         over,
         average,
         ...window,

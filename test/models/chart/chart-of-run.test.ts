@@ -160,3 +160,37 @@ describe('a vacuum in another kind of unit', () => {
     expect(chart.bands.find(({ strip }) => strip === 'vacuum')).toMatchObject({ low: null, high: null });
   });
 });
+
+describe('leading and lagging', () => {
+  it('are the hottest and the coldest where no dwell opened', () => {
+    const { chart, inputs, evaluation } = picture('stops-on-the-ramp');
+    const part = evaluation.parts[0]!;
+    const noDwell = { ...part, stages: part.stages.map((stage) => ({ ...stage, opens: null, sensors: [] })) };
+    const own = chartOfRun({ ...inputs, part: noDwell });
+    const highest = (name: string) =>
+      Math.max(...inputs.readings.channels.find(({ channel }) => channel.name === name)!.value);
+    const byHeat = [...part.judgedBy].sort((a, b) => highest(b) - highest(a));
+    const named = (role: string) => own.lines.find((one) => one.role === role)!.channel;
+    expect(highest(named('leading'))).toBe(highest(byHeat[0]!));
+    expect(highest(named('lagging'))).toBe(highest(byHeat.at(-1)!));
+    expect(highest(named('leading'))).toBeGreaterThan(highest(named('lagging')));
+    expect(chart.lines.length).toBe(own.lines.length);
+  });
+
+  it('are nobody where one sensor is alone', () => {
+    const { inputs, evaluation } = picture('sound');
+    const part = { ...evaluation.parts[0]!, judgedBy: ['TC1'] };
+    const roles = chartOfRun({ ...inputs, part }).lines.map(({ role }) => role);
+    expect(roles).not.toContain('leading');
+    expect(roles).not.toContain('lagging');
+  });
+});
+
+describe('axes', () => {
+  it('leave out a ceiling far above the run, which would flatten it', () => {
+    const { inputs } = picture('sound');
+    const axis = (ceiling: number) => chartOfRun({ ...inputs, cycle: { ...inputs.cycle!, ceiling } }).strips[0]!;
+    expect(axis(190).high).toBeGreaterThan(190);
+    expect(axis(900).high).toBeLessThan(250);
+  });
+});

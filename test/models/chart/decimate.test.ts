@@ -130,6 +130,24 @@ describe('decimate', () => {
     expect(kept.timeMs[kept.value.indexOf(187.4)]).toBe(17_321_000);
   });
 
+  it('keeps four readings of a bucket where rounding would count one bucket twice', () => {
+    // 14 buckets of 18 432 ms: the eighth begins on a reading, which (t − from) / width puts into the seventh.
+    const fromMs = 1_772_525_640_000;
+    const timeMs = Float64Array.from({ length: 145 }, (_, i) => fromMs + i * 128);
+    const value = Float64Array.from({ length: 145 }, (_, i) => ((i * 7919) % 101) - 50);
+    const kept = decimate(timeMs, value, { fromMs, untilMs: fromMs + 18_432, points: 84, longestGapMs: 60_000 });
+    expect(kept.timeMs.length).toBeLessThanOrEqual(4 * 14);
+  });
+
+  it('keeps to its room and to the record’s end where there are more gaps than it can break the line at', () => {
+    const timeMs = Float64Array.from({ length: 400 }, (_, i) => i * 61_000);
+    const value = Float64Array.from({ length: 400 }, (_, i) => (i * 7919) % 101);
+    const kept = decimate(timeMs, value, { fromMs: 0, untilMs: timeMs[399]!, points: 20, longestGapMs: 60_000 });
+    expect(kept.timeMs.length).toBeLessThanOrEqual(20);
+    expect(kept.timeMs.at(-1)).toBe(timeMs[399]);
+    expect(kept.gaps).toHaveLength(399);
+  });
+
   it('hatches a channel without any reading from end to end', () => {
     const timeMs = Float64Array.from([0, 1000, 2000]);
     const kept = decimate(timeMs, new Float64Array(3).fill(Number.NaN), {

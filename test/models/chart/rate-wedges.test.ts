@@ -4,7 +4,7 @@ import type { Corner } from '../../../models/chart/chart.ts';
 import { drawnChannel } from '../../../models/chart/drawn-channel.ts';
 import { rateWedges } from '../../../models/chart/rate-wedges.ts';
 import { runOverRange } from '../../../models/chart/run-over-range.ts';
-import { AS_IT_STANDS } from '../../../models/chart/shown-unit.ts';
+import { AS_IT_STANDS, temperatureConversion } from '../../../models/chart/shown-unit.ts';
 import { parseCycle } from '../../../models/cycle/parse-cycle.ts';
 import type { PartEvaluation } from '../../../models/evaluation/evaluation.ts';
 import { exampleWith } from '../cycle/example-cycle.ts';
@@ -32,10 +32,14 @@ function steady(sensors: readonly { startMin: number; ratePerMin: number }[], fr
 
 const scale = { zeroMs: 0, isFromHeatOn: true, logFromMs: 0, logUntilMs: 1.8e7, fromMs: 0, untilMs: 1.8e7 };
 
-function wedgesOf(rate: object, channels: ReturnType<typeof steady>, kind: 'heat' | 'cool' = 'heat') {
+function wedgesOf(rate: object, channels: ReturnType<typeof steady>, kind: 'heat' | 'cool' = 'heat', unit = '°C/min') {
   const stages = [{ name: 'ramp', kind, rate }];
-  const cycle = parseCycle({ ...exampleWith({ ceiling: undefined, spread: undefined }), stages, windows: [] });
-  return rateWedges(cycle, partJudgedBy(channels.map(({ layout }) => layout.name)), channels, AS_IT_STANDS, scale);
+  const cycle = parseCycle({
+    ...exampleWith({ ceiling: undefined, spread: undefined, 'units.rate': unit }),
+    stages,
+    windows: [],
+  });
+  return rateWedges(cycle, partJudgedBy(channels.map(({ layout }) => layout.name)), channels, scale);
 }
 
 /** Whether a point lies in a polygon or within `hair` of it: by the side of every edge of a convex outline. */
@@ -89,6 +93,31 @@ describe('rateWedges', () => {
     expect(wedge!.corners[1]).toEqual([expect.closeTo((6 + 50 / 3) / 60, 5), 100]);
   });
 
+  it('reaches as far as the fastest way though every sensor was faster, never back in time', () => {
+    const rate = { atLeast: 0.5, atMost: 3, over: [50, 100], average: 'chord', of: 'every' };
+    const [wedge] = wedgesOf(rate, steady([{ startMin: 0, ratePerMin: 30 }]));
+    const [, fast, far] = wedge!.corners;
+    expect(far![0]).toBeGreaterThanOrEqual(fast![0]);
+  });
+
+  it('leaves out a sensor that is too slow', () => {
+    const rate = { atLeast: 1, atMost: 3, over: [50, 100], average: 'chord', of: 'every' };
+    const [wedge] = wedgesOf(rate, steady([{ startMin: 0, ratePerMin: 0.5 }]));
+    // At 50 °C after 60 min; the slowest way takes 50 min, the sensor 100.
+    expect(wedge!.corners).toEqual([
+      [1, 50],
+      [expect.closeTo((60 + 50 / 3) / 60, 5), 100],
+      [expect.closeTo(110 / 60, 5), 100],
+      [1, 50],
+    ]);
+  });
+
+  it('counts rates an hour where the cycle does', () => {
+    const rate = { atMost: 60, over: [50, 100], average: 'chord', of: 'every' };
+    const [wedge] = wedgesOf(rate, steady([{ startMin: 0, ratePerMin: 1 }]), 'heat', '°C/h');
+    expect(wedge!.corners[1]![0] - wedge!.corners[0]![0]).toBeCloseTo(50 / 60, 4);
+  });
+
   it('is not drawn where no sensor began the range', () => {
     const rate = { atMost: 3, over: [50, 100], average: 'chord', of: 'every' };
     expect(wedgesOf(rate, steady([{ startMin: 0, ratePerMin: 0 }]))).toEqual([]);
@@ -128,6 +157,25 @@ describe('runOverRange', () => {
     expect(runOverRange(dented, [50, 200], 0)).toEqual({ startMs: expect.closeTo(2.5, 6), endMs: 5 });
     expect(runOverRange(dented, [110, 200], 0)).toBeNull();
     expect(runOverRange(dented, [50, 100], 3)).toBeNull();
+  });
+
+  it('reaches a temperature that a reading shows exactly, though scale and unit leave dust', () => {
+    const timeMs = Float64Array.from([0, 60_000, 120_000, 180_000]);
+    const layout = { column: 'T', name: 'T', role: 'part', unit: '°C', scale: 0.1 } as const;
+    const toFahrenheit = temperatureConversion('°C', '°F')!;
+    for (let tenths = 101; tenths < 1700; tenths += 7) {
+      const value = (9 * (tenths / 10)) / 5 + 32;
+      const falling = drawnChannel(
+        layout,
+        'temperature',
+        timeMs,
+        Float64Array.of(1800, 1750, tenths, tenths),
+        toFahrenheit,
+        undefined,
+      );
+      const run = runOverRange(falling, [350, value], 0)!;
+      expect(run.endMs).toBeCloseTo(120_000, 3);
+    }
   });
 
   it('reaches a temperature that a reading shows exactly', () => {

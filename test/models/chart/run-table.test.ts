@@ -75,6 +75,7 @@ describe('estimated cure', () => {
     }
     const written = gels.filter(({ text }) => text !== '');
     expect(written).toHaveLength(1);
+    expect(written[0]!.atH).toBe(Math.max(...gels.map(({ atH }) => atH)));
     expect(written[0]!.text).toMatch(/^gel \d\d:\d\d \(TC\d\) to \d\d:\d\d \(TC\d\)$/);
   });
 

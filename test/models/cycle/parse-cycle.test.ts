@@ -130,6 +130,13 @@ describe('parseCycle', () => {
     ['a window upside down', { 'windows[1].atMost': 6 }, 'document-wrong-value', 'windows[1].atLeast'],
     ['a minus below zero', { 'stages[1].minus': -5 }, 'document-wrong-value', 'stages[1].minus'],
     ['a band of no width', { 'stages[1].plus': 0, 'stages[1].minus': 0 }, 'document-wrong-value', 'stages[1].plus'],
+    ['a rate that must be nothing', { 'stages[4].rate.atMost': 0 }, 'document-wrong-value', 'stages[4].rate.atMost'],
+    [
+      'a time that must be nothing',
+      { 'stages[1].time': { atMost: 0 } },
+      'document-wrong-value',
+      'stages[1].time.atMost',
+    ],
     ['a negative cooling rate', { 'stages[4].rate.atMost': -3 }, 'document-wrong-value', 'stages[4].rate.atMost'],
     ['a range of no width', { 'stages[0].rate.over': [50, 50] }, 'document-wrong-value', 'stages[0].rate.over'],
     ['a heating range downwards', { 'stages[0].rate.over': [100, 50] }, 'document-wrong-value', 'stages[0].rate.over'],
