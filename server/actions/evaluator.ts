@@ -1,7 +1,6 @@
 import { Worker } from 'node:worker_threads';
 import { DomainError } from '../../models/errors.ts';
 import type { Evaluation } from '../../models/evaluation/evaluation.ts';
-import { evaluateLog } from '../../models/evaluation/judge.ts';
 import type { ReadLog } from '../../models/log/readings.ts';
 import type { EvaluateLog } from './evaluate-log.ts';
 import type { EvaluateAnswer } from './evaluate-worker.ts';
@@ -42,7 +41,10 @@ export function createEvaluator({ judgedHere = READINGS_JUDGED_HERE } = {}): Eva
   };
   return {
     async evaluate(log, inputs) {
-      if (countReadings(log) <= judgedHere) return evaluateLog(log, inputs);
+      if (countReadings(log) <= judgedHere) {
+        const { evaluateLog } = await import('../../models/evaluation/judge.ts');
+        return evaluateLog(log, inputs);
+      }
       worker ??= startWorker();
       asked += 1;
       const question = { id: asked, log, inputs };

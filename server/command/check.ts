@@ -39,8 +39,6 @@ const EXIT_OF_VERDICT: Readonly<Record<Verdict, number>> = {
 };
 
 export const checkCommand: Command = {
-  name: 'check',
-  summary: 'judges a logged run against a cycle',
   help: HELP,
   async run(args) {
     const { values, positionals } = readWords('check', args, {

@@ -23,8 +23,6 @@ Exit status: 0 done, 64 wrong usage, 65 the input cannot be read or used, 70 a f
 `;
 
 export const cureCommand: Command = {
-  name: 'cure',
-  summary: 'estimates degree of cure and Tg along a logged run',
   help: HELP,
   async run(args) {
     const { values, positionals } = readWords('cure', args, {

@@ -21,8 +21,6 @@ Exit status: 0 done, 64 wrong usage, 65 the input cannot be read or used (so is 
 `;
 
 export const importCommand: Command = {
-  name: 'import',
-  summary: "records a recorder's file as a run in the database",
   help: HELP,
   async run(args) {
     const { values, positionals } = readWords('import', args, {

@@ -20,8 +20,6 @@ program itself.
 `;
 
 export const practiceCommand: Command = {
-  name: 'practice',
-  summary: 'serves an invented workshop to practise on',
   help: HELP,
   async run(args) {
     const { values, positionals } = readWords('practice', args, {

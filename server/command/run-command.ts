@@ -1,20 +1,45 @@
 import { DomainError } from '../../models/errors.ts';
 import { VERSION } from '../contract/version.ts';
-import { checkCommand } from './check.ts';
-import { cureCommand } from './cure.ts';
-import { importCommand } from './import.ts';
-import { practiceCommand } from './practice.ts';
-import { serveCommand } from './serve.ts';
 import { type Command, EXIT } from './usage.ts';
-import { verifyCommand } from './verify.ts';
 
-const COMMANDS: readonly Command[] = [
-  checkCommand,
-  cureCommand,
-  importCommand,
-  serveCommand,
-  practiceCommand,
-  verifyCommand,
+interface NamedCommand {
+  readonly name: string;
+  readonly summary: string;
+  /** Loads it: each command needs another part of the program. */
+  readonly load: () => Promise<Command>;
+}
+
+const COMMANDS: readonly NamedCommand[] = [
+  {
+    name: 'check',
+    summary: 'judges a logged run against a cycle',
+    load: async () => (await import('./check.ts')).checkCommand,
+  },
+  {
+    name: 'cure',
+    summary: 'estimates degree of cure and Tg along a logged run',
+    load: async () => (await import('./cure.ts')).cureCommand,
+  },
+  {
+    name: 'import',
+    summary: "records a recorder's file as a run in the database",
+    load: async () => (await import('./import.ts')).importCommand,
+  },
+  {
+    name: 'serve',
+    summary: 'serves a workshop to browsers',
+    load: async () => (await import('./serve.ts')).serveCommand,
+  },
+  {
+    name: 'practice',
+    summary: 'serves an invented workshop to practise on',
+    load: async () => (await import('./practice.ts')).practiceCommand,
+  },
+  {
+    name: 'verify',
+    summary: 'recomputes every hash of a workshop',
+    load: async () => (await import('./verify.ts')).verifyCommand,
+  },
 ];
 
 /** Does what the words of the command line ask for and returns the exit status. */
@@ -36,11 +61,12 @@ export async function runCommand(words: readonly string[]): Promise<number> {
 async function dispatch([name, ...args]: readonly string[]): Promise<number> {
   if (name === '--help' || name === '-h' || name === 'help') return say(overview());
   if (name === '--version') return say(`${VERSION}\n`);
-  const command = COMMANDS.find((one) => one.name === name);
-  if (command === undefined) {
+  const named = COMMANDS.find((one) => one.name === name);
+  if (named === undefined) {
     const what = name === undefined ? 'Say what is to be done' : `"${name}" is not a command`;
     throw new DomainError('usage', `${what}.\n\n${overview()}`);
   }
+  const command = await named.load();
   if (args.includes('--help') || args.includes('-h')) return say(command.help);
   return command.run(args);
 }

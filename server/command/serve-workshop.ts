@@ -29,6 +29,7 @@ const MOST_FILE_BYTES = 512 * 1024 * 1024;
 
 /** Serves a workshop until the process is told to end; then closes everything in order. */
 export async function serveWorkshop(options: ServerOptions): Promise<void> {
+  const ended = told('SIGINT', 'SIGTERM');
   const log = createLog();
   const db = openDatabase(databasePath(options.folder), { at: new Date().toISOString() });
   const evaluator = createEvaluator();
@@ -46,8 +47,10 @@ export async function serveWorkshop(options: ServerOptions): Promise<void> {
   });
   const server = await listen(createServer(app), options);
   process.stdout.write(`Dwellbook is at ${addressOf(server, options.host)}\n`);
+  // Most of the program: loaded now rather than while the first person waits.
+  await import('../http/answer.ts');
   const watched = await startWatching(options, { ...parts, log });
-  await told('SIGINT', 'SIGTERM');
+  await ended;
   server.close();
   server.closeAllConnections();
   await watched?.close();

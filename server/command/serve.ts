@@ -19,8 +19,6 @@ program itself.
 `;
 
 export const serveCommand: Command = {
-  name: 'serve',
-  summary: 'serves a workshop to browsers',
   help: HELP,
   async run(args) {
     const { values, positionals } = readWords('serve', args, {

@@ -5,9 +5,6 @@ type Options = NonNullable<ParseArgsConfig['options']>;
 
 /** A command of the command line. */
 export interface Command {
-  readonly name: string;
-  /** What it does, in one line. */
-  readonly summary: string;
   readonly help: string;
   /** Does it and returns the exit status. */
   readonly run: (args: readonly string[]) => Promise<number>;

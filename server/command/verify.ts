@@ -12,8 +12,6 @@ Exit status: 0 all hold, 1 one does not, 64 wrong usage, 65 there is no workshop
 `;
 
 export const verifyCommand: Command = {
-  name: 'verify',
-  summary: 'recomputes every hash of a workshop',
   help: HELP,
   async run(args) {
     const { values, positionals } = readWords('verify', args, { data: { type: 'string' } });

@@ -39,12 +39,14 @@ function courseOf(
       resin,
       startDegree === undefined ? {} : { startDegree },
     );
+    const kept = thinned(times);
+    const degree = Float64Array.from(kept, (n) => alpha[n] ?? Number.NaN);
     const { glassTransition } = resin;
     const tgC =
       glassTransition === undefined
         ? null
-        : alpha.map((degree) => celsiusFromKelvin(glassTransitionK(degree, glassTransition)));
-    return { channel: layout.name, timeMs: times, degree: alpha, tgC };
+        : degree.map((one) => celsiusFromKelvin(glassTransitionK(one, glassTransition)));
+    return { channel: layout.name, timeMs: Float64Array.from(kept, (n) => times[n] ?? Number.NaN), degree, tgC };
   } catch (error) {
     // A set that cannot be integrated gives no course; the findings say so where a limit hangs on it.
     if (error instanceof DomainError) return null;
@@ -58,4 +60,19 @@ function presentOf(value: Float64Array): number[] {
     if (!Number.isNaN(figure)) present.push(scan);
   });
   return present;
+}
+
+/** Cure has no spikes to be lost: between figures so far apart, ms, it runs straight to the eye. */
+const APART_MS = 15_000;
+
+/** Places of the figures that are drawn: the first, the last, and between them none closer than that. */
+function thinned(timeMs: Float64Array): number[] {
+  const kept: number[] = [];
+  let lastMs = Number.NEGATIVE_INFINITY;
+  timeMs.forEach((at, n) => {
+    if (at - lastMs < APART_MS && n < timeMs.length - 1) return;
+    kept.push(n);
+    lastMs = at;
+  });
+  return kept;
 }

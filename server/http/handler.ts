@@ -1,17 +1,18 @@
 import type { Readable } from 'node:stream';
 import type * as z from 'zod';
-import type { OPERATIONS, OperationName } from '../contract/operations.ts';
+import type { OPERATIONS } from '../contract/operations.ts';
+import type { OperationName } from '../contract/routes.ts';
 import type { AppParts } from './app-parts.ts';
 
 type Operations = typeof OPERATIONS;
 
 type InputOf<N extends OperationName, Key extends 'query' | 'body'> = Operations[N] extends {
-  readonly [P in Key]: infer Schema;
+  readonly [P in Key]: infer Schema extends z.ZodType;
 }
-  ? Schema extends z.ZodType
-    ? z.output<Schema>
-    : Readable
-  : undefined;
+  ? z.output<Schema>
+  : Operations[N]['sends'] extends 'bytes'
+    ? Readable
+    : undefined;
 
 type AnswerOf<N extends OperationName> = Operations[N]['answer'] extends z.ZodType
   ? z.input<Operations[N]['answer']>

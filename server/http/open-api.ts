@@ -45,13 +45,13 @@ function hoisted(value: unknown, schemas: Record<string, object>): object {
 }
 
 function describe(operationId: string, operation: Operation): object {
-  const { summary, roles, path, query, body, answer, status = 200 } = operation;
+  const { summary, roles, path, query, sends, body, answer, status = 200 } = operation;
   return {
     operationId,
     summary,
     'x-roles': roles,
     parameters: [...pathParameters(path), ...(query === undefined ? [] : queryParameters(query))],
-    ...(body === undefined ? {} : { requestBody: { required: true, content: bodyContent(body) } }),
+    ...(sends === 'nothing' ? {} : { requestBody: { required: true, content: bodyContent(body) } }),
     responses: {
       [status]: { description: summary, content: answerContent(answer) },
       default: {
@@ -81,8 +81,8 @@ function queryParameters(query: z.ZodType): object[] {
   }));
 }
 
-function bodyContent(body: NonNullable<Operation['body']>): object {
-  return body === 'bytes'
+function bodyContent(body: z.ZodType | undefined): object {
+  return body === undefined
     ? { 'application/octet-stream': { schema: { type: 'string', format: 'binary' } } }
     : { 'application/json': { schema: schemaOf(body, 'input') } };
 }

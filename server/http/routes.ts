@@ -1,13 +1,7 @@
-import { Readable } from 'node:stream';
-import { pipeline } from 'node:stream/promises';
 import express, { type Request, type RequestHandler, type Response, type Router } from 'express';
-import type * as z from 'zod';
 import { DomainError } from '../../models/errors.ts';
-import { OPERATIONS, type Operation, type OperationName } from '../contract/operations.ts';
+import { type OperationName, ROUTES, type Route } from '../contract/routes.ts';
 import type { AppParts } from './app-parts.ts';
-import type { Download, Handler } from './handler.ts';
-import { HANDLERS } from './handlers.ts';
-import { InvalidRequest } from './invalid-request.ts';
 
 /** Largest JSON body: a cycle or a load is a few kB. */
 const MOST_JSON_BYTES = 1_000_000;
@@ -16,17 +10,16 @@ const MOST_JSON_BYTES = 1_000_000;
 export function createRoutes(parts: AppParts): Router {
   const router = express.Router();
   const readJson = express.json({ limit: MOST_JSON_BYTES, strict: false });
-  for (const [name, operation] of Object.entries(OPERATIONS) as [OperationName, Operation][]) {
-    const path = operation.path.replace(/\{(\w+)\}/g, ':$1');
-    const steps: RequestHandler[] = [permit(parts, operation)];
-    if (operation.body !== undefined) steps.push(requireMediaType(operation));
-    if (operation.body !== undefined && operation.body !== 'bytes') steps.push(readJson);
-    router[operation.method](path, ...steps, answer(parts, name, operation));
+  for (const [name, route] of Object.entries(ROUTES) as [OperationName, Route][]) {
+    const steps: RequestHandler[] = [permit(parts, route)];
+    if (route.sends !== 'nothing') steps.push(requireMediaType(route.sends));
+    if (route.sends === 'json') steps.push(readJson);
+    router[route.method](route.path.replace(/\{(\w+)\}/g, ':$1'), ...steps, answerLater(parts, name));
   }
   return router;
 }
 
-function permit({ actor }: AppParts, { roles, summary }: Operation): RequestHandler {
+function permit({ actor }: AppParts, { roles, summary }: Route): RequestHandler {
   return (_request, _response, next) => {
     if (roles.some((role) => actor.roles.includes(role))) return next();
     throw new DomainError('not-permitted', `${actor.name} may not: ${summary}`, { roles: roles.join(', ') });
@@ -34,8 +27,8 @@ function permit({ actor }: AppParts, { roles, summary }: Operation): RequestHand
 }
 
 /** Asking for a media type no form can send also keeps other sites' pages from posting here. */
-function requireMediaType({ body }: Operation): RequestHandler {
-  const expected = body === 'bytes' ? 'application/octet-stream' : 'application/json';
+function requireMediaType(sends: 'json' | 'bytes'): RequestHandler {
+  const expected = sends === 'bytes' ? 'application/octet-stream' : 'application/json';
   return (request, _response, next) => {
     if (request.is(expected)) return next();
     const sent = request.get('content-type') ?? 'nothing';
@@ -43,39 +36,10 @@ function requireMediaType({ body }: Operation): RequestHandler {
   };
 }
 
-function answer(parts: AppParts, name: OperationName, operation: Operation): RequestHandler {
-  const handler = HANDLERS[name] as Handler<OperationName>;
-  return async (request: Request, response: Response) => {
-    const query = operation.query === undefined ? undefined : parse(operation.query, request.query, '?');
-    const body = readBody(operation, request);
-    const params = request.params as Record<string, string>;
-    const result = await handler(parts, { params, query, body } as never);
-    response.status(operation.status ?? 200);
-    if (operation.answer === 'text/csv' || operation.answer === 'application/octet-stream') {
-      return sendDownload(response, operation.answer, result as Download);
-    }
-    response.json(result);
+/** Schemas and handlers are most of the program; the server listens before they are loaded. */
+function answerLater(parts: AppParts, name: OperationName) {
+  return async (request: Request, response: Response): Promise<void> => {
+    const { answer } = await import('./answer.ts');
+    await answer(parts, name, request, response);
   };
-}
-
-function readBody({ body }: Operation, request: Request): unknown {
-  if (body === undefined) return undefined;
-  return body === 'bytes' ? request : parse(body, request.body, '#');
-}
-
-function parse(schema: z.ZodType, value: unknown, root: string): unknown {
-  const parsed = schema.safeParse(value);
-  if (parsed.success) return parsed.data;
-  throw new InvalidRequest(
-    parsed.error.issues.map(({ path, message }) => ({
-      pointer: [root, ...path.map(String)].join('/'),
-      detail: message,
-    })),
-  );
-}
-
-async function sendDownload(response: Response, type: string, { name, chunks }: Download): Promise<void> {
-  response.type(type);
-  response.attachment(name);
-  await pipeline(Readable.from(chunks), response);
 }

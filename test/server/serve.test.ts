@@ -101,7 +101,7 @@ describe('dwellbook serve', () => {
     const upload = await fetch(`${address}/api/imports?name=run.csv`, {
       method: 'POST',
       headers: { 'content-type': 'application/octet-stream' },
-      body: log,
+      body: new Uint8Array(log),
     });
     const { id } = JSON.parse(await upload.text());
     const { body } = await json(`${address}/api/imports/${id}/run`, { layout });

@@ -1,0 +1,98 @@
+import type { Role } from './roles.ts';
+
+/** One thing that can be asked of the server over HTTP. */
+export interface Route {
+  readonly method: 'get' | 'post';
+  /** OpenAPI template: `/api/runs/{run}`. */
+  readonly path: string;
+  readonly summary: string;
+  /** Who may use it. */
+  readonly roles: readonly Role[];
+  /** What is sent along: JSON, or a file as it is. */
+  readonly sends: 'nothing' | 'json' | 'bytes';
+}
+
+const ANYONE: readonly Role[] = ['operator', 'engineer', 'inspector', 'administrator'];
+const ENGINEERS: readonly Role[] = ['engineer', 'administrator'];
+const DECIDERS: readonly Role[] = ['engineer', 'inspector', 'administrator'];
+const ADMINISTRATORS: readonly Role[] = ['administrator'];
+
+/** Every route there is. What each takes and answers stands in `operations.ts`, which loads the schemas. */
+export const ROUTES = {
+  readWorkshop: route('get', '/api/workshop', 'The workshop and who is using it', ANYONE),
+  setWorkshop: route('post', '/api/workshop', 'Name the workshop, its zone and its units', ADMINISTRATORS, 'json'),
+  readNow: route('get', '/api/now', 'What the vessels did last, and what needs someone', ANYONE),
+  listVessels: route('get', '/api/vessels', 'Vessels', ANYONE),
+  addVessel: route('post', '/api/vessels', 'Add a vessel', ENGINEERS, 'json'),
+  listRecorders: route('get', '/api/recorders', 'Recorders with their layouts', ANYONE),
+  addRecorder: route('post', '/api/recorders', 'Add a recorder', ENGINEERS, 'json'),
+  readRecorder: route('get', '/api/recorders/{recorder}', 'One recorder', ANYONE),
+  keepLayout: route('post', '/api/recorders/{recorder}/layouts', 'Keep a layout for a recorder', ENGINEERS, 'json'),
+  listImports: route('get', '/api/imports', 'Files that wait for someone', ANYONE),
+  uploadFile: route('post', '/api/imports', 'Bring in a file as its recorder wrote it', ANYONE, 'bytes'),
+  readImport: route('get', '/api/imports/{import}', 'A file with its proposed layout', ANYONE),
+  previewImport: route(
+    'post',
+    '/api/imports/{import}/preview',
+    'Read the file by a layout, keeping nothing',
+    ANYONE,
+    'json',
+  ),
+  recordRun: route('post', '/api/imports/{import}/run', 'Make a run of the file', ANYONE, 'json'),
+  discardImport: route('post', '/api/imports/{import}/discard', 'Set a file aside', ANYONE, 'json'),
+  listRuns: route('get', '/api/runs', 'Runs, latest first', ANYONE),
+  readRun: route('get', '/api/runs/{run}', 'A run whole, without its readings', ANYONE),
+  readRunChart: route('get', '/api/runs/{run}/chart', 'What is to be drawn of a run', ANYONE),
+  setLoad: route(
+    'post',
+    '/api/runs/{run}/load',
+    'Say what was in the vessel and by which cycle it was cured',
+    ANYONE,
+    'json',
+  ),
+  decideSuspect: route('post', '/api/runs/{run}/exclusions', 'Decide on a sensor that may lie', DECIDERS, 'json'),
+  judgeAgain: route('post', '/api/runs/{run}/evaluations', 'Judge a run again', DECIDERS, 'json'),
+  readEvaluation: route('get', '/api/runs/{run}/evaluations/{evaluation}', 'An evaluation as it was given', ANYONE),
+  addNote: route('post', '/api/runs/{run}/notes', 'Write in the margin of a run', ANYONE, 'json'),
+  readReadings: route('get', '/api/runs/{run}/readings.csv', 'All readings of a run, in their units', ANYONE),
+  readFile: route('get', '/api/runs/{run}/file/{n}', 'A file of a run, byte for byte as it came', ANYONE),
+  listCycles: route('get', '/api/cycles', 'Cycles', ANYONE),
+  importCycle: route('post', '/api/cycles', 'Bring in a cycle document as a draft', ENGINEERS, 'json'),
+  readCycle: route('get', '/api/cycles/{code}/{issue}', 'An issue of a cycle', ANYONE),
+  releaseCycle: route(
+    'post',
+    '/api/cycles/{code}/{issue}/release',
+    'Release an issue; it is frozen from then on',
+    ENGINEERS,
+    'json',
+  ),
+  withdrawCycle: route(
+    'post',
+    '/api/cycles/{code}/{issue}/withdraw',
+    'Withdraw an issue from new runs',
+    ENGINEERS,
+    'json',
+  ),
+  listResins: route('get', '/api/resins', 'Resin sets', ANYONE),
+  importResin: route('post', '/api/resins', 'Bring in a resin document', ENGINEERS, 'json'),
+  readResin: route('get', '/api/resins/{code}', 'A resin set', ANYONE),
+  listParts: route('get', '/api/parts', 'Parts', ANYONE),
+  readPart: route('get', '/api/parts/{serial}', 'A part: what touched it, and what shares it', ANYONE),
+  addPartResult: route('post', '/api/parts/{serial}/results', 'Record a test or inspection', DECIDERS, 'json'),
+  find: route('get', '/api/find', 'Where a code leads', ANYONE),
+  readAudit: route('get', '/api/audit', 'The audit trail, latest first', ANYONE),
+  verifyAudit: route('get', '/api/audit/verify', 'Recompute every chain', ANYONE),
+  readOpenApi: route('get', '/api/openapi.json', 'This description', ANYONE),
+} as const satisfies Record<string, Route>;
+
+export type OperationName = keyof typeof ROUTES;
+
+function route<Sends extends Route['sends'] = 'nothing'>(
+  method: Route['method'],
+  path: string,
+  summary: string,
+  roles: readonly Role[],
+  sends: Sends = 'nothing' as Sends,
+) {
+  return { method, path, summary, roles, sends };
+}
