@@ -13,13 +13,14 @@ export function pictureInWords(chart: RunChart): string {
     ...temperatures.flatMap((line) => line.value.map((value) => value ?? Number.NEGATIVE_INFINITY)),
   );
   const strong = temperatures.filter(isStrong);
-  const gaps = chart.hatches.filter(({ isOfAll }) => isOfAll);
+  // One gap of the log is hatched on every strip.
+  const gaps = new Set(chart.hatches.filter(({ isOfAll }) => isOfAll).map(({ fromH, untilH }) => `${fromH} ${untilH}`));
   return [
     `Chart from ${at(chart.fromH)} to ${at(chart.untilH)}: ${count(temperatures.length, 'temperature')}, highest ${figure(highest, unit)}.`,
     strong.length > 0 ? `Named: ${listed(strong.map(({ label }) => label))}.` : '',
     ...chart.bands.filter(({ kind }) => kind === 'dwell').map(({ text }) => `${text}.`),
     ...chart.breaches.map((breach) => `Broken at ${at(breach.fromH)}: ${breach.text}.`),
-    gaps.length > 0 ? `${count(gaps.length, 'gap')} without readings.` : '',
+    gaps.size > 0 ? `${count(gaps.size, 'gap')} without readings.` : '',
     'The table holds the figures.',
   ]
     .filter(Boolean)

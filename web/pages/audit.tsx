@@ -46,7 +46,8 @@ export function AuditPage() {
           const lines = [...audit.lines, ...earlier.lines];
           const next = earlier.lines.length > 0 ? earlier.next : audit.next;
           return (
-            <section class="section" aria-label="Lines, latest first">
+            <section class="section">
+              <h2>Lines, latest first</h2>
               {lines.length === 0 ? <p>Nothing has been written yet.</p> : <AuditEntries lines={lines} />}
               {adding.problem && <Problem problem={adding.problem} />}
               {next !== null && (

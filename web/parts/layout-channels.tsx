@@ -93,7 +93,7 @@ function ChannelLine({
         type="button"
         class="quiet"
         onClick={() => onChange(withoutChannel(layout, n), `channels/${n}`)}
-        aria-label={`Leave column ${channel.column} out`}
+        aria-label={`Leave out column ${channel.column}`}
       >
         Leave out
       </button>

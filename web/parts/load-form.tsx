@@ -27,7 +27,7 @@ export function LoadFormView({ run }: { run: RunView }) {
     clear();
     route(`/runs/${run.run}`);
   });
-  const offered = cycles.filter((line) => line.status === 'released' || (line.code === code && line.issue === issue));
+  const offered = cycles.filter((line) => line.status !== 'withdrawn' || (line.code === code && line.issue === issue));
   const save = (event: Event) => {
     event.preventDefault();
     void saving.post();
@@ -51,7 +51,7 @@ export function LoadFormView({ run }: { run: RunView }) {
               { value: '', text: 'not known yet' },
               ...offered.map((line) => ({
                 value: `${line.code}\t${line.issue}`,
-                text: `${line.code} issue ${line.issue}: ${line.title}`,
+                text: `${line.code} issue ${line.issue}${line.status === 'released' ? '' : ` (${line.status})`}: ${line.title}`,
               })),
             ]}
             value={form.cycle}

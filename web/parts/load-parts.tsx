@@ -116,7 +116,7 @@ function PartLine({
         )}
         {asksLeakTest && <LeakTestFields part={part} cycle={cycle} onChange={onChange} />}
       </div>
-      <button type="button" class="quiet take-out" onClick={onRemove} aria-label={`Take ${part.part} out of the load`}>
+      <button type="button" class="quiet take-out" onClick={onRemove} aria-label={`Take out ${part.part}`}>
         Take out
       </button>
       <details open={hasMore}>

@@ -1,0 +1,71 @@
+import { readFileSync } from 'node:fs';
+import { createRequire } from 'node:module';
+import type { AxeResults } from 'axe-core';
+import type { Browser, Page } from 'playwright-core';
+import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { launchChromium, openPage, settle } from '../support/browser.ts';
+import { recordWorkshop } from '../support/recorded-workshop.ts';
+import { type ServedProgram, serveProgram } from '../support/served-program.ts';
+import { CASES, expectedStatuses, screensOf } from './screens.ts';
+
+// axe-core 4 with its own rules, WCAG 2.2 AA and best practice among them: Deque Systems, MPL-2.0.
+const AXE = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8');
+
+let program: ServedProgram;
+let browser: Browser;
+let screens: Readonly<Record<string, string>>;
+
+beforeAll(async () => {
+  program = await serveProgram();
+  screens = screensOf(await recordWorkshop(program.address, CASES));
+  browser = await launchChromium();
+});
+
+afterAll(async () => {
+  await browser?.close();
+  await program?.stop();
+});
+
+// Dark differs from light in its colours alone.
+describe.each([
+  ['light', null],
+  ['dark', ['color-contrast', 'link-in-text-block']],
+] as const)('every screen, %s', (colorScheme, rules) => {
+  it('has no violation that axe finds', { timeout: 300_000 }, async () => {
+    const { page, expectNoComplaints, close } = await openPage(browser, program.address, { colorScheme });
+    const found: string[] = [];
+    for (const [name, path] of Object.entries(screens)) {
+      await page.goto(path);
+      await settle(page);
+      const results = await runAxe(page, rules);
+      expect(results.passes.length, name).toBeGreaterThan(0);
+      found.push(...results.violations.flatMap(({ id, nodes }) => nodes.map((node) => `${name}: ${id}: ${node.html}`)));
+    }
+    expect(found).toEqual([]);
+    expectNoComplaints(expectedStatuses('no-such-run'));
+    await close();
+  });
+});
+
+async function runAxe(page: Page, rules: readonly string[] | null): Promise<AxeResults> {
+  await page.evaluate(() => {
+    for (const closed of document.querySelectorAll('details')) closed.open = true;
+  });
+  await page.evaluate(AXE);
+  return page.evaluate((names) => {
+    const { axe } = globalThis as unknown as { axe: { run(options: object): Promise<AxeResults> } };
+    return axe.run({ resultTypes: ['violations'], ...(names ? { runOnly: { type: 'rule', values: names } } : {}) });
+  }, rules);
+}
+
+describe('axe itself', () => {
+  it('would notice: a button without a name is found', async () => {
+    const { page, close } = await openPage(browser, program.address);
+    await page.goto('/');
+    await settle(page);
+    await page.evaluate(() => document.querySelector('main')?.append(document.createElement('button')));
+    const results = await runAxe(page, null);
+    expect(results.violations.map(({ id }) => id)).toContain('button-name');
+    await close();
+  });
+});

@@ -1,0 +1,98 @@
+import { mkdirSync, rmSync } from 'node:fs';
+import { fileURLToPath } from 'node:url';
+import type { Browser, Page } from 'playwright-core';
+import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { launchChromium, openPage, settle } from '../support/browser.ts';
+import { recordWorkshop } from '../support/recorded-workshop.ts';
+import { type ServedProgram, serveProgram } from '../support/served-program.ts';
+import { CASES, expectedStatuses, screensOf } from './screens.ts';
+
+const FOLDER = fileURLToPath(new URL('../screenshots/', import.meta.url));
+
+let program: ServedProgram;
+let browser: Browser;
+let screens: Readonly<Record<string, string>>;
+
+beforeAll(async () => {
+  program = await serveProgram();
+  screens = screensOf(await recordWorkshop(program.address, CASES));
+  browser = await launchChromium();
+  rmSync(FOLDER, { recursive: true, force: true });
+  mkdirSync(FOLDER, { recursive: true });
+});
+
+afterAll(async () => {
+  await browser?.close();
+  await program?.stop();
+});
+
+describe.each([
+  [360, 'light'],
+  [768, 'light'],
+  [1440, 'light'],
+  [360, 'dark'],
+  [768, 'dark'],
+  [1440, 'dark'],
+] as const)('at %i px, %s', (width, colorScheme) => {
+  it('every screen fits, and its picture is kept to be looked at', { timeout: 300_000 }, async () => {
+    const viewport = { width, height: 900 };
+    const { page, expectNoComplaints, close } = await openPage(browser, program.address, { viewport, colorScheme });
+    const tooWide: string[] = [];
+    for (const [name, path] of Object.entries(screens)) {
+      await page.goto(path);
+      await settle(page);
+      if ((await widthOf(page)) > width) tooWide.push(`${name}: ${await widthOf(page)} px`);
+      await page.screenshot({ path: `${FOLDER}${name}-${width}-${colorScheme}.png`, fullPage: true });
+    }
+    expect(tooWide).toEqual([]);
+    expectNoComplaints(expectedStatuses('no-such-run'));
+    await close();
+  });
+});
+
+describe('on paper', () => {
+  it('prints a record: verdict, findings and hashes, and nothing that can be pressed', {
+    timeout: 120_000,
+  }, async () => {
+    const { page, expectNoComplaints, close } = await openPage(browser, program.address, { colorScheme: 'dark' });
+    for (const name of ['run-does-not-conform', 'run-of-two-parts', 'part', 'cycle']) {
+      await page.goto(screens[name] ?? '');
+      await settle(page);
+      await page.emulateMedia({ media: 'print', colorScheme: 'dark' });
+      await page.pdf({
+        path: `${FOLDER}${name}-print.pdf`,
+        format: 'A4',
+        preferCSSPageSize: true,
+        printBackground: true,
+      });
+      // A4 at 96 px an inch, less its margins.
+      await page.setViewportSize({ width: 688, height: 1000 });
+      await page.screenshot({ path: `${FOLDER}${name}-print.png`, fullPage: true });
+      expect(
+        await page
+          .getByRole('button')
+          .filter({ visible: true, hasNotText: /min|°C|bar|–|\d$/ })
+          .count(),
+      ).toBe(0);
+      expect(await page.evaluate(() => getComputedStyle(document.documentElement).backgroundColor)).toBe(
+        'rgb(255, 255, 255)',
+      );
+      await page.setViewportSize({ width: 1440, height: 900 });
+      await page.emulateMedia({ media: 'screen', colorScheme: 'dark' });
+    }
+    await page.goto(screens['run-does-not-conform'] ?? '');
+    await settle(page);
+    await page.emulateMedia({ media: 'print' });
+    const said = await page.locator('body').innerText();
+    expect(said).toContain('Does not conform');
+    expect(said).toContain('Dwell 2, time');
+    expect(said).toMatch(/SHA-256 [0-9a-f]{64}/);
+    expect(said).toContain('says nothing about whether a vessel is safe to open');
+    expectNoComplaints();
+    await close();
+  });
+});
+
+function widthOf(page: Page): Promise<number> {
+  return page.evaluate(() => document.documentElement.scrollWidth);
+}

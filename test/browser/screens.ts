@@ -1,0 +1,42 @@
+/** Every screen there is, each with an address where it has something to show. Runs by the case they were recorded from. */
+export function screensOf(runs: ReadonlyMap<string, number>): Readonly<Record<string, string>> {
+  const run = (name: string) => {
+    const number = runs.get(name);
+    if (number === undefined) throw new Error(`no run was recorded from ${name}`);
+    return `/runs/${number}`;
+  };
+  return {
+    now: '/',
+    import: '/import',
+    runs: '/runs',
+    'runs-filtered-to-nothing': '/runs?vessel=Autoclave+1&part=none',
+    'run-conforms': run('sound'),
+    'run-does-not-conform': run('short-for-the-lagging'),
+    'run-to-decide': run('stuck'),
+    'run-with-a-gap': run('gap-in-dwell'),
+    'run-of-two-parts': run('mixed-load'),
+    'run-with-a-dip': run('dip-forgiven'),
+    load: `${run('mixed-load')}/load`,
+    parts: '/parts',
+    part: `/parts/${encodeURIComponent('part of short-for-the-lagging')}`,
+    cycles: '/cycles',
+    cycle: '/cycles/SR-180/B-sound',
+    'cycle-import': '/cycles/import',
+    resins: '/resins',
+    resin: '/resins/skerry-180',
+    recorders: '/recorders',
+    recorder: `/recorders/${encodeURIComponent('recorder of sound')}`,
+    audit: '/audit',
+    workshop: '/workshop',
+    find: '/find?code=SR',
+    'no-such-run': '/runs/9999',
+    nowhere: '/no/such/page',
+  };
+}
+
+export const CASES = ['sound', 'short-for-the-lagging', 'stuck', 'gap-in-dwell', 'mixed-load', 'dip-forgiven'];
+
+/** What a screen is answered with on purpose. */
+export function expectedStatuses(screen: string): readonly number[] {
+  return screen === 'no-such-run' ? [404] : [];
+}

@@ -1,0 +1,90 @@
+import { existsSync, readFileSync } from 'node:fs';
+import type { Layout } from '../../models/log/layout.ts';
+import type { Load } from '../../models/run/load.ts';
+
+/** Recorded runs as files: the same that the engine alone is held against. */
+export function recordedFile(name: string, file: string): Buffer {
+  return readFileSync(new URL(`../golden/recorded/${name}/${file}`, import.meta.url));
+}
+
+export function recordedPath(name: string, file: string): string {
+  return new URL(`../golden/recorded/${name}/${file}`, import.meta.url).pathname;
+}
+
+export function recordedJson<T>(name: string, file: string): T {
+  return JSON.parse(recordedFile(name, file).toString()) as T;
+}
+
+/** A workshop with these recorded runs on record, each with its own part; run numbers by case. */
+export async function recordWorkshop(address: string, names: readonly string[]): Promise<Map<string, number>> {
+  await post(address, '/api/workshop', {
+    name: 'Test workshop',
+    zone: 'Europe/Lisbon',
+    units: { temperature: '°C', pressure: 'bar', vacuum: 'bar' },
+  });
+  await post(address, '/api/vessels', { name: 'Autoclave 1', kind: 'autoclave' });
+  const runs = new Map<string, number>();
+  for (const name of names) runs.set(name, await recordRun(address, name));
+  return runs;
+}
+
+async function recordRun(address: string, name: string): Promise<number> {
+  const cycle = recordedJson<{ code: string; issue: string }>(name, 'cycle.json');
+  // Cases share a code; each keeps its own limits under an issue of its own.
+  const document = { ...cycle, issue: `${cycle.issue}-${name}` };
+  if (existsSync(new URL(`../golden/recorded/${name}/resin.json`, import.meta.url))) {
+    await post(address, '/api/resins', { document: recordedJson(name, 'resin.json') });
+  }
+  await post(address, '/api/cycles', { document });
+  const layout = recordedJson<Layout>(name, 'layout.json');
+  const channels = layout.channels.map(({ parts: _parts, ...channel }) => channel);
+  const received = await postBytes(address, `/api/imports?name=${name}.csv`, recordedFile(name, 'run.csv'));
+  const { run } = await post<{ run: number }>(address, `/api/imports/${received.id}/run`, {
+    layout: { ...layout, channels },
+    recorder: `recorder of ${name}`,
+    vessel: 'Autoclave 1',
+  });
+  await post(address, `/api/runs/${run}/load`, {
+    load: loadOf(layout, name),
+    cycle: { code: document.code, issue: document.issue },
+  });
+  return run;
+}
+
+function loadOf(layout: Layout, name: string): Load {
+  const named = [...new Set(layout.channels.flatMap(({ parts }) => parts ?? []))];
+  const serials = named.length > 0 ? named.map((part) => `${part} of ${name}`) : [`part of ${name}`];
+  const sensors = layout.channels
+    .filter(({ role }) => role === 'part')
+    .map(({ name: channel, parts }) => ({
+      channel,
+      parts: parts ? parts.map((part) => `${part} of ${name}`) : serials,
+    }));
+  return { format: 'dwellbook-load/1', workOrder: `W-${name}`, parts: serials.map((part) => ({ part })), sensors };
+}
+
+async function post<T>(address: string, path: string, body: unknown): Promise<T> {
+  return answer(
+    await fetch(address + path, {
+      method: 'POST',
+      headers: { 'content-type': 'application/json' },
+      body: JSON.stringify(body),
+    }),
+  );
+}
+
+async function postBytes(address: string, path: string, bytes: Buffer): Promise<{ id: number }> {
+  return answer(
+    await fetch(address + path, {
+      method: 'POST',
+      headers: { 'content-type': 'application/octet-stream' },
+      body: new Uint8Array(bytes),
+    }),
+  );
+}
+
+async function answer<T>(response: Response): Promise<T> {
+  const text = await response.text();
+  if (!response.ok) throw new Error(`${response.url} answered ${response.status}: ${text}`);
+  return JSON.parse(text) as T;
+}
