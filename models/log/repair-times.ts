@@ -1,5 +1,4 @@
 import { DomainError } from '../errors.ts';
-import { mendStepsBack } from './clock-set-back.ts';
 import type { Layout } from './layout.ts';
 import { medianIntervalMs } from './pieces.ts';
 import type { Repair } from './readings.ts';
@@ -9,6 +8,7 @@ import { partSameStamps } from './same-stamp.ts';
 import type { Scans } from './scan-table.ts';
 import { leaveOutSentTwice } from './scans-sent-twice.ts';
 import { stampsOfLayout } from './stamps-of-layout.ts';
+import { mendStepsBack } from './steps-back.ts';
 import { findZone } from './time-zone.ts';
 
 /** The scans that stay, each with an instant of its own. */
