@@ -1,11 +1,13 @@
 import { createHash } from 'node:crypto';
 import { DomainError } from '../../models/errors.ts';
+import { readHead } from '../../models/log/proposal/read-head.ts';
 import { readLog } from '../../models/log/read-log.ts';
 import type { ImportLine } from '../contract/imports.ts';
 import type { Recorder } from '../contract/recorders.ts';
 import { findRecorder, listRecorders } from '../store/recorders.ts';
 import { findRecordedByName } from '../store/runs.ts';
 import type { ActionParts } from './action-parts.ts';
+import { headOf } from './head-of.ts';
 import type { IncomingFile } from './incoming-file.ts';
 import { logFileOf } from './log-file-of.ts';
 import { receiveFile, refuseRecorded } from './receive-file.ts';
@@ -33,6 +35,8 @@ export async function bringInFile(parts: ActionParts, coming: ComingFile): Promi
   try {
     refuseTooLarge(coming);
     refuseGrown(parts, file);
+    // Rubbish is told from a log of an unknown layout before any layout is tried on it.
+    readHead(await headOf(file));
     const from = recorder === null ? await recognise(parts, file) : requireLayout(parts, recorder);
     return { run: await recordRun(parts, { files: [file], layout: from.layout.document, recorder: from.name }) };
   } catch (error) {
@@ -90,15 +94,11 @@ function requireLayout({ db }: ActionParts, name: string): WithLayout {
 
 async function recognise({ db }: ActionParts, file: IncomingFile): Promise<WithLayout> {
   const reading: WithLayout[] = [];
-  let lastRefusal: DomainError | null = null;
   for (const recorder of listRecorders(db).filter(hasLayout)) {
-    const refusal = await refusalBy(file, recorder);
-    if (refusal === null) reading.push(recorder);
-    else lastRefusal = refusal;
+    if (await isReadBy(file, recorder)) reading.push(recorder);
   }
   const [only] = reading;
   if (only !== undefined && reading.length === 1) return only;
-  if (reading.length === 0 && lastRefusal !== null && lastRefusal.code === 'log-not-text') throw lastRefusal;
   throw new DomainError(
     'layout-not-provable',
     reading.length === 0
@@ -108,12 +108,12 @@ async function recognise({ db }: ActionParts, file: IncomingFile): Promise<WithL
   );
 }
 
-async function refusalBy(file: IncomingFile, { layout }: WithLayout): Promise<DomainError | null> {
+async function isReadBy(file: IncomingFile, { layout }: WithLayout): Promise<boolean> {
   try {
     readLog([await logFileOf(file)], layout.document);
-    return null;
+    return true;
   } catch (error) {
-    if (error instanceof DomainError) return error;
+    if (error instanceof DomainError) return false;
     throw error;
   }
 }

@@ -1,7 +1,9 @@
 import { rm } from 'node:fs/promises';
 import { basename } from 'node:path';
+import { readHead } from '../../models/log/proposal/read-head.ts';
 import { discardImport } from '../actions/discard-import.ts';
 import { fileAtPath } from '../actions/file-at-path.ts';
+import { headOf } from '../actions/head-of.ts';
 import { fileOfImport } from '../actions/incoming-file.ts';
 import { receiveFile, refuseRecorded } from '../actions/receive-file.ts';
 import { recordRun } from '../actions/record-run.ts';
@@ -21,6 +23,8 @@ export const importHandlers: SomeHandlers<
     try {
       const file = fileAtPath(path, basename(query.name));
       refuseRecorded(parts, file);
+      // What is no text at all is refused at once; what is a text may wait for someone.
+      readHead(await headOf(file));
       const id = receiveFile(parts, { file, origin: 'upload', recorder: query.recorder });
       return await importView(parts.db, requireImport(parts.db, id));
     } finally {
