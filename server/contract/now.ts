@@ -19,7 +19,7 @@ export const now = z.object({
       name: z.string().nullable(),
       kind: z.enum(VESSEL_KINDS).nullable(),
       lastRun: runLine.nullable(),
-      /** Runs in the last 30 days of the workshop's log, and those of them that conform. */
+      /** Runs in the 30 days up to the workshop's last run, and those of them that conform. */
       recentRuns: z.number(),
       recentConforming: z.number(),
     }),

@@ -34,6 +34,7 @@ function asRefusal(error: unknown): DomainError | null {
   if (error instanceof DomainError) return error;
   if (!isExposed(error)) return null;
   if (error.type === 'entity.parse.failed') return new DomainError('document-not-json', error.message);
+  if (error.status === 404) return new DomainError('not-found', 'There is nothing at this address');
   if (error.status === 413) return new DomainError('too-large', 'The body is larger than is taken here');
   if (error.status === 415) return new DomainError('media-type-wrong', error.message);
   return new DomainError('invalid-request', error.message);

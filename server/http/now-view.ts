@@ -10,8 +10,10 @@ const LAST_RUNS = 12;
 const DAY_MS = 86_400_000;
 
 /** What each vessel did last, what needs someone, and the last runs. */
-export function nowView({ db, clock }: AppParts): Now {
-  const recently = new Date(clock() - 30 * DAY_MS).toISOString();
+export function nowView({ db }: AppParts): Now {
+  const lastRuns = listRuns(db, { limit: LAST_RUNS }).runs;
+  // Counted from the last run, so that a shop that was closed still sees its last month.
+  const recently = new Date(Date.parse(lastRuns[0]?.from ?? '1970-01-01T00:00:00Z') - 30 * DAY_MS).toISOString();
   const vessels = listVessels(db).map(({ name, kind }) => {
     const recent = listRuns(db, { vessel: name, from: recently, limit: 1 }).total;
     return {
@@ -26,7 +28,7 @@ export function nowView({ db, clock }: AppParts): Now {
     ...listWaitingImports(db).map((row): Need => ({ kind: 'unread-file', import: importLineOf(row) })),
     ...listRunsInNeed(db, MOST_NEEDS).map(needOf),
   ];
-  return { vessels, needs, lastRuns: listRuns(db, { limit: LAST_RUNS }).runs };
+  return { vessels, needs, lastRuns };
 }
 
 function needOf({ run, undecided }: RunInNeed): Need {
