@@ -2,7 +2,7 @@ import type { Resin } from '../../models/cure/resin.ts';
 import type { Cycle } from '../../models/cycle/cycle.ts';
 import type { ReadLog } from '../../models/log/readings.ts';
 import type { Exclusion, Load } from '../../models/run/load.ts';
-import type { RunSource, SensorDecision } from '../contract/runs.ts';
+import type { SensorDecision } from '../contract/runs.ts';
 import { oneHash, sha256OfDocument } from '../store/canonical.ts';
 import { type CycleRow, readCycleDocument, requireCycle } from '../store/cycles.ts';
 import type { Db } from '../store/database.ts';
@@ -39,6 +39,16 @@ export interface Changes {
   readonly load?: Load;
   readonly cycle?: CycleRow | null;
   readonly decisions?: readonly SensorDecision[];
+  /** All sources as they would stand, in order. */
+  readonly sources?: readonly SourceInput[];
+}
+
+/** One source's part in a judgement. */
+export interface SourceInput {
+  readonly chainSha256: string;
+  readonly layoutSha256: string;
+  readonly fileSha256s: readonly string[];
+  readonly readLog: () => ReadLog;
 }
 
 /** The inputs of a run's judgement; null while it has no load or no cycle. */
@@ -50,7 +60,7 @@ export function gatherInputs(db: Db, run: number, changes: Changes = {}): RunInp
   const cycle = readCycleDocument(db, cycleRow);
   const resin = cycle.cure === undefined ? undefined : findResin(db, cycle.cure.resin);
   const decisions = decisionsDocument([...readDecisions(db, run), ...(changes.decisions ?? [])]);
-  const sources = readSources(db, run);
+  const sources = changes.sources ?? sourceInputs(db, run);
   return {
     load,
     cycle,
@@ -64,14 +74,25 @@ export function gatherInputs(db: Db, run: number, changes: Changes = {}): RunInp
       resin: resin?.sha256 ?? null,
       decisions: sha256OfDocument(decisions),
     },
-    logSha256: oneHash(sources.flatMap(({ files }) => files.map(({ sha256 }) => sha256))),
-    readLog: () => readRunLog(db, sources),
+    logSha256: oneHash(sources.flatMap(({ fileSha256s }) => fileSha256s)),
+    readLog: () => readRunLog(sources),
   };
 }
 
+/** The sources a run is judged by. */
+export function sourceInputs(db: Db, run: number): (SourceInput & { readonly n: number })[] {
+  return readSources(db, run).map((source) => ({
+    n: source.n,
+    chainSha256: source.chainSha256,
+    layoutSha256: source.layoutSha256,
+    fileSha256s: source.files.map(({ sha256 }) => sha256),
+    readLog: () => readSourceLog(db, source),
+  }));
+}
+
 /** All readings of a run, of however many sources. */
-export function readRunLog(db: Db, sources: readonly (RunSource & { readonly id: number })[]): ReadLog {
-  return mergeLogs(sources.map((source) => readSourceLog(db, source)));
+export function readRunLog(sources: readonly SourceInput[]): ReadLog {
+  return mergeLogs(sources.map(({ readLog }) => readLog()));
 }
 
 function cycleOf(db: Db, named: { readonly code: string; readonly issue: string } | null): CycleRow | null {

@@ -43,6 +43,11 @@ export function runLoadPath(run: number): string {
   return `${runPath(run)}/load`;
 }
 
+/** Where a source's files are read again by another layout; `source` is its `n`. */
+export function runSourceLayoutPath(run: number, source: number): string {
+  return `${runPath(run)}/sources/${source}/layout`;
+}
+
 export function runExclusionsPath(run: number): string {
   return `${runPath(run)}/exclusions`;
 }

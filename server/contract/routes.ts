@@ -50,6 +50,13 @@ export const ROUTES = {
     ANYONE,
     'json',
   ),
+  readAgain: route(
+    'post',
+    '/api/runs/{run}/sources/{source}/layout',
+    'Read the files of a source again by another layout',
+    ENGINEERS,
+    'json',
+  ),
   decideSuspect: route('post', '/api/runs/{run}/exclusions', 'Decide on a sensor that may lie', DECIDERS, 'json'),
   judgeAgain: route('post', '/api/runs/{run}/evaluations', 'Judge a run again', DECIDERS, 'json'),
   readEvaluation: route('get', '/api/runs/{run}/evaluations/{evaluation}', 'An evaluation as it was given', ANYONE),

@@ -175,6 +175,9 @@ export const decideSuspectRequest = z.discriminatedUnion('decision', [
 ]);
 export type DecideSuspectRequest = z.infer<typeof decideSuspectRequest>;
 
+export const readAgainRequest = z.strictObject({ layout: layoutDocument, reason });
+export type ReadAgainRequest = z.infer<typeof readAgainRequest>;
+
 export const judgeAgainRequest = z.strictObject({ reason: reason.optional() });
 export type JudgeAgainRequest = z.infer<typeof judgeAgainRequest>;
 

@@ -1,6 +1,7 @@
 import { rm } from 'node:fs/promises';
 import { basename } from 'node:path';
 import { readHead } from '../../models/log/proposal/read-head.ts';
+import { addSource } from '../actions/add-source.ts';
 import { discardImport } from '../actions/discard-import.ts';
 import { fileAtPath } from '../actions/file-at-path.ts';
 import { headOf } from '../actions/head-of.ts';
@@ -37,8 +38,11 @@ export const importHandlers: SomeHandlers<
   },
   async recordRun(parts, { params, body }) {
     const row = requireImport(parts.db, numberIn(params, 'import'));
-    const files = [fileOfImport(parts.db, row)];
-    return { run: await recordRun(parts, { ...body, files, importId: row.id }) };
+    const { run, ...origin } = body;
+    const recording = { ...origin, files: [fileOfImport(parts.db, row)], importId: row.id };
+    if (run == null) return { run: await recordRun(parts, recording) };
+    await addSource(parts, run, recording);
+    return { run };
   },
   discardImport(parts, { params, body }) {
     discardImport(parts, numberIn(params, 'import'), body.reason);

@@ -4,13 +4,12 @@ import { chartOfRun } from '../../models/chart/chart-of-run.ts';
 import { DomainError } from '../../models/errors.ts';
 import type { PartEvaluation } from '../../models/evaluation/evaluation.ts';
 import type { ReadLog } from '../../models/log/readings.ts';
-import { gatherInputs, readRunLog } from '../actions/run-inputs.ts';
+import { gatherInputs, readRunLog, sourceInputs } from '../actions/run-inputs.ts';
 import type { ChartQuery } from '../contract/chart.ts';
 import type { Db } from '../store/database.ts';
 import { findLatestEvaluation } from '../store/evaluations.ts';
 import { findLoad } from '../store/loads.ts';
 import { requireRun } from '../store/runs.ts';
-import { readSources } from '../store/sources.ts';
 import { zoneOfWorkshop } from '../store/workshop.ts';
 import { cureCourses } from './cure-courses.ts';
 import { remember } from './remember.ts';
@@ -43,9 +42,9 @@ export function readChart(db: Db, run: number, query: ChartQuery): RunChart {
 
 /** Zooming asks for the same readings again and again; they never change while the run's sources do not. */
 function readLogOnce(db: Db, run: number): ReadLog {
-  const sources = readSources(db, run);
+  const sources = sourceInputs(db, run);
   const key = `log ${run} ${sources.map(({ chainSha256, layoutSha256 }) => `${chainSha256} ${layoutSha256}`).join(' ')}`;
-  return remember(db, key, () => readRunLog(db, sources));
+  return remember(db, key, () => readRunLog(sources));
 }
 
 function partOf(parts: readonly PartEvaluation[], serial: string | undefined): PartEvaluation | null {

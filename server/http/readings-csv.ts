@@ -1,15 +1,14 @@
 import { type Readings, scaledReading } from '../../models/log/readings.ts';
-import { readRunLog } from '../actions/run-inputs.ts';
+import { readRunLog, sourceInputs } from '../actions/run-inputs.ts';
 import type { Db } from '../store/database.ts';
 import { isoFromMs } from '../store/instants.ts';
 import { requireRun } from '../store/runs.ts';
-import { readSources } from '../store/sources.ts';
 import type { Download } from './handler.ts';
 
 /** All readings of a run as a table: instants in UTC, each channel in its own unit, an absent reading an empty cell. */
 export function readingsCsv(db: Db, run: number): Download {
   requireRun(db, run);
-  const { readings } = readRunLog(db, readSources(db, run));
+  const { readings } = readRunLog(sourceInputs(db, run));
   return { name: `run-${run}-readings.csv`, chunks: rowsOf(readings) };
 }
 

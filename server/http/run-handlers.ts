@@ -1,6 +1,7 @@
 import { addNote } from '../actions/add-note.ts';
 import { decideSuspect } from '../actions/decide-suspect.ts';
 import { judgeRun } from '../actions/judge-run.ts';
+import { readAgain } from '../actions/read-again.ts';
 import { setLoad } from '../actions/set-load.ts';
 import { requireEvaluation } from '../store/evaluations.ts';
 import { listRuns } from '../store/run-lines.ts';
@@ -17,6 +18,7 @@ export const runHandlers: SomeHandlers<
   | 'readRun'
   | 'readRunChart'
   | 'setLoad'
+  | 'readAgain'
   | 'decideSuspect'
   | 'judgeAgain'
   | 'readEvaluation'
@@ -30,6 +32,11 @@ export const runHandlers: SomeHandlers<
   async setLoad(parts, { params, body }) {
     const run = numberIn(params, 'run');
     await setLoad(parts, run, body);
+    return runView(parts.db, run);
+  },
+  async readAgain(parts, { params, body }) {
+    const run = numberIn(params, 'run');
+    await readAgain(parts, run, numberIn(params, 'source'), body);
     return runView(parts.db, run);
   },
   async decideSuspect(parts, { params, body }) {

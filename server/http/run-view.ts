@@ -15,7 +15,7 @@ import { marginOf } from './run-margin.ts';
 export function runView(db: Db, run: number): RunView {
   const line = findRunLine(db, run);
   if (line === undefined) throw new DomainError('not-found', `There is no run ${run}`, { run });
-  const sources = readSources(db, run).map(({ id: _id, ...source }) => source);
+  const sources = readSources(db, run).map(({ id: _id, recorderId: _recorderId, ...source }) => source);
   const load = findLoad(db, run);
   const cycleIssue = cycleIssueOf(db, load);
   const resin = resinOf(db, cycleIssue);

@@ -56,8 +56,14 @@ export function insertSource(db: Db, source: NewSource): { readonly n: number; r
   return { n, chainSha256 };
 }
 
+/** A source with the rows it is and comes from. */
+export interface StoredSource extends RunSource {
+  readonly id: number;
+  readonly recorderId: number | null;
+}
+
 /** The sources a run is judged by, in order: those no later one reads again. */
-export function readSources(db: Db, runId: number): (RunSource & { readonly id: number })[] {
+export function readSources(db: Db, runId: number): StoredSource[] {
   const rows = db
     .prepare<[number], SourceRow>(
       `SELECT run_sources.*, recorders.name AS recorder FROM run_sources
@@ -72,6 +78,7 @@ export function readSources(db: Db, runId: number): (RunSource & { readonly id: 
     files += own.length;
     return {
       id: row.id,
+      recorderId: row.recorder_id,
       n: row.n,
       recorder: row.recorder,
       layout: readDocument<Layout>(db, row.layout_sha256),
@@ -89,7 +96,7 @@ export function readSources(db: Db, runId: number): (RunSource & { readonly id: 
 }
 
 /** One source as the reader gave it. */
-export function readSourceLog(db: Db, source: RunSource & { readonly id: number }): ReadLog {
+export function readSourceLog(db: Db, source: StoredSource): ReadLog {
   return {
     readings: readReadings(db, source.id, source.scans, source.layout.channels),
     repairs: source.repairs,
@@ -129,6 +136,7 @@ interface SourceRow {
   readonly run_id: number;
   readonly n: number;
   readonly recorder: string | null;
+  readonly recorder_id: number | null;
   readonly layout_sha256: string;
   readonly chain_sha256: string;
   readonly scans: number;

@@ -1,8 +1,10 @@
 import { describe, expect, it } from 'vitest';
 import { evaluateLog } from '../../models/evaluation/judge.ts';
+import type { Layout } from '../../models/log/layout.ts';
 import { addNote } from '../../server/actions/add-note.ts';
 import { addPartResult } from '../../server/actions/add-part-result.ts';
 import { addRecorder } from '../../server/actions/add-recorder.ts';
+import { addSource } from '../../server/actions/add-source.ts';
 import { addVessel } from '../../server/actions/add-vessel.ts';
 import { decideSuspect } from '../../server/actions/decide-suspect.ts';
 import { discardImport } from '../../server/actions/discard-import.ts';
@@ -11,6 +13,7 @@ import { importResin } from '../../server/actions/import-resin.ts';
 import type { IncomingFile } from '../../server/actions/incoming-file.ts';
 import { type JudgingParts, judgeRun } from '../../server/actions/judge-run.ts';
 import { keepLayout } from '../../server/actions/keep-layout.ts';
+import { readAgain } from '../../server/actions/read-again.ts';
 import { receiveFile } from '../../server/actions/receive-file.ts';
 import { recordRun } from '../../server/actions/record-run.ts';
 import { releaseCycle } from '../../server/actions/release-cycle.ts';
@@ -37,6 +40,15 @@ const resin = {
   kinetics: { law: 'nth-order', A: 2600, E: 61300, n: 1 },
 };
 
+const otherLog = Buffer.from('time,V9\n2026-03-03 08:14:10,0.9\n2026-03-03 08:14:40,0.8\n');
+const otherLayout: Layout = {
+  format: 'dwellbook-layout/1',
+  name: 'vacuum recorder',
+  header: 1,
+  time: { columns: ['time'], pattern: 'yyyy-MM-dd HH:mm:ss', zone: 'UTC' },
+  channels: [{ column: 'V9', name: 'line 9', role: 'other', unit: 'bar' }],
+};
+
 function file(bytes: Uint8Array = log): IncomingFile {
   return { name: 'run.csv', sha256: sha256Of(bytes), bytes: bytes.length, chunks: () => [bytes] };
 }
@@ -57,6 +69,8 @@ const DEEDS: readonly [string, (parts: JudgingParts, n: number) => unknown][] = 
   ['release-cycle', (parts) => releaseCycle(parts, cycle.code, cycle.issue, 'ready')],
   ['record-run', (parts) => recordRun(parts, { files: [file()], layout, recorder: 'recorder 9', vessel: 'Oven 0' })],
   ['set-load', (parts, n) => setLoad(parts, 1, { ...loadOf(`P-${n}`), ...(n === 0 ? {} : { reason: 'again' }) })],
+  ['add-source', (parts) => addSource(parts, 1, { files: [file(otherLog)], layout: otherLayout })],
+  ['read-again', (parts) => readAgain(parts, 1, 2, { layout: { ...otherLayout, missing: ['-'] }, reason: 'a code' })],
   ['decide-suspect', (parts) => decideSuspect(parts, 1, { decision: 'keep', channel: 'TC1', reason: 'sound' })],
   ['judge-run', (parts) => judgeRun(parts, 1)],
   ['add-note', (parts) => addNote(parts, 1, { text: 'door opened' })],
@@ -96,7 +110,7 @@ describe('an action whose n-th insert fails', () => {
       expect(db.pragma('integrity_check', { simple: true }), verb).toBe('ok');
       expect(db.pragma('foreign_key_check'), verb).toEqual([]);
     }
-    expect(verifyChains(db)).toEqual({ holds: true, lines: expect.any(Number), sources: 1, firstBroken: null });
+    expect(verifyChains(db)).toEqual({ holds: true, lines: expect.any(Number), sources: 3, firstBroken: null });
   });
 });
 

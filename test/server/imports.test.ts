@@ -3,7 +3,7 @@ import { sha256Of } from '../../server/store/canonical.ts';
 import { liveApp, NOW, upload } from './live-app.ts';
 import { recordedCase } from './recorded-case.ts';
 
-const { log, layout } = recordedCase('untidy');
+const { log, layout, cycle } = recordedCase('untidy');
 
 describe('an uploaded file', () => {
   it('is shown with its first lines, and a layout that says what is proved, guessed and asked', async () => {
@@ -118,5 +118,38 @@ describe('an uploaded file', () => {
     expect(rows[1]).toMatch(/^2026-03-03T08:14:00.000Z,20,.*,$/);
     expect(rows[2]).toBe(`2026-03-03T08:14:10.000Z${','.repeat(layout.channels.length)},0.9`);
     expect((await app.get('/api/runs/1/file/2')).text).toBe(vacuum);
+  });
+});
+
+describe('a run', () => {
+  it('is read again by another layout, and what was read and judged first stays', async () => {
+    const app = await liveApp();
+    await app.post('/api/cycles', { document: cycle });
+    await upload(app, '/api/imports?name=run.csv', log);
+    const asTools = layout.channels.map((channel) =>
+      channel.role === 'part' ? { ...channel, role: 'tool' as const } : channel,
+    );
+    await app.post('/api/imports/1/run', { layout: { ...layout, channels: asTools }, recorder: 'recorder 1' });
+    const load = { format: 'dwellbook-load/1', parts: [{ part: 'P-A' }], sensors: [] };
+    const named = { code: cycle.code, issue: cycle.issue };
+    const first = (await app.post('/api/runs/1/load', { load, cycle: named })).body;
+    expect(first.verdict).toBe('cannot-tell');
+    const again = await app.post('/api/runs/1/sources/1/layout', { layout, reason: 'they were on the parts' });
+    expect(again.status, again.text).toBe(201);
+    expect(again.body.verdict).toBe('conforms');
+    expect(again.body.sources.map(({ n, recorder, layout: by }: never) => [n, recorder, by])).toEqual([
+      [2, 'recorder 1', layout],
+    ]);
+    expect((await app.get('/api/runs/1/evaluations/1')).body).toEqual(first.evaluation);
+    expect((await app.get('/api/audit/verify')).body).toMatchObject({ holds: true, sources: 2 });
+    const gone = await app.post('/api/runs/1/sources/1/layout', { layout, reason: 'once more' });
+    expect(gone.status).toBe(404);
+    const unfit = { ...layout, channels: layout.channels.filter(({ role }) => role !== 'vacuum') };
+    const channels = unfit.channels.map((channel) => ({ ...channel, name: `x ${channel.name}` }));
+    const set = { ...load, sensors: [{ channel: 'TC1', parts: ['P-A'] }] };
+    await app.post('/api/runs/1/load', { load: set, cycle: named, reason: 'TC1 was its own' });
+    const refused = await app.post('/api/runs/1/sources/2/layout', { layout: { ...unfit, channels }, reason: 'no' });
+    expect([refused.status, refused.body.type]).toEqual([422, '/problems/channel-unknown']);
+    expect((await app.get('/api/runs/1')).body.sources[0].n).toBe(2);
   });
 });
