@@ -1,25 +1,26 @@
 import type { CoolStage, HeatStage, RateLimit } from '../cycle/cycle.ts';
-import type { Interval } from '../run/intervals.ts';
-import { overlaps } from '../run/intervals.ts';
+import { type Interval, overlaps } from '../run/intervals.ts';
 import { celsiusFrom } from '../units.ts';
 import type { Dwells } from './dwells.ts';
 import { isExcluded, type JudgedSensor, type Judgement } from './judgement.ts';
 
 export type RampStage = (HeatStage | CoolStage) & { readonly rate: RateLimit };
 
-/** How fast one sensor ran a range: slowest and fastest in °C/min, positive in the direction of travel. */
+/** A rate in °C/min, positive in the direction of travel, and the stretch it was found over. */
+export interface Slope extends Interval {
+  readonly perMin: number;
+}
+
+/** How fast one sensor ran a range. */
 export interface RateCourse {
   readonly sensor: JudgedSensor;
-  readonly stretch: Interval | null;
   /** It ran from the first temperature to the second. */
   readonly ranWhole: boolean;
   /** It came to the end of the range, or was excluded on the way. */
   readonly isOver: boolean;
   readonly touchesGap: boolean;
-  readonly slowest: number | null;
-  readonly fastest: number | null;
-  readonly slowestMs: number | null;
-  readonly fastestMs: number | null;
+  readonly slowest: Slope | null;
+  readonly fastest: Slope | null;
 }
 
 /** The rate of one sensor over the range of a stage, looked for from `sinceMs` on. */
@@ -31,19 +32,20 @@ export function rateCourse(j: Judgement, s: JudgedSensor, stage: RampStage, sinc
   const second = celsiusFrom(rate.over[1], unit);
   const none: RateCourse = {
     sensor: s,
-    stretch: null,
     ranWhole: false,
     isOver: isExcluded(s),
     touchesGap: false,
     slowest: null,
     fastest: null,
-    slowestMs: null,
-    fastestMs: null,
   };
   if (s.track.length === 0) return none;
   const endMs = s.lastMs;
   const beyondSecond = s.track.crossings(second, sign > 0 ? '>=' : '<=');
-  const reachedMs = beyondSecond.firstOn(Math.max(sinceMs, s.track.firstMs));
+  // Where no dwell was entered before, a cold start is not the end of a cooling.
+  const isCold = sign < 0 && sinceMs <= j.log.from;
+  const reachedMs = isCold
+    ? beyondSecond.firstStartAfter(s.track.firstMs)
+    : beyondSecond.firstOn(Math.max(sinceMs, s.track.firstMs));
   const hasReached = reachedMs !== null && reachedMs <= endMs;
   const stop = hasReached ? reachedMs : turningPoint(s, sinceMs, endMs, sign);
   if (stop === null) return none;
@@ -51,51 +53,55 @@ export function rateCourse(j: Judgement, s: JudgedSensor, stage: RampStage, sinc
   const start = beyondFirst.lastStartUntil(stop);
   const cameBackMs = beyondFirst.lastEndUntil(stop);
   const isBeyondFirst = start !== null && (cameBackMs === null || cameBackMs < start);
-  if (!isBeyondFirst || stop <= start) return none;
-  const ranWhole = hasReached && start > s.track.firstMs;
+  // After a dwell a range is run by coming to it; only before the first may a sensor start beyond its beginning.
+  const isFromStart = start === s.track.firstMs;
+  if (!isBeyondFirst || stop <= start || (isFromStart && sinceMs > j.log.from)) return none;
+  const ranWhole = hasReached && !isFromStart;
   const stretch = { from: start, until: stop };
-  return { ...none, ...slopesIn(j, s, rate, stretch, sign), stretch, ranWhole, isOver: none.isOver || hasReached };
+  return { ...none, ...slopesIn(j, s, rate, stretch, sign), ranWhole, isOver: none.isOver || hasReached };
 }
 
-/** The instant a sensor turned: its furthest reading in the direction of travel. */
-function turningPoint(s: JudgedSensor, sinceMs: number, endMs: number, sign: 1 | -1): number | null {
-  const at = sign > 0 ? s.track.highestBetween(sinceMs, endMs) : s.track.lowestBetween(sinceMs, endMs);
-  return at < 0 ? null : s.track.timeMs(at);
+/** The instant a sensor turned: its hottest reading in heating, the coldest after that in cooling. */
+function turningPoint({ track }: JudgedSensor, sinceMs: number, endMs: number, sign: 1 | -1): number | null {
+  const hottest = track.highestBetween(sinceMs, endMs);
+  if (hottest < 0) return null;
+  const turned = sign > 0 ? hottest : track.lowestBetween(track.timeMs(hottest), endMs);
+  return track.timeMs(turned);
 }
 
-type Slowest = Pick<RateCourse, 'slowest' | 'fastest' | 'slowestMs' | 'fastestMs' | 'touchesGap'>;
+type Extremes = Pick<RateCourse, 'slowest' | 'fastest' | 'touchesGap'>;
 
-function slopesIn(j: Judgement, s: JudgedSensor, rate: RateLimit, stretch: Interval, sign: 1 | -1): Slowest {
-  const lasts = stretch.until - stretch.from;
+function slopesIn(j: Judgement, s: JudgedSensor, rate: RateLimit, stretch: Interval, sign: 1 | -1): Extremes {
   const windowMs = (rate.window ?? 0) * 60_000;
-  const isChord = rate.average === 'chord' || lasts < windowMs * (1 - 1e-9);
-  if (isChord) {
-    const chord = (sign * (s.track.valueAt(stretch.until) - s.track.valueAt(stretch.from))) / (lasts / 60_000);
+  if (rate.average === 'chord' || stretch.until - stretch.from < windowMs * (1 - 1e-9)) {
     const endsInGap = s.gaps.some(
       ({ from, until }) => isInside(stretch.from, from, until) || isInside(stretch.until, from, until),
     );
-    return { slowest: chord, fastest: chord, slowestMs: stretch.from, fastestMs: stretch.from, touchesGap: endsInGap };
+    return ofChord(s, stretch, sign, endsInGap);
   }
   const { perMin } = s.track.slopes(windowMs, j.longestGapMs);
   const allowanceMs = 1e-9 * windowMs;
-  const from = s.track.indexFrom(stretch.from - allowanceMs);
-  const until = s.track.indexUntil(stretch.until - windowMs + allowanceMs);
-  const lowest = perMin.indexOfLowest(from, until);
-  const highest = perMin.indexOfHighest(from, until);
+  const first = s.track.indexFrom(stretch.from - allowanceMs);
+  const last = s.track.indexUntil(stretch.until - windowMs + allowanceMs);
+  const lowest = perMin.indexOfLowest(first, last);
+  const highest = perMin.indexOfHighest(first, last);
   const touchesGap = overlaps(s.gaps, stretch);
   if (lowest < 0 || highest < 0) {
-    if (touchesGap) return { slowest: null, fastest: null, slowestMs: null, fastestMs: null, touchesGap };
-    const chord = (sign * (s.track.valueAt(stretch.until) - s.track.valueAt(stretch.from))) / (lasts / 60_000);
-    return { slowest: chord, fastest: chord, slowestMs: stretch.from, fastestMs: stretch.from, touchesGap };
+    return touchesGap ? { slowest: null, fastest: null, touchesGap } : ofChord(s, stretch, sign, touchesGap);
   }
-  const [slow, fast] = sign > 0 ? [lowest, highest] : [highest, lowest];
-  return {
-    slowest: sign * perMin.value[slow]!,
-    fastest: sign * perMin.value[fast]!,
-    slowestMs: s.track.timeMs(slow),
-    fastestMs: s.track.timeMs(fast),
-    touchesGap,
+  const slope = (at: number): Slope => {
+    const from = s.track.timeMs(at);
+    return { perMin: sign * perMin.value[at]!, from, until: from + windowMs };
   };
+  const [slow, fast] = sign > 0 ? [lowest, highest] : [highest, lowest];
+  return { slowest: slope(slow), fastest: slope(fast), touchesGap };
+}
+
+/** The rate from one end of a stretch to the other. */
+function ofChord({ track }: JudgedSensor, stretch: Interval, sign: 1 | -1, touchesGap: boolean): Extremes {
+  const rise = track.valueAt(stretch.until) - track.valueAt(stretch.from);
+  const slope = { perMin: (sign * rise) / ((stretch.until - stretch.from) / 60_000), ...stretch };
+  return { slowest: slope, fastest: slope, touchesGap };
 }
 
 function isInside(instantMs: number, fromMs: number, untilMs: number): boolean {

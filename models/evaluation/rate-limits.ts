@@ -1,11 +1,11 @@
-import type { Bounds } from '../cycle/cycle.ts';
+import type { Bounds, RateSubject } from '../cycle/cycle.ts';
 import { celsiusDifferenceFrom, type TemperatureUnit, temperatureDifferenceFromCelsius } from '../units.ts';
 import { airSubject, derivedSubject, meanSubject } from './clock.ts';
 import type { Dwells } from './dwells.ts';
 import type { Outcome } from './evaluation.ts';
-import { type Found, isAtLeast, isAtMost, say, unfinished } from './finding.ts';
+import { capitalised, type Found, isAtLeast, isAtMost, say, unfinished } from './finding.ts';
 import { isExcluded, type JudgedSensor, type Judgement } from './judgement.ts';
-import { entersBefore, type RampStage, type RateCourse, rateCourse } from './rate-course.ts';
+import { entersBefore, type RampStage, type RateCourse, rateCourse, type Slope } from './rate-course.ts';
 
 /** `<stage>/slowest` and `<stage>/fastest` of one stage of heating or cooling. */
 export function rateLimits(j: Judgement, dwells: Dwells, stageAt: number): Found[] {
@@ -40,22 +40,20 @@ function extremeRate(
   which: 'slowest' | 'fastest',
 ): Found {
   const unit = j.cycle.units.rate ?? `${j.cycle.units.temperature}/min`;
-  const bounds: Bounds = which === 'slowest' ? { atLeast: stage.rate.atLeast! } : { atMost: stage.rate.atMost! };
-  const limitCPerMin = cPerMin(which === 'slowest' ? stage.rate.atLeast! : stage.rate.atMost!, unit);
+  const limit = (which === 'slowest' ? stage.rate.atLeast : stage.rate.atMost)!;
+  const bounds: Bounds = which === 'slowest' ? { atLeast: limit } : { atMost: limit };
+  const limitCPerMin = cPerMin(limit, unit);
   const keeps = (rate: number) => (which === 'slowest' ? isAtLeast(rate, limitCPerMin) : isAtMost(rate, limitCPerMin));
-  const judged = courses.filter((course) => course[which] !== null && (which === 'fastest' || counts(course)));
-  const extreme = judged.reduce<RateCourse | null>(
-    (best, next) =>
-      best === null || (which === 'slowest' ? next.slowest! < best.slowest! : next.fastest! > best.fastest!)
-        ? next
-        : best,
-    null,
-  );
-  const outcome = decide(j, courses, extreme, which, keeps);
-  const rate = extreme === null ? null : inUnit(extreme[which]!, unit);
-  const startMs = extreme === null ? null : which === 'slowest' ? extreme.slowestMs : extreme.fastestMs;
-  const isWindow = stage.rate.average === 'window' && startMs !== null && startMs !== extreme?.stretch?.from;
-  const endMs = isWindow ? startMs + stage.rate.window! * 60_000 : (extreme?.stretch?.until ?? null);
+  const sign = which === 'slowest' ? -1 : 1;
+  const extreme = courses
+    .filter((course) => course[which] !== null && (which === 'fastest' || counts(course)))
+    .reduce<RateCourse | null>(
+      (best, next) => (best === null || sign * next[which]!.perMin > sign * best[which]!.perMin ? next : best),
+      null,
+    );
+  const slope = extreme?.[which] ?? null;
+  const outcome = decide(j, courses, slope, which, keeps);
+  const rate = slope === null ? null : inUnit(slope.perMin, unit);
   return {
     limit: `${stage.name}/${which}`,
     outcome,
@@ -64,8 +62,8 @@ function extremeRate(
     bounds,
     unit,
     sensor: extreme?.sensor.name ?? null,
-    fromMs: startMs,
-    untilMs: endMs,
+    fromMs: slope?.from ?? null,
+    untilMs: slope?.until ?? null,
     because: sentence(j, stage, which, extreme, rate, unit, bounds, outcome),
   };
 }
@@ -78,18 +76,18 @@ function counts(course: RateCourse): boolean {
 function decide(
   j: Judgement,
   courses: readonly RateCourse[],
-  extreme: RateCourse | null,
+  slope: Slope | null,
   which: 'slowest' | 'fastest',
   keeps: (rate: number) => boolean,
 ): Outcome {
-  if (extreme !== null && !keeps(extreme[which]!)) return 'not-met';
+  if (slope !== null && !keeps(slope.perMin)) return 'not-met';
   const believed = courses.filter(({ sensor }) => !isExcluded(sensor));
   const someRanWhole = courses.some(({ ranWhole }) => ranWhole);
-  if (extreme === null || (believed.length === 0 && !someRanWhole)) return unfinished(j);
-  if (courses.some(({ touchesGap }) => touchesGap)) return 'cannot-tell';
+  if (slope === null || (believed.length === 0 && !someRanWhole)) return unfinished(j);
   const waits = believed.filter(({ ranWhole, isOver }) => !ranWhole && !(which === 'fastest' && isOver));
+  if (waits.length > 0 && j.isOpen) return 'pending';
+  if (courses.some(({ touchesGap }) => touchesGap)) return 'cannot-tell';
   if (waits.length === 0) return 'met';
-  if (j.isOpen) return 'pending';
   if (which === 'slowest') return 'cannot-tell';
   return waits.every(({ fastest }) => fastest !== null) ? 'met' : 'cannot-tell';
 }
@@ -110,12 +108,19 @@ function sentence(
   if (extreme === null) {
     return j.isOpen ? `${name} has not run ${range} yet; ${asked}.` : `No sensor is seen to run ${range}; ${asked}.`;
   }
-  const average = rate.average === 'window' ? `over ${rate.window} min` : 'from end to end';
+  const { from, until } = extreme[which]!;
+  const isWindow = rate.average === 'window' && Math.abs(until - from - rate.window! * 60_000) < 1;
+  const average = isWindow ? `over ${rate.window} min` : 'from end to end';
   const part = extreme.ranWhole
     ? range
     : `on the part of the range ${rate.over[0]} to ${rate.over[1]} ${temperature} it ran`;
   const open = outcome === 'cannot-tell' ? '; not every sensor is seen over the whole range' : '';
-  return `${extreme.sensor.name} was ${which} with ${say(observed!, 2)} ${unit} ${average} ${part}; ${asked}${open}.`;
+  return `${subjectInWords(extreme.sensor, rate.of)} was ${which} with ${say(observed!, 2)} ${unit} ${average} ${part}; ${asked}${open}.`;
+}
+
+function subjectInWords({ name }: JudgedSensor, of: RateSubject): string {
+  if (of === 'leading' || of === 'lagging') return `The ${of} sensor`;
+  return of === 'mean' ? 'The mean' : capitalised(name);
 }
 
 function cPerMin(rate: number, unit: string): number {
