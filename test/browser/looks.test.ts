@@ -83,6 +83,8 @@ describe('on paper', () => {
     await page.goto(screens['run-does-not-conform'] ?? '');
     await settle(page);
     await page.emulateMedia({ media: 'print' });
+    // What is not shown on paper is not said there either.
+    // biome-ignore lint/performance/useDomNodeTextContent: text that is hidden must not count
     const said = await page.locator('body').innerText();
     expect(said).toContain('Does not conform');
     expect(said).toContain('Dwell 2, time');

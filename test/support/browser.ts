@@ -42,7 +42,7 @@ export async function openPage(
   const page = await context.newPage();
   const complaints: string[] = [];
   page.on('console', (message) => {
-    if (message.type() === 'error' || message.type() === 'warning') complaints.push(message.text());
+    if (message.type() === 'error' || message.type() === 'warning') complaints.push(`${message.text()} ${message.location().url}`);
   });
   page.on('pageerror', (error) => complaints.push(String(error)));
   return {

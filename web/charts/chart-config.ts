@@ -19,7 +19,8 @@ export function chartConfig(scene: Scene, width: number, zone: string): LineConf
       animation: false,
       parsing: false,
       normalized: true,
-      responsive: true,
+      // The painter sizes it: on paper as on the screen.
+      responsive: false,
       maintainAspectRatio: false,
       events: [],
       layout: { padding: { right: rightRoom(width) } },

@@ -78,6 +78,7 @@ export function drawDips(pen: Pen, dips: readonly DipArc[]): void {
 /** A breach is underlined heavily, with its minutes written on it. */
 export function drawBreaches(pen: Pen, breaches: readonly Breach[], lit: string | null): void {
   const { ctx, ink } = pen;
+  const written: Box[] = [];
   for (const breach of breaches) {
     if (!pen.has(breach.strip)) continue;
     const area = pen.area(breach.strip);
@@ -92,8 +93,24 @@ export function drawBreaches(pen: Pen, breaches: readonly Breach[], lit: string 
     const half = ctx.measureText(breach.text).width / 2;
     const middle = Math.min(Math.max((left + right) / 2, area.left + half), area.right - half);
     const isLow = y + 22 > area.bottom;
-    write(pen, breach.text, middle, isLow ? y - 14 : y + 14, 'center', ink.red);
+    const at = freePlace(written, { middle, half, y: isLow ? y - 14 : y + 14 }, isLow ? -16 : 16);
+    written.push(at);
+    write(pen, breach.text, at.middle, at.y, 'center', ink.red);
   }
+}
+
+interface Box {
+  readonly middle: number;
+  readonly half: number;
+  readonly y: number;
+}
+
+/** The nearest line of writing, from where it should stand onwards, that no other text has taken. */
+function freePlace(taken: readonly Box[], box: Box, step: number): Box {
+  const isTaken = taken.some(
+    (other) => Math.abs(other.y - box.y) < 15 && Math.abs(other.middle - box.middle) < other.half + box.half + 6,
+  );
+  return isTaken ? freePlace(taken, { ...box, y: box.y + step }, step) : box;
 }
 
 export function drawDots(pen: Pen, dots: readonly Dot[]): void {
@@ -109,6 +126,14 @@ function drawDot(pen: Pen, dot: Dot): void {
   ctx.fillStyle = ink.ink;
   ctx.fill();
   letters(pen);
-  const isLate = x + ctx.measureText(dot.text).width + 12 > pen.area(dot.strip).right;
-  write(pen, dot.text, isLate ? x - 10 : x + 10, y + 8, isLate ? 'right' : 'left', ink.ink);
+  const { left, right } = pen.area(dot.strip);
+  const room = ctx.measureText(dot.text).width + 12;
+  // Beside the dot where there is room on either side, else from the strip's left edge.
+  const [from, align] =
+    x + room < right
+      ? [x + 10, 'left' as const]
+      : x - room > left
+        ? [x - 10, 'right' as const]
+        : [left + 4, 'left' as const];
+  write(pen, dot.text, from, y + 10, align, ink.ink);
 }

@@ -32,14 +32,14 @@ export function geometryPlugin(scene: Scene): Plugin<'line'> {
       }),
     afterDatasetsDraw: (chart: Chart) =>
       drawn(penOf(chart, scene.ink), (pen) => {
-        if (scene.stretch) drawStretch(pen, scene.stretch);
+        if (scene.stretch && !scene.ink.isOnPaper) drawStretch(pen, scene.stretch);
         drawDips(pen, scene.chart.dips);
         drawBreaches(pen, scene.chart.breaches, scene.lit);
         drawDots(pen, scene.chart.dots);
         drawBandNames(pen, scene.chart);
         drawNames(pen, scene.chart);
         if (scene.selection) drawSelection(pen, scene.selection);
-        if (scene.cursorH !== null) drawCursor(pen, scene.chart, scene.cursorH);
+        if (scene.cursorH !== null && !scene.ink.isOnPaper) drawCursor(pen, scene.chart, scene.cursorH);
       }),
   };
 }

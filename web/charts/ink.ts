@@ -12,6 +12,8 @@ export interface Ink {
   readonly other: string;
   readonly hatch: string;
   readonly font: string;
+  /** On paper nothing is pointed at. */
+  readonly isOnPaper: boolean;
 }
 
 export function readInk(): Ink {
@@ -30,5 +32,25 @@ export function readInk(): Ink {
     other: of('--chart-other'),
     hatch: of('--chart-hatch'),
     font: of('--font'),
+    isOnPaper: false,
+  };
+}
+
+/** Black on white; the accent and red stay, where a printer has them. */
+export function inkOnPaper(): Ink {
+  return {
+    ...readInk(),
+    ink: '#000000',
+    soft: '#222222',
+    faint: '#444444',
+    hairline: '#c8c8c8',
+    paper: '#ffffff',
+    accent: '#0f6b5c',
+    band: '#0f6b5c1c',
+    red: '#a3281f',
+    amber: '#835300',
+    other: '#777777',
+    hatch: '#777777',
+    isOnPaper: true,
   };
 }

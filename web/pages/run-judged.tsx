@@ -49,6 +49,20 @@ export function RunJudged({ run, evaluation, again }: { run: RunView; evaluation
           </fieldset>
         )}
         {part && <FindingList part={part} run={run} evaluation={evaluation.document} lit={lit} onLight={setLit} />}
+        <div class="on-paper">
+          {parts
+            .filter((one) => one !== part)
+            .map((one) => (
+              <FindingList
+                key={partName(one)}
+                part={one}
+                run={run}
+                evaluation={evaluation.document}
+                lit={null}
+                onLight={setLit}
+              />
+            ))}
+        </div>
       </div>
       <div class="rest">
         <RunPapers run={run} evaluation={evaluation} again={again} />

@@ -57,7 +57,9 @@ export function FindingList({
 
 /** Moves the focus to the finding after the one in focus, and from the last back to the first. */
 export function focusNextFinding(list: HTMLElement | null): void {
-  const buttons = [...(list?.querySelectorAll<HTMLButtonElement>('.finding > button') ?? [])];
+  const all = [...(list?.querySelectorAll<HTMLButtonElement>('.finding > button') ?? [])];
+  // Lists that are there for paper alone are passed by.
+  const buttons = all.filter((button) => button.offsetParent !== null);
   const here = buttons.indexOf(document.activeElement as HTMLButtonElement);
   buttons[(here + 1) % buttons.length]?.focus();
 }
