@@ -169,12 +169,12 @@ describe('runOverRange', () => {
         layout,
         'temperature',
         timeMs,
-        Float64Array.of(1800, 1750, tenths, tenths),
+        Float64Array.of(1800, 1750, tenths, 50),
         toFahrenheit,
         undefined,
       );
       const run = runOverRange(falling, [350, value], 0)!;
-      expect(run.endMs).toBeCloseTo(120_000, 3);
+      expect(run.endMs).toBeCloseTo(120_000, 2);
     }
   });
 
