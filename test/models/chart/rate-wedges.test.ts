@@ -160,7 +160,7 @@ describe('runOverRange', () => {
   });
 
   it('reaches a temperature that a reading shows exactly, though scale and unit leave dust', () => {
-    const timeMs = Float64Array.from([0, 60_000, 120_000, 180_000]);
+    const timeMs = Float64Array.from([0, 60_000, 120_000, 180_000, 240_000]);
     const layout = { column: 'T', name: 'T', role: 'part', unit: '°C', scale: 0.1 } as const;
     const toFahrenheit = temperatureConversion('°C', '°F')!;
     for (let tenths = 101; tenths < 1700; tenths += 7) {
@@ -169,7 +169,7 @@ describe('runOverRange', () => {
         layout,
         'temperature',
         timeMs,
-        Float64Array.of(1800, 1750, tenths, 50),
+        Float64Array.of(1800, 1750, tenths, tenths, 50),
         toFahrenheit,
         undefined,
       );
