@@ -63,14 +63,16 @@ export function readPartResults(db: Db, partId: number): PartResult[] {
     .map(({ tested_at, at, by, ...result }) => ({ ...result, at: tested_at, deed: { at, by } }));
 }
 
-/** Parts on one line each, those cured last first; `q` is any stretch of serial, title, drawing or work order. */
+/** Parts on one line each, those that came last first; `q` is any stretch of serial, title, drawing or work order. */
 export function listParts(db: Db, { q = '', limit }: { q?: string | undefined; limit: number }): Parts {
   const values = { q: `%${q.replace(/[\\%_]/g, '\\$&')}%` };
-  const total = db.prepare<object, number>(`${MATCHES} SELECT count(*) FROM matches`).pluck().get(values) ?? 0;
+  const found = q === '' ? 'SELECT id FROM parts' : FOUND;
+  const total = db.prepare<object, number>(`SELECT count(*) FROM (${found})`).pluck().get(values) ?? 0;
   const rows = db
     .prepare<object, PartRow>(
-      `${MATCHES} SELECT parts.*, ${VERDICT} AS verdict, ${FAILED} AS failed
-       FROM matches AS parts ORDER BY from_ms DESC, serial LIMIT @limit`,
+      `SELECT parts.id, serial, ${latest('title')} AS title, ${latest('drawing')} AS drawing, ${VERDICT} AS verdict,
+         ${FAILED} AS failed
+       FROM parts WHERE id IN (${found}) ORDER BY id DESC LIMIT @limit`,
     )
     .all({ ...values, limit });
   return { parts: rows.map((row) => lineOf(db, row)), total };
@@ -95,10 +97,11 @@ export function readSharers(
 ): { serial: string; verdict: PartLine['verdict']; failedTest: boolean; onTool: boolean }[] {
   return db
     .prepare<object, { serial: string; verdict: PartLine['verdict']; failed: number; onTool: number }>(
-      `WITH about AS (SELECT part_id, tool, max(id) FROM part_particulars GROUP BY part_id)
-       SELECT serial, coalesce(about.tool = @tool, 0) AS onTool, ${VERDICT} AS verdict, ${FAILED} AS failed
-       FROM parts LEFT JOIN about ON about.part_id = parts.id
-       WHERE about.tool = @tool OR serial IN (SELECT value FROM json_each(@serials)) ORDER BY serial`,
+      `SELECT serial, coalesce(${latest('tool')} = @tool, 0) AS onTool, ${VERDICT} AS verdict, ${FAILED} AS failed
+       FROM parts WHERE id IN (
+         SELECT part_id FROM part_particulars AS about WHERE tool = @tool AND ${IS_LATEST}
+         UNION SELECT id FROM parts WHERE serial IN (SELECT value FROM json_each(@serials)))
+       ORDER BY serial`,
     )
     .all({ serials: JSON.stringify(serials), tool })
     .map(({ serial, verdict, failed, onTool }) => ({
@@ -116,39 +119,47 @@ const VERDICT = `(
 
 const FAILED = "EXISTS (SELECT 1 FROM part_results WHERE part_id = parts.id AND outcome = 'failed')";
 
+/** What a part's particulars say now. */
+function latest(column: 'title' | 'drawing' | 'tool'): string {
+  return `(SELECT ${column} FROM part_particulars WHERE part_id = parts.id ORDER BY id DESC LIMIT 1)`;
+}
+
+const IS_LATEST = 'about.id = (SELECT max(id) FROM part_particulars WHERE part_id = about.part_id)';
+
+const FOUND = `
+  SELECT id FROM parts WHERE serial LIKE @q ESCAPE '\\'
+  UNION
+  SELECT part_id FROM part_particulars AS about
+  WHERE (title LIKE @q ESCAPE '\\' OR drawing LIKE @q ESCAPE '\\') AND ${IS_LATEST}
+  UNION
+  SELECT part_id FROM loads JOIN load_parts ON load_id = loads.id
+  WHERE work_order LIKE @q ESCAPE '\\' AND loads.id = (SELECT max(id) FROM loads AS other WHERE other.run_id = loads.run_id)`;
+
 interface PartRow {
   readonly id: number;
   readonly serial: string;
   readonly title: string | null;
   readonly drawing: string | null;
-  readonly quantity: number | null;
-  readonly from_ms: number | null;
   readonly verdict: PartLine['verdict'];
   readonly failed: number;
 }
 
-const MATCHES = `
-  WITH latest AS (SELECT run_id, max(id) AS id FROM loads GROUP BY run_id),
-  cured AS (
-    SELECT part_id, max(runs.from_ms) AS from_ms, max(quantity) AS quantity, group_concat(work_order, ' ') AS orders
-    FROM latest JOIN load_parts ON load_id = latest.id JOIN runs ON runs.id = latest.run_id
-    JOIN loads ON loads.id = latest.id GROUP BY part_id),
-  about AS (SELECT part_id, title, drawing, max(id) FROM part_particulars GROUP BY part_id),
-  matches AS (
-    SELECT parts.id, serial, title, drawing, quantity, from_ms FROM parts
-    LEFT JOIN cured ON cured.part_id = parts.id LEFT JOIN about ON about.part_id = parts.id
-    WHERE serial LIKE @q ESCAPE '\\' OR title LIKE @q ESCAPE '\\' OR drawing LIKE @q ESCAPE '\\'
-       OR orders LIKE @q ESCAPE '\\')`;
-
 function lineOf(db: Db, row: PartRow): PartLine {
+  const cured = db
+    .prepare<[number], { run: number; fromMs: number; quantity: number }>(
+      `SELECT runs.id AS run, from_ms AS fromMs, quantity
+       FROM load_parts JOIN loads ON loads.id = load_id JOIN runs ON runs.id = run_id
+       WHERE part_id = ? AND loads.id = (SELECT max(id) FROM loads WHERE run_id = runs.id) ORDER BY from_ms, runs.id`,
+    )
+    .all(row.id);
   return {
     serial: row.serial,
     title: row.title,
     drawing: row.drawing,
-    quantity: row.quantity ?? 1,
-    runs: readRunsOfPart(db, row.id),
+    quantity: Math.max(1, ...cured.map(({ quantity }) => quantity)),
+    runs: cured.map(({ run }) => run),
     verdict: row.verdict,
     failedTest: row.failed === 1,
-    lastRunAt: row.from_ms === null ? null : isoFromMs(row.from_ms),
+    lastRunAt: cured.length === 0 ? null : isoFromMs(cured[cured.length - 1]?.fromMs ?? 0),
   };
 }
