@@ -5,6 +5,7 @@ import { gapsOf } from '../run/gaps.ts';
 import { firstHold, type Interval } from '../run/intervals.ts';
 import {
   bandC,
+  closesClocks,
   type DwellCourse,
   dwellCourses,
   enters,
@@ -81,12 +82,12 @@ function closes(j: Judgement, course: DwellCourse, rule: Clock['closes']): Clock
     const subject = rule === 'mean-leaves' ? meanSubject(j) : airSubject(j);
     if (subject === null) return null;
     const enteredMs = enters(j, subject, course.stage, course);
-    const leaving = leaves(j, subject, course.stage, enteredMs, { ...course, colderMs: Number.POSITIVE_INFINITY });
+    const leaving = leaves(j, subject, course.stage, enteredMs, course);
     return leaving === null ? null : { ...leaving, by: subject.name };
   }
   const believed = j.sensors.flatMap((s, k) => {
     const leaving = course.left[k] ?? null;
-    return leaving !== null && leaving.ms <= s.untilMs ? [{ ...leaving, by: s.name }] : [];
+    return closesClocks(s, leaving) ? [{ ...leaving, by: s.name }] : [];
   });
   if (rule === 'first-leaves') return extreme(believed, (a, b) => a.ms < b.ms);
   const awaited = j.sensors.filter((s, k) => !isExcluded(s) && course.left[k] === null);

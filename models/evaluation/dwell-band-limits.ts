@@ -8,7 +8,7 @@ import type { Dwells } from './dwells.ts';
 import type { Outcome } from './evaluation.ts';
 import { type Found, say, unfinished } from './finding.ts';
 import { guarded } from './guarded.ts';
-import { isExcluded, type JudgedSensor, type Judgement, someBelieved } from './judgement.ts';
+import { isExcluded, type JudgedSensor, type Judgement, openingGaps, someBelieved } from './judgement.ts';
 
 /** `<dwell>/upper`: the highest reading of any judged sensor between its entering and its leaving. */
 export function dwellUpperLimit(j: Judgement, dwells: Dwells, index: number): Found[] {
@@ -121,7 +121,7 @@ function mayOvershoot(
   const stretch = stretchInside(j, s, course, k);
   if (stretch === null) return false;
   const { upperC } = bandC(j, course.stage, s, course.shift);
-  return s.gaps.some((gap) => {
+  return openingGaps(j, s.gaps).some((gap) => {
     if (gap.from >= stretch.until || gap.until <= stretch.from) return false;
     const hottest = furthest(gap, 1, j.changesAtMost, stretch);
     if (hottest === null || hottest <= upperC) return false;

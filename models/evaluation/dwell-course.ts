@@ -1,6 +1,6 @@
 import type { DwellStage } from '../cycle/cycle.ts';
 import { credited } from '../run/gaps.ts';
-import { firstHold, type Interval } from '../run/intervals.ts';
+import { firstHold, type Interval, within } from '../run/intervals.ts';
 import { celsiusFrom, round9 } from '../units.ts';
 import { type Fill, sensorStanding } from './holding.ts';
 import { isExcluded, type JudgedSensor, type Judgement, ruleFigures } from './judgement.ts';
@@ -8,7 +8,7 @@ import { isExcluded, type JudgedSensor, type Judgement, ruleFigures } from './ju
 /** How a dwell's band is moved for a guarded decision, in expanded uncertainties: 1 inwards, −1 outwards. */
 export type Shift = -1 | 0 | 1;
 
-/** The instant a sensor left a dwell; not final where the record stops before that is settled. */
+/** The instant a sensor left a dwell; not final where its record, or belief in it, stops before that is settled. */
 export interface Leaving {
   readonly ms: number;
   /** Through `upper`, towards a hotter dwell. */
@@ -26,6 +26,8 @@ export interface DwellCourse {
   /** Entered from above: colder than the dwell before. */
   readonly isColder: boolean;
   readonly next: NextDwell;
+  /** The instant at which a judged sensor enters the colder dwell that follows; `Infinity`: none does. */
+  readonly colderMs: number;
   readonly entered: readonly (number | null)[];
   readonly left: readonly (Leaving | null)[];
 }
@@ -70,10 +72,12 @@ export function dwellCourses(
     const entered = j.sensors.map((s) => enters(j, s, stage, { shift, fill, sinceMs, isColder }));
     const colderMs = firstInColder(j, entered, next, shift);
     const left = j.sensors.map((s, k) => leaves(j, s, stage, entered[k] ?? null, { shift, fill, next, colderMs }));
-    const course = { stage, shift, fill, sinceMs, isColder, next, entered, left };
+    const course = { stage, shift, fill, sinceMs, isColder, next, colderMs, entered, left };
     courses.push(course);
     if (opened(course)) {
-      sinceMs = Math.min(...left.map((leaving) => leaving?.ms ?? Number.POSITIVE_INFINITY));
+      sinceMs = Math.min(
+        ...left.map((leaving, k) => (closesClocks(j.sensors[k]!, leaving) ? leaving.ms : Number.POSITIVE_INFINITY)),
+      );
     }
   });
   return courses;
@@ -94,7 +98,18 @@ export function inOrBeyond(
   rule: Omit<EnteringRule, 'sinceMs'>,
 ): Interval[] {
   const { lowerC, upperC } = bandC(j, stage, s, rule.shift);
-  return rule.isColder ? sensorStanding(j, s, upperC, -1, rule.fill) : sensorStanding(j, s, lowerC, 1, rule.fill);
+  if (!rule.isColder) return sensorStanding(j, s, lowerC, 1, rule.fill);
+  // A colder dwell is entered by coming down: what was never above it has not entered.
+  const aboveMs = s.track.length === 0 ? null : s.track.crossings(upperC, '>').firstOn(j.log.from);
+  if (aboveMs === null) return [];
+  return within(sensorStanding(j, s, upperC, -1, rule.fill), { from: aboveMs, until: Number.POSITIVE_INFINITY }).filter(
+    ({ until }) => until > aboveMs,
+  );
+}
+
+/** A sensor that was excluded while it might still have come back closes no clock. */
+export function closesClocks(s: JudgedSensor, leaving: Leaving | null): leaving is Leaving {
+  return leaving !== null && leaving.ms <= s.untilMs && (leaving.isFinal || !isExcluded(s));
 }
 
 export function enters(j: Judgement, s: JudgedSensor, stage: DwellStage, rule: EnteringRule): number | null {
@@ -154,7 +169,6 @@ export function leaves(
       return { ms: inGap(j, s, ms, band.upperC, -1, rule.fill), isUpwards: true, isFinal: true };
     }
     if (s.track.valueAt(endMs) > band.upperC - ruleFigures(j.cycle.units.temperature).chatterC) {
-      if (isExcluded(s)) return null;
       const ms = wayOut(j, s, band, enteredMs, endMs);
       return ms === null ? null : { ms: inGap(j, s, ms, band.upperC, -1, rule.fill), isUpwards: true, isFinal: false };
     }
@@ -194,9 +208,11 @@ function leavesDownwards(
   if (ms === null && limitMs === colderMs) ms = inside.firstEndAfter(limitMs);
   if (ms === null || ms < enteredMs || ms > endMs) return null;
   const isSettled = limitMs < endMs || cooledMs === limitMs || hasCooled(j, s, endMs);
-  // A sensor that was excluded while it might still have come back does not close a clock.
-  if (!isSettled && isExcluded(s)) return null;
-  return { ms: inGap(j, s, ms, lowerC, 1, fill), isUpwards: false, isFinal: isSettled || !j.isOpen };
+  return {
+    ms: inGap(j, s, ms, lowerC, 1, fill),
+    isUpwards: false,
+    isFinal: isSettled || (!j.isOpen && !isExcluded(s)),
+  };
 }
 
 function hasCooled(j: Judgement, s: JudgedSensor, endMs: number): boolean {

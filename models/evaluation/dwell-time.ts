@@ -3,7 +3,7 @@ import { type Interval, overlaps, totalMs } from '../run/intervals.ts';
 import { celsiusDifferenceFrom, celsiusFrom, round9 } from '../units.ts';
 import { airSubject, type ClockCourse, DEFAULT_CLOCK, meanSubject } from './clock.ts';
 import { type ClockDip, countedIn, type Depth, dipsIn, forgivenessC } from './dips.ts';
-import { bandC, type DwellCourse } from './dwell-course.ts';
+import { bandC, closesClocks, type DwellCourse } from './dwell-course.ts';
 import { type Fill, sensorStanding } from './holding.ts';
 import { isExcluded, type JudgedSensor, type Judgement, ruleFigures } from './judgement.ts';
 
@@ -54,7 +54,7 @@ function leastOfEach(j: Judgement, course: DwellCourse): number {
   const unit = j.cycle.units.temperature;
   const gathered = j.sensors.flatMap((s, k) => {
     const left = course.left[k] ?? null;
-    if (isExcluded(s) && left === null) return [];
+    if (isExcluded(s) && !closesClocks(s, left)) return [];
     const enteredMs = course.entered[k] ?? null;
     if (enteredMs === null) return [0];
     const { lowerC } = bandC(j, stage, s, shift);

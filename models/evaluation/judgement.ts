@@ -30,6 +30,14 @@ export function someBelieved({ sensors }: Judgement): boolean {
   return sensors.some((s) => !isExcluded(s));
 }
 
+/**
+ * The gaps that leave a limit open. While a run goes on, a sensor that is silent just now may still come back: its
+ * missing end is what the limit waits for, not yet a gap in it.
+ */
+export function openingGaps({ isOpen }: Judgement, gaps: readonly Gap[]): readonly Gap[] {
+  return isOpen ? gaps.filter(({ after }) => after !== null) : gaps;
+}
+
 /** Everything the limits of one part look at, under one set of exclusions. */
 export interface Judgement {
   readonly digest: RunDigest;

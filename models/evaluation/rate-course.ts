@@ -56,6 +56,7 @@ export function rateCourse(j: Judgement, s: JudgedSensor, stage: RampStage, sinc
   // After a dwell a range is run by coming to it; only before the first may a sensor start beyond its beginning.
   const isFromStart = start === s.track.firstMs;
   if (!isBeyondFirst || stop <= start || (isFromStart && sinceMs > j.log.from)) return none;
+  if (sign * (s.track.valueAt(stop) - s.track.valueAt(start)) <= 0) return none;
   const ranWhole = hasReached && !isFromStart;
   const stretch = { from: start, until: stop };
   return { ...none, ...slopesIn(j, s, rate, stretch, sign), ranWhole, isOver: none.isOver || hasReached };

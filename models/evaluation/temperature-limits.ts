@@ -12,7 +12,7 @@ import type { Outcome } from './evaluation.ts';
 import { heatOnMs } from './events.ts';
 import { type Found, say, unfinished } from './finding.ts';
 import { guarded } from './guarded.ts';
-import { type JudgedSensor, type Judgement, someBelieved } from './judgement.ts';
+import { type JudgedSensor, type Judgement, openingGaps, someBelieved } from './judgement.ts';
 
 /** `ceiling`: no judged sensor above it, over the whole log. */
 export function ceilingLimit(j: Judgement): Found[] {
@@ -60,7 +60,9 @@ export function ceilingLimit(j: Judgement): Found[] {
 
 /** Whether a gap of the sensor leaves room for a temperature above a limit. */
 function mayExceed(j: Judgement, s: JudgedSensor, limitC: number): boolean {
-  return s.gaps.some((gap) => (furthest(gap, 1, j.changesAtMost, gap) ?? Number.POSITIVE_INFINITY) > limitC);
+  return openingGaps(j, s.gaps).some(
+    (gap) => (furthest(gap, 1, j.changesAtMost, gap) ?? Number.POSITIVE_INFINITY) > limitC,
+  );
 }
 
 /** `spread`: hottest minus coldest judged sensor at every scan of the stretches it covers. */
@@ -145,7 +147,7 @@ function coveredBySpread(j: Judgement, dwells: Dwells): Covered {
 /** Whether a gap of one sensor leaves room for it to be further than the limit from another. */
 function mayPart(j: Judgement, stretch: Interval, limitC: number): boolean {
   return j.sensors.some((s) =>
-    s.gaps.some((gap) => {
+    openingGaps(j, s.gaps).some((gap) => {
       const from = Math.max(gap.from, stretch.from);
       const until = Math.min(gap.until, stretch.until);
       if (from >= until) return false;
@@ -154,8 +156,11 @@ function mayPart(j: Judgement, stretch: Interval, limitC: number): boolean {
       if (hottest === null || coldest === null) return true;
       const others = j.sensors.filter((other) => other !== s && other.untilMs > from && other.track.length > 0);
       return others.some(({ track }) => {
-        const values = [track.valueAt(from), track.valueAt(until)];
-        return hottest - Math.min(...values) > limitC || Math.max(...values) - coldest > limitC;
+        const ends = [track.valueAt(from), track.valueAt(until)];
+        const [low, high] = [track.lowestBetween(from, until), track.highestBetween(from, until)];
+        const coldestOther = Math.min(...ends, low < 0 ? ends[0]! : track.reading(low));
+        const hottestOther = Math.max(...ends, high < 0 ? ends[0]! : track.reading(high));
+        return hottest - coldestOther > limitC || hottestOther - coldest > limitC;
       });
     }),
   );

@@ -8,7 +8,7 @@ import type { Outcome } from './evaluation.ts';
 import { type EventSources, type EventTime, eventInWords, eventTime } from './events.ts';
 import { capitalised, type Found, marginTo, say, sayBounds, unfinished, worst } from './finding.ts';
 import { guarded } from './guarded.ts';
-import type { Judgement } from './judgement.ts';
+import { type Judgement, openingGaps } from './judgement.ts';
 import { channelsFor, type PressureScale, pressureScale, unitOf } from './pressure-scale.ts';
 
 /** Where a window lay: the stretch that is certain, the widest it may have been, and whether it has closed. */
@@ -88,7 +88,8 @@ function channelInWindow(j: Judgement, window: WindowLimit, channel: RunChannel,
     return { ...nothing, because: 'barometer or gauge is wrong: the conversion gives less than nothing' };
   const forgive = forgivenessC(window.forgive, (by) => by * parsePressureUnit(unitOf(j, window.quantity)).paPerUnit);
   const uncertaintyPa = j.cycle.decision?.rule === 'guarded' ? (channel.uncertainty ?? 0) : 0;
-  const hidden = stretch.widest.from < j.log.from || overlaps(gapsOf(track, j.longestGapMs, j.log), stretch.widest);
+  const hidden =
+    stretch.widest.from < j.log.from || overlaps(openingGaps(j, gapsOf(track, j.longestGapMs, j.log)), stretch.widest);
   const decide = (shift: -1 | 0 | 1): Outcome => {
     const limits = limitsOf(window, scale, shift * uncertaintyPa);
     if (breaks(channel, stretch.sure, limits, forgive, shift)) return 'not-met';

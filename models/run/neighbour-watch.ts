@@ -157,7 +157,7 @@ function compare(
   }
   if (c.scansCompared > 0 && timeMs - c.beforeMs <= STEP_WITHIN_MS) {
     const moved = reading - c.beforeReading;
-    if (Math.abs(moved) > STEP && Math.abs(moved - (median - c.beforeMedian)) > STEP && c.steps++ === 0) {
+    if (Math.abs(moved) > STEP && Math.abs(median - c.beforeMedian) <= STEP && c.steps++ === 0) {
       c.firstStepMs = timeMs;
     }
   }

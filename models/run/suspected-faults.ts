@@ -36,15 +36,15 @@ export function suspectedFaults(digest: RunDigest, longestGapMs: number): Map<Ru
 }
 
 function openCircuit(digest: RunDigest, { track }: RunChannel, longestGapMs: number): SuspectedFault | null {
-  const { log } = digest;
-  for (const gap of gapsOf(track, longestGapMs, log)) {
+  for (const gap of gapsOf(track, longestGapMs, digest.log)) {
     if (!gap.isTheSensors) continue;
     const lastReading = track.indexUntil(gap.from);
     const firstAbsent = lastReading < 0 || gap.before === null ? 0 : track.scan(lastReading) + 1;
     const firstBack = gap.after === null ? digest.scanMs.length : track.scan(track.indexFrom(gap.until));
     const fromMs = digest.scanMs.value[firstAbsent]!;
-    const silentSinceMs = gap.before === null ? log.from : gap.from;
-    const silentMs = digest.scanMs.value[firstBack - 1]! - silentSinceMs;
+    // Silent while the recorder went on: a stretch without scans is the log's gap, not the sensor's.
+    const scannedMs = (firstBack - firstAbsent + 1) * (digest.medianIntervalMs() ?? 0);
+    const silentMs = Math.min(gap.until - gap.from, scannedMs);
     if (silentMs <= longestGapMs && track.length > 0) continue;
     return { kind: 'open', fromMs, because: `no reading for ${minutes(silentMs)} min while the recorder went on` };
   }
