@@ -4,4 +4,6 @@ export interface LogFile {
   readonly name: string;
   /** Its bytes, in pieces of any size. Read once. */
   readonly chunks: Iterable<Uint8Array>;
+  /** How many bytes there are, where that is known: a long file then needs room for its readings only once. */
+  readonly bytes?: number;
 }

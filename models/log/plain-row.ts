@@ -28,6 +28,7 @@ export interface PlainRowReader {
   decimals: number;
 }
 
+const ZERO = 0x30;
 const QUOTE = 0x22;
 const SPACE = 0x20;
 const PLUS = 0x2b;
@@ -55,21 +56,72 @@ export function plainRowReader(
   const ranges = channels.map(believableRange);
   const least = Float64Array.from(ranges, ([low]) => low);
   const greatest = Float64Array.from(ranges, ([, high]) => high);
-  const missingFigures = Float64Array.from(missing.figures);
   const partFrom = new Int32Array(layout.time.columns.length);
   const partUntil = new Int32Array(layout.time.columns.length);
   const stamp = new Uint8Array(MOST_STAMP_BYTES);
 
+  // From here up a figure is a reading without another look: nowhere where it is scaled or may be a missing code.
+  const plainLeast = Float64Array.from(ranges, ([low, high], k) => {
+    const mayBeMissing = missing.figures.some((figure) => figure >= low && figure <= high);
+    return isScaled[k] || mayBeMissing ? Infinity : low;
+  });
+  const hasOwnDecimal = decimal !== delimiter;
   const reader: PlainRowReader = { read, next: 0, decimals: 0 };
   return reader;
 
   function read(bytes: Uint8Array, from: number, end: number, isOver: boolean): RowOutcome {
+    const figures = table.blockFigures;
+    const base = table.place * table.channels;
     let at = isSpaced ? endOfSpaces(bytes, from) : from;
     if (isLineEnd(bytes[at]!)) return endRow(bytes, at, end, isOver, BLANK);
     for (let column = 0; ; column++) {
       const target = column < cells ? targets[column]! : SKIPPED;
-      if (target >= 0) at = readFigure(bytes, at, target);
-      else if (target < SKIPPED) at = readTimePart(bytes, at, -2 - target);
+      if (target >= 0) {
+        const cellFrom = at;
+        let byte = bytes[at]!;
+        if (byte === SPACE && !isSpaced) {
+          at = endOfSpaces(bytes, at);
+          byte = bytes[at]!;
+        }
+        const isQuoted = byte === QUOTE && at === cellFrom;
+        if (isQuoted) byte = bytes[++at]!;
+        const isNegative = byte === MINUS;
+        if (isNegative || byte === PLUS) byte = bytes[++at]!;
+        let figure = 0;
+        let digitsFrom = at;
+        for (let digit = byte - ZERO; digit >>> 0 <= 9; digit = byte - ZERO) {
+          figure = figure * 10 + digit;
+          byte = bytes[++at]!;
+        }
+        let digits = at - digitsFrom;
+        let decimals = 0;
+        if (byte === decimal && (hasOwnDecimal || isQuoted)) {
+          byte = bytes[++at]!;
+          digitsFrom = at;
+          for (let digit = byte - ZERO; digit >>> 0 <= 9; digit = byte - ZERO) {
+            figure = figure * 10 + digit;
+            byte = bytes[++at]!;
+          }
+          decimals = at - digitsFrom;
+          digits += decimals;
+        }
+        if (isQuoted) {
+          if (byte !== QUOTE) return NOT_PLAIN;
+          byte = bytes[++at]!;
+        }
+        const isEnd = byte === delimiter || byte === LINE_FEED || byte === CARRIAGE_RETURN;
+        if (isEnd && digits > 0 && digits <= MOST_DIGITS) {
+          const size = figure / TEN_TO[decimals]!;
+          const value = isNegative ? 0 - size : size;
+          const isPlain = value >= plainLeast[target]! && value <= greatest[target]!;
+          figures[base + target] = isPlain || isReading(bytes, cellFrom, at, value, target) ? value : Number.NaN;
+          reader.decimals = decimals;
+        } else {
+          at = isQuoted ? -1 : endOfMissing(bytes, cellFrom);
+          figures[base + target] = Number.NaN;
+          reader.decimals = -1;
+        }
+      } else if (target < SKIPPED) at = readTimePart(bytes, at, -2 - target);
       else at = column < cells ? skipCell(bytes, at) : endOfSpaces(bytes, at);
       if (at < 0) return NOT_PLAIN;
       const byte = bytes[at]!;
@@ -84,58 +136,14 @@ export function plainRowReader(
     if (at >= end) return isOver ? NOT_PLAIN : UNFINISHED;
     const stampMs = joinedStamp(bytes);
     if (Number.isNaN(stampMs)) return NOT_PLAIN;
-    table.stampMs[table.place] = stampMs;
+    table.blockStampMs[table.place] = stampMs;
     return endRow(bytes, at, end, isOver, READ);
   }
 
-  /** Reads a figure, a missing code or nothing into the table; returns where the cell ends, or −1. */
-  function readFigure(bytes: Uint8Array, from: number, channel: number): number {
-    let at = from;
-    let byte = bytes[at]!;
-    if (!isSpaced) while (byte === SPACE) byte = bytes[++at]!;
-    const isQuoted = byte === QUOTE && at === from;
-    if (isQuoted) byte = bytes[++at]!;
-    const isNegative = byte === MINUS;
-    if (isNegative || byte === PLUS) byte = bytes[++at]!;
-    let figure = 0;
-    let digitsFrom = at;
-    while (byte >= 0x30 && byte <= 0x39) {
-      figure = figure * 10 + (byte - 0x30);
-      byte = bytes[++at]!;
-    }
-    let digits = at - digitsFrom;
-    let decimals = 0;
-    if (byte === decimal && (isQuoted || decimal !== delimiter)) {
-      byte = bytes[++at]!;
-      digitsFrom = at;
-      while (byte >= 0x30 && byte <= 0x39) {
-        figure = figure * 10 + (byte - 0x30);
-        byte = bytes[++at]!;
-      }
-      decimals = at - digitsFrom;
-      digits += decimals;
-    }
-    if (isQuoted) {
-      if (byte !== QUOTE) return -1;
-      byte = bytes[++at]!;
-    }
-    if (digits === 0 || digits > MOST_DIGITS || !(byte === delimiter || isLineEnd(byte))) {
-      table.values[channel]![table.place] = Number.NaN;
-      reader.decimals = -1;
-      return isQuoted ? -1 : endOfMissing(bytes, from);
-    }
-    const size = figure / TEN_TO[decimals]!;
-    const value = isNegative ? 0 - size : size;
-    reader.decimals = decimals;
-    table.values[channel]![table.place] = isBelievable(bytes, from, at, value, channel) ? value : Number.NaN;
-    return at;
-  }
-
-  function isBelievable(bytes: Uint8Array, from: number, until: number, value: number, channel: number): boolean {
-    for (let i = 0; i < missingFigures.length; i++) {
-      if (missingFigures[i] === value && missing.has(textOf(bytes, from, until))) return false;
-    }
-    const reading = isScaled[channel] ? scaledReading(value, channels[channel]!) : value;
+  /** Whether a figure is a reading: within the channel's range, and no missing code. */
+  function isReading(bytes: Uint8Array, from: number, until: number, value: number, channel: number): boolean {
+    if (missing.figures.includes(value) && missing.has(textOf(bytes, from, until))) return false;
+    const reading = scaledReading(value, channels[channel]!);
     return reading >= least[channel]! && reading <= greatest[channel]!;
   }
 

@@ -28,6 +28,8 @@ export function readFile(
     const plain = plainRowReader(top.plan, layout, missing, stamps, table);
     const unusual = unusualRows(file.name, top, layout, missing, stamps, table, passedOver);
     const firstScan = scansTaken(table);
+    const scansToCome = scansToComeOf(file, layout);
+    table.scansToCome = () => scansToCome(cursor.passed + cursor.from, scansTaken(table) - firstScan);
     for (;;) {
       const outcome = plain.read(source.bytes, cursor.from, source.end, source.isOver);
       if (outcome === READ) {
@@ -54,3 +56,13 @@ export function readFile(
     source.close();
   }
 }
+
+/** How many more scans a file holds if they are as long as those so far; 0 where its length is not known. */
+function scansToComeOf({ bytes }: LogFile, { encoding }: Layout): (bytesRead: number, scansRead: number) => number {
+  if (bytes === undefined) return () => 0;
+  const textBytes = encoding === 'utf-16le' || encoding === 'utf-16be' ? bytes / 2 : bytes;
+  return (bytesRead, scansRead) => (Math.max(0, textBytes - bytesRead) / bytesRead) * scansRead * MARGIN;
+}
+
+/** Later lines may be shorter than the first. */
+const MARGIN = 1.05;

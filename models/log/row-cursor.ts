@@ -6,6 +6,8 @@ export interface RowCursor {
   readonly source: ByteSource;
   /** Where the next row begins in `source.bytes`. */
   from: number;
+  /** Bytes of text that have left the window. */
+  passed: number;
   /** Its line, counted from 1. */
   line: number;
   isAtEnd(): boolean;
@@ -21,7 +23,7 @@ export function rowCursor(source: ByteSource, delimiter: string): RowCursor {
   const decoder = new TextDecoder(source.charset);
   const decode = (bytes: Uint8Array) => decoder.decode(bytes);
   const delimiterByte = delimiter.charCodeAt(0);
-  const cursor: RowCursor = { source, from: 0, line: 1, isAtEnd, more, nextRow, skipLine };
+  const cursor: RowCursor = { source, from: 0, passed: 0, line: 1, isAtEnd, more, nextRow, skipLine };
   return cursor;
 
   function isAtEnd(): boolean {
@@ -31,6 +33,7 @@ export function rowCursor(source: ByteSource, delimiter: string): RowCursor {
 
   function more(): void {
     source.more(cursor.from, cursor.line);
+    cursor.passed += cursor.from;
     cursor.from = 0;
   }
 

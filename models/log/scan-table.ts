@@ -12,39 +12,40 @@ export interface Scans {
 }
 
 /**
- * Takes scans one by one. The one being written stands at `place` of `stampMs` and each of `values`, and counts once
- * {@link nextScan} was called.
+ * Takes scans one by one. The one being written stands at `place` of a small block, its figures side by side from
+ * `place * channels` on; it counts once {@link nextScan} was called. Full blocks go into one column a channel.
  */
 export interface ScanTable {
+  readonly channels: number;
+  readonly blockStampMs: Float64Array;
+  readonly blockLine: Uint32Array;
+  readonly blockFigures: Float64Array;
   place: number;
-  /** Scans in `full`. */
+  /** Scans in the columns. */
   before: number;
   stampMs: Float64Array;
   line: Uint32Array;
-  values: readonly Float64Array[];
-  /** Blocks that are full: kept apart, so that a long log is copied once and not at every doubling. */
-  readonly full: Block[];
+  values: Float64Array[];
   readonly firstOfFile: number[];
+  /** How many scans may still come, where that can be told: room is then made once. */
+  scansToCome: () => number;
 }
 
-interface Block {
-  readonly stampMs: Float64Array;
-  readonly line: Uint32Array;
-  readonly values: readonly Float64Array[];
-}
-
-const FIRST_BLOCK_SCANS = 1 << 8;
-const LARGEST_BLOCK_SCANS = 1 << 13;
+const BLOCK_SCANS = 1 << 10;
 
 export function createScanTable(channels: number): ScanTable {
-  return { place: 0, before: 0, ...emptyBlock(channels, FIRST_BLOCK_SCANS), full: [], firstOfFile: [] };
-}
-
-function emptyBlock(channels: number, scans: number): Block {
   return {
-    stampMs: new Float64Array(scans),
-    line: new Uint32Array(scans),
-    values: Array.from({ length: channels }, () => new Float64Array(scans)),
+    channels,
+    blockStampMs: new Float64Array(BLOCK_SCANS),
+    blockLine: new Uint32Array(BLOCK_SCANS),
+    blockFigures: new Float64Array(BLOCK_SCANS * channels),
+    place: 0,
+    before: 0,
+    stampMs: new Float64Array(0),
+    line: new Uint32Array(0),
+    values: Array.from({ length: channels }, () => new Float64Array(0)),
+    firstOfFile: [],
+    scansToCome: () => 0,
   };
 }
 
@@ -55,40 +56,59 @@ export function scansTaken(table: ScanTable): number {
 
 /** The scan at `place`, which stood on `line`, is done. */
 export function nextScan(table: ScanTable, line: number): void {
-  table.line[table.place++] = line;
-  const size = table.line.length;
-  if (table.place < size) return;
-  const { stampMs, line: lines, values } = table;
-  table.full.push({ stampMs, line: lines, values });
-  table.before += size;
-  table.place = 0;
-  Object.assign(table, emptyBlock(values.length, Math.min(size * 2, LARGEST_BLOCK_SCANS)));
+  table.blockLine[table.place++] = line;
+  if (table.place === BLOCK_SCANS) emptyBlock(table);
 }
 
 /** All scans in one piece. */
 export function finishScans(table: ScanTable): Scans {
-  const count = scansTaken(table);
-  const blocks = [...table.full.splice(0), lastBlock(table)];
-  const stampMs = new Float64Array(count);
-  const line = new Uint32Array(count);
-  const values = table.values.map(() => new Float64Array(count));
-  let from = 0;
-  while (blocks.length > 0) {
-    const block = blocks.shift()!; // let go as it is copied, so that a long log is not held twice
-    stampMs.set(block.stampMs, from);
-    line.set(block.line, from);
-    for (const [channel, figures] of values.entries()) figures.set(block.values[channel]!, from);
-    from += block.line.length;
-  }
-  return { count, stampMs, line, values, firstOfFile: table.firstOfFile };
+  emptyBlock(table);
+  const count = table.before;
+  const { stampMs, line, values, firstOfFile } = table;
+  return {
+    count,
+    stampMs: stampMs.subarray(0, count),
+    line: line.subarray(0, count),
+    values: values.map((value) => withoutMuchRoom(value, count)),
+    firstOfFile,
+  };
 }
 
-function lastBlock({ place, stampMs, line, values }: ScanTable): Block {
-  return {
-    stampMs: stampMs.subarray(0, place),
-    line: line.subarray(0, place),
-    values: values.map((figures) => figures.subarray(0, place)),
-  };
+function emptyBlock(table: ScanTable): void {
+  const { channels, place: scans, before, blockFigures } = table;
+  makeRoom(table, before + scans);
+  table.stampMs.set(table.blockStampMs.subarray(0, scans), before);
+  table.line.set(table.blockLine.subarray(0, scans), before);
+  for (let channel = 0; channel < channels; channel++) {
+    const value = table.values[channel]!;
+    for (let scan = 0, at = channel; scan < scans; scan++, at += channels) value[before + scan] = blockFigures[at]!;
+  }
+  table.before += scans;
+  table.place = 0;
+}
+
+function makeRoom(table: ScanTable, needed: number): void {
+  const had = table.stampMs.length;
+  if (needed <= had) return;
+  const size = Math.max(needed, Math.min(had * 2, MOST_GUESSED_SCANS), needed + Math.ceil(table.scansToCome()));
+  table.stampMs = grown(table.stampMs, new Float64Array(size));
+  table.line = grown(table.line, new Uint32Array(size));
+  for (let channel = 0; channel < table.channels; channel++) {
+    table.values[channel] = grown(table.values[channel]!, new Float64Array(size));
+  }
+}
+
+/** Room is doubled up to so many scans, some 190 days at 1 Hz, and then made as it is needed. */
+const MOST_GUESSED_SCANS = 1 << 24;
+
+function grown<T extends Float64Array | Uint32Array>(figures: T, larger: T): T {
+  larger.set(figures);
+  return larger;
+}
+
+/** A column's figures, copied only where an eighth of it would be kept for nothing. */
+function withoutMuchRoom(value: Float64Array, count: number): Float64Array {
+  return value.length - count > value.length / 8 ? value.slice(0, count) : value.subarray(0, count);
 }
 
 /** The file a scan came from, as its index in the order the files were given. */

@@ -48,12 +48,12 @@ export function judgeRow(
       const reading = scaledReading(value, channel);
       if (!(reading >= least && reading <= greatest)) value = Number.NaN;
     }
-    table.values[target]![table.place] = value;
+    table.blockFigures[table.place * table.channels + target] = value;
   }
   const stampText = timeParts.join(' ');
   const stamp = new TextEncoder().encode(stampText);
   const stampMs = timeParts.includes('') ? Number.NaN : stamps.read(stamp, stamp.length);
-  table.stampMs[table.place] = stampMs;
+  table.blockStampMs[table.place] = stampMs;
   const isWhole = cells.length >= plan.cells && cells.slice(plan.cells).every((cell) => cell === '');
   return { stampMs, stampText, isWhole, cells: cells.length, badCell, figures };
 }

@@ -6,15 +6,16 @@ import { delimitedFromXlsx, isOldWorkbook, isZip, MOST_WORKBOOK_BYTES } from './
  * A file as the log reader takes it: a text as it is, a workbook (.xlsx) as comma-delimited UTF-8 with decimal point.
  *
  * @param chunks  The file's bytes; gone through once more for a workbook.
+ * @param bytes   How many there are, where that is known.
  */
-export async function asLogFile(name: string, chunks: Iterable<Uint8Array>): Promise<LogFile> {
+export async function asLogFile(name: string, chunks: Iterable<Uint8Array>, bytes?: number): Promise<LogFile> {
   const head = firstBytes(chunks);
   if (isOldWorkbook(head)) {
     throw new DomainError('log-not-text', `${name} is a workbook of the old kind (.xls); save it as .xlsx or CSV`, {
       file: name,
     });
   }
-  if (!isZip(head)) return { name, chunks };
+  if (!isZip(head)) return bytes === undefined ? { name, chunks } : { name, chunks, bytes };
   return { name, chunks: [await delimitedFromXlsx(allBytes(name, chunks), name)] };
 }
 

@@ -1,4 +1,4 @@
-import { closeSync, openSync, readSync } from 'node:fs';
+import { closeSync, openSync, readSync, statSync } from 'node:fs';
 import { DomainError } from '../../models/errors.ts';
 
 const CHUNK_BYTES = 1 << 18;
@@ -16,6 +16,11 @@ export function* fileChunks(path: string): Generator<Uint8Array, void> {
   } finally {
     closeSync(file);
   }
+}
+
+/** How long a file is. */
+export function fileBytes(path: string): number {
+  return orUnreadable(path, () => statSync(path)).size;
 }
 
 const REASON_BY_CODE: Readonly<Record<string, string>> = {

@@ -2,7 +2,7 @@ import { createHash } from 'node:crypto';
 import { basename } from 'node:path';
 import type { LogFile } from '../../models/log/log-file.ts';
 import { asLogFile } from './as-log-file.ts';
-import { fileChunks } from './file-chunks.ts';
+import { fileBytes, fileChunks } from './file-chunks.ts';
 
 /** A file on the disk as the log reader takes it, and the hash of what was read. */
 export interface OpenedLog extends LogFile {
@@ -23,10 +23,9 @@ export async function openLog(path: string): Promise<OpenedLog> {
       hash = sum.digest('hex');
     },
   };
-  const { name, chunks } = await asLogFile(basename(path), hashed);
+  const file = await asLogFile(basename(path), hashed, fileBytes(path));
   return {
-    name,
-    chunks,
+    ...file,
     sha256() {
       if (hash === null) throw new Error(`${path} was not read to its end`);
       return hash;
