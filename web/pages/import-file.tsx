@@ -12,6 +12,7 @@ import { LayoutChannels } from '../parts/layout-channels.tsx';
 import { LayoutChoice } from '../parts/layout-choice.tsx';
 import { type LayoutEditing, LayoutEditor } from '../parts/layout-editor.tsx';
 import { Notebook, PageHead } from '../parts/notebook.tsx';
+import { OpenQuestions } from '../parts/open-questions.tsx';
 import { Shown } from '../parts/shown.tsx';
 import { Waiting } from '../parts/waiting.tsx';
 import { When } from '../parts/when.tsx';
@@ -19,6 +20,7 @@ import { usePreview } from '../use-preview.ts';
 import { useRead } from '../use-read.ts';
 import { bytes, count, listed } from '../words/figures.ts';
 import { withMissing } from '../words/layout-edits.ts';
+import { placeName } from '../words/layouts.ts';
 
 /** One file: how it is read stands beside its first lines, and can be corrected until it is right. */
 export default function ImportFilePage() {
@@ -99,11 +101,12 @@ function Reading({ view, proposal }: { view: ImportView; proposal: NonNullable<I
   return (
     <>
       <LayoutChoice view={view} source={source} proposed={proposal.layout} onTake={take} />
+      <OpenQuestions editing={editing} />
       <div class="import-sheet">
         <FirstLines name={view.name} lines={view.firstLines} layout={layout} />
         <section>
           <h2>How it is read</h2>
-          <p class="section soft">
+          <p class="soft said-of">
             {source === null
               ? 'Proposed from the file itself. Correct whatever is wrong.'
               : `By the layout kept for ${source}. What you correct here is kept only if you say so below.`}
@@ -133,19 +136,4 @@ function Reading({ view, proposal }: { view: ImportView; proposal: NonNullable<I
       <ImportDiscard id={view.id} />
     </>
   );
-}
-
-const PLACES: Readonly<Record<string, string>> = {
-  'time.pattern': 'the pattern of the time',
-  'time.zone': 'the zone of the recorder’s clock',
-  'time.startsAt': 'the instant the log started',
-  encoding: 'the encoding',
-  delimiter: 'the delimiter',
-  decimal: 'the decimal sign',
-};
-
-function placeName(key: string, layout: Layout): string {
-  const [, n, what] = /^channels\/(\d+)\/(\w+)$/.exec(key) ?? [];
-  if (n !== undefined) return `the ${what} of column ${layout.channels[Number(n)]?.column ?? n}`;
-  return PLACES[key] ?? key;
 }

@@ -15,8 +15,7 @@ export function FirstLines({ name, lines, layout }: { name: string; lines: reado
             const taken = takenFor(n + 1, layout);
             return (
               <li key={n} class={taken ? `is-${taken.kind}` : ''}>
-                <span class="taken">{taken?.word}</span>
-                <code>{line === '' ? ' ' : showTabs(line)}</code>
+                <span class="taken">{taken?.word}</span> <code>{line === '' ? ' ' : showTabs(line)}</code>
               </li>
             );
           })}

@@ -25,7 +25,7 @@ export function ImportRecord({
 }) {
   const { route } = useLocation();
   const vessels = useRead<Vessels>(VESSELS_PATH).value?.vessels ?? [];
-  const [recorder, setRecorder] = useState(source ?? view.recorder ?? layout.name);
+  const [recorder, setRecorder] = useState(source ?? view.recorder ?? '');
   const [isKept, setIsKept] = useState(true);
   const [vessel, setVessel] = useState(view.knownLayouts.find((one) => one.recorder === source)?.vessel ?? '');
   const [run, setRun] = useState('');
@@ -73,8 +73,15 @@ export function ImportRecord({
           />
         </div>
         <label class="tick">
-          <input type="checkbox" checked={isKept} onChange={(event) => setIsKept(event.currentTarget.checked)} />
-          Keep this layout for {recorder.trim() || 'the recorder'}, so that its next file is read without questions
+          <input
+            type="checkbox"
+            checked={isKept && recorder.trim() !== ''}
+            disabled={recorder.trim() === ''}
+            onChange={(event) => setIsKept(event.currentTarget.checked)}
+          />
+          {recorder.trim() === ''
+            ? 'Keep this layout for its recorder, once you have named it, so that the next file is read without questions'
+            : `Keep this layout for ${recorder.trim()}, so that its next file is read without questions`}
         </label>
         {recording.problem && (
           <Problem problem={recording.problem} kept="The file and its layout are kept on this page." />

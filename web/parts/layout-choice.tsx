@@ -13,11 +13,12 @@ export function LayoutChoice({
   proposed: Layout;
   onTake: (recorder: string | null, layout: Layout) => void;
 }) {
-  if (view.knownLayouts.length === 0) return null;
+  const readers = view.knownLayouts.filter(({ reads }) => reads);
+  if (readers.length === 0) return null;
   return (
     <fieldset class="row layout-choice">
       <legend>Read by the layout</legend>
-      {view.knownLayouts.map((known) => (
+      {readers.map((known) => (
         <button
           key={known.recorder}
           type="button"
@@ -26,7 +27,6 @@ export function LayoutChoice({
           onClick={() => onTake(known.recorder, known.layout)}
         >
           of {known.recorder}
-          {!known.reads && ' (does not read this file)'}
         </button>
       ))}
       <button type="button" class="quiet" aria-pressed={source === null} onClick={() => onTake(null, proposed)}>

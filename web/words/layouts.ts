@@ -30,3 +30,19 @@ export const ROLE_WORDS: Readonly<Record<string, string>> = {
   'vacuum-source': 'vacuum at the source',
   other: 'other, kept but not judged',
 };
+
+const PLACES: Readonly<Record<string, string>> = {
+  'time.pattern': 'the pattern of the time',
+  'time.zone': 'the zone of the recorder’s clock',
+  'time.startsAt': 'the instant the log started',
+  encoding: 'the encoding',
+  delimiter: 'the delimiter',
+  decimal: 'the decimal sign',
+};
+
+/** A place of a layout as a question names it: `the unit of column P`. */
+export function placeName(key: string, layout: Layout): string {
+  const [, n, what] = /^channels\/(\d+)\/(\w+)$/.exec(key) ?? [];
+  if (n !== undefined) return `the ${what} of column ${layout.channels[Number(n)]?.column ?? n}`;
+  return PLACES[key] ?? key;
+}
