@@ -113,7 +113,7 @@ export type EvaluationView = z.infer<typeof evaluationView>;
 export const note = z.object({ deed, at: instant, text: z.string() });
 export type Note = z.infer<typeof note>;
 
-export const MARGIN_KINDS = ['log', 'heat-on', 'dwell', 'window', 'gel', 'decision', 'note', 'deed'] as const;
+export const MARGIN_KINDS = ['log', 'heat-on', 'dwell', 'gel', 'decision', 'note'] as const;
 
 /** One entry of the page's margin: what happened at an instant. */
 export const marginEntry = z.object({ at: instant, kind: z.enum(MARGIN_KINDS), text: z.string() });

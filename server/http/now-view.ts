@@ -7,6 +7,8 @@ import { importLineOf } from './import-view.ts';
 
 const MOST_NEEDS = 100;
 const LAST_RUNS = 12;
+/** Most pressing first. */
+const PRESSING: readonly Need['kind'][] = ['awaiting-load', 'undecided-suspect', 'cannot-tell'];
 const DAY_MS = 86_400_000;
 
 /** What each vessel did last, what needs someone, and the last runs. */
@@ -26,7 +28,9 @@ export function nowView({ db }: AppParts): Now {
   });
   const needs = [
     ...listWaitingImports(db).map((row): Need => ({ kind: 'unread-file', import: importLineOf(row) })),
-    ...listRunsInNeed(db, MOST_NEEDS).map(needOf),
+    ...listRunsInNeed(db, MOST_NEEDS)
+      .map(needOf)
+      .sort((a, b) => PRESSING.indexOf(a.kind) - PRESSING.indexOf(b.kind)),
   ];
   return { vessels, needs, lastRuns };
 }
