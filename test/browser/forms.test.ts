@@ -1,7 +1,7 @@
 import type { Browser } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { launchChromium, openPage, settle } from '../support/browser.ts';
-import { recordedFile, recordWorkshop } from '../support/recorded-workshop.ts';
+import { leaveWaiting, recordedFile, recordWorkshop } from '../support/recorded-workshop.ts';
 import { type ServedProgram, serveProgram } from '../support/served-program.ts';
 
 let program: ServedProgram;
@@ -36,6 +36,28 @@ describe('forms', () => {
     await page.getByRole('button', { name: 'Write it down' }).click();
     await page.locator('#notes .entry', { hasText: 'door seal renewed' }).waitFor();
     expect(await page.getByLabel('Write in the margin').inputValue()).toBe('');
+    await close();
+  });
+
+  it('name the line and column of a cell that cannot be read, and take it as no reading when told', async () => {
+    const waiting = await leaveWaiting(program.address, 'bad-cell');
+    const { page, expectNoComplaints, close } = await openPage(browser, program.address);
+    await page.goto(`/imports/${waiting}`);
+    await page.locator('.questions').getByRole('button', { name: 'dd/MM/yyyy HH:mm:ss' }).click();
+    await page.locator('.questions').getByRole('button', { name: 'Europe/Lisbon' }).click();
+    const missing = page.getByLabel('Cells that mean no reading');
+    // The proposal takes the cell for a missing code, and says that it guesses; here nobody agrees.
+    expect(await missing.inputValue()).toBe('12x.4');
+    await missing.fill('');
+    await missing.blur();
+    const refusal = page.getByRole('alert');
+    await refusal.waitFor();
+    // Line 302 holds the cell: known by construction, see the case's expected.json.
+    expect(await refusal.textContent()).toMatch(/line 302\b.*T\d/);
+    await page.getByRole('button', { name: /as no reading, wherever it stands$/ }).click();
+    await page.getByText(/scans, 3 March 2026/).waitFor();
+    expect(await refusal.count()).toBe(0);
+    expectNoComplaints([422]);
     await close();
   });
 

@@ -3,7 +3,7 @@ import { fileURLToPath } from 'node:url';
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { launchChromium, openPage, settle } from '../support/browser.ts';
-import { recordWorkshop } from '../support/recorded-workshop.ts';
+import { leaveWaiting, recordWorkshop } from '../support/recorded-workshop.ts';
 import { type ServedProgram, serveProgram } from '../support/served-program.ts';
 import { CASES, expectedStatuses, screensOf } from './screens.ts';
 
@@ -15,7 +15,8 @@ let screens: Readonly<Record<string, string>>;
 
 beforeAll(async () => {
   program = await serveProgram();
-  screens = screensOf(await recordWorkshop(program.address, CASES));
+  const runs = await recordWorkshop(program.address, CASES);
+  screens = screensOf(runs, await leaveWaiting(program.address, 'bad-cell'));
   browser = await launchChromium();
   rmSync(FOLDER, { recursive: true, force: true });
   mkdirSync(FOLDER, { recursive: true });

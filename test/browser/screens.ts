@@ -1,5 +1,5 @@
 /** Every screen there is, each with an address where it has something to show. Runs by the case they were recorded from. */
-export function screensOf(runs: ReadonlyMap<string, number>): Readonly<Record<string, string>> {
+export function screensOf(runs: ReadonlyMap<string, number>, waiting: number): Readonly<Record<string, string>> {
   const run = (name: string) => {
     const number = runs.get(name);
     if (number === undefined) throw new Error(`no run was recorded from ${name}`);
@@ -8,6 +8,7 @@ export function screensOf(runs: ReadonlyMap<string, number>): Readonly<Record<st
   return {
     now: '/',
     import: '/import',
+    'import-file': `/imports/${waiting}`,
     runs: '/runs',
     'runs-filtered-to-nothing': '/runs?vessel=Autoclave+1&part=none',
     'run-conforms': run('sound'),

@@ -92,12 +92,12 @@ function MissingCodes({ editing }: { editing: LayoutEditing }) {
       label="Cells that mean no reading"
       hint={
         <>
-          Apart by spaces; an empty cell always does.{' '}
+          Apart by a bar |; an empty cell always does.{' '}
           <Basis statement={statement} isAnswered={answered.has('missing')} />
         </>
       }
-      value={(layout.missing ?? []).join(' ')}
-      onLeave={(codes) => onChange({ ...layout, missing: codes.split(/\s+/).filter(Boolean) }, 'missing')}
+      value={(layout.missing ?? []).join(' | ')}
+      onLeave={(codes) => onChange({ ...layout, missing: piecesOf(codes) }, 'missing')}
     />
   );
 }
@@ -125,10 +125,7 @@ function TimeFields({ editing }: { editing: LayoutEditing }) {
         label="Columns of time"
         hint="By their headings, apart by a bar |"
         value={columns.join(' | ')}
-        onLeave={(names) => {
-          const named = names.split('|').map((name) => name.trim());
-          change({ ...time, columns: named.filter(Boolean) });
-        }}
+        onLeave={(names) => change({ ...time, columns: piecesOf(names) })}
       />
       {kind === 'stamp' && <Place editing={editing} place="time.pattern" label="Pattern" />}
       {kind !== 'elapsed' && (
@@ -154,3 +151,11 @@ const TIME_KINDS = [
   { value: 'elapsed', text: 'time elapsed since the start' },
   { value: 'serialDays', text: 'days of a spreadsheet' },
 ];
+
+/** `Date | Time` taken apart; what stands between bars may hold spaces. */
+function piecesOf(text: string): string[] {
+  return text
+    .split('|')
+    .map((piece) => piece.trim())
+    .filter(Boolean);
+}
