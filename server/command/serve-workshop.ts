@@ -5,6 +5,7 @@ import { fileURLToPath } from 'node:url';
 import { DomainError } from '../../models/errors.ts';
 import { createEvaluator } from '../actions/evaluator.ts';
 import type { JudgingParts } from '../actions/judge-run.ts';
+import { verifyInThread } from '../actions/verify-in-thread.ts';
 import { createApp } from '../app.ts';
 import type { Db } from '../store/database.ts';
 import { openDatabase } from '../store/database.ts';
@@ -31,7 +32,8 @@ const MOST_FILE_BYTES = 512 * 1024 * 1024;
 export async function serveWorkshop(options: ServerOptions): Promise<void> {
   const ended = told('SIGINT', 'SIGTERM');
   const log = createLog();
-  const db = openDatabase(databasePath(options.folder), { at: new Date().toISOString() });
+  const path = databasePath(options.folder);
+  const db = openDatabase(path, { at: new Date().toISOString() });
   const evaluator = createEvaluator();
   const parts = { db, clock: Date.now, actor: builtInPerson(), evaluate: evaluator.evaluate };
   await options.prepare?.(parts);
@@ -44,6 +46,7 @@ export async function serveWorkshop(options: ServerOptions): Promise<void> {
     incomingFolder,
     watchedFolder: options.watchedFolder,
     mostUploadBytes: MOST_FILE_BYTES,
+    verify: () => verifyInThread({ path, at: new Date().toISOString() }),
   });
   const server = await listen(createServer(app), options);
   process.stdout.write(`Dwellbook is at ${addressOf(server, options.host)}\n`);

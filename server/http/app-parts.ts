@@ -1,4 +1,5 @@
 import type { JudgingParts } from '../actions/judge-run.ts';
+import type { AuditVerification } from '../contract/audit.ts';
 
 /** What the server is made of. Everything is opened by who makes it. */
 export interface AppParts extends JudgingParts {
@@ -10,5 +11,7 @@ export interface AppParts extends JudgingParts {
   readonly watchedFolder: string | null;
   /** Most bytes an upload may have. */
   readonly mostUploadBytes: number;
+  /** Recomputes every hash there is, without anything else waiting for it. */
+  readonly verify: () => Promise<AuditVerification>;
   readonly log: { info(facts: object, message: string): void; error(facts: object, message: string): void };
 }

@@ -1,5 +1,4 @@
 import { addPartResult } from '../actions/add-part-result.ts';
-import { verifyChains } from '../actions/verify-chains.ts';
 import { readAudit } from '../store/audit.ts';
 import { findCode } from '../store/find.ts';
 import { listParts } from '../store/parts.ts';
@@ -19,6 +18,6 @@ export const partHandlers: SomeHandlers<
   },
   find: ({ db }, { query }) => findCode(db, query.code),
   readAudit: ({ db }, { query }) => readAudit(db, query),
-  verifyAudit: ({ db }) => verifyChains(db),
+  verifyAudit: ({ verify }) => verify(),
   readOpenApi: () => openApi(),
 };

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { sha256Of } from '../../server/store/canonical.ts';
+import { makeXlsx, type SheetCell } from './files/make-xlsx.ts';
 import { liveApp, NOW, upload } from './live-app.ts';
 import { recordedCase } from './recorded-case.ts';
 
@@ -89,6 +90,25 @@ describe('an uploaded file', () => {
     expect(set.body).toEqual({ imports: [] });
     expect((await app.post('/api/imports/1/discard', { reason: 'again' })).status).toBe(409);
     expect((await app.post('/api/imports/1/run', { layout })).status).toBe(422);
+  });
+
+  it('may be a workbook, kept as it came', async () => {
+    const app = await liveApp();
+    const rows = Array.from({ length: 30 }, (_, n): SheetCell[] => [
+      `2026-03-03 08:${String(n).padStart(2, '0')}:00`,
+      20 + n / 10,
+    ]);
+    const book = makeXlsx([['Time', 'TC1 (°C)'], ...rows]);
+    const { status, body } = await upload(app, '/api/imports?name=run.xlsx', book);
+    expect(status).toBe(201);
+    expect(body.firstLines.slice(0, 2)).toEqual(['Time,TC1 (°C)', '2026-03-03 08:00:00,20']);
+    const { time, ...proposed } = body.proposal.layout;
+    const recorded = await app.post('/api/imports/1/run', { layout: { ...proposed, time: { ...time, zone: 'UTC' } } });
+    expect(recorded.status, recorded.text).toBe(201);
+    expect((await app.get('/api/runs/1')).body).toMatchObject({
+      scans: 30,
+      sources: [{ files: [{ name: 'run.xlsx', bytes: book.length, sha256: sha256Of(book) }] }],
+    });
   });
 
   it('is another source of a run where that is said, its channels beside the others', async () => {

@@ -4,6 +4,7 @@ import type { AddressInfo } from 'node:net';
 import { join } from 'node:path';
 import { afterEach, expect } from 'vitest';
 import { evaluateLog } from '../../models/evaluation/judge.ts';
+import { verifyChains } from '../../server/actions/verify-chains.ts';
 import { createApp } from '../../server/app.ts';
 import { ROLES } from '../../server/contract/roles.ts';
 import type { AppParts } from '../../server/http/app-parts.ts';
@@ -44,8 +45,10 @@ export async function liveApp(changes: Partial<AppParts> = {}): Promise<LiveApp>
   const folder = freshFolder();
   const incomingFolder = join(folder, 'incoming');
   mkdirSync(incomingFolder);
+  const db = freshDatabase();
   const parts: AppParts = {
-    db: freshDatabase(),
+    db,
+    verify: async () => verifyChains(db),
     clock: () => Date.parse(NOW),
     actor: { name: 'inspector 2', roles: ROLES },
     evaluate: async (log, inputs) => evaluateLog(log, inputs),

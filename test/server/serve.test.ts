@@ -120,6 +120,7 @@ describe('dwellbook serve', () => {
       reason: 'to see it refused in the thread',
     });
     expect([refused.status, refused.body.type]).toEqual([422, '/problems/barometer-malformed']);
+    expect((await json(`${address}/api/audit/verify`)).body).toMatchObject({ holds: true, sources: 1 });
     expect(readdirSync(join(data, 'incoming'))).toEqual([]);
     child.kill('SIGTERM');
     expect(await endOf(child)).toBe(0);

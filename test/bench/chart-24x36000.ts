@@ -9,6 +9,7 @@ import { importCycle } from '../../server/actions/import-cycle.ts';
 import { importResin } from '../../server/actions/import-resin.ts';
 import type { JudgingParts } from '../../server/actions/judge-run.ts';
 import { setLoad } from '../../server/actions/set-load.ts';
+import { verifyChains } from '../../server/actions/verify-chains.ts';
 import { createApp } from '../../server/app.ts';
 import { runChartPath } from '../../server/contract/paths.ts';
 import { ROLES } from '../../server/contract/roles.ts';
@@ -119,6 +120,7 @@ function serve(parts: JudgingParts, folder: string): Promise<Server> {
     incomingFolder: folder,
     watchedFolder: null,
     mostUploadBytes: 0,
+    verify: async () => verifyChains(parts.db),
   });
   const server = createServer(app);
   return new Promise((resolve) => {
