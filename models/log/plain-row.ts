@@ -72,6 +72,7 @@ export function plainRowReader(
   function read(bytes: Uint8Array, from: number, end: number, isOver: boolean): RowOutcome {
     const figures = table.blockFigures;
     const base = table.place * table.channels;
+    let lastDecimals = -1;
     let at = isSpaced ? endOfSpaces(bytes, from) : from;
     if (isLineEnd(bytes[at]!)) return endRow(bytes, at, end, isOver, BLANK);
     for (let column = 0; ; column++) {
@@ -115,11 +116,11 @@ export function plainRowReader(
           const value = isNegative ? 0 - size : size;
           const isPlain = value >= plainLeast[target]! && value <= greatest[target]!;
           figures[base + target] = isPlain || isReading(bytes, cellFrom, at, value, target) ? value : Number.NaN;
-          reader.decimals = decimals;
+          lastDecimals = decimals;
         } else {
           at = isQuoted ? -1 : endOfMissing(bytes, cellFrom);
           figures[base + target] = Number.NaN;
-          reader.decimals = -1;
+          lastDecimals = -1;
         }
       } else if (target < SKIPPED) at = readTimePart(bytes, at, -2 - target);
       else at = column < cells ? skipCell(bytes, at) : endOfSpaces(bytes, at);
@@ -137,6 +138,7 @@ export function plainRowReader(
     const stampMs = joinedStamp(bytes);
     if (Number.isNaN(stampMs)) return NOT_PLAIN;
     table.blockStampMs[table.place] = stampMs;
+    reader.decimals = lastDecimals;
     return endRow(bytes, at, end, isOver, READ);
   }
 

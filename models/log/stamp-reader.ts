@@ -52,15 +52,38 @@ export function stampReader(pattern: string, charset: 'utf-8' | 'windows-1252'):
   };
   let day = -1;
   let dayMs = 0;
+  const begun = reusableStart(elements);
+  const last = new Uint8Array(MOST_REUSED_BYTES);
+  let lastLength = 0;
+  const ends = new Int32Array(readers.length);
+
+  /** How many bytes stand as in the stamp read before. */
+  function sameBytes(bytes: Uint8Array, length: number): number {
+    const most = Math.min(length, lastLength);
+    let same = 0;
+    while (same < most && bytes[same] === last[same]) same++;
+    return same;
+  }
+
   return {
     isAbsolute: elements.some(({ field }) => field === 'offset'),
     read(bytes, length) {
-      let at = 0;
-      for (let i = 0; i < readers.length; i++) {
-        at = readers[i]!(stamp, bytes, at, length);
+      // Most of a stamp is as in the one before: what was read of it there still stands in `stamp`.
+      const same = sameBytes(bytes, length);
+      let element = 0;
+      while (element < begun && ends[element]! + MOST_AHEAD_BYTES <= same) element++;
+      let at = element === 0 ? 0 : ends[element - 1]!;
+      lastLength = 0;
+      for (; element < readers.length; element++) {
+        at = readers[element]!(stamp, bytes, at, length);
         if (at < 0) return Number.NaN;
+        ends[element] = at;
       }
       if (at !== length) return Number.NaN;
+      if (length <= MOST_REUSED_BYTES) {
+        for (let i = same; i < length; i++) last[i] = bytes[i]!;
+        lastLength = length;
+      }
       const dayRead = (stamp.year * 16 + stamp.month) * 32 + stamp.day;
       if (dayRead !== day) {
         dayMs = startOfDay(stamp.year, stamp.month, stamp.day);
@@ -70,6 +93,19 @@ export function stampReader(pattern: string, charset: 'utf-8' | 'windows-1252'):
       return dayMs + (minutes * 60 + stamp.second) * 1000 + stamp.fractionMs - stamp.offsetMs;
     },
   };
+}
+
+const MOST_REUSED_BYTES = 64;
+/** How far behind its end an element looks: a no-break space is three bytes of UTF-8. */
+const MOST_AHEAD_BYTES = 3;
+
+/** How many elements in front end where their bytes say so: figures, spaces and other literals. */
+function reusableStart(elements: readonly PatternElement[]): number {
+  const other = elements.findIndex(
+    ({ field, ...rest }) =>
+      field === 'offset' || field === 'half-day' || (field === 'month' && 'letters' in rest && rest.letters.length > 2),
+  );
+  return other < 0 ? elements.length : other;
 }
 
 /** Ms from 1970-01-01 to the start of a day of the Gregorian calendar; NaN where there is no such day, or before 1900. */

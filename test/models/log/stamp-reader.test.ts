@@ -79,6 +79,23 @@ describe('stampReader', () => {
     );
   });
 
+  it('reads a stamp the same whatever it read before', () => {
+    const digits = fc.integer({ min: 0, max: 15 }).map(String);
+    const parts = fc.tuple(digits, fc.constantFrom('/', '-'), digits, fc.constantFrom(' ', '  ', '\u202f', ''), digits);
+    const stamp = parts.map(([day, mark, month, gap, hour]) => `${day}${mark}${month}/2026${gap}${hour}:05:0${hour}`);
+    fc.assert(
+      fc.property(fc.array(stamp, { minLength: 2, maxLength: 8 }), (stamps) => {
+        const one = stampReader('dd/MM/yyyy HH:mm:ss', 'utf-8');
+        for (const text of stamps) {
+          const bytes = new TextEncoder().encode(text);
+          const alone = stampReader('dd/MM/yyyy HH:mm:ss', 'utf-8').read(bytes, bytes.length);
+          expect(one.read(bytes, bytes.length)).toBe(alone);
+        }
+      }),
+      { seed: 20260303, numRuns: 2000 },
+    );
+  });
+
   it('never throws, whatever the bytes', () => {
     const reader = stampReader('d MMM yy h:mm:ss.S a XXX', 'windows-1252');
     fc.assert(
