@@ -22,7 +22,7 @@ export function leaveOutSentTwice(
   const shared = piecesWithCommonTimes(pieces);
   if (shared.size === 0) return sequence;
   const scansByStamp = new Map<number, { scan: number; piece: number }[]>();
-  const groupOf = pieces.map((_, i) => i);
+  const groups = pieceGroups(pieces.length);
   const leftOut = new Set<number>();
   const keptFirst = new Set<number>();
   for (const [i, piece] of pieces.entries()) {
@@ -40,9 +40,7 @@ export function leaveOutSentTwice(
     if (equal.length > different.length) {
       for (const scan of equal) leftOut.add(scan);
       for (const scan of different) keptFirst.add(scan);
-      const group = Math.min(groupOf[i]!, ...[...partners].map((partner) => groupOf[partner]!));
-      const joined = new Set([groupOf[i]!, ...[...partners].map((partner) => groupOf[partner]!)]);
-      for (const [k, old] of groupOf.entries()) if (joined.has(old)) groupOf[k] = group;
+      for (const partner of partners) groups.join(partner, i);
     }
     for (const scan of sequence.slice(piece.from, piece.until)) {
       if (leftOut.has(scan) || keptFirst.has(scan)) continue;
@@ -59,7 +57,7 @@ export function leaveOutSentTwice(
   );
   list.add('stamp-kept-first', [...keptFirst], KEPT_FIRST);
   const isDropped = (scan: number) => leftOut.has(scan) || keptFirst.has(scan);
-  return mergeGroups(sequence, pieces, groupOf, isDropped, timeMs, list);
+  return mergeGroups(sequence, pieces, groups.of, isDropped, timeMs, list);
 }
 
 export const KEPT_FIRST = 'These scans have the stamp of another with different values; the first of them was kept.';
@@ -80,18 +78,39 @@ function piecesWithCommonTimes(pieces: readonly Piece[]): Set<number> {
   return shared;
 }
 
+/** Which pieces belong together; each group is called by its first piece. */
+function pieceGroups(count: number) {
+  const earlier = Array.from({ length: count }, (_, i) => i);
+  const of = (piece: number): number => {
+    let first = piece;
+    while (earlier[first] !== first) first = earlier[first]!;
+    for (let at = piece; at !== first; ) {
+      const next = earlier[at]!;
+      earlier[at] = first;
+      at = next;
+    }
+    return first;
+  };
+  const join = (one: number, other: number): void => {
+    const first = Math.min(of(one), of(other));
+    earlier[of(one)] = first;
+    earlier[of(other)] = first;
+  };
+  return { of, join };
+}
+
 /** The scans that stay: pieces of one clock as one, in the order of their stamps, where the first of them stood. */
 function mergeGroups(
   sequence: readonly number[],
   pieces: readonly Piece[],
-  groupOf: readonly number[],
+  groupOf: (piece: number) => number,
   isDropped: (scan: number) => boolean,
   timeMs: Float64Array,
   list: RepairList,
 ): readonly number[] {
   const merged = pieces.map((): number[] => []);
   for (const [i, piece] of pieces.entries()) {
-    const group = merged[groupOf[i]!]!;
+    const group = merged[groupOf(i)]!;
     for (const scan of sequence.slice(piece.from, piece.until)) if (!isDropped(scan)) group.push(scan);
   }
   const result: number[] = [];

@@ -4,6 +4,8 @@ import { placeOf, type RepairList } from './repair-list.ts';
 import type { Scans } from './scan-table.ts';
 
 const DAY_MS = 86_400_000;
+/** Nobody sets a clock back more often in one run. */
+const MOST_STEPS_BACK = 20;
 
 /**
  * Puts right the steps back of a log: pieces that stand out of order are put in order; otherwise the clock was set back,
@@ -29,6 +31,7 @@ export function mendStepsBack(
   const nextStepBack = new Map(stepsBack.map((piece, i) => [piece, stepsBack[i + 1]]));
   if (stepsBack.length === 0) return sequence;
   if (!doOverlap(pieces)) return putInOrder();
+  if (stepsBack.length > MOST_STEPS_BACK) throw ambiguous(stepsBack[0]!);
   addWhatWasTaken();
   return sequence;
 

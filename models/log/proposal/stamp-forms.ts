@@ -25,10 +25,14 @@ const CLOCK =
 
 /** The form of a column of stamps; null where its texts are no stamps, or not all of one form. */
 export function findStampForm(stamps: readonly WrittenStamp[]): StampForm | null {
-  const parts = stamps.map(({ text }) => takeApart(text));
-  if (parts.length === 0 || parts.some((part) => part === null)) return null;
-  const taken = parts as Parts[];
-  const first = taken[0]!;
+  const taken: Parts[] = [];
+  for (const { text } of stamps) {
+    const parts = takeApart(text);
+    if (!parts) return null;
+    taken.push(parts);
+  }
+  const first = taken[0];
+  if (!first) return null;
   const dates = taken.map(({ date }) => date);
   const clocks = taken.map(({ clock }) => clock);
   const clock = first.clock === '' ? '' : clockPattern(clocks);

@@ -32,6 +32,13 @@ describe('scans sent twice', () => {
     expect(listed(log)).toEqual(['scan-left-out 0:5-6 2']);
   });
 
+  it('are left out within the time a test has where every other line comes again', () => {
+    const time = (i: number) => new Date(Date.UTC(2026, 2, 3) + i * 1000).toISOString().slice(11, 19);
+    const scans = Array.from({ length: 20_000 }, (_, i) => 2 * i).flatMap((i) => [i, i + 1, i, i + 1]);
+    const log = readLog([fileOfScans(scans.map((i) => `${time(i)} ${i % 100}`).join(','), '2026-03-03')], layout());
+    expect(log.readings.timeMs.length).toBe(40_000);
+  });
+
   it('are left out where a whole file was given twice', () => {
     const log = readLog([fileOfScans('08:00:00 1, 08:01:00 2'), fileOfScans('08:00:00 1, 08:01:00 2')], layout());
     expect(values(log)).toEqual([1, 2]);

@@ -73,6 +73,11 @@ describe('a clock set back', () => {
     expect(times(readLog([fileOfScans(scans)], layout())).slice(-3)).toEqual(['08:10:00Z', '08:11:00Z', '08:12:00Z']);
   });
 
+  it('is refused where the time steps back more often than anyone sets a clock', () => {
+    const scans = Array.from({ length: 22 }, (_, i) => minutes(0, 4, i * 4)).join(', ');
+    expect(refusalOf(() => readLog([fileOfScans(scans)], layout())).code).toBe('log-time-ambiguous');
+  });
+
   it('is refused where it may as well be a line out of order', () => {
     const swapped = '08:00:00 1, 08:02:00 3, 08:01:00 2, 08:03:00 4, 08:04:00 5, 08:05:00 6, 08:06:00 7';
     expect(refusalOf(() => readLog([fileOfScans(swapped)], layout()))).toMatchObject({
