@@ -108,6 +108,12 @@ export function airSubject(j: Judgement): JudgedSensor | null {
   return j.air.length === 1 ? j.air[0]! : derivedSubject(j, j.air, 'lowest', 'coldest air');
 }
 
+/** Whether a clock waits for air that the log does not have. */
+export function lacksAir(j: Judgement, { opens, closes }: Clock): boolean {
+  return (opens === 'air-enters' || closes === 'air-leaves') && airSubject(j) === null;
+}
+
+/** Something worked out from several sensors as if it were one of them; null where there is none. */
 export function derivedSubject(
   j: Judgement,
   sensors: readonly JudgedSensor[],

@@ -36,12 +36,9 @@ type Figure = (alpha: number, tgK: number | null) => number | null;
 
 function leastEstimate(j: Judgement, limit: string, atLeast: number, unit: string, figure: Figure): Found {
   const known = { limit, bounds: { atLeast }, unit };
+  const asked = `${atLeast}${unit === '' ? '' : ` ${unit}`} asked`;
   if (j.resin === null)
-    return {
-      ...known,
-      outcome: 'cannot-tell',
-      because: `No resin set was given; at least ${atLeast} ${unit} asked.`.replace(' asked', ' asked'),
-    };
+    return { ...known, outcome: 'cannot-tell', because: `No resin set was given; at least ${asked}.` };
   const sensors = estimated(j);
   const refusal = sensors
     .map((s) => cureOf(j, s, 'cold').refusal ?? cureOf(j, s, 'hot').refusal)
@@ -82,7 +79,7 @@ function leastEstimate(j: Judgement, limit: string, atLeast: number, unit: strin
     sensor: least.s.name,
     fromMs: j.log.from,
     untilMs: j.log.until,
-    because: `Least at ${least.s.name}: ${say(least.value, digits)}${unit === '' ? '' : ` ${unit}`} at the end of the log, ${atLeast}${unit === '' ? '' : ` ${unit}`} asked${gap}; ${source}.`,
+    because: `Least at ${least.s.name}: ${say(least.value, digits)}${unit === '' ? '' : ` ${unit}`} at the end of the log, at least ${asked}${gap}; ${source}.`,
   };
 }
 

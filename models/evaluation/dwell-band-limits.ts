@@ -8,7 +8,14 @@ import type { Dwells } from './dwells.ts';
 import type { Outcome } from './evaluation.ts';
 import { type Found, say, unfinished } from './finding.ts';
 import { guarded } from './guarded.ts';
-import { isExcluded, type JudgedSensor, type Judgement, openingGaps, someBelieved } from './judgement.ts';
+import {
+  believedUntil,
+  isExcluded,
+  type JudgedSensor,
+  type Judgement,
+  openingGaps,
+  someBelieved,
+} from './judgement.ts';
 
 /** `<dwell>/upper`: the highest reading of any judged sensor between its entering and its leaving. */
 export function dwellUpperLimit(j: Judgement, dwells: Dwells, index: number): Found[] {
@@ -31,7 +38,7 @@ export function dwellUpperLimit(j: Judgement, dwells: Dwells, index: number): Fo
   const highest = highestOf(j, sure) ?? highestOf(j, widest);
   if (highest === null) return [];
   const { upperC } = bandC(j, stage, { uncertaintyC: 0 }, 0);
-  const isForgiven = outcome !== 'not-met' && highest.readingC > upperC;
+  const isForgiven = outcome === 'met' && highest.readingC > upperC;
   const observed = temperatureFromCelsius(highest.readingC, unit);
   const upper = round9(stage.target + stage.plus);
   const forgivenTo = isForgiven ? (stage.forgive?.above?.by ?? 0) : 0;
@@ -80,7 +87,7 @@ function stretchInside(j: Judgement, s: JudgedSensor, course: DwellCourse, k: nu
   const from = course.entered[k] ?? null;
   if (from === null) return null;
   const left = course.left[k] ?? null;
-  const until = left?.ms ?? s.lastMs;
+  const until = left?.ms ?? (isExcluded(s) ? believedUntil(j, s) : j.log.until);
   if (left?.isUpwards !== true) return { from, until };
   return { from, until: lastBackBelow(j, s, bandC(j, course.stage, s, course.shift), from, until) };
 }
@@ -96,7 +103,8 @@ function overshoots(
   if (stretch === null) return { isBroken: false };
   const { upperC } = bandC(j, course.stage, s, course.shift);
   const isForgiven = forgiver(forgive);
-  for (const over of s.track.crossings(upperC, '>').intervals()) {
+  const side = course.shift === -1 && s.uncertaintyC > 0 ? '>=' : '>';
+  for (const over of s.track.crossings(upperC, side).intervals()) {
     const from = Math.max(over.from, stretch.from);
     const until = Math.min(over.until, stretch.until);
     const highest = from > until ? -1 : s.track.highestBetween(from, until);

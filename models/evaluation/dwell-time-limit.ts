@@ -1,18 +1,19 @@
-import type { DwellStage } from '../cycle/cycle.ts';
-import { temperatureDifferenceFromCelsius, temperatureFromCelsius } from '../units.ts';
-import { bandInWords, runClock } from './clock.ts';
-import { coldestSensor, type DwellTime, showsCooling } from './dwell-time.ts';
+import type { Bounds, DwellStage } from '../cycle/cycle.ts';
+import { bandInWords, DEFAULT_CLOCK, lacksAir, runClock } from './clock.ts';
+import { type DwellTime, showsCooling } from './dwell-time.ts';
 import type { Dwells } from './dwells.ts';
 import type { Outcome } from './evaluation.ts';
 import { type Found, isAtLeast, isAtMost, say, sayBounds, unfinished } from './finding.ts';
 import type { Fill } from './holding.ts';
 import type { Judgement } from './judgement.ts';
+import { neverOpened } from './never-opened.ts';
 
 /** `<dwell>/time`: the minutes a dwell's clock counted, in the worst case that gaps and a guarded decision leave open. */
 export function dwellTimeLimit(j: Judgement, dwells: Dwells, index: number): Found[] {
   const stage = dwells.stages[index]!;
   const bounds = stage.time;
   if (bounds === undefined) return [];
+  if (lacksAir(j, stage.clock ?? DEFAULT_CLOCK)) return [withoutAir(j, `${stage.name}/time`, bounds)];
   const seen = dwells.at(index, 'least').time;
   const cases = dwells.shifts.map((shift) => ({
     least: dwells.at(index, 'least', shift).time,
@@ -26,8 +27,7 @@ export function dwellTimeLimit(j: Judgement, dwells: Dwells, index: number): Fou
   const asWritten = dwells.at(index, 'most').time;
   const hasEnded = seen.hasEnded && asWritten.hasEnded;
   const { openedBy } = dwells.at(index, 'least').clock;
-  const neverOpened = seen.opensMs === null && asWritten.opensMs === null;
-  const coldest = neverOpened ? coldestSensor(j, stage) : null;
+  const hasOpened = seen.opensMs !== null || asWritten.opensMs !== null;
   return [
     {
       limit: `${stage.name}/time`,
@@ -36,7 +36,7 @@ export function dwellTimeLimit(j: Judgement, dwells: Dwells, index: number): Fou
       possible: hasEnded ? Math.max(seen.minutes, asWritten.minutes) : null,
       bounds,
       unit: 'min',
-      sensor: coldest?.name ?? openedBy,
+      sensor: hasOpened ? openedBy : neverOpened(j, dwells.at(index, 'least').course).sensor,
       fromMs: seen.counted?.from ?? seen.opensMs,
       untilMs: seen.counted?.until ?? seen.closesMs ?? (seen.opensMs === null ? null : j.log.until),
       because: sentence(j, dwells, index, outcome),
@@ -57,6 +57,11 @@ function decide(
   return isAtLeast(low, atLeast) && isAtMost(high, atMost) ? 'met' : 'cannot-tell';
 }
 
+function withoutAir(j: Judgement, limit: string, bounds: Bounds): Found {
+  const because = `The log has no air channel, which the clock waits for; ${sayBounds(bounds, 'min')} asked.`;
+  return { limit, outcome: unfinished(j), bounds, unit: 'min', because };
+}
+
 function sentence(j: Judgement, dwells: Dwells, index: number, outcome: Outcome): string {
   const stage = dwells.stages[index]!;
   const { time: seen, clock } = dwells.at(index, 'least');
@@ -64,14 +69,8 @@ function sentence(j: Judgement, dwells: Dwells, index: number, outcome: Outcome)
   const unit = j.cycle.units.temperature;
   const asked = `${sayBounds(stage.time!, 'min')} asked`;
   if (seen.opensMs === null && most.opensMs === null) {
-    const coldest = coldestSensor(j, stage);
-    if (coldest === null) return `The clock of ${stage.name} never opened: no reading to judge by; ${asked}.`;
-    const reached = say(temperatureFromCelsius(coldest.hottestC, unit));
-    const short = temperatureDifferenceFromCelsius(coldest.shortC, unit);
-    const where =
-      short > 0 ? `${say(short, 2)} ${unit} short of the band` : 'but never in the band together with the others';
     const end = showsCooling(j) ? '' : '; the record does not show the cooling';
-    return `The clock of ${stage.name} never opened: ${coldest.name} stayed coldest, reached ${reached} ${unit}, ${where}${end}; ${asked}.`;
+    return `${neverOpened(j, dwells.at(index, 'least').course).because}${end}; ${asked}.`;
   }
   if (seen.opensMs !== null && seen.closesMs !== null && seen.closesMs < seen.opensMs) {
     return `${clock.closing?.by ?? 'A sensor'} left ${stage.name} before ${clock.openedBy ?? 'the last'} came in, so no time counts; ${asked}.`;
@@ -108,6 +107,7 @@ export function dwellLongestLimit(j: Judgement, dwells: Dwells, index: number): 
   const stage = dwells.stages[index]!;
   const { longest } = stage;
   if (longest === undefined) return [];
+  if (lacksAir(j, longest.clock)) return [withoutAir(j, `${stage.name}/longest`, { atMost: longest.atMost })];
   const run = (fill: Fill) => {
     const clock = runClock(j, dwells.at(index, fill).course, longest.clock);
     const { opensMs, closing } = clock;

@@ -1,4 +1,3 @@
-import type { DwellStage } from '../cycle/cycle.ts';
 import { type Interval, overlaps, totalMs } from '../run/intervals.ts';
 import { celsiusDifferenceFrom, celsiusFrom, round9 } from '../units.ts';
 import { airSubject, type ClockCourse, DEFAULT_CLOCK, meanSubject } from './clock.ts';
@@ -32,8 +31,7 @@ export function dwellTime(j: Judgement, course: DwellCourse, clock: ClockCourse)
   const dips = dipsIn(stretch, clock.holding, forgive, clockDepth(j, course));
   const known = { opensMs, closesMs, dips };
   if (stage.counting === 'each') {
-    const left = course.left.every((leaving, k) => isExcluded(j.sensors[k]!) || leaving?.isFinal === true);
-    return { ...known, minutes: leastOfEach(j, course), hasEnded: left, counted: null };
+    return { ...known, ...leastOfEach(j, course), counted: null };
   }
   const counted = countedIn(stretch, dips);
   const hasEnded = closing?.isFinal === true;
@@ -48,24 +46,29 @@ export function dwellTime(j: Judgement, course: DwellCourse, clock: ClockCourse)
   return { ...known, minutes, hasEnded, counted: longest };
 }
 
-/** The least of what every judged sensor gathered between its own entering and leaving, in minutes. */
-function leastOfEach(j: Judgement, course: DwellCourse): number {
+/**
+ * The least of what every judged sensor gathered between its own entering and leaving, in minutes. It is final where the
+ * sensor that gathered least has left for good: the others can only gather more.
+ */
+function leastOfEach(j: Judgement, course: DwellCourse): { minutes: number; hasEnded: boolean } {
   const { stage, shift, fill } = course;
   const unit = j.cycle.units.temperature;
   const gathered = j.sensors.flatMap((s, k) => {
     const left = course.left[k] ?? null;
     if (isExcluded(s) && !closesClocks(s, left)) return [];
     const enteredMs = course.entered[k] ?? null;
-    if (enteredMs === null) return [0];
+    if (enteredMs === null) return [{ minutes: 0, hasEnded: showsCooling(j) }];
     const { lowerC } = bandC(j, stage, s, shift);
     const stretch = { from: enteredMs, until: left?.ms ?? j.log.until };
     const forgive = forgivenessC(stage.forgive?.below, (by) => celsiusDifferenceFrom(by, unit));
     const dips = dipsIn(stretch, sensorStanding(j, s, lowerC, 1, fill), forgive, (dip) =>
       depthBelow(s, lowerC, dip, fill),
     );
-    return [totalMs(countedIn(stretch, dips)) / 60_000];
+    return [{ minutes: totalMs(countedIn(stretch, dips)) / 60_000, hasEnded: left?.isFinal === true }];
   });
-  return gathered.length === 0 ? 0 : Math.min(...gathered);
+  const [first, ...others] = gathered;
+  if (first === undefined) return { minutes: 0, hasEnded: false };
+  return others.reduce((least, next) => (next.minutes < least.minutes ? next : least), first);
 }
 
 /** How deep the subjects of a dwell's clock were below the band: one of them for a lagging clock, all for a leading one. */
@@ -84,6 +87,7 @@ function clockDepth(j: Judgement, { stage, shift, fill }: DwellCourse): Depth {
     };
   }
   return (dip) => {
+    if (fill === 'least' && j.sensors.some(({ gaps }) => overlaps(gaps, dip))) return { depthC: null, sensor: null };
     const highest = j.digest.derived('highest', j.sensors);
     const lowest = highest.lowestBetween(dip.from, dip.until);
     const lowerC = Math.min(...j.sensors.map((s) => bandC(j, stage, s, shift).lowerC));
@@ -123,20 +127,4 @@ export function showsCooling(j: Judgement): boolean {
       return (lastC <= untilC && hottestC > untilC) || lastC <= hottestC - coolingC;
     })
   );
-}
-
-/** The sensor that stayed coldest over a dwell that never opened: the one whose hottest reading is lowest. */
-export function coldestSensor(
-  j: Judgement,
-  stage: DwellStage,
-): { name: string; hottestC: number; shortC: number } | null {
-  let coldest: { name: string; hottestC: number; shortC: number } | null = null;
-  for (const s of j.sensors) {
-    const hottest = s.track.highestBetween(j.log.from, s.lastMs);
-    if (hottest < 0) continue;
-    const hottestC = s.track.reading(hottest);
-    if (coldest !== null && coldest.hottestC <= hottestC) continue;
-    coldest = { name: s.name, hottestC, shortC: round9(bandC(j, stage, s, 0).lowerC - hottestC) };
-  }
-  return coldest;
 }

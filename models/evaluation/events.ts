@@ -1,6 +1,6 @@
 import type { CycleEvent } from '../cycle/cycle.ts';
 import { gapsOf } from '../run/gaps.ts';
-import { firstHold } from '../run/intervals.ts';
+import { firstHold, within } from '../run/intervals.ts';
 import { celsiusFrom } from '../units.ts';
 import type { Dwells } from './dwells.ts';
 import type { GelTimes } from './gel-times.ts';
@@ -111,7 +111,13 @@ export function heatOnMs(j: Judgement, fill: Fill = 'least'): number | null {
 
 function reach(j: Judgement, levelC: number, sign: 1 | -1, isAll: boolean, sinceMs: number, fill: Fill): number | null {
   if (j.sensors.length === 0) return null;
-  const standings = j.sensors.map((s) => sensorStanding(j, s, levelC, sign, fill));
+  const standings = j.sensors.map((s) => {
+    const stands = sensorStanding(j, s, levelC, sign, fill);
+    if (sign > 0 || s.track.length === 0) return stands;
+    // Cooling to a level is coming down to it: a sensor that was never above it has not.
+    const aboveMs = s.track.crossings(levelC, '>').firstOn(j.log.from);
+    return aboveMs === null ? [] : within(stands, { from: aboveMs, until: Number.POSITIVE_INFINITY });
+  });
   return firstHold(isAll ? allStand(j.sensors, standings) : oneStands(standings), sinceMs);
 }
 

@@ -1,7 +1,7 @@
 import { type ChangeBound, credited, type Gap } from '../run/gaps.ts';
 import { holdsAt, type Interval, intersection, union, within } from '../run/intervals.ts';
 import type { Track } from '../run/track.ts';
-import { isExcluded, type JudgedSensor, type Judgement } from './judgement.ts';
+import { believedUntil, isExcluded, type JudgedSensor, type Judgement } from './judgement.ts';
 
 /**
  * How gaps are filled: `least` counts nothing in them, `most` all that the ends and the bound on change allow.
@@ -44,9 +44,9 @@ function hasReadingAt(track: Track, instantMs: number): boolean {
 export function sensorStanding(j: Judgement, s: JudgedSensor, level: number, sign: 1 | -1, fill: Fill): Interval[] {
   const stretches = standing(s.track, s.gaps, level, sign, fill, j.changesAtMost);
   if (!isExcluded(s)) return stretches;
-  const believed = within(stretches, { from: Number.NEGATIVE_INFINITY, until: s.lastMs });
-  const isShort = s.untilMs - s.lastMs <= j.longestGapMs;
-  return isShort && holdsAt(believed, s.lastMs) ? union(believed, [{ from: s.lastMs, until: s.untilMs }]) : believed;
+  const believedMs = believedUntil(j, s);
+  const believed = within(stretches, { from: Number.NEGATIVE_INFINITY, until: believedMs });
+  return holdsAt(believed, believedMs) ? union(believed, [{ from: believedMs, until: s.untilMs }]) : believed;
 }
 
 /** Instants at which all of the sensors that still count stand. Where none is left, nothing holds. */

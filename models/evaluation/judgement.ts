@@ -25,6 +25,11 @@ export function isExcluded(s: JudgedSensor): boolean {
   return s.untilMs !== Number.POSITIVE_INFINITY;
 }
 
+/** Where belief in an excluded sensor ends: at its last reading, or at the exclusion where that fell into a gap. */
+export function believedUntil({ longestGapMs }: Judgement, { lastMs, untilMs }: JudgedSensor): number {
+  return untilMs - lastMs <= longestGapMs ? lastMs : untilMs;
+}
+
 /** Whether a sensor is left that is believed to the end. */
 export function someBelieved({ sensors }: Judgement): boolean {
   return sensors.some((s) => !isExcluded(s));

@@ -15,9 +15,12 @@ export interface PressureScale {
   readonly figureFrom: (pa: number) => number;
   /** More on the channel is less in the cycle's unit. */
   readonly isFlipped: boolean;
-  /** Greatest reading that can be converted; above it barometer or gauge is wrong. */
+  /** Readings that come to something; beyond them to less than nothing, and barometer or gauge is wrong. */
+  readonly leastPa: number;
   readonly greatestPa: number;
 }
+
+const ANY_READING = { leastPa: Number.NEGATIVE_INFINITY, greatestPa: Number.POSITIVE_INFINITY };
 
 export type Quantity = 'pressure' | 'vacuum';
 
@@ -34,7 +37,7 @@ export function pressureScale(j: Judgement, quantity: Quantity, channel: RunChan
     paFrom: (figure: number) => pascalFrom(figure, written),
     figureFrom: (pa: number) => pa / written.paPerUnit,
   };
-  if (written.absolute === read.absolute) return { ...direct, isFlipped: false, greatestPa: Number.POSITIVE_INFINITY };
+  if (written.absolute === read.absolute) return { ...direct, ...ANY_READING, isFlipped: false };
   const barometerPa = j.barometerPa;
   if (barometerPa === null) return null;
   return quantity === 'vacuum' ? vacuumScale(written, barometerPa) : pressureOffset(written, barometerPa);
@@ -45,6 +48,7 @@ function vacuumScale(written: PressureUnit, barometerPa: number): PressureScale 
   return {
     paFrom: (figure) => rounded(barometerPa - pascalFrom(figure, written)),
     figureFrom: (pa) => rounded(barometerPa - pa) / written.paPerUnit,
+    ...ANY_READING,
     isFlipped: true,
     greatestPa: barometerPa,
   };
@@ -56,8 +60,10 @@ function pressureOffset(written: PressureUnit, barometerPa: number): PressureSca
   return {
     paFrom: (figure) => rounded(pascalFrom(figure, written) + toRead),
     figureFrom: (pa) => rounded(pa - toRead) / written.paPerUnit,
+    ...ANY_READING,
     isFlipped: false,
-    greatestPa: Number.POSITIVE_INFINITY,
+    // A gauge may well stand below ambient; nothing stands below a perfect vacuum.
+    leastPa: written.absolute ? -barometerPa : Number.NEGATIVE_INFINITY,
   };
 }
 

@@ -1,6 +1,7 @@
 import type { CoolStage, HeatStage, RateLimit } from '../cycle/cycle.ts';
 import { type Interval, overlaps } from '../run/intervals.ts';
 import { celsiusFrom } from '../units.ts';
+import { enters } from './dwell-course.ts';
 import type { Dwells } from './dwells.ts';
 import { isExcluded, type JudgedSensor, type Judgement } from './judgement.ts';
 
@@ -24,7 +25,7 @@ export interface RateCourse {
 }
 
 /** The rate of one sensor over the range of a stage, looked for from `sinceMs` on. */
-export function rateCourse(j: Judgement, s: JudgedSensor, stage: RampStage, sinceMs: number): RateCourse {
+export function rateCourse(j: Judgement, s: JudgedSensor, stage: RampStage, sinceMs: number | null): RateCourse {
   const { rate } = stage;
   const unit = j.cycle.units.temperature;
   const sign = stage.kind === 'heat' ? 1 : -1;
@@ -38,7 +39,7 @@ export function rateCourse(j: Judgement, s: JudgedSensor, stage: RampStage, sinc
     slowest: null,
     fastest: null,
   };
-  if (s.track.length === 0) return none;
+  if (s.track.length === 0 || sinceMs === null) return none;
   const endMs = s.lastMs;
   const beyondSecond = s.track.crossings(second, sign > 0 ? '>=' : '<=');
   // Where no dwell was entered before, a cold start is not the end of a cooling.
@@ -55,7 +56,7 @@ export function rateCourse(j: Judgement, s: JudgedSensor, stage: RampStage, sinc
   const isBeyondFirst = start !== null && (cameBackMs === null || cameBackMs < start);
   // After a dwell a range is run by coming to it; only before the first may a sensor start beyond its beginning.
   const isFromStart = start === s.track.firstMs;
-  if (!isBeyondFirst || stop <= start || (isFromStart && sinceMs > j.log.from)) return none;
+  if (!isBeyondFirst || stop <= start || (isFromStart && followsDwell(j, stage))) return none;
   if (sign * (s.track.valueAt(stop) - s.track.valueAt(start)) <= 0) return none;
   const ranWhole = hasReached && !isFromStart;
   const stretch = { from: start, until: stop };
@@ -109,11 +110,19 @@ function isInside(instantMs: number, fromMs: number, untilMs: number): boolean {
   return fromMs < instantMs && instantMs < untilMs;
 }
 
-/** When a sensor entered the dwell before a stage; the log's start where there is none or it never did. */
-export function entersBefore(j: Judgement, dwells: Dwells, stageAt: number, sensorAt: number | null): number {
+function followsDwell({ cycle }: Judgement, stage: RampStage): boolean {
+  return cycle.stages.slice(0, cycle.stages.indexOf(stage)).some(({ kind }) => kind === 'dwell');
+}
+
+/**
+ * When a sensor entered the dwell before a stage; the log's start where there is none or it never did. Null where no
+ * sensor entered it: the stage has not begun.
+ */
+export function entersBefore(j: Judgement, dwells: Dwells, stageAt: number, s: JudgedSensor): number | null {
   const dwellsBefore = j.cycle.stages.slice(0, stageAt).filter(({ kind }) => kind === 'dwell').length;
   if (dwellsBefore === 0) return j.log.from;
-  const { course, clock } = dwells.at(dwellsBefore - 1, 'least');
-  if (sensorAt === null) return clock.opensMs ?? j.log.from;
-  return course.entered[sensorAt] ?? j.log.from;
+  const { course } = dwells.at(dwellsBefore - 1, 'least');
+  if (course.entered.every((ms) => ms === null)) return null;
+  // A sensor that was excluded before it came there has not run what follows.
+  return enters(j, s, course.stage, course) ?? (isExcluded(s) ? null : j.log.from);
 }

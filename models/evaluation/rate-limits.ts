@@ -12,8 +12,8 @@ export function rateLimits(j: Judgement, dwells: Dwells, stageAt: number): Found
   const stage = j.cycle.stages[stageAt]!;
   if (stage.kind === 'dwell' || stage.rate === undefined) return [];
   const ramp = stage as RampStage;
-  const courses = subjects(j, ramp).map(({ sensor, at }) =>
-    rateCourse(j, sensor, ramp, entersBefore(j, dwells, stageAt, at)),
+  const courses = subjects(j, ramp).map((sensor) =>
+    rateCourse(j, sensor, ramp, entersBefore(j, dwells, stageAt, sensor)),
   );
   const found: Found[] = [];
   if (stage.rate.atLeast !== undefined) found.push(extremeRate(j, ramp, courses, 'slowest'));
@@ -21,8 +21,8 @@ export function rateLimits(j: Judgement, dwells: Dwells, stageAt: number): Found
   return found;
 }
 
-function subjects(j: Judgement, { kind, rate }: RampStage): { sensor: JudgedSensor; at: number | null }[] {
-  if (rate.of === 'every') return j.sensors.map((sensor, at) => ({ sensor, at }));
+function subjects(j: Judgement, { kind, rate }: RampStage): readonly JudgedSensor[] {
+  if (rate.of === 'every') return j.sensors;
   const isHottest = (rate.of === 'leading') === (kind === 'heat');
   const one =
     rate.of === 'mean'
@@ -30,7 +30,7 @@ function subjects(j: Judgement, { kind, rate }: RampStage): { sensor: JudgedSens
       : rate.of === 'air'
         ? airSubject(j)
         : derivedSubject(j, j.sensors, isHottest ? 'highest' : 'lowest', rate.of);
-  return one === null ? [] : [{ sensor: one, at: null }];
+  return one === null ? [] : [one];
 }
 
 function extremeRate(

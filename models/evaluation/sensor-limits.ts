@@ -124,7 +124,7 @@ function mustWorkLimit(j: Judgement, dwells: Dwells, places: readonly string[], 
   return {
     ...known,
     outcome: span.hasEnded ? 'met' : unfinished(j),
-    because: `The sensors at ${places.join(', ')} worked${span.hasEnded ? '' : ' so far'}.`,
+    because: `The ${places.length === 1 ? 'sensor' : 'sensors'} at ${places.join(', ')} worked${span.hasEnded ? '' : ' so far'}.`,
   };
 }
 

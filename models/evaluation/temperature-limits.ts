@@ -125,21 +125,18 @@ function coveredBySpread(j: Judgement, dwells: Dwells): Covered {
   if (during === 'run') return { stretches: [j.log], isComplete: !j.isOpen };
   const stretches: Interval[] = [];
   let isComplete = true;
-  const add = (from: number | null, until: number | null): void => {
-    if (from === null || until === null) isComplete = false;
+  const add = (from: number | null, until: number | null, isFinal: boolean): void => {
+    if (from === null || until === null || !isFinal) isComplete = false;
     if (from !== null && from <= (until ?? j.log.until)) stretches.push({ from, until: until ?? j.log.until });
   };
-  if (during === 'dwells') {
-    dwells.stages.forEach((_, i) => {
-      const opensMs = dwells.opensMs(i, 'least');
-      add(opensMs === null ? null : opensMs + after * 60_000, dwells.closesMs(i, 'least'));
-    });
-    return { stretches, isComplete };
-  }
   let sinceMs = heatOnMs(j);
   dwells.stages.forEach((_, i) => {
-    add(sinceMs, dwells.opensMs(i, 'least'));
-    sinceMs = dwells.closesMs(i, 'least');
+    const { clock } = dwells.at(i, 'least');
+    const opensMs = dwells.opensMs(i, 'least');
+    const closesMs = opensMs === null ? null : (clock.closing?.ms ?? null);
+    if (during === 'heating') add(sinceMs, opensMs, true);
+    else add(opensMs === null ? null : opensMs + after * 60_000, closesMs, clock.closing?.isFinal === true);
+    sinceMs = closesMs;
   });
   return { stretches, isComplete };
 }

@@ -84,7 +84,8 @@ function channelInWindow(j: Judgement, window: WindowLimit, channel: RunChannel,
   const { track } = channel;
   const highest = track.highestBetween(stretch.widest.from, stretch.widest.until);
   if (highest < 0) return { ...nothing, because: 'no reading lies in the window' };
-  if (track.reading(highest) > scale.greatestPa)
+  const lowest = track.lowestBetween(stretch.widest.from, stretch.widest.until);
+  if (track.reading(highest) > scale.greatestPa || track.reading(lowest) < scale.leastPa)
     return { ...nothing, because: 'barometer or gauge is wrong: the conversion gives less than nothing' };
   const forgive = forgivenessC(window.forgive, (by) => by * parsePressureUnit(unitOf(j, window.quantity)).paPerUnit);
   const uncertaintyPa = j.cycle.decision?.rule === 'guarded' ? (channel.uncertainty ?? 0) : 0;
