@@ -1,13 +1,15 @@
 import { DomainError } from '../errors.ts';
 import { placeOf, type RepairList } from './repair-list.ts';
 import type { Scans } from './scan-table.ts';
+import { areEqual } from './scans-sent-twice.ts';
 import type { Zone } from './time-zone.ts';
 
 /**
  * Turns the clock's times into instants.
  *
  * In an hour that the zone repeats: the first of the two instants that is not before the previous scan. Where the log
- * begins in that hour, only a step back within it proves which of the two it began in.
+ * begins in that hour, only a step back within it proves which of the two it began in. A file that begins with scans of
+ * the one before begins where those stand.
  *
  * @returns [count] ms since 1970-01-01T00:00:00Z, in the order of the lines.
  * @throws {DomainError} `log-time-skipped` for a time that the zone's clocks never showed; `log-time-ambiguous` for a
@@ -33,7 +35,7 @@ export function instantsInZone(log: Scans, zone: Zone, files: readonly string[],
         if (unproved >= 0) throw ambiguous(log, zone, files, unproved);
         unproved = scan;
       } else if (firstMs < previousMs) {
-        chosenMs = secondMs;
+        chosenMs = twinInEarlierFile(log, scan, instantMs) ?? secondMs;
         unproved = -1;
       }
     }
@@ -47,6 +49,15 @@ export function instantsInZone(log: Scans, zone: Zone, files: readonly string[],
     `Clocks in ${zone.name} showed these times twice; each scan was given the first instant not before the scan above it.`,
   );
   return instantMs;
+}
+
+/** The instant of a scan equal in stamp and values, where a file begins with scans that an earlier one has too. */
+function twinInEarlierFile(log: Scans, scan: number, instantMs: Float64Array): number | null {
+  if (!log.firstOfFile.includes(scan)) return null;
+  for (let other = scan - 1; other >= 0; other--) {
+    if (log.stampMs[other] === log.stampMs[scan] && areEqual(log, other, scan)) return instantMs[other]!;
+  }
+  return null;
 }
 
 function skipped(log: Scans, zone: Zone, files: readonly string[], scan: number): DomainError {

@@ -74,7 +74,8 @@ function contentOf(table: Table, column: number, decimal: '.' | ','): Content | 
     if (cell === '') continue;
     const figure = figureFromText(cell, decimal);
     if (Number.isNaN(figure)) {
-      if (!codes.has(cell)) codes.set(cell, `line ${line}`);
+      // A word among figures is a code; a cell with digits is a figure spoilt, which a person has to see.
+      if (!/\d/.test(cell) && !codes.has(cell)) codes.set(cell, `line ${line}`);
       if (codes.size > MOST_CODES) return null;
     } else if (figures++ === 0) first = figure;
   }

@@ -217,6 +217,17 @@ describe('lines passed over', () => {
     expect(passed(text)).toEqual(expected);
   });
 
+  it('do not grow into a list as long as the log', () => {
+    const block = (i: number) => {
+      const minute = new Date(i * 60_000).toISOString().slice(11, 16);
+      return `2026-03-03 ${minute}:00;20,0;20,5\n\n2026-03-03 ${minute}:30;20,1;20,6\nStamp;T1;T2\n`;
+    };
+    const log = read(preamble + Array.from({ length: 300 }, (_, i) => block(i)).join(''), changes);
+    expect(rowsOf(log).length).toBe(600);
+    expect(log.passedOver.length).toBe(100);
+    expect(log.passedOver.at(-1)?.lines[1]).toBe(1205);
+  });
+
   it('are not a last line without line end whose figures have all their decimals', () => {
     const many = Array.from({ length: 40 }, (_, i) => `2026-03-03 08:13:${10 + i};20,1;20,6\n`).join('');
     expect(passed((preamble + many + first + second).slice(0, -1))).toEqual([42]);
