@@ -15,8 +15,7 @@ const TRIED_WHOLE = 4;
  * Findings while suspects are undecided: worked out with them and without every set of them.
  *
  * A finding that comes out the same whatever is decided stands; one that does not cannot be told, and hangs on the
- * decision. Where none would be left, what
- * hangs on sensors is open.
+ * decision. Where none would be left, what hangs on sensors is open.
  */
 export function withUndecided(
   suspects: readonly Suspect[],
@@ -30,8 +29,7 @@ export function withUndecided(
     if (differing.length === 0) return finding;
     const smallest = differing.reduce((a, b) => (b.without.length < a.without.length ? b : a));
     for (const { channel } of smallest.without) note(changes, channel.layout.name, finding.limit);
-    const { channel, faults } = smallest.without[0]!;
-    const name = channel.layout.name;
+    const name = smallest.without[0]!.channel.layout.name;
     const other = smallest.findings.find(({ limit }) => limit === finding.limit);
     const without = smallest.without.map((suspect) => suspect.channel.layout.name).join(' and ');
     const then = other === undefined ? 'the limit does not arise' : `${words(other.outcome)} (${figureOf(other)})`;
@@ -40,7 +38,7 @@ export function withUndecided(
       outcome: 'cannot-tell' as const,
       margin: null,
       awaits: name,
-      because: `It hangs on ${without} (${faults[0]!.kind}: ${faults[0]!.because}): believed, it is ${words(finding.outcome)} (${figureOf(finding)}); without, ${then}.`,
+      because: `It hangs on whether ${without} ${smallest.without.length > 1 ? 'are' : 'is'} believed: with, it is ${words(finding.outcome)} (${figureOf(finding)}); without, ${then}.`,
     };
   });
 }

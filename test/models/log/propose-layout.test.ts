@@ -3,7 +3,8 @@ import { join } from 'node:path';
 import { describe, expect, it } from 'vitest';
 import type { Layout } from '../../../models/log/layout.ts';
 import { parseLayout } from '../../../models/log/parse-layout.ts';
-import { firstLines, type LayoutProposal, proposeLayout } from '../../../models/log/propose-layout.ts';
+import { readHead } from '../../../models/log/proposal/read-head.ts';
+import { type LayoutProposal, proposeLayout } from '../../../models/log/propose-layout.ts';
 import { readLog } from '../../../models/log/read-log.ts';
 import { scaledReading } from '../../../models/log/readings.ts';
 import { fileOf, refusalOf, rowsOf } from './logs.ts';
@@ -46,10 +47,11 @@ describe('a proposal for a recorded run', () => {
   });
 });
 
-describe('firstLines', () => {
-  it('are as in the file, cut where they are long', () => {
-    const head = Buffer.from(`\ufeffa;b\r\n\r\n${'x'.repeat(400)}\nlast`, 'utf16le');
-    expect(firstLines({ name: 'x', head, isWhole: true }, 3)).toEqual(['a;b', '', 'x'.repeat(300)]);
+describe('readHead', () => {
+  it('gives the lines as they are in the file', () => {
+    const head = Buffer.from('\ufeffa;b\r\n\r\nlast', 'utf16le');
+    expect(readHead({ name: 'x', head, isWhole: true }).lines).toEqual(['a;b', '', 'last']);
+    expect(readHead({ name: 'x', head }).lines).toEqual(['a;b', '']);
   });
 });
 
@@ -185,6 +187,14 @@ describe('the shape of the table', () => {
     expect(askedIn(proposal)).toEqual(['time.zone']);
     const log = readLog([fileOf(text)], answered(proposal, 'UTC'));
     expect(rowsOf(log)[1]!.slice(0, 3)).toEqual(['2026-03-13T08:14:30Z', null, 21.5]);
+  });
+
+  it('takes a word among figures for a missing code, and a spoilt figure for nothing it could settle', () => {
+    const rows = Array.from({ length: 30 }, (_, i) => `2026-03-13 08:${String(i).padStart(2, '0')}:00,2${i % 10}.5`);
+    rows[7] = rows[7]!.replace(/,.*/, ',OPEN');
+    rows[9] = rows[9]!.replace(/,.*/, ',12x.4');
+    const proposal = propose(`Time,TC1\n${rows.join('\n')}\n`);
+    expect(proposal.layout.missing).toEqual(['OPEN']);
   });
 
   it('is never a decimal mark by figures that may be grouped thousands', () => {
