@@ -190,10 +190,13 @@ describe('the shape of the table', () => {
   });
 
   it('takes a word among figures for a missing code, and a spoilt figure for nothing it could settle', () => {
-    const rows = Array.from({ length: 30 }, (_, i) => `2026-03-13 08:${String(i).padStart(2, '0')}:00,2${i % 10}.5`);
-    rows[7] = rows[7]!.replace(/,.*/, ',OPEN');
-    rows[9] = rows[9]!.replace(/,.*/, ',12x.4');
-    const proposal = propose(`Time,TC1\n${rows.join('\n')}\n`);
+    const rows = Array.from(
+      { length: 30 },
+      (_, i) => `2026-03-13 08:${String(i).padStart(2, '0')}:00,20.5,2${i % 10}.5`,
+    );
+    rows[7] = rows[7]!.replace(/,[^,]*$/, ',OPEN');
+    rows[9] = rows[9]!.replace(/,[^,]*$/, ',12x.4');
+    const proposal = propose(`Time,TC1,TC2\n${rows.join('\n')}\n`);
     expect(proposal.layout.missing).toEqual(['OPEN']);
   });
 
