@@ -43,24 +43,24 @@ export const practiceCommand: Command = {
 /** Written beside and put in place when whole: one that was broken off is never taken for the workshop. */
 async function writeAnew(folder: string, path: string): Promise<void> {
   if (existsSync(path)) await refuseRealWorkshop(path);
-  const [{ openDatabase }, { createEvaluator }, { writePracticeWorkshop }] = await Promise.all([
+  const [{ openDatabase }, { createLongWork }, { writePracticeWorkshop }] = await Promise.all([
     import('../store/database.ts'),
-    import('../actions/evaluator.ts'),
+    import('../actions/long-work.ts'),
     import('../practice/write-workshop.ts'),
   ]);
   const unfinished = join(folder, 'unfinished.sqlite');
   removeDatabase(unfinished);
   process.stdout.write('Writing the practice workshop, a year of simulated runs …\n');
   const db = openDatabase(unfinished, { at: new Date().toISOString() });
-  const evaluator = createEvaluator();
+  const longWork = createLongWork();
   try {
     await writePracticeWorkshop({
       db,
-      evaluate: evaluator.evaluate,
+      evaluate: longWork.evaluate,
       say: (sentence) => process.stdout.write(`  ${sentence}\n`),
     });
   } finally {
-    await evaluator.close();
+    await longWork.close();
     db.close();
   }
   removeDatabase(path);

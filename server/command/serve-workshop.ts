@@ -3,8 +3,8 @@ import { createServer, type Server } from 'node:http';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { DomainError } from '../../models/errors.ts';
-import { createEvaluator } from '../actions/evaluator.ts';
 import type { JudgingParts } from '../actions/judge-run.ts';
+import { createLongWork } from '../actions/long-work.ts';
 import { verifyInThread } from '../actions/verify-in-thread.ts';
 import { createApp } from '../app.ts';
 import type { Db } from '../store/database.ts';
@@ -34,13 +34,14 @@ export async function serveWorkshop(options: ServerOptions): Promise<void> {
   const log = createLog();
   const path = databasePath(options.folder);
   const db = openDatabase(path, { at: new Date().toISOString() });
-  const evaluator = createEvaluator();
-  const parts = { db, clock: Date.now, actor: builtInPerson(), evaluate: evaluator.evaluate };
+  const longWork = createLongWork();
+  const parts = { db, clock: Date.now, actor: builtInPerson(), evaluate: longWork.evaluate };
   await options.prepare?.(parts);
   const incomingFolder = join(options.folder, 'incoming');
   mkdirSync(incomingFolder, { recursive: true });
   const app = createApp({
     ...parts,
+    estimateCure: longWork.estimateCure,
     log,
     siteFolder: findSite(),
     incomingFolder,
@@ -57,7 +58,7 @@ export async function serveWorkshop(options: ServerOptions): Promise<void> {
   server.close();
   server.closeAllConnections();
   await watched?.close();
-  await evaluator.close();
+  await longWork.close();
   closeDatabase(db);
 }
 

@@ -1,8 +1,10 @@
+import type { EstimateCure } from '../actions/evaluate-log.ts';
 import type { JudgingParts } from '../actions/judge-run.ts';
 import type { AuditVerification } from '../contract/audit.ts';
 
 /** What the server is made of. Everything is opened by who makes it. */
 export interface AppParts extends JudgingParts {
+  readonly estimateCure: EstimateCure;
   /** Folder of the built pages; null where none are served. */
   readonly siteFolder: string | null;
   /** Folder an upload is written to while it arrives. */

@@ -11,21 +11,28 @@ import { findLatestEvaluation } from '../store/evaluations.ts';
 import { findLoad } from '../store/loads.ts';
 import { requireRun } from '../store/runs.ts';
 import { zoneOfWorkshop } from '../store/workshop.ts';
-import { cureCourses } from './cure-courses.ts';
+import type { AppParts } from './app-parts.ts';
 import { remember } from './remember.ts';
 
 /** What is to be drawn of a run, or of a stretch of it, for one part. */
-export function readChart(db: Db, run: number, query: ChartQuery): RunChart {
+export async function readChart(
+  { db, estimateCure }: Pick<AppParts, 'db' | 'estimateCure'>,
+  run: number,
+  query: ChartQuery,
+): Promise<RunChart> {
   requireRun(db, run);
   const inputs = gatherInputs(db, run);
   const evaluation = findLatestEvaluation(db, run)?.document ?? null;
   const part = partOf(evaluation?.parts ?? [], query.part);
   const { readings } = readLogOnce(db, run);
   const load = inputs?.load ?? findLoad(db, run)?.document ?? null;
-  const cure = remember<readonly CureCourse[]>(db, `cure ${run} ${part?.part} ${JSON.stringify(inputs?.hashes)}`, () =>
-    inputs === null || inputs.resin === null || part === null
-      ? []
-      : cureCourses(readings, inputs.load, inputs.resin, part),
+  const cure = await remember<Promise<readonly CureCourse[]>>(
+    db,
+    `cure ${run} ${part?.part} ${JSON.stringify(inputs?.hashes)}`,
+    () =>
+      inputs === null || inputs.resin === null || part === null
+        ? Promise.resolve([])
+        : estimateCure(readings, inputs.load, inputs.resin, part),
   );
   return chartOfRun({
     readings,

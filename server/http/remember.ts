@@ -13,6 +13,8 @@ export function remember<T>(owner: object, key: string, make: () => T): T {
   const value = kept.has(key) ? (kept.get(key) as T) : make();
   kept.delete(key);
   kept.set(key, value);
+  // What could not be made is made anew when it is asked for again; who asked is told by the promise itself.
+  if (value instanceof Promise) value.catch(() => kept.delete(key));
   for (const oldest of kept.keys()) {
     if (kept.size <= MOST_KEPT) break;
     kept.delete(oldest);

@@ -28,7 +28,7 @@ export const runHandlers: SomeHandlers<
 > = {
   listRuns: ({ db }, { query }) => listRuns(db, query),
   readRun: ({ db }, { params }) => runView(db, numberIn(params, 'run')),
-  readRunChart: ({ db }, { params, query }) => readChart(db, numberIn(params, 'run'), query),
+  readRunChart: (parts, { params, query }) => readChart(parts, numberIn(params, 'run'), query),
   async setLoad(parts, { params, body }) {
     const run = numberIn(params, 'run');
     await setLoad(parts, run, body);

@@ -5,6 +5,7 @@ import { join } from 'node:path';
 import { evaluateLog } from '../../models/evaluation/judge.ts';
 import type { Layout } from '../../models/log/layout.ts';
 import type { Readings } from '../../models/log/readings.ts';
+import { cureCourses } from '../../server/actions/cure-courses.ts';
 import { importCycle } from '../../server/actions/import-cycle.ts';
 import { importResin } from '../../server/actions/import-resin.ts';
 import type { JudgingParts } from '../../server/actions/judge-run.ts';
@@ -120,6 +121,7 @@ function serve(parts: JudgingParts, folder: string): Promise<Server> {
     incomingFolder: folder,
     watchedFolder: null,
     mostUploadBytes: 0,
+    estimateCure: async (...given) => cureCourses(...given),
     verify: async () => verifyChains(parts.db),
   });
   const server = createServer(app);

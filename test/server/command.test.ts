@@ -1,12 +1,15 @@
 import { readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
-import { describe, expect, it } from 'vitest';
+import { describe, expect, it, vi } from 'vitest';
 import { VERSION } from '../../server/contract/version.ts';
 import { sha256Of, sha256OfDocument } from '../../server/store/canonical.ts';
 import { dwellbook } from './built-program.ts';
 import { freshFolder } from './fresh-database.ts';
 import { recordedCase } from './recorded-case.ts';
+
+// Each test starts the program several times, on a machine that may be busy with other tests.
+vi.setConfig({ testTimeout: 180_000 });
 
 const CASES = fileURLToPath(new URL('../golden/recorded/', import.meta.url));
 

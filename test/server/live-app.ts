@@ -4,6 +4,7 @@ import type { AddressInfo } from 'node:net';
 import { join } from 'node:path';
 import { afterEach, expect } from 'vitest';
 import { evaluateLog } from '../../models/evaluation/judge.ts';
+import { cureCourses } from '../../server/actions/cure-courses.ts';
 import { verifyChains } from '../../server/actions/verify-chains.ts';
 import { createApp } from '../../server/app.ts';
 import { ROLES } from '../../server/contract/roles.ts';
@@ -52,6 +53,7 @@ export async function liveApp(changes: Partial<AppParts> = {}): Promise<LiveApp>
     clock: () => Date.parse(NOW),
     actor: { name: 'inspector 2', roles: ROLES },
     evaluate: async (log, inputs) => evaluateLog(log, inputs),
+    estimateCure: async (...given) => cureCourses(...given),
     siteFolder: null,
     incomingFolder,
     watchedFolder: null,

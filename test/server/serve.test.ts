@@ -1,13 +1,16 @@
-import { existsSync, readdirSync, writeFileSync } from 'node:fs';
+import { existsSync, readdirSync, readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import Database from 'better-sqlite3';
-import { describe, expect, it } from 'vitest';
+import { describe, expect, it, vi } from 'vitest';
 import { evaluateLog } from '../../models/evaluation/judge.ts';
 import { readLog } from '../../models/log/read-log.ts';
 import { addressOf, dwellbook, endOf, startDwellbook } from './built-program.ts';
 import { freshFolder } from './fresh-database.ts';
 import { recordedCase } from './recorded-case.ts';
+
+// Each test starts the program several times, on a machine that may be busy with other tests.
+vi.setConfig({ testTimeout: 180_000 });
 
 const CASES = fileURLToPath(new URL('../golden/recorded/', import.meta.url));
 const file = (name: string, one: string) => join(CASES, name, one);
@@ -95,7 +98,10 @@ describe('dwellbook serve', () => {
     const child = startDwellbook('serve', '--port', '0', '--data', data);
     const address = await addressOf(child);
     expect(address).toMatch(/^http:\/\/127\.0\.0\.1:\d+$/);
-    const { layout, cycle } = recordedCase('must-work');
+    const { layout, ...recorded } = recordedCase('must-work');
+    const resin = JSON.parse(readFileSync(file('cure-estimates', 'resin.json'), 'utf8'));
+    const cycle = { ...recorded.cycle, cure: { resin: resin.code, degreeAtLeast: 0.5 } };
+    await json(`${address}/api/resins`, { document: resin });
     const log = densely(recordedCase('must-work').log.toString('latin1'), 20);
     await json(`${address}/api/cycles`, { document: cycle });
     const upload = await fetch(`${address}/api/imports?name=run.csv`, {
@@ -111,9 +117,15 @@ describe('dwellbook serve', () => {
     const set = await judging;
     expect(set.status).toBe(201);
     expect(set.body.scans * layout.channels.length).toBeGreaterThan(50_000);
-    const inputs = { cycle, load, resin: null, exclusions: [], barometer: null, open: false };
+    const inputs = { cycle, load, resin, exclusions: [], barometer: null, open: false };
     const engine = evaluateLog(readLog([{ name: 'run.csv', chunks: [Buffer.from(log)] }], layout), inputs);
     expect(set.body.evaluation.document.parts).toEqual(JSON.parse(JSON.stringify(engine.parts)));
+    const chart = await json(`${address}/api/runs/${body.run}/chart`);
+    const estimated = chart.body.lines.filter(({ strip }: { strip: string }) => strip === 'cure');
+    expect(estimated.map(({ channel }: { channel: string }) => channel)).toEqual(engine.parts[0]?.judgedBy);
+    for (const { value } of estimated) {
+      expect(value.at(-1)).toBeCloseTo(engine.parts[0]?.cure[0]?.degree ?? Number.NaN, 1);
+    }
     const refused = await json(`${address}/api/runs/${body.run}/load`, {
       load: { ...load, barometer: '9 mbar' },
       cycle: cycleNamed,

@@ -28,25 +28,19 @@ function courseOf(
   resin: Resin,
   startDegree: number | undefined,
 ): CureCourse | null {
-  const present = presentOf(value);
-  const times = Float64Array.from(present, (scan) => timeMs[scan] ?? Number.NaN);
-  const [beginsMs] = times;
-  if (beginsMs === undefined) return null;
+  const { timeS, temperatureK, beginsMs } = historyOf(timeMs, value, judgedReading);
+  if (timeS.length === 0) return null;
   try {
-    const { alpha } = cureAlong(
-      times.map((at) => (at - beginsMs) / 1000),
-      Float64Array.from(present, (scan) => kelvinFromCelsius(judgedReading(value[scan] ?? Number.NaN))),
-      resin,
-      startDegree === undefined ? {} : { startDegree },
-    );
-    const kept = thinned(times);
+    const { alpha } = cureAlong(timeS, temperatureK, resin, startDegree === undefined ? {} : { startDegree });
+    const kept = thinned(timeS);
     const degree = Float64Array.from(kept, (n) => alpha[n] ?? Number.NaN);
     const { glassTransition } = resin;
     const tgC =
       glassTransition === undefined
         ? null
         : degree.map((one) => celsiusFromKelvin(glassTransitionK(one, glassTransition)));
-    return { channel: layout.name, timeMs: Float64Array.from(kept, (n) => times[n] ?? Number.NaN), degree, tgC };
+    const keptMs = Float64Array.from(kept, (n) => beginsMs + 1000 * (timeS[n] ?? Number.NaN));
+    return { channel: layout.name, timeMs: keptMs, degree, tgC };
   } catch (error) {
     // A set that cannot be integrated gives no course; the findings say so where a limit hangs on it.
     if (error instanceof DomainError) return null;
@@ -54,25 +48,36 @@ function courseOf(
   }
 }
 
-function presentOf(value: Float64Array): number[] {
-  const present: number[] = [];
-  value.forEach((figure, scan) => {
-    if (!Number.isNaN(figure)) present.push(scan);
-  });
-  return present;
+/** The readings that are there, as judged; from the first of them on. */
+function historyOf(timeMs: Float64Array, value: Float64Array, judgedReading: (figure: number) => number) {
+  const timeS = new Float64Array(value.length);
+  const temperatureK = new Float64Array(value.length);
+  let beginsMs = Number.NaN;
+  let present = 0;
+  for (let scan = 0; scan < value.length; scan += 1) {
+    const figure = value[scan] ?? Number.NaN;
+    if (Number.isNaN(figure)) continue;
+    const at = timeMs[scan] ?? Number.NaN;
+    if (present === 0) beginsMs = at;
+    timeS[present] = (at - beginsMs) / 1000;
+    temperatureK[present] = kelvinFromCelsius(judgedReading(figure));
+    present += 1;
+  }
+  return { timeS: timeS.subarray(0, present), temperatureK: temperatureK.subarray(0, present), beginsMs };
 }
 
-/** Cure has no spikes to be lost: between figures so far apart, ms, it runs straight to the eye. */
-const APART_MS = 15_000;
+/** Cure has no spikes to be lost: between figures so far apart, s, it runs straight to the eye. */
+const APART_S = 15;
 
 /** Places of the figures that are drawn: the first, the last, and between them none closer than that. */
-function thinned(timeMs: Float64Array): number[] {
+function thinned(timeS: Float64Array): number[] {
   const kept: number[] = [];
-  let lastMs = Number.NEGATIVE_INFINITY;
-  timeMs.forEach((at, n) => {
-    if (at - lastMs < APART_MS && n < timeMs.length - 1) return;
+  let lastS = Number.NEGATIVE_INFINITY;
+  for (let n = 0; n < timeS.length; n += 1) {
+    const at = timeS[n] ?? Number.NaN;
+    if (at - lastS < APART_S && n < timeS.length - 1) continue;
     kept.push(n);
-    lastMs = at;
-  });
+    lastS = at;
+  }
   return kept;
 }

@@ -1,31 +1,34 @@
 import { parentPort } from 'node:worker_threads';
 import { DomainError, type ErrorCode, type Facts } from '../../models/errors.ts';
-import type { Evaluation } from '../../models/evaluation/evaluation.ts';
-import { evaluateLog, type JudgementInputs } from '../../models/evaluation/judge.ts';
-import type { ReadLog } from '../../models/log/readings.ts';
+import { evaluateLog } from '../../models/evaluation/judge.ts';
+import { cureCourses } from './cure-courses.ts';
 
-export interface EvaluateQuestion {
+/** What a thread can be asked to do; its arguments are plain data. */
+export const LONG_WORK = { evaluateLog, cureCourses } as const;
+
+export interface Question {
   readonly id: number;
-  readonly log: ReadLog;
-  readonly inputs: JudgementInputs;
+  readonly work: keyof typeof LONG_WORK;
+  readonly given: readonly unknown[];
 }
 
 /** A refusal loses its class on the way between threads, so it travels as what it says. */
-export type EvaluateAnswer =
-  | { readonly id: number; readonly evaluation: Evaluation }
+export type Answer =
+  | { readonly id: number; readonly result: unknown }
   | {
       readonly id: number;
       readonly refusal: { readonly code: ErrorCode; readonly message: string; readonly facts: Facts };
     }
   | { readonly id: number; readonly fault: string };
 
-parentPort?.on('message', (question: EvaluateQuestion) => {
+parentPort?.on('message', (question: Question) => {
   parentPort?.postMessage(answer(question));
 });
 
-function answer({ id, log, inputs }: EvaluateQuestion): EvaluateAnswer {
+function answer({ id, work, given }: Question): Answer {
   try {
-    return { id, evaluation: evaluateLog(log, inputs) };
+    const does = LONG_WORK[work] as (...given: readonly unknown[]) => unknown;
+    return { id, result: does(...given) };
   } catch (error) {
     if (error instanceof DomainError) {
       return { id, refusal: { code: error.code, message: error.message, facts: error.facts } };

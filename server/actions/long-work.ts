@@ -1,0 +1,36 @@
+import type { CureCourse } from '../../models/chart/chart-inputs.ts';
+import type { Evaluation } from '../../models/evaluation/evaluation.ts';
+import type { Readings } from '../../models/log/readings.ts';
+import type { EstimateCure, EvaluateLog } from './evaluate-log.ts';
+import { startThread } from './thread.ts';
+
+export interface LongWork {
+  readonly evaluate: EvaluateLog;
+  readonly estimateCure: EstimateCure;
+  readonly close: () => Promise<void>;
+}
+
+/** Up to here the work takes a few ms, less than handing the readings to another thread. */
+const READINGS_DONE_HERE = 50_000;
+
+/** Judges and estimates small logs at once, big ones in a thread of their own, so that nothing else waits for them. */
+export function createLongWork({ doneHere = READINGS_DONE_HERE } = {}): LongWork {
+  const thread = startThread();
+  return {
+    async evaluate(log, inputs) {
+      if (countReadings(log.readings) > doneHere) return thread.ask<Evaluation>('evaluateLog', [log, inputs]);
+      const { evaluateLog } = await import('../../models/evaluation/judge.ts');
+      return evaluateLog(log, inputs);
+    },
+    async estimateCure(...given) {
+      if (countReadings(given[0]) > doneHere) return thread.ask<readonly CureCourse[]>('cureCourses', given);
+      const { cureCourses } = await import('./cure-courses.ts');
+      return cureCourses(...given);
+    },
+    close: thread.close,
+  };
+}
+
+function countReadings({ timeMs, channels }: Readings): number {
+  return timeMs.length * channels.length;
+}
