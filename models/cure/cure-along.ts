@@ -49,10 +49,7 @@ export function cureAlong(
   }
   const progress = beginCure(resin, options);
   const alpha = new Float64Array(n);
-  for (let i = 0; i < n; i += 1) {
-    progress.accept(timeS[i]!, temperatureK[i]!);
-    alpha[i] = progress.alpha();
-  }
+  progress.acceptAll(timeS, temperatureK, alpha);
   return {
     alpha,
     gelS: progress.gelS,

@@ -1,7 +1,10 @@
 import { DomainError } from '../errors.ts';
 import { kelvinFromCelsius } from '../units.ts';
 import { branchAt, type CureRate, cureRate } from './cure-rate.ts';
-import { type CureState, CureStepper } from './cure-stepper.ts';
+import { BELIEVABLE_K, type CureState } from './cure-state.ts';
+import { CureStepper } from './cure-stepper.ts';
+import { FAST_TOLERANCE, FastCure } from './fast/fast-cure.ts';
+import { separableLaw } from './fast/separable-law.ts';
 import { glassTransitionK } from './glass-transition.ts';
 import type { Resin } from './resin.ts';
 import { secondsOutside } from './seconds-outside.ts';
@@ -39,9 +42,6 @@ export function beginCure(resin: Resin, { startDegree, tolerance = 1e-7 }: CureO
   return new CureProgress(resin, cureRate(resin), start, tolerance);
 }
 
-/** The coldest and hottest a channel's reading may be (−200 to 1372 °C), in K. */
-const BELIEVABLE_K = [73.15, 1645.15] as const;
-
 /**
  * The cure of one point, as far as its readings have come.
  *
@@ -53,16 +53,13 @@ export class CureProgress {
   gelS: number | null = null;
   /** Moment of vitrification, on the clock of the scans; null while it has not come or the resin gives no Tg. */
   vitrifiesS: number | null = null;
-  /** Time spent outside the resin's `validC`, s. */
-  outsideValidS = 0;
 
   readonly resin: Resin;
   readonly #rate: CureRate;
   readonly #tolerance: number;
   readonly #stepper: CureStepper;
+  readonly #fast: FastCure | null;
   readonly #state: CureState;
-  #timeS = Number.NaN;
-  #temperatureK = Number.NaN;
   #vitrification: VitrificationWatch | null = null;
 
   constructor(resin: Resin, rate: CureRate, startDegree: number, tolerance: number) {
@@ -70,7 +67,16 @@ export class CureProgress {
     this.#rate = rate;
     this.#tolerance = tolerance;
     this.#stepper = new CureStepper(rate, tolerance);
-    this.#state = { alpha: startDegree, branch: branchAt(rate, startDegree), stepS: 1 };
+    const law = tolerance < FAST_TOLERANCE ? null : separableLaw(resin);
+    this.#fast = law === null ? null : new FastCure(law, rate, resin);
+    this.#state = {
+      alpha: startDegree,
+      branch: branchAt(rate, startDegree),
+      stepS: 1,
+      timeS: Number.NaN,
+      temperatureK: Number.NaN,
+      outsideValidS: 0,
+    };
   }
 
   /**
@@ -82,12 +88,24 @@ export class CureProgress {
    *   cannot be integrated; `cure-stalls` when the rate is negative. After a refusal the progress is not to be used.
    */
   accept(timeS: number, temperatureK: number): void {
-    if (!(temperatureK >= BELIEVABLE_K[0] && temperatureK <= BELIEVABLE_K[1])) refuseTemperature(timeS, temperatureK);
-    if (!Number.isFinite(timeS) || timeS <= this.#timeS) refuseTime(timeS, this.#timeS);
-    if (Number.isNaN(this.#timeS)) this.#begin(timeS, temperatureK);
-    else this.#goOn(timeS, temperatureK);
-    this.#timeS = timeS;
-    this.#temperatureK = temperatureK;
+    one.timeS[0] = timeS;
+    one.temperatureK[0] = temperatureK;
+    this.acceptAll(one.timeS, one.temperatureK, one.alpha);
+  }
+
+  /** As {@link accept}, for scans in a row; fills `alphaOut` with the degree at each. */
+  acceptAll(timeS: Float64Array, temperatureK: Float64Array, alphaOut: Float64Array): void {
+    let i = 0;
+    while (i < timeS.length) {
+      if (this.#fast !== null && !Number.isNaN(this.#state.timeS)) {
+        const end = this.#nextDegree();
+        i = this.#fast.run(this.#state, timeS, temperatureK, i, timeS.length, end, this.#vitrification, alphaOut);
+        if (i === timeS.length) return;
+      }
+      this.#step(timeS[i]!, temperatureK[i]!);
+      alphaOut[i] = this.#state.alpha;
+      i += 1;
+    }
   }
 
   /** Degree of cure at the last scan. */
@@ -101,11 +119,16 @@ export class CureProgress {
     return glassTransition === undefined ? null : glassTransitionK(this.#state.alpha, glassTransition);
   }
 
+  /** Time spent outside the resin's `validC`, s. */
+  get outsideValidS(): number {
+    return this.#state.outsideValidS;
+  }
+
   /** Degree of cure at a moment not before the last scan, were the temperature to run straight there. */
   alphaAt(timeS: number, temperatureK: number): number {
-    if (Number.isNaN(this.#timeS) || timeS <= this.#timeS) return this.#state.alpha;
     const state = { ...this.#state };
-    this.#stepper.enter(this.#timeS, this.#temperatureK, timeS, temperatureK);
+    if (!(timeS > state.timeS)) return state.alpha;
+    this.#stepper.enter(state.timeS, state.temperatureK, timeS, temperatureK);
     while (this.#stepper.advance(state));
     return state.alpha;
   }
@@ -114,13 +137,23 @@ export class CureProgress {
   copy(): CureProgress {
     const copied = new CureProgress(this.resin, this.#rate, this.#state.alpha, this.#tolerance);
     Object.assign(copied.#state, this.#state);
+    if (copied.#fast !== null) this.#fast?.copyInto(copied.#fast);
     copied.gelS = this.gelS;
     copied.vitrifiesS = this.vitrifiesS;
-    copied.outsideValidS = this.outsideValidS;
-    copied.#timeS = this.#timeS;
-    copied.#temperatureK = this.#temperatureK;
     copied.#vitrification = this.#vitrification?.copy() ?? null;
     return copied;
+  }
+
+  /** Goes on to one scan with the step-by-step integrator, which finds events and refuses what is none. */
+  #step(timeS: number, temperatureK: number): void {
+    const state = this.#state;
+    if (!(temperatureK >= BELIEVABLE_K[0] && temperatureK <= BELIEVABLE_K[1])) refuseTemperature(timeS, temperatureK);
+    if (!Number.isFinite(timeS) || timeS <= state.timeS) refuseTime(timeS, state.timeS);
+    if (Number.isNaN(state.timeS)) this.#begin(timeS, temperatureK);
+    else this.#goOn(timeS, temperatureK);
+    state.timeS = timeS;
+    state.temperatureK = temperatureK;
+    this.#fast?.lift();
   }
 
   #begin(timeS: number, temperatureK: number): void {
@@ -133,27 +166,37 @@ export class CureProgress {
   }
 
   #goOn(timeS: number, temperatureK: number): void {
+    const state = this.#state;
     this.#vitrification?.accept(timeS, temperatureK);
-    this.#stepper.enter(this.#timeS, this.#temperatureK, timeS, temperatureK);
-    while (this.#stepper.advance(this.#state)) this.#watch();
-    this.#vitrification?.passed(timeS);
+    this.#stepper.enter(state.timeS, state.temperatureK, timeS, temperatureK);
+    while (this.#stepper.advance(state)) this.#watch();
     const { validC } = this.resin;
     if (validC === undefined) return;
     const [lowK, highK] = [kelvinFromCelsius(validC[0]), kelvinFromCelsius(validC[1])];
-    this.outsideValidS += secondsOutside(timeS - this.#timeS, this.#temperatureK, temperatureK, lowK, highK);
+    state.outsideValidS += secondsOutside(timeS - state.timeS, state.temperatureK, temperatureK, lowK, highK);
   }
 
   #watch(): void {
+    const { timeS } = this.#state;
     const gelDegree = this.resin.gel?.degree;
     if (gelDegree !== undefined && this.gelS === null && this.#stepper.toAlpha >= gelDegree) {
-      this.gelS = this.#timeS + this.#stepper.elapsedAt(gelDegree);
+      this.gelS = timeS + this.#stepper.elapsedAt(gelDegree);
     }
-    const vitrifies = this.#vitrification?.within(this.#stepper, this.#timeS) ?? null;
+    const vitrifies = this.#vitrification?.within(this.#stepper, timeS) ?? null;
     if (vitrifies === null) return;
-    this.vitrifiesS = this.#timeS + vitrifies;
+    this.vitrifiesS = timeS + vitrifies;
     this.#vitrification = null;
   }
+
+  /** Degree at which the next event or the next branch of the law comes. */
+  #nextDegree(): number {
+    const gelDegree = this.gelS === null ? (this.resin.gel?.degree ?? 1) : 1;
+    return Math.min(gelDegree, this.#rate.branchEnds[this.#state.branch]!);
+  }
 }
+
+/** Room for one scan, to hand it on as a row of one. */
+const one = { timeS: new Float64Array(1), temperatureK: new Float64Array(1), alpha: new Float64Array(1) };
 
 function refuseTime(timeS: number, previousS: number): never {
   throw new DomainError('time-not-increasing', `Scan times must rise: ${timeS} s follows ${previousS} s`, {

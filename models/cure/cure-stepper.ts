@@ -1,17 +1,8 @@
 import { DomainError } from '../errors.ts';
 import { dormandPrinceStep, type EmbeddedStep } from '../numerics/dormand-prince.ts';
 import type { CureRate } from './cure-rate.ts';
+import { type CureState, NOTHING_LEFT } from './cure-state.ts';
 
-/** Where a cure stands: what one step hands to the next. */
-export interface CureState {
-  alpha: number;
-  branch: number;
-  /** Length of step to try next, s. */
-  stepS: number;
-}
-
-/** Below this nothing is left that a double could still show: the rest has reacted. */
-const NOTHING_LEFT = 1e-15;
 /** A cure within this fraction of the degree it can never pass has stalled. */
 const STALLED = 0.999;
 /** Error that a step may always make, far below what is asked for: rounding alone is of this size. */

@@ -40,9 +40,16 @@ export class VitrificationWatch {
     this.#recent.push(timeS, temperatureK);
   }
 
-  /** Forgets what no later moment needs; call when the stepping has reached `timeS`. */
-  passed(timeS: number): void {
-    this.#recent.forgetBefore(timeS);
+  /** As {@link accept}, for scans in a row. */
+  acceptAll(timeS: Float64Array, temperatureK: Float64Array, from: number, to: number): void {
+    for (let i = from; i < to; i += 1) this.#recent.push(timeS[i]!, temperatureK[i]!);
+  }
+
+  /** False where the temperature falls throughout a piece that starts at the last scan, so that nothing vitrifies. */
+  maySteady(fromS: number, fromK: number, toS: number, toK: number): boolean {
+    if (toS - fromS >= LOOK_BACK_S) return true;
+    const temperatureAt = (timeS: number) => fromK + ((toK - fromK) * (timeS - fromS)) / (toS - fromS);
+    return this.#bends(fromS, toS).some((timeS) => this.#margin(timeS, temperatureAt(timeS)) > 0);
   }
 
   /** The moment of vitrification, in s from the piece's start `startS`, if it lies inside the step last taken. */
@@ -53,8 +60,7 @@ export class VitrificationWatch {
       glassTransitionK(step.alphaAt(elapsedS), this.#set) - step.temperatureAt(elapsedS);
     const fromS = startS + step.fromS;
     const toS = startS + step.toS;
-    const bends = this.#recent.scansBetween(fromS - LOOK_BACK_S, toS - LOOK_BACK_S).map((s) => s + LOOK_BACK_S);
-    const ends = [fromS, ...bends, toS];
+    const ends = this.#bends(fromS, toS);
     for (let i = 1; i < ends.length; i += 1) {
       const [a, b] = this.#steady(ends[i - 1]! - startS, ends[i]! - startS, step, startS);
       if (a === null) continue;
@@ -72,15 +78,23 @@ export class VitrificationWatch {
 
   /** The part of [a, b] (no bend inside) over which the temperature is not falling, as far as it is one stretch. */
   #steady(a: number, b: number, step: CureStepper, startS: number): [number, number] | [null, null] {
-    const margin = (elapsedS: number) => {
-      const sinceS = Math.min(LOOK_BACK_S, startS + elapsedS - this.#firstS);
-      const before = this.#recent.at(startS + elapsedS - sinceS);
-      return step.temperatureAt(elapsedS) - before + FALL_K_PER_S * sinceS;
-    };
-    const [atA, atB] = [margin(a), margin(b)];
+    const atA = this.#margin(startS + a, step.temperatureAt(a));
+    const atB = this.#margin(startS + b, step.temperatureAt(b));
     if (atA <= 0 && atB <= 0) return [null, null];
     const turn = a + ((b - a) * atA) / (atA - atB);
     if (atA <= 0) return [turn, b];
     return atB <= 0 ? [a, turn] : [a, b];
+  }
+
+  /** How far the temperature is from falling too fast, K: > 0 where it is steady. Linear between two bends. */
+  #margin(timeS: number, temperatureK: number): number {
+    const sinceS = Math.min(LOOK_BACK_S, timeS - this.#firstS);
+    return temperatureK - this.#recent.at(timeS - sinceS) + FALL_K_PER_S * sinceS;
+  }
+
+  /** The ends of a piece and, between them, where the temperature of 10 minutes before bends. */
+  #bends(fromS: number, toS: number): number[] {
+    const scans = this.#recent.scansBetween(fromS - LOOK_BACK_S, toS - LOOK_BACK_S);
+    return [fromS, ...scans.map((scanS) => scanS + LOOK_BACK_S), toS];
   }
 }

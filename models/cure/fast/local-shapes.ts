@@ -1,0 +1,55 @@
+import { glassTransitionK } from '../glass-transition.ts';
+import type { GlassTransition } from '../resin.ts';
+import type { Term } from './separable-law.ts';
+
+/** Natural logarithm by which the rate may change between a reference degree and the cure: half its square is left out. */
+const OFF = 1e-3;
+
+/** The terms of a law about one degree: Taylor polynomials, how far they reach, and what holds throughout that reach. */
+export class LocalShapes {
+  /** Coefficients of the first term [0 … 4] and of the second [5 … 9] about `center`. */
+  readonly taylor = new Float64Array(10);
+  center = 0;
+  /** Greatest degree within reach. */
+  limit = Number.NEGATIVE_INFINITY;
+  /** How far a degree may be moved by the first derivative of the rate alone. */
+  near = 0;
+  /** No degree within reach has a higher Tg, K. */
+  limitTgK = 0;
+
+  readonly #steepness: number;
+  readonly #glassTransition: GlassTransition | null;
+
+  constructor(steepness: number, glassTransition: GlassTransition | null) {
+    this.#steepness = steepness;
+    this.#glassTransition = glassTransition;
+  }
+
+  /** Renews the polynomials so that they reach from `alpha` onwards. */
+  expand(first: Term, second: Term | undefined, alpha: number): void {
+    const reach = Math.min(first.shape.reach(alpha), second?.shape.reach(alpha) ?? 1);
+    this.center = alpha + reach;
+    this.limit = alpha + 2 * reach;
+    this.near = OFF / (this.#steepness + 0.05 / reach);
+    this.limitTgK = this.#glassTransition === null ? 0 : glassTransitionK(this.limit, this.#glassTransition);
+    first.shape.expand(this.center, this.taylor, 0);
+    second?.shape.expand(this.center, this.taylor, 5);
+  }
+
+  /** Holds nothing: the next degree asked for is out of reach. */
+  forget(): void {
+    this.limit = Number.NEGATIVE_INFINITY;
+  }
+
+  isGlassy(alpha: number, temperatureK: number): boolean {
+    return this.#glassTransition !== null && glassTransitionK(alpha, this.#glassTransition) >= temperatureK;
+  }
+
+  takeOver(other: LocalShapes): void {
+    this.taylor.set(other.taylor);
+    this.center = other.center;
+    this.limit = other.limit;
+    this.near = other.near;
+    this.limitTgK = other.limitTgK;
+  }
+}
