@@ -4,7 +4,9 @@ import { Track } from '../../../models/run/track.ts';
 
 function trackOf(times: readonly number[], values: readonly number[]): Track {
   const track = new Track('TC1');
-  times.forEach((timeMs, i) => track.push(timeMs, values[i]!, i));
+  times.forEach((timeMs, i) => {
+    track.push(timeMs, values[i]!, i);
+  });
   return track;
 }
 
