@@ -17,6 +17,7 @@ export function screensOf(runs: ReadonlyMap<string, number>, waiting: number): R
     'run-with-a-gap': run('gap-in-dwell'),
     'run-of-two-parts': run('mixed-load'),
     'run-with-a-dip': run('dip-forgiven'),
+    'run-with-estimates': run('cure-estimates'),
     load: `${run('mixed-load')}/load`,
     parts: '/parts',
     part: `/parts/${encodeURIComponent('part of short-for-the-lagging')}`,
@@ -35,9 +36,15 @@ export function screensOf(runs: ReadonlyMap<string, number>, waiting: number): R
   };
 }
 
-export const CASES = ['sound', 'short-for-the-lagging', 'stuck', 'gap-in-dwell', 'mixed-load', 'dip-forgiven'];
+export const CASES = [
+  'sound',
+  'short-for-the-lagging',
+  'stuck',
+  'gap-in-dwell',
+  'mixed-load',
+  'dip-forgiven',
+  'cure-estimates',
+];
 
-/** What a screen is answered with on purpose. */
-export function expectedStatuses(screen: string): readonly number[] {
-  return screen === 'no-such-run' ? [404] : [];
-}
+/** What the browser complains of on purpose: the run that is not there. */
+export const EXPECTED_COMPLAINT = /status of 404 .*\/api\/runs\/9999/;

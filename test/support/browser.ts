@@ -22,8 +22,8 @@ export async function launchChromium(): Promise<Browser> {
 /** A page of its own; what the browser complains of is gathered, to be asked for at the end. */
 export interface Watched {
   readonly page: Page;
-  /** Refusals the test makes on purpose are named by their status. */
-  readonly expectNoComplaints: (expected?: readonly number[]) => void;
+  /** Refusals the test makes on purpose are named: `404 … /api/runs/9999`. */
+  readonly expectNoComplaints: (...expected: readonly RegExp[]) => void;
   readonly close: () => Promise<void>;
 }
 
@@ -42,13 +42,14 @@ export async function openPage(
   const page = await context.newPage();
   const complaints: string[] = [];
   page.on('console', (message) => {
-    if (message.type() === 'error' || message.type() === 'warning') complaints.push(`${message.text()} ${message.location().url}`);
+    if (message.type() === 'error' || message.type() === 'warning')
+      complaints.push(`${message.text()} ${message.location().url}`);
   });
   page.on('pageerror', (error) => complaints.push(String(error)));
   return {
     page,
-    expectNoComplaints: (expected = []) => {
-      const unexpected = complaints.filter((text) => !expected.some((status) => text.includes(`status of ${status}`)));
+    expectNoComplaints: (...expected) => {
+      const unexpected = complaints.filter((text) => !expected.some((pattern) => pattern.test(text)));
       expect(unexpected).toEqual([]);
     },
     close: () => context.close(),

@@ -84,7 +84,7 @@ export function scalesOf(chart: RunChart, ink: Ink, width: number, zone: string)
 }
 
 function hourScale(chart: RunChart, ink: Ink, width: number, zone: string) {
-  const most = Math.max(2, Math.floor((width - 150) / 74));
+  const most = Math.max(2, Math.floor((width - leftRoom(width) - rightRoom(width)) / 64));
   const hours = timeTicksS(chart.fromH * 3600, chart.untilH * 3600, most).map((seconds) => seconds / 3600);
   const days = new Map(hours.map((atH) => [atH, day(chart.zeroMs + atH * 3_600_000, zone)]));
   return {

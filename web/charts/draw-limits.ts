@@ -57,23 +57,25 @@ function drawWedge(pen: Pen, wedge: Wedge, isLit: boolean): void {
   ctx.restore();
 }
 
-/** Names of dwell bands stand above the strip, where no course runs. */
+/** Names of dwell bands stand above the strip, where no course runs; where they do not all fit, the worst come first. */
 export function drawBandNames(pen: Pen, drawing: RunChart): void {
   letters(pen, { bold: true });
-  let taken = Number.NEGATIVE_INFINITY;
-  for (const band of drawing.bands) {
-    if (band.kind !== 'dwell' || !pen.has(band.strip)) continue;
+  const taken: { middle: number; half: number }[] = [];
+  const dwells = drawing.bands.filter(({ kind, strip }) => kind === 'dwell' && pen.has(strip));
+  for (const band of [...dwells].sort((a, b) => SEVERITY.indexOf(a.outcome) - SEVERITY.indexOf(b.outcome))) {
     const area = pen.area(band.strip);
     const left = Math.max(pen.x(band.fromH), area.left);
     const right = Math.min(pen.x(band.untilH), area.right);
     if (right <= left) continue;
     const half = pen.ctx.measureText(band.text).width / 2;
     const middle = Math.min(Math.max((left + right) / 2, area.left + half), area.right - half);
-    if (middle - half < taken) continue;
+    if (taken.some((other) => Math.abs(other.middle - middle) < other.half + half + 8)) continue;
+    taken.push({ middle, half });
     write(pen, band.text, middle, area.top - 12, 'center', colourOf(band.outcome, pen.ink));
-    taken = middle + half + 8;
   }
 }
+
+const SEVERITY: readonly Outcome[] = ['not-met', 'cannot-tell', 'pending', 'met'];
 
 export function colourOf(outcome: Outcome, ink: Ink): string {
   if (outcome === 'met') return ink.accent;

@@ -29,6 +29,9 @@ function drawStripName(pen: Pen, { strip, title, unit }: StripAxis): void {
 function drawEndNames(pen: Pen, chart: RunChart, { strip }: StripAxis): void {
   const { ctx, ink } = pen;
   const { right, top, bottom } = pen.area(strip);
+  const isSaidAbove =
+    isNarrow(pen.width) && strip !== 'temperature' && chart.lines.filter((line) => line.strip === strip).length === 1;
+  if (isSaidAbove) return;
   const ends = chart.lines
     .filter((line) => line.strip === strip)
     .map((line) => ({ line, end: lastValue(line, chart.untilH) }))

@@ -48,7 +48,7 @@ export function createPainter(canvas: HTMLCanvasElement, frame: HTMLElement, fir
   watch.observe(frame);
   paper.addEventListener('change', turn);
   addEventListener('beforeprint', toPaper);
-  addEventListener('afterprint', dressForScreen);
+  addEventListener('afterprint', turn);
   const stopFollowing = followScheme(turn);
   let isGone = false;
   void document.fonts.ready.then(() => isGone || chart.draw());
@@ -71,7 +71,7 @@ export function createPainter(canvas: HTMLCanvasElement, frame: HTMLElement, fir
       watch.disconnect();
       paper.removeEventListener('change', turn);
       removeEventListener('beforeprint', toPaper);
-      removeEventListener('afterprint', dressForScreen);
+      removeEventListener('afterprint', turn);
       stopFollowing();
       chart.destroy();
     },
