@@ -23,7 +23,7 @@ const MODELS = [
 ];
 const CONTRACT = ['server/contract', 'server/contract/paths.ts'];
 const SHARED = ['models', 'models/numerics'];
-const WEB_PACKAGES = ['preact', '@preact/signals', 'preact-iso', 'chart.js', 'date-fns', '@fontsource-variable/*'];
+const WEB_PACKAGES = ['preact', '@preact/signals', 'preact-iso', 'chart.js', '@fontsource-variable/*'];
 
 function room(may: readonly string[], packages: readonly string[] = []): Place {
   return { may, packages };
