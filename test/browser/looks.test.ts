@@ -70,6 +70,8 @@ describe('on paper', () => {
       // A4 at 96 px an inch, less its margins.
       await page.setViewportSize({ width: 688, height: 1000 });
       await page.screenshot({ path: `${FOLDER}${name}-print.png`, fullPage: true });
+      expect(await widthOf(page), name).toBe(688);
+      expect(await inkOutside(page), name).toBe(false);
       expect(
         await page
           .getByRole('button')
@@ -99,4 +101,12 @@ describe('on paper', () => {
 
 function widthOf(page: Page): Promise<number> {
   return page.evaluate(() => document.documentElement.scrollWidth);
+}
+
+/** Whether the chart's canvas reaches beyond the paper, where it would be cut off without a scroll bar. */
+function inkOutside(page: Page): Promise<boolean> {
+  return page.evaluate(() => {
+    const right = document.querySelector('canvas')?.getBoundingClientRect().right ?? 0;
+    return right > document.documentElement.clientWidth;
+  });
 }

@@ -48,19 +48,12 @@ export function RunJudged({ run, evaluation, again }: { run: RunView; evaluation
             ))}
           </fieldset>
         )}
-        {part && <FindingList part={part} run={run} evaluation={evaluation.document} lit={lit} onLight={setLit} />}
+        {part && <FindingList part={part} run={run} lit={lit} onLight={setLit} />}
         <div class="on-paper">
           {parts
             .filter((one) => one !== part)
             .map((one) => (
-              <FindingList
-                key={partName(one)}
-                part={one}
-                run={run}
-                evaluation={evaluation.document}
-                lit={null}
-                onLight={setLit}
-              />
+              <FindingList key={partName(one)} part={one} run={run} lit={null} onLight={setLit} />
             ))}
         </div>
       </div>

@@ -1,8 +1,8 @@
 import { limitTitle } from '../../models/cycle/limits-of-cycle.ts';
-import type { Evaluation, Finding, PartEvaluation } from '../../models/evaluation/evaluation.ts';
+import type { Finding, PartEvaluation } from '../../models/evaluation/evaluation.ts';
 import type { RunView } from '../../server/contract/runs.ts';
 import { asWritten, figure, listed } from '../words/figures.ts';
-import { isEstimate, limitName, observedFigure, worstFirst } from '../words/limits.ts';
+import { limitName, observedFigure, worstFirst } from '../words/limits.ts';
 import { sentence } from '../words/verdicts.ts';
 import { OUTCOME_WORDS, OutcomeMark } from './outcome-mark.tsx';
 
@@ -10,13 +10,11 @@ import { OUTCOME_WORDS, OutcomeMark } from './outcome-mark.tsx';
 export function FindingList({
   part,
   run,
-  evaluation,
   lit,
   onLight,
 }: {
   part: PartEvaluation;
   run: RunView;
-  evaluation: Evaluation;
   lit: string | null;
   onLight: (limit: string | null) => void;
 }) {
@@ -47,7 +45,7 @@ export function FindingList({
               <span class="what">{titleOf(run, finding)}</span>
               <span class="figure">{observedFigure(finding)}</span>
             </button>
-            <p>{reasonOf(finding, evaluation)}</p>
+            <p>{reasonOf(finding)}</p>
           </li>
         ))}
       </ul>
@@ -68,7 +66,7 @@ function titleOf(run: RunView, finding: Finding): string {
   return run.cycleIssue ? limitTitle(run.cycleIssue.document, finding.limit) : limitName(finding.limit);
 }
 
-function reasonOf(finding: Finding, evaluation: Evaluation): string {
+function reasonOf(finding: Finding): string {
   const said = [sentence(finding.because)];
   if (finding.outcome === 'met' && finding.margin !== null && finding.unit !== '') {
     said.push(`${figure(finding.margin, finding.unit)} to spare.`);
@@ -78,8 +76,5 @@ function reasonOf(finding: Finding, evaluation: Evaluation): string {
     said.push(`${figure(finding.possible, finding.unit)} at best, counting what gaps may hide.`);
   }
   if (finding.uncertainty !== null) said.push(`U (k = 2) ${asWritten(finding.uncertainty, finding.unit)}.`);
-  if (isEstimate(finding.limit) && evaluation.resin) {
-    said.push(`An estimate by set ${evaluation.resin.code}, ${evaluation.resin.status}.`);
-  }
   return said.filter(Boolean).join(' ');
 }

@@ -25,10 +25,6 @@ export function limitName(limit: string): string {
   return cut < 0 ? raised(limit) : `${raised(limit.slice(0, cut))}, ${limit.slice(cut + 1)}`;
 }
 
-export function isEstimate(limit: string): boolean {
-  return limit.startsWith('cure/');
-}
-
 export function observedFigure(finding: Finding): string {
   return figureAgainst(finding.observed, finding.unit, [finding.atLeast, finding.atMost]);
 }
