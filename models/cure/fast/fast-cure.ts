@@ -7,13 +7,17 @@ import { LocalShapes } from './local-shapes.ts';
 import { moveAlong } from './move-along.ts';
 import { rateSlopes } from './rate-slopes.ts';
 import { runOut } from './run-out.ts';
-import type { SeparableLaw } from './separable-law.ts';
+import type { SeparableLaw, Term } from './separable-law.ts';
+import { oneTermAnchored, stepOneTerm } from './step-one-term.ts';
 import { anchored, FIGURES, stepReadings } from './step-readings.ts';
 
 /** Below this tolerance the step-by-step integrator does all the work. */
 export const FAST_TOLERANCE = 1e-7;
 
-/** Follows a cure over readings close together in time, by {@link stepReadings}; declines what that cannot vouch for. */
+/**
+ * Follows a cure over readings close together in time, by {@link stepOneTerm} or {@link stepReadings}; declines what
+ * they cannot vouch for.
+ */
 export class FastCure {
   readonly #law: SeparableLaw;
   readonly #rate: CureRate;
@@ -63,7 +67,11 @@ export class FastCure {
     if (!this.#isAnchored && !this.#anchor(state)) return from;
     const degreeEnd = Math.min(nextDegree, 1 - 10 * NOTHING_LEFT);
     const [now, shapes] = [this.#now, this.#shapes];
-    const i = stepReadings(this.#law, now, shapes, state, timeS, temperatureK, from, to, degreeEnd, watch, alphaOut);
+    const only = this.#onlyTerm(state);
+    const i =
+      only === null
+        ? stepReadings(this.#law, now, shapes, state, timeS, temperatureK, from, to, degreeEnd, watch, alphaOut)
+        : stepOneTerm(only, now, shapes, state, timeS, temperatureK, from, to, degreeEnd, watch, alphaOut);
     this.#isAnchored = i === to;
     moveAlong(state, timeS, temperatureK, from, i, alphaOut, this.#validK);
     return i;
@@ -71,11 +79,18 @@ export class FastCure {
 
   /** Starts anew from the law itself; false where its derivatives are not to be had. */
   #anchor(state: CureState): boolean {
+    const only = this.#onlyTerm(state);
     const found = rateSlopes(this.#rate, state);
     if (found === null) return false;
-    this.#now.set(anchored(state, ...found));
+    this.#now.set(only === null ? anchored(state, ...found) : oneTermAnchored(only, state));
     this.#shapes.forget();
     this.#isAnchored = true;
     return true;
+  }
+
+  /** The term of a branch that has but one, with nothing that holds it back. */
+  #onlyTerm({ branch }: CureState): Term | null {
+    const [first, second] = this.#law.branches[branch]!;
+    return second === undefined && this.#law.held === 'nothing' ? first : null;
   }
 }

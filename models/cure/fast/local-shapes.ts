@@ -1,6 +1,7 @@
 import { glassTransitionK } from '../glass-transition.ts';
 import type { GlassTransition } from '../resin.ts';
 import type { Term } from './separable-law.ts';
+import type { TermShape } from './term-shape.ts';
 
 /** Natural logarithm by which the rate may change between a reference degree and the cure: half its square is left out. */
 const OFF = 1e-3;
@@ -31,9 +32,23 @@ export class LocalShapes {
     this.center = alpha + reach;
     this.limit = alpha + 2 * reach;
     this.near = OFF / (this.#steepness + 0.05 / reach);
-    this.limitTgK = this.#glassTransition === null ? 0 : glassTransitionK(this.limit, this.#glassTransition);
+    this.#lookTo(this.limit);
     first.shape.expand(this.center, this.taylor, 0);
     second?.shape.expand(this.center, this.taylor, 5);
+  }
+
+  /**
+   * The series of α in θ, dα/dθ = g(α), from a degree on: the greatest θ it may be used for, and c1 … c4.
+   *
+   * By differentiating dα/dθ = g three times: g g', g (g'² + g g''), g (g'³ + 4 g g' g'' + g² g''').
+   */
+  seriesInTheta(shape: TermShape, alpha: number): readonly [number, number, number, number, number] {
+    const reach = shape.reach(alpha);
+    this.#lookTo(alpha + reach);
+    shape.expand(alpha, this.taylor, 0);
+    const [g, g1, g2, g3] = [this.taylor[0]!, this.taylor[1]!, 2 * this.taylor[2]!, 6 * this.taylor[3]!];
+    const fourth = g1 * g1 * g1 + 4 * g * g1 * g2 + g * g * g3;
+    return [reach / g, g, (g * g1) / 2, (g * (g1 * g1 + g * g2)) / 6, (g * fourth) / 24];
   }
 
   /** Holds nothing: the next degree asked for is out of reach. */
@@ -43,6 +58,10 @@ export class LocalShapes {
 
   isGlassy(alpha: number, temperatureK: number): boolean {
     return this.#glassTransition !== null && glassTransitionK(alpha, this.#glassTransition) >= temperatureK;
+  }
+
+  #lookTo(alpha: number): void {
+    this.limitTgK = this.#glassTransition === null ? 0 : glassTransitionK(alpha, this.#glassTransition);
   }
 
   takeOver(other: LocalShapes): void {
