@@ -63,6 +63,26 @@ async function runAxe(page: Page, rules: readonly string[] | null): Promise<AxeR
   }, rules);
 }
 
+describe('every screen of an empty workshop', () => {
+  it('has no violation that axe finds, and says what to do first', { timeout: 300_000 }, async () => {
+    const empty = await serveProgram();
+    const { page, expectNoComplaints, close } = await openPage(browser, empty.address);
+    const found: string[] = [];
+    for (const path of ['/', '/runs', '/parts', '/cycles', '/resins', '/recorders', '/audit', '/import']) {
+      await page.goto(path);
+      await settle(page);
+      found.push(...violationsOf(`empty ${path}`, await runAxe(page, null)));
+    }
+    expect(found).toEqual([]);
+    await page.goto('/parts');
+    await page.getByText('No part is on record yet').waitFor();
+    expect(await page.locator('main').textContent()).toContain('Import a log');
+    expectNoComplaints();
+    await close();
+    await empty.stop();
+  });
+});
+
 describe('axe itself', () => {
   it('would notice: a button without a name is found', async () => {
     const { page, close } = await openPage(browser, program.address);

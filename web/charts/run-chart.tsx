@@ -50,6 +50,8 @@ export function RunChart({
   const drawing = useMemo(() => (latest.value ? inUnits(latest.value, units) : null), [latest.value, units]);
   const stretch = drawing?.stretches.find(({ limit }) => limit === lit) ?? null;
 
+  const table = useMemo(() => (isTable && drawing ? <ChartTable chart={drawing} /> : null), [isTable, drawing]);
+
   useEffect(() => {
     const press = (event: KeyboardEvent) => {
       if (isTyping(event.target) || event.ctrlKey || event.metaKey || event.altKey) return;
@@ -154,7 +156,12 @@ export function RunChart({
               {lasting(view.untilMs - view.fromMs)}. Keys: + and − zoom, arrows move, f next finding, t table.
             </p>
           </div>
-          {isTable && <ChartTable chart={drawing} />}
+          {drawing.notDrawn.map(({ channel, because }) => (
+            <p class="soft small" key={channel}>
+              {channel} is not drawn: {because}
+            </p>
+          ))}
+          {table}
         </>
       )}
     </figure>
