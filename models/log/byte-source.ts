@@ -2,7 +2,7 @@ import { DomainError } from '../errors.ts';
 import { textBytes } from './decode-bytes.ts';
 import type { LogEncoding } from './layout.ts';
 import type { LogFile } from './log-file.ts';
-import { firstInvalidUtf8, startOfCutCharacter } from './utf8.ts';
+import { firstInvalidUtf8, firstZero, startOfCutCharacter } from './utf8.ts';
 
 /** A window on a file's text, as bytes of UTF-8 or Windows-1252, moved forward by whoever reads it. */
 export interface ByteSource {
@@ -85,11 +85,10 @@ export function openSource(file: LogFile, encoding: LogEncoding, windowBytes = 1
       if (end >= LONGEST_LINE_BYTES) throw lineTooLong(file.name, line);
       const checkFrom = charset === 'utf-8' ? startOfCutCharacter(bytes, end) : end;
       fill();
-      const zero = bytes.subarray(checkFrom, end).indexOf(0);
-      if (zero >= 0) throw zeroByte(file.name, line + countLineEnds(bytes, checkFrom + zero));
-      if (charset !== 'utf-8') return;
-      const wrong = firstInvalidUtf8(bytes, checkFrom, end);
-      if (wrong < end) throw notUtf8(file.name, line + countLineEnds(bytes, wrong));
+      const wrong = (charset === 'utf-8' ? firstInvalidUtf8 : firstZero)(bytes, checkFrom, end);
+      if (wrong === end) return;
+      const wrongLine = line + countLineEnds(bytes, wrong);
+      throw bytes[wrong] === 0 ? zeroByte(file.name, wrongLine) : notUtf8(file.name, wrongLine);
     },
     close: () => void pieces.return(),
   };

@@ -16,7 +16,7 @@ export const ENCODINGS = ['utf-8', 'utf-16le', 'utf-16be', 'windows-1252'] as co
 export type LogEncoding = (typeof ENCODINGS)[number];
 
 export interface ChannelLayout {
-  /** Heading of the column in the file. */
+  /** Heading of the column in the file; or `#5`, the fifth, where its heading is empty or stands twice. */
   readonly column: string;
   /** What the product calls the channel: `TC1`, `vessel pressure`. */
   readonly name: string;
@@ -35,6 +35,10 @@ export interface ChannelLayout {
   readonly parts?: readonly string[];
 }
 
+/**
+ * How the time is written: a pattern of Unicode TR 35 letters over its columns joined by a space; time elapsed since an
+ * instant; or days of a spreadsheet (1900 system; a day and its part may stand in two columns).
+ */
 export type TimeLayout =
   | { readonly columns: readonly string[]; readonly pattern: string; readonly zone: string }
   | { readonly columns: readonly string[]; readonly elapsed: 's' | 'min' | 'h'; readonly startsAt: string }

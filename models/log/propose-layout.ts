@@ -45,13 +45,6 @@ export function proposeLayout(file: FileHead): LayoutProposal {
   };
 }
 
-/** The first lines of an unknown file as text, each cut at `mostCharacters`; refused like {@link proposeLayout}. */
-export function firstLines(file: FileHead, mostLines = 40, mostCharacters = 300): string[] {
-  return readHead(file)
-    .lines.slice(0, mostLines)
-    .map((line) => line.slice(0, mostCharacters));
-}
-
 /** A column by its heading, or by its number where the heading is empty or stands twice. */
 function headingsOf(headings: readonly string[]): (column: number) => string {
   return (column) => {

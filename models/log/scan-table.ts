@@ -106,9 +106,9 @@ function grown<T extends Float64Array | Uint32Array>(figures: T, larger: T): T {
   return larger;
 }
 
-/** A column's figures, copied only where an eighth of it would be kept for nothing. */
+/** A column's figures, copied only where half of it would be kept for nothing. */
 function withoutMuchRoom(value: Float64Array, count: number): Float64Array {
-  return value.length - count > value.length / 8 ? value.slice(0, count) : value.subarray(0, count);
+  return value.length - count > value.length / 2 ? value.slice(0, count) : value.subarray(0, count);
 }
 
 /** The file a scan came from, as its index in the order the files were given. */
