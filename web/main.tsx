@@ -2,6 +2,7 @@ import '@fontsource-variable/atkinson-hyperlegible-next/wght.css';
 import './style/tokens.css';
 import './style/base.css';
 import './style/layout.css';
+import './style/entries.css';
 import './style/controls.css';
 import './style/outcome.css';
 import './style/run.css';
