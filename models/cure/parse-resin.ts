@@ -1,5 +1,6 @@
 import { format, number, object, oneOf, pairOf, type Read, refuse, text } from '../document.ts';
 import { readKinetics } from './parse-kinetics.ts';
+import { readViscosity } from './parse-viscosity.ts';
 import { refuseImplausible } from './refuse-implausible.ts';
 import { type Diffusion, type GlassTransition, RESIN_STATUSES, type Resin } from './resin.ts';
 import { whyNotFrom } from './start-degree.ts';
@@ -73,6 +74,7 @@ const readResin: Read<Resin> = object((fields) => ({
     'gel',
     object((gel) => ({ degree: gel.required('degree', number({ above: 0, below: 1 })) })),
   ),
+  ...fields.optional('viscosity', readViscosity),
   ...fields.optional(
     'thermal',
     object((thermal) => ({

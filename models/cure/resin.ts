@@ -54,6 +54,31 @@ export type Isoconversional = Extract<Kinetics, { law: 'isoconversional' }>;
 export const RESIN_STATUSES = ['published', 'recalled', 'fitted', 'illustrative'] as const;
 export type ResinStatus = (typeof RESIN_STATUSES)[number];
 
+export type Viscosity =
+  | {
+      readonly law: 'castro-macosko';
+      /** Pa s. */
+      readonly A: number;
+      /** J/mol. */
+      readonly E: number;
+      readonly gelDegree: number;
+      /** Exponent a + b α of αg/(αg − α). */
+      readonly a: number;
+      readonly b: number;
+    }
+  | {
+      readonly law: 'lee-loos-springer';
+      /** Pa s. */
+      readonly muInf: number;
+      /** J/mol. */
+      readonly U: number;
+      readonly K: number;
+      /** Degree up to which the fit was made. */
+      readonly validTo: number;
+    };
+export type CastroMacosko = Extract<Viscosity, { law: 'castro-macosko' }>;
+export type ViscosityLeeLoosSpringer = Extract<Viscosity, { law: 'lee-loos-springer' }>;
+
 export type Diffusion = NonNullable<Resin['diffusion']>;
 export type GlassTransition = NonNullable<Resin['glassTransition']>;
 
@@ -90,5 +115,7 @@ export interface Resin {
     readonly method?: string;
   };
   readonly gel?: { readonly degree: number };
+  /** Viscosity of the reacting resin before gel, of the same study. */
+  readonly viscosity?: Viscosity;
   readonly thermal?: { readonly heatOfReaction: number; readonly basis: 'resin' | 'composite' };
 }
