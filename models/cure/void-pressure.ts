@@ -14,7 +14,7 @@ const PA_PER_ATM = 101325;
  * @throws {DomainError} `option-out-of-range` outside these ranges.
  *
  * Accuracy: 4962 exp(−4892/T) is a straight Clausius–Clapeyron line through 1 atm at 100 °C; against steam tables it is
- *   0.4 % high at 100 °C, 2.7 % at 180 °C and 19 % at 25 °C, nowhere more than 0.1 % low; test/models/cure/void-pressure.test.ts.
+ *   0.4 % high at 100 °C, 2.7 % at 180 °C and 19 % at 25 °C, nowhere more than 0.2 % low; test/models/cure/void-pressure.test.ts.
  * Limits: the pressure is that of the resin, which the fibre bed, a dry bag or gelation can hold well below the vessel's;
  *   water alone is considered, not solvents or entrapped air; after gel it says nothing.
  * Source: Kardos, Duduković & Dave, Adv Polym Sci 80 (1986) 101–123.

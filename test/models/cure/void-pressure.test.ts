@@ -21,13 +21,13 @@ describe('leastVoidPressurePa', () => {
     expect(Math.abs(leastVoidPressurePa(T_C + 273.15, 50) / (1000 * Pmin_RH50_kPa) - 1)).toBeLessThan(1e-12);
   });
 
-  it('is saturation at 100 %: within 3.5 % of steam tables from 80 to 200 °C, and never 0.1 % below them', () => {
-    const hot = usable.filter(({ T_C }) => T_C >= 80);
+  it('is saturation at 100 %: within 3 % of steam tables from 80 to 180 °C, and never 0.2 % below them', () => {
+    const hot = usable.filter(({ T_C }) => T_C >= 80 && T_C <= 180);
     expect(hot.length).toBeGreaterThan(4);
     for (const { T_C, psat_IAPWS_kPa } of hot) {
       const ratio = leastVoidPressurePa(T_C + 273.15, 100) / (1000 * psat_IAPWS_kPa);
-      expect(ratio).toBeGreaterThan(0.999);
-      expect(ratio).toBeLessThan(1.035);
+      expect(ratio).toBeGreaterThan(0.998);
+      expect(ratio).toBeLessThan(1.03);
     }
   });
 
