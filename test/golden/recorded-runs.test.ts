@@ -1,20 +1,15 @@
-import { existsSync, readdirSync, readFileSync } from 'node:fs';
-import { join } from 'node:path';
+import { readdirSync, readFileSync } from 'node:fs';
+import { basename, join } from 'node:path';
 import { describe, expect, it } from 'vitest';
 import { DomainError } from '../../models/errors.ts';
 import type { Evaluation, Finding } from '../../models/evaluation/evaluation.ts';
 import { openRecordedRun } from '../support/recorded-run.ts';
 
-// Recorded runs with outcomes known by construction (noise and defects put into a made curve), written for the rules
-// of cycle and verdict by an independent implementation. Source of each: `what` in its expected.json.
-const FOLDERS = ['recorded', 'practice']
-  .filter((name) => existsSync(join(import.meta.dirname, name)))
-  .map((name) => join(import.meta.dirname, name))
-  .flatMap((folder) =>
-    readdirSync(folder, { withFileTypes: true })
-      .filter((entry) => entry.isDirectory())
-      .map((entry) => join(folder, entry.name)),
-  );
+// Where each folder comes from: SOURCES.md beside this file.
+const FOLDERS = ['recorded', 'rewritten', 'second-reading', 'practice'].flatMap((name) => {
+  const folder = join(import.meta.dirname, name);
+  return readdirSync(folder).map((run) => join(folder, run));
+});
 
 interface ExpectedFinding {
   limit: string;
@@ -29,22 +24,29 @@ interface ExpectedFinding {
 
 interface Expected {
   what: string;
-  exit: number;
+  exit?: number;
   verdict?: string;
   findings?: ExpectedFinding[];
   parts?: Record<string, { verdict: string; findings: ExpectedFinding[] }>;
   notFindings?: string[];
   faults?: Record<string, string>;
   repairs?: boolean;
+  cure?: {
+    channel: string;
+    degree: number;
+    tgC: number;
+    gelAt: string;
+    within: { degree: number; tgC: number; gelS: number };
+  }[];
   stderr?: string[];
 }
 
 describe('a recorded run', () => {
-  it('was found at all', () => expect(FOLDERS.length).toBeGreaterThanOrEqual(56));
+  it('was found at all', () => expect(FOLDERS.length).toBeGreaterThanOrEqual(280));
 
   for (const folder of FOLDERS) {
     const expected: Expected = JSON.parse(readFileSync(join(folder, 'expected.json'), 'utf8'));
-    it(expected.what, () => {
+    it(`${basename(folder)}: ${expected.what}`, () => {
       if (expected.exit === 65) {
         expect(() => openRecordedRun(folder).judge()).toThrow(DomainError);
         for (const word of expected.stderr ?? []) expect(() => openRecordedRun(folder).judge()).toThrow(word);
@@ -55,9 +57,12 @@ describe('a recorded run', () => {
   }
 });
 
+const EXITS = { conforms: 0, 'does-not-conform': 1, 'cannot-tell': 2, pending: 2 };
+
 function compare(evaluation: Evaluation, expected: Expected): void {
   const all = evaluation.parts.flatMap(({ findings }) => findings);
   if (expected.verdict !== undefined) expect(evaluation.verdict).toBe(expected.verdict);
+  if (expected.exit !== undefined) expect(EXITS[evaluation.verdict]).toBe(expected.exit);
   compareFindings(all, expected.findings ?? []);
   for (const [name, part] of Object.entries(expected.parts ?? {})) {
     const judged = evaluation.parts.find((one) => one.part === name);
@@ -71,6 +76,12 @@ function compare(evaluation: Evaluation, expected: Expected): void {
     expect(sensor?.faults.map((fault) => fault.kind)).toContain(kind);
   }
   if (expected.repairs) expect(evaluation.log.repairs).not.toEqual([]);
+  for (const { channel, degree, tgC, gelAt, within } of expected.cure ?? []) {
+    const estimate = evaluation.parts[0]!.cure.find((one) => one.channel === channel)!;
+    expect(Math.abs(estimate.degree - degree)).toBeLessThanOrEqual(within.degree);
+    expect(Math.abs(estimate.tgC! - tgC)).toBeLessThanOrEqual(within.tgC);
+    expect(Math.abs(Date.parse(estimate.gelAt!) - Date.parse(gelAt))).toBeLessThanOrEqual(1000 * within.gelS);
+  }
 }
 
 function compareFindings(findings: readonly Finding[], expected: readonly ExpectedFinding[]): void {

@@ -32,13 +32,13 @@ export function openRecordedRun(folder: string): RecordedRun {
     const at = args.indexOf(name);
     return at < 0 ? null : (args[at + 1] ?? null);
   };
-  const exclude = option('--exclude');
+  const excluded = args.filter((_, i) => args[i - 1] === '--exclude');
   const layout = parseLayout(json('layout.json'));
   const inputs: JudgementInputs = {
     cycle: parseCycle(json('cycle.json')),
     load: optional('load.json', parseLoad),
     resin: optional('resin.json', parseResin),
-    exclusions: exclude === null ? [] : [parseExclusion(exclude)],
+    exclusions: excluded.map(parseExclusion),
     barometer: option('--barometer'),
     open: args.includes('--open'),
   };
