@@ -18,6 +18,7 @@ import { readWorkshop } from './workshop.ts';
 
 const RunPage = lazy(() => import('./pages/run.tsx'));
 const LoadPage = lazy(() => import('./pages/load.tsx'));
+const ReadAgainPage = lazy(() => import('./pages/read-again.tsx'));
 const ImportFilePage = lazy(() => import('./pages/import-file.tsx'));
 const CyclePage = lazy(() => import('./pages/cycle.tsx'));
 const CycleImportPage = lazy(() => import('./pages/cycle-import.tsx'));
@@ -41,6 +42,7 @@ export function App() {
               <Route path="/runs" component={RunsPage} />
               <Route path="/runs/:run" component={RunPage} />
               <Route path="/runs/:run/load" component={LoadPage} />
+              <Route path="/runs/:run/sources/:source" component={ReadAgainPage} />
               <Route path="/parts" component={PartsPage} />
               <Route path="/parts/:serial" component={PartPage} />
               <Route path="/cycles" component={CyclesPage} />

@@ -70,6 +70,30 @@ describe('loading', () => {
   });
 });
 
+describe('a run read by a wrong layout', () => {
+  it('is read again when its layout is put right, and judged anew', async () => {
+    const { page, expectNoComplaints, close } = await openPage(browser, program.address);
+    await page.goto(`/runs/${runs.get('sound')}`);
+    await settle(page);
+    await page.getByText('The layout it was read by').click();
+    await page.getByRole('link', { name: 'Read these files again' }).click();
+    // A thermocouple the load names may not lose its name: the refusal says so, and nothing has changed.
+    await page.getByLabel('Called').first().fill('nose');
+    await page.getByLabel('Reason').fill('named as on the drawing');
+    await page.getByRole('button', { name: 'Read again and judge' }).click();
+    await page.getByRole('alert').waitFor();
+    expect(await page.getByRole('alert').textContent()).toContain('TC1');
+    await page.getByLabel('Called').first().fill('TC1');
+    await page.getByLabel('Called').nth(4).fill('air inlet');
+    await page.getByRole('button', { name: 'Read again and judge' }).click();
+    await page.waitForURL(/\/runs\/\d+$/);
+    await page.getByText(/sensors worked throughout: .*air inlet/).waitFor();
+    expect(await page.locator('main').textContent()).toMatch(/read again/i);
+    expectNoComplaints(/status of 4\d\d .*\/sources\/1\/layout/);
+    await close();
+  });
+});
+
 describe('records', () => {
   it('take a test of a part, and show that every chain holds', async () => {
     const { page, expectNoComplaints, close } = await openPage(browser, program.address);

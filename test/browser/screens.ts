@@ -19,6 +19,7 @@ export function screensOf(runs: ReadonlyMap<string, number>, waiting: number): R
     'run-with-a-dip': run('dip-forgiven'),
     'run-with-estimates': run('cure-estimates'),
     load: `${run('mixed-load')}/load`,
+    'read-again': `${run('sound')}/sources/1`,
     parts: '/parts',
     part: `/parts/${encodeURIComponent('part of short-for-the-lagging')}`,
     cycles: '/cycles',

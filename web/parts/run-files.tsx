@@ -55,6 +55,9 @@ function Source({ run, source }: { run: number; source: RunSource }) {
       <details class="no-print">
         <summary>The layout it was read by</summary>
         <LayoutWords layout={source.layout} />
+        <p>
+          <a href={`/runs/${run}/sources/${source.n}`}>Read these files again by a layout put right</a>
+        </p>
       </details>
     </div>
   );

@@ -24,8 +24,8 @@ export function VesselLines({ vessels }: { vessels: Now['vessels'] }) {
                 </p>
                 <p class="soft small">
                   {vessel.recentRuns === 0
-                    ? 'No run in the last 30 days.'
-                    : `${vessel.recentConforming} of ${vessel.recentRuns} conform in its last 30 days.`}
+                    ? 'No run in the 30 days up to the last run of the shop.'
+                    : `${vessel.recentConforming} of ${vessel.recentRuns} conform in the 30 days up to the last run of the shop.`}
                 </p>
               </>
             ) : (
