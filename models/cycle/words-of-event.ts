@@ -1,5 +1,17 @@
 import type { Cycle, CycleEvent } from './cycle.ts';
-import { differenceWords, figure } from './words-of-figures.ts';
+import { figure } from './words-of-figures.ts';
+
+/** When an event is: `at heat-on`, `when all judged sensors are at 100 °C or above`, `10 min after heat-on` … */
+export function whenWords(cycle: Cycle, event: CycleEvent): string {
+  const words = eventWords(cycle, event);
+  if ((event.plus ?? 0) !== 0) return words;
+  return 'value' in event ? `when ${words}` : `at ${words}`;
+}
+
+/** `from heat-on until the vessel pressure first reaches 1.4 bar` */
+export function betweenWords(cycle: Cycle, from: CycleEvent, until: CycleEvent): string {
+  return `from ${whenWords(cycle, from).replace(/^at /, '')} until ${eventWords(cycle, until)}`;
+}
 
 /** The instant that bounds a window: `heat-on`, `all judged sensors are at 100 °C or above` … */
 export function eventWords(cycle: Cycle, event: CycleEvent): string {
@@ -19,7 +31,7 @@ function instantWords(cycle: Cycle, event: CycleEvent): string {
     case 'end':
       return 'the end of the log';
     case 'heat-on':
-      return `heat-on (the leading judged sensor ${differenceWords(cycle, 5, 9)} above its first reading)`;
+      return 'heat-on';
     case 'gel':
       return 'the earliest estimated gel of a judged sensor';
     case 'first-reaches':

@@ -1,4 +1,5 @@
 import type { Clock, DwellStage } from '../cycle/cycle.ts';
+import { bandWords, lowerOf, upperOf } from '../cycle/words-of-figures.ts';
 import type { RunChannel } from '../run/channel.ts';
 import type { Statistic } from '../run/derived-track.ts';
 import { gapsOf } from '../run/gaps.ts';
@@ -137,6 +138,5 @@ export function derivedSubject(
 
 /** The dwell stage's own band in words a sentence can use. */
 export function bandInWords(stage: DwellStage, unit: string): string {
-  const round = (value: number) => Math.round(value * 1e6) / 1e6;
-  return `${round(stage.target - stage.minus)} to ${round(stage.target + stage.plus)} ${unit}`;
+  return bandWords({ atLeast: lowerOf(stage), atMost: upperOf(stage) }, unit);
 }

@@ -6,10 +6,10 @@ import { HOTTEST_C } from './cure-followers.ts';
 import { showsCooling } from './dwell-time.ts';
 import type { CureEstimate, Outcome } from './evaluation.ts';
 import { type EventSources, eventTime } from './events.ts';
-import { type Found, isAtLeast, iso, say, unfinished } from './finding.ts';
+import { type Found, isAtLeast, iso, say, sayBeside, unfinished } from './finding.ts';
 import { cureOf, estimated } from './gel-times.ts';
 import type { JudgedSensor, Judgement } from './judgement.ts';
-import { channelsFor, pressureScale, unitOf } from './pressure-scale.ts';
+import { channelsFor, decimalsOf, pressureScale, unitOf } from './pressure-scale.ts';
 
 /** `cure/degree`, `cure/tg` and `cure/pressure-before-gel`: estimates, which are limits only where the cycle says so. */
 export function cureLimits(sources: EventSources): Found[] {
@@ -79,7 +79,7 @@ function leastEstimate(j: Judgement, limit: string, atLeast: number, unit: strin
     sensor: least.s.name,
     fromMs: j.log.from,
     untilMs: j.log.until,
-    because: `Least at ${least.s.name}: ${say(least.value, digits)}${unit === '' ? '' : ` ${unit}`} at the end of the log, at least ${asked}${gap}; ${source}.`,
+    because: `Least at ${least.s.name}: ${sayBeside(least.value, { atLeast }, digits)}${unit === '' ? '' : ` ${unit}`} at the end of the log, at least ${asked}${gap}; ${source}.`,
   };
 }
 
@@ -144,7 +144,7 @@ function pressureBeforeGel(sources: EventSources, atLeast: number): Found {
   const because =
     outcome === 'met'
       ? `Pressure had reached ${atLeast} ${unit} and kept it when the first sensor is estimated to gel; ${source}.`
-      : `Pressure was ${say(observed, 2)} ${unit} when the first sensor is estimated to gel; ${atLeast} ${unit} asked by then; ${source}.`;
+      : `Pressure was ${sayBeside(observed, { atLeast }, decimalsOf(unit))} ${unit} when the first sensor is estimated to gel; at least ${atLeast} ${unit} asked by then; ${source}.`;
   return { ...known, outcome, observed, possible: observed, sensor, fromMs: gelEarlyMs, untilMs: gelLateMs, because };
 }
 

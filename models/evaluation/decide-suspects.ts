@@ -1,6 +1,7 @@
 import type { RunChannel } from '../run/channel.ts';
 import type { SuspectedFault } from '../run/suspected-faults.ts';
 import type { Finding, Outcome } from './evaluation.ts';
+import { say } from './finding.ts';
 
 /** A sensor that a person still has to decide on. */
 export interface Suspect {
@@ -32,13 +33,13 @@ export function withUndecided(
     const name = smallest.without[0]!.channel.layout.name;
     const other = smallest.findings.find(({ limit }) => limit === finding.limit);
     const without = smallest.without.map((suspect) => suspect.channel.layout.name).join(' and ');
-    const then = other === undefined ? 'the limit does not arise' : `${words(other.outcome)} (${figureOf(other)})`;
+    const then = other === undefined ? 'the limit does not arise' : `${words(other.outcome)}${figureOf(other)}`;
     return {
       ...finding,
       outcome: 'cannot-tell' as const,
       margin: null,
       awaits: name,
-      because: `It hangs on whether ${without} ${smallest.without.length > 1 ? 'are' : 'is'} believed: with, it is ${words(finding.outcome)} (${figureOf(finding)}); without, ${then}.`,
+      because: `It hangs on whether ${without} ${smallest.without.length > 1 ? 'are' : 'is'} believed: with, it is ${words(finding.outcome)}${figureOf(finding)}; without, ${then}.`,
     };
   });
 }
@@ -66,5 +67,5 @@ function words(outcome: Outcome): string {
 }
 
 function figureOf({ observed, unit }: Finding): string {
-  return observed === null ? 'no figure' : `${Number(observed.toFixed(2))}${unit === '' ? '' : ` ${unit}`}`;
+  return observed === null ? '' : ` (${say(observed, 2)}${unit === '' ? '' : ` ${unit}`})`;
 }

@@ -1,12 +1,13 @@
+import { lowerOf, upperOf } from '../cycle/words-of-figures.ts';
 import { furthest } from '../run/gaps.ts';
 import type { Interval } from '../run/intervals.ts';
 import { celsiusDifferenceFrom, round9, temperatureDifferenceFromCelsius, temperatureFromCelsius } from '../units.ts';
 import { type ForgivenessC, forgivenessC, forgiver } from './dips.ts';
-import { bandC, type DwellCourse, lastBackBelow } from './dwell-course.ts';
+import { bandC, type DwellCourse, lastBackBelow, type Shift } from './dwell-course.ts';
 import { showsCooling } from './dwell-time.ts';
 import type { Dwells } from './dwells.ts';
 import type { Outcome } from './evaluation.ts';
-import { type Found, say, unfinished } from './finding.ts';
+import { type Found, sayBeside, unfinished } from './finding.ts';
 import { guarded } from './guarded.ts';
 import {
   believedUntil,
@@ -16,6 +17,7 @@ import {
   openingGaps,
   someBelieved,
 } from './judgement.ts';
+import { whatIsOpen } from './what-is-open.ts';
 
 /** `<dwell>/upper`: the highest reading of any judged sensor between its entering and its leaving. */
 export function dwellUpperLimit(j: Judgement, dwells: Dwells, index: number): Found[] {
@@ -26,13 +28,14 @@ export function dwellUpperLimit(j: Judgement, dwells: Dwells, index: number): Fo
   const unit = j.cycle.units.temperature;
   const forgive = forgivenessC(stage.forgive?.above, (by) => celsiusDifferenceFrom(by, unit));
   const hasEnded = j.sensors.every((s, k) => isDone(j, s, sure, k));
+  const mayBeOver = (shift: Shift) => {
+    const { course } = dwells.at(index, 'most', shift);
+    return j.sensors.some((s, k) => overshoots(j, s, course, k, forgive) || mayOvershoot(j, s, course, k, forgive));
+  };
   const outcome = guarded(dwells.shifts.length > 1, (shift) => {
-    const moved = { least: dwells.at(index, 'least', shift).course, most: dwells.at(index, 'most', shift).course };
-    if (j.sensors.some((s, k) => overshoots(j, s, moved.least, k, forgive).isBroken)) return 'not-met';
-    const mayBe = j.sensors.some(
-      (s, k) => overshoots(j, s, moved.most, k, forgive).isBroken || mayOvershoot(j, s, moved.most, k, forgive),
-    );
-    if (mayBe) return 'cannot-tell';
+    const { course } = dwells.at(index, 'least', shift);
+    if (j.sensors.some((s, k) => overshoots(j, s, course, k, forgive))) return 'not-met';
+    if (mayBeOver(shift)) return 'cannot-tell';
     return hasEnded ? 'met' : unfinished(j);
   });
   const highest = highestOf(j, sure) ?? highestOf(j, widest);
@@ -40,7 +43,7 @@ export function dwellUpperLimit(j: Judgement, dwells: Dwells, index: number): Fo
   const { upperC } = bandC(j, stage, { uncertaintyC: 0 }, 0);
   const isForgiven = outcome === 'met' && highest.readingC > upperC;
   const observed = temperatureFromCelsius(highest.readingC, unit);
-  const upper = round9(stage.target + stage.plus);
+  const upper = upperOf(stage);
   const forgivenTo = isForgiven ? (stage.forgive?.above?.by ?? 0) : 0;
   return [
     {
@@ -56,7 +59,7 @@ export function dwellUpperLimit(j: Judgement, dwells: Dwells, index: number): Fo
       fromMs: highest.ms,
       untilMs: highest.ms,
       isForgiven,
-      because: upperSentence(outcome, highest.sensor.name, observed, upper, unit, isForgiven),
+      because: `${upperSentence(outcome, highest.sensor.name, observed, upper, unit, isForgiven)}${whatIsOpen(j, outcome, hasEnded, mayBeOver(0))}.`,
     },
   ];
 }
@@ -69,12 +72,11 @@ function upperSentence(
   unit: string,
   isForgiven: boolean,
 ): string {
-  const reached = `${sensor} reached ${say(observed, 2)} ${unit}`;
-  if (outcome === 'not-met')
-    return `${reached}, ${say(observed - upper, 2)} ${unit} above the ${upper} ${unit} allowed.`;
+  const reached = `${sensor} reached ${sayBeside(observed, { atMost: upper }, 2)} ${unit}`;
+  if (outcome === 'not-met' && observed > upper)
+    return `${reached}, ${sayBeside(observed - upper, { atMost: 0 }, 2)} ${unit} above the ${upper} ${unit} allowed`;
   const forgiven = isForgiven ? ', short and small enough to be forgiven' : '';
-  const settled = outcome === 'met' ? '' : '; what follows, or what a gap hides, is not settled';
-  return `${reached}${forgiven}; at most ${upper} ${unit} allowed${settled}.`;
+  return `${reached}${forgiven}; at most ${upper} ${unit} allowed`;
 }
 
 function isDone(j: Judgement, s: JudgedSensor, course: DwellCourse, k: number): boolean {
@@ -98,9 +100,9 @@ function overshoots(
   course: DwellCourse,
   k: number,
   forgive: ForgivenessC | null,
-): { isBroken: boolean } {
+): boolean {
   const stretch = stretchInside(j, s, course, k);
-  if (stretch === null) return { isBroken: false };
+  if (stretch === null) return false;
   const { upperC } = bandC(j, course.stage, s, course.shift);
   const isForgiven = forgiver(forgive);
   const side = course.shift === -1 && s.uncertaintyC > 0 ? '>=' : '>';
@@ -109,9 +111,9 @@ function overshoots(
     const until = Math.min(over.until, stretch.until);
     const highest = from > until ? -1 : s.track.highestBetween(from, until);
     if (highest < 0 || !isOutside(s.track.reading(highest), upperC, course.shift)) continue;
-    if (!isForgiven(until - from, round9(s.track.reading(highest) - upperC))) return { isBroken: true };
+    if (!isForgiven(until - from, round9(s.track.reading(highest) - upperC))) return true;
   }
-  return { isBroken: false };
+  return false;
 }
 
 /** Above the limit; with the limit moved outwards by U, outside by U is outside. */
@@ -159,7 +161,7 @@ export function dwellLowerLimit(j: Judgement, dwells: Dwells, index: number): Fo
   const stage = dwells.stages[index]!;
   if (stage.below !== 'not-allowed') return [];
   const unit = j.cycle.units.temperature;
-  const lower = round9(stage.target - stage.minus);
+  const lower = lowerOf(stage);
   const { time, clock } = dwells.at(index, 'least');
   const outcomes = dwells.shifts.map((shift) => dipsOutcome(j, dwells, index, shift));
   const outcome = outcomes.every((each) => each === outcomes[0]) ? outcomes[0]! : 'cannot-tell';
@@ -184,7 +186,7 @@ export function dwellLowerLimit(j: Judgement, dwells: Dwells, index: number): Fo
       isForgiven: outcome === 'met' && seen.length > 0,
       because:
         outcome === 'not-met'
-          ? `${deepest?.sensor ?? 'The clock'} fell ${say(lower - observed!, 2)} ${unit} below ${lower} ${unit}; no dip is allowed${stops > 1 ? ` (${stops} dips)` : ''}.`
+          ? `${deepest?.sensor ?? 'The clock'} fell ${sayBeside(lower - observed!, { atLeast: 0 }, 2)} ${unit} below ${lower} ${unit}; no dip is allowed${stops > 1 ? ` (${stops} dips)` : ''}.`
           : `No dip below ${lower} ${unit} is allowed; ${seen.length === 0 ? 'none was seen' : 'those seen are forgiven'}${outcome === 'met' ? '' : ', but the dwell is not seen whole'}.`,
     },
   ];

@@ -1,7 +1,8 @@
 import type { DwellStage } from '../cycle/cycle.ts';
+import { lowerOf, upperOf } from '../cycle/words-of-figures.ts';
 import { credited } from '../run/gaps.ts';
 import { firstHold, type Interval, within } from '../run/intervals.ts';
-import { celsiusFrom, round9 } from '../units.ts';
+import { celsiusFrom } from '../units.ts';
 import { type Fill, sensorStanding } from './holding.ts';
 import { isExcluded, type JudgedSensor, type Judgement, ruleFigures } from './judgement.ts';
 
@@ -45,8 +46,8 @@ export function bandC(j: Judgement, stage: DwellStage, s: Pick<JudgedSensor, 'un
   const unit = j.cycle.units.temperature;
   const moved = shift * s.uncertaintyC;
   return {
-    lowerC: celsiusFrom(round9(stage.target - stage.minus), unit) + moved,
-    upperC: celsiusFrom(round9(stage.target + stage.plus), unit) - moved,
+    lowerC: celsiusFrom(lowerOf(stage), unit) + moved,
+    upperC: celsiusFrom(upperOf(stage), unit) - moved,
   };
 }
 
@@ -123,8 +124,8 @@ function nextDwell(j: Judgement, at: number, stage: DwellStage): NextDwell {
   const isHotter = dwell !== undefined && dwell.target > stage.target;
   const until = following?.kind === 'cool' ? following.until : undefined;
   return {
-    hotterLowerC: isHotter ? celsiusFrom(round9(dwell.target - dwell.minus), unit) : null,
-    colderUpperC: dwell !== undefined && !isHotter ? celsiusFrom(round9(dwell.target + dwell.plus), unit) : null,
+    hotterLowerC: isHotter ? celsiusFrom(lowerOf(dwell), unit) : null,
+    colderUpperC: dwell !== undefined && !isHotter ? celsiusFrom(upperOf(dwell), unit) : null,
     coolsToC: until === undefined ? null : celsiusFrom(until, unit),
   };
 }

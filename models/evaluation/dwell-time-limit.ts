@@ -1,9 +1,11 @@
-import type { Bounds, DwellStage } from '../cycle/cycle.ts';
-import { bandInWords, DEFAULT_CLOCK, lacksAir, runClock } from './clock.ts';
-import { type DwellTime, showsCooling } from './dwell-time.ts';
+import type { Bounds } from '../cycle/cycle.ts';
+import { bandWords } from '../cycle/words-of-figures.ts';
+import { DEFAULT_CLOCK, lacksAir, runClock } from './clock.ts';
+import { showsCooling } from './dwell-time.ts';
+import { dwellTimeInWords } from './dwell-time-words.ts';
 import type { Dwells } from './dwells.ts';
 import type { Outcome } from './evaluation.ts';
-import { type Found, isAtLeast, isAtMost, say, sayBounds, unfinished } from './finding.ts';
+import { type Found, isAtLeast, isAtMost, sayBeside, unfinished } from './finding.ts';
 import type { Fill } from './holding.ts';
 import type { Judgement } from './judgement.ts';
 import { neverOpened } from './never-opened.ts';
@@ -13,7 +15,7 @@ export function dwellTimeLimit(j: Judgement, dwells: Dwells, index: number): Fou
   const stage = dwells.stages[index]!;
   const bounds = stage.time;
   if (bounds === undefined) return [];
-  if (lacksAir(j, stage.clock ?? DEFAULT_CLOCK)) return [withoutAir(j, `${stage.name}/time`, bounds)];
+  if (lacksAir(j, stage.clock ?? DEFAULT_CLOCK)) return [withoutAir(`${stage.name}/time`, bounds)];
   const seen = dwells.at(index, 'least').time;
   const cases = dwells.shifts.map((shift) => ({
     least: dwells.at(index, 'least', shift).time,
@@ -39,7 +41,7 @@ export function dwellTimeLimit(j: Judgement, dwells: Dwells, index: number): Fou
       sensor: hasOpened ? openedBy : neverOpened(j, dwells.at(index, 'least').course).sensor,
       fromMs: seen.counted?.from ?? seen.opensMs,
       untilMs: seen.counted?.until ?? seen.closesMs ?? (seen.opensMs === null ? null : j.log.until),
-      because: sentence(j, dwells, index, outcome),
+      because: dwellTimeInWords(j, dwells, index, { outcome, low, high }),
     },
   ];
 }
@@ -57,49 +59,9 @@ function decide(
   return isAtLeast(low, atLeast) && isAtMost(high, atMost) ? 'met' : 'cannot-tell';
 }
 
-function withoutAir(j: Judgement, limit: string, bounds: Bounds): Found {
-  const because = `The log has no air channel, which the clock waits for; ${sayBounds(bounds, 'min')} asked.`;
-  return { limit, outcome: unfinished(j), bounds, unit: 'min', because };
-}
-
-function sentence(j: Judgement, dwells: Dwells, index: number, outcome: Outcome): string {
-  const stage = dwells.stages[index]!;
-  const { time: seen, clock } = dwells.at(index, 'least');
-  const most = dwells.at(index, 'most').time;
-  const unit = j.cycle.units.temperature;
-  const asked = `${sayBounds(stage.time!, 'min')} asked`;
-  if (seen.opensMs === null && most.opensMs === null) {
-    const end = showsCooling(j) ? '' : '; the record does not show the cooling';
-    return `${neverOpened(j, dwells.at(index, 'least').course).because}${end}; ${asked}.`;
-  }
-  if (seen.opensMs !== null && seen.closesMs !== null && seen.closesMs < seen.opensMs) {
-    return `${clock.closing?.by ?? 'A sensor'} left ${stage.name} before ${clock.openedBy ?? 'the last'} came in, so no time counts; ${asked}.`;
-  }
-  if (!seen.hasEnded && outcome !== 'not-met' && outcome !== 'met') {
-    const stopped = j.isOpen ? 'the dwell goes on' : 'the log stops inside the dwell';
-    return `At least ${say(seen.minutes)} min seen; ${stopped}; ${asked}.`;
-  }
-  if (outcome === 'cannot-tell') {
-    const upTo =
-      most.minutes > seen.minutes ? `, and up to ${say(most.minutes)} min if what gaps hide was in band` : '';
-    return `${say(seen.minutes)} min seen inside ${bandInWords(stage, unit)}${upTo}; ${asked}.`;
-  }
-  const opened = clock.openedBy === null ? '' : ` The clock opened when ${clock.openedBy} came in`;
-  const closed = clock.closing === null ? '' : ` and closed when ${clock.closing.by ?? 'the last'} left`;
-  return `${countedInWords(seen, stage)}; ${asked}.${opened}${closed}${opened === '' ? '' : '.'}`;
-}
-
-function countedInWords(seen: DwellTime, stage: DwellStage): string {
-  const stops = seen.dips.filter(({ isForgiven }) => !isForgiven).length;
-  const forgiven = seen.dips.length - stops;
-  const dips = (count: number) => (count === 1 ? 'one dip' : `${count} dips`);
-  const notes = [
-    ...(stops > 0 ? [`${dips(stops)} stopped the clock`] : []),
-    ...(forgiven > 0 ? [`${dips(forgiven)} forgiven`] : []),
-  ];
-  const how = { contiguous: 'unbroken', accumulated: 'altogether', each: 'on the sensor that gathered least' };
-  const note = notes.length === 0 ? '' : ` (${notes.join(', ')})`;
-  return `${say(seen.minutes)} min ${how[stage.counting ?? 'contiguous']}${note}`;
+function withoutAir(limit: string, bounds: Bounds): Found {
+  const because = `The log has no air channel, which the clock waits for; ${bandWords(bounds, 'min')} asked.`;
+  return { limit, outcome: 'cannot-tell', bounds, unit: 'min', because };
 }
 
 /** `<dwell>/longest`: from opening to closing by a clock of its own, dips included. */
@@ -107,7 +69,7 @@ export function dwellLongestLimit(j: Judgement, dwells: Dwells, index: number): 
   const stage = dwells.stages[index]!;
   const { longest } = stage;
   if (longest === undefined) return [];
-  if (lacksAir(j, longest.clock)) return [withoutAir(j, `${stage.name}/longest`, { atMost: longest.atMost })];
+  if (lacksAir(j, longest.clock)) return [withoutAir(`${stage.name}/longest`, { atMost: longest.atMost })];
   const run = (fill: Fill) => {
     const clock = runClock(j, dwells.at(index, fill).course, longest.clock);
     const { opensMs, closing } = clock;
@@ -137,7 +99,7 @@ export function dwellLongestLimit(j: Judgement, dwells: Dwells, index: number): 
       because:
         least.opensMs === null
           ? `The clock never opened; at most ${longest.atMost} min allowed.`
-          : `${say(least.minutes)} min from opening to closing (${between}); at most ${longest.atMost} min allowed.`,
+          : `${sayBeside(least.minutes, bounds)} min from opening to closing (${between}); at most ${longest.atMost} min allowed.`,
     },
   ];
 }

@@ -82,13 +82,16 @@ function rounded(figure: number | null): number | null {
 
 /** A figure in a sentence: so many decimals at most, no trailing zeros. */
 export function say(figure: number, decimals = 1): string {
-  return String(Number(figure.toFixed(decimals)) + 0);
+  return String(Number(figure.toFixed(decimals)) + 0).replace('-', '−');
 }
 
-/** A band in a sentence: `60 to 80 min`, `at least 60 min`, `at most 80 min`. */
-export function sayBounds({ atLeast, atMost }: Bounds, unit: string): string {
-  if (atLeast !== undefined && atMost !== undefined) return `${atLeast} to ${atMost} ${unit}`;
-  return atLeast !== undefined ? `at least ${atLeast} ${unit}` : `at most ${atMost} ${unit}`;
+/** A figure beside its limits, with as many more decimals as it takes to tell them apart. */
+export function sayBeside(figure: number, { atLeast, atMost }: Bounds, decimals = 1): string {
+  const looksEqual = (bound: number | undefined, digits: number) =>
+    bound !== undefined && Math.abs(figure - bound) > 1e-6 && Number(figure.toFixed(digits)) === bound;
+  let digits = decimals;
+  while (digits < 6 && (looksEqual(atLeast, digits) || looksEqual(atMost, digits))) digits++;
+  return say(figure, digits);
 }
 
 export function capitalised(text: string): string {

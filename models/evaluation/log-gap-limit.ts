@@ -4,7 +4,7 @@ import type { Interval } from '../run/intervals.ts';
 import { celsiusFrom } from '../units.ts';
 import type { Dwells } from './dwells.ts';
 import { type EventSources, eventTime, heatOnMs } from './events.ts';
-import { type Found, say, unfinished } from './finding.ts';
+import { type Found, sayBeside, unfinished } from './finding.ts';
 import { isExcluded, type Judgement } from './judgement.ts';
 import { channelsFor } from './pressure-scale.ts';
 
@@ -36,8 +36,8 @@ export function logGapLimit(sources: EventSources): Found[] {
       untilMs: worst?.gap.until ?? null,
       because:
         worst === null
-          ? `No channel that a limit uses was silent for more than ${longest} min between heat-on and the end of the cycle.`
-          : `${worst.name} has no reading for ${say(observed!)} min; a gap of at most ${longest} min is allowed.`,
+          ? `No channel that a limit uses was silent for more than ${longest} min ${j.isOpen ? 'since heat-on' : 'between heat-on and the end of the cycle'}.`
+          : `${worst.name} has no reading for ${sayBeside(observed!, { atMost: longest })} min; at most ${longest} min allowed.`,
     },
   ];
 }

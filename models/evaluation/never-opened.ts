@@ -1,6 +1,7 @@
 import { round9, temperatureDifferenceFromCelsius, temperatureFromCelsius } from '../units.ts';
 import { DEFAULT_CLOCK, meanSubject } from './clock.ts';
 import { bandC, type DwellCourse } from './dwell-course.ts';
+import { showsCooling } from './dwell-time.ts';
 import { say } from './finding.ts';
 import type { JudgedSensor, Judgement } from './judgement.ts';
 
@@ -17,7 +18,8 @@ export interface NeverOpened {
 export function neverOpened(j: Judgement, course: DwellCourse): NeverOpened {
   const { stage, isColder } = course;
   const unit = j.cycle.units.temperature;
-  const never = `The clock of ${stage.name} never opened`;
+  const isWaiting = j.isOpen && !showsCooling(j);
+  const never = `The clock of ${stage.name} ${isWaiting ? 'has not opened yet' : 'never opened'}`;
   const { opens } = stage.clock ?? DEFAULT_CLOCK;
   const far = furthestBehind(j, course, waitedFor(j, opens));
   if (far === null) return { sensor: null, because: `${never}: no reading to judge by` };
@@ -33,8 +35,8 @@ export function neverOpened(j: Judgement, course: DwellCourse): NeverOpened {
     ? `came down to ${reading}, ${short} above the band`
     : `reached ${reading}, ${short} short of the band`;
   if (opens === 'mean-enters') return { sensor: name, because: `${never}: the mean ${came}` };
-  const stayed = opens === 'air-enters' ? '' : ` stayed ${isColder ? 'hottest' : 'coldest'},`;
-  return { sensor: name, because: `${never}: ${name}${stayed} ${came}` };
+  if (opens === 'air-enters') return { sensor: name, because: `${never}: ${name} ${came}` };
+  return { sensor: name, because: `${never}: ${name} stayed ${isColder ? 'hottest' : 'coldest'} and ${came}` };
 }
 
 function waitedFor(j: Judgement, opens: string): readonly JudgedSensor[] {

@@ -29,6 +29,13 @@ export function unitOf(j: Judgement, quantity: Quantity): string {
   return j.cycle.units[quantity] ?? '';
 }
 
+/** Decimals of a figure in a sentence: a thousandth of a bar, a hundredth of a psi or inHg, a tenth of a mbar or kPa. */
+export function decimalsOf(unit: string): number {
+  const { paPerUnit } = parsePressureUnit(unit);
+  if (paPerUnit > 50_000) return 3;
+  return paPerUnit > 2000 ? 2 : 1;
+}
+
 /** The scale between the cycle's unit and a channel; null where it needs a barometer that is not recorded. */
 export function pressureScale(j: Judgement, quantity: Quantity, channel: RunChannel): PressureScale | null {
   const written = parsePressureUnit(unitOf(j, quantity));

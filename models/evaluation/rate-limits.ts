@@ -1,9 +1,10 @@
 import type { Bounds, RateSubject } from '../cycle/cycle.ts';
+import { bandWords } from '../cycle/words-of-figures.ts';
 import { celsiusDifferenceFrom, type TemperatureUnit, temperatureDifferenceFromCelsius } from '../units.ts';
 import { airSubject, derivedSubject, meanSubject } from './clock.ts';
 import type { Dwells } from './dwells.ts';
 import type { Outcome } from './evaluation.ts';
-import { capitalised, type Found, isAtLeast, isAtMost, say, unfinished } from './finding.ts';
+import { capitalised, type Found, isAtLeast, isAtMost, sayBeside, unfinished } from './finding.ts';
 import { isExcluded, type JudgedSensor, type Judgement } from './judgement.ts';
 import { entersBefore, type RampStage, type RateCourse, rateCourse, type Slope } from './rate-course.ts';
 
@@ -99,23 +100,23 @@ function sentence(
   extreme: RateCourse | null,
   observed: number | null,
   unit: string,
-  { atLeast, atMost }: Bounds,
+  bounds: Bounds,
   outcome: Outcome,
 ): string {
   const { temperature } = j.cycle.units;
   const range = `from ${rate.over[0]} to ${rate.over[1]} ${temperature}`;
-  const asked = atLeast !== undefined ? `at least ${atLeast} ${unit} asked` : `at most ${atMost} ${unit} allowed`;
+  const asked = `${bandWords(bounds, unit)} ${which === 'slowest' ? 'asked' : 'allowed'}`;
   if (extreme === null) {
-    return j.isOpen ? `${name} has not run ${range} yet; ${asked}.` : `No sensor is seen to run ${range}; ${asked}.`;
+    if (rate.of === 'air' && j.air.length === 0) return `The log has no air channel to judge ${name} by; ${asked}.`;
+    return `No sensor ${j.isOpen ? 'has yet run' : 'is seen to run'} ${range}; ${asked}.`;
   }
   const { from, until } = extreme[which]!;
   const isWindow = rate.average === 'window' && Math.abs(until - from - rate.window! * 60_000) < 1;
-  const average = isWindow ? `over ${rate.window} min` : 'from end to end';
-  const part = extreme.ranWhole
-    ? range
-    : `on the part of the range ${rate.over[0]} to ${rate.over[1]} ${temperature} it ran`;
+  const average = isWindow ? ` over ${rate.window} min` : '';
+  const part = extreme.ranWhole ? range : `on what it ran of ${rate.over[0]} to ${rate.over[1]} ${temperature}`;
   const open = outcome === 'cannot-tell' ? '; not every sensor is seen over the whole range' : '';
-  return `${subjectInWords(extreme.sensor, rate.of)} was ${which} with ${say(observed!, 2)} ${unit} ${average} ${part}; ${asked}${open}.`;
+  const soFar = outcome === 'pending' ? '; the run goes on' : '';
+  return `${subjectInWords(extreme.sensor, rate.of)} was ${which} with ${sayBeside(observed!, bounds, 2)} ${unit}${average} ${part}; ${asked}${open}${soFar}.`;
 }
 
 function subjectInWords({ name }: JudgedSensor, of: RateSubject): string {

@@ -1,6 +1,6 @@
 import { ALLOWANCE } from './dips.ts';
 import type { Outcome } from './evaluation.ts';
-import { type Found, isAtMost, say } from './finding.ts';
+import { type Found, isAtMost, say, sayBeside } from './finding.ts';
 import type { Judgement } from './judgement.ts';
 
 /** Limits on what was recorded before the run: `leak-test`, `material/out-life`, `instruments/calibration`. */
@@ -29,13 +29,16 @@ function leakTestLimit(j: Judgement): Found {
   const isDeepEnough = start === undefined || (isAbsolute ? record.start <= start : record.start >= start);
   const keepsLoss = isAtMost(loss, asked.lossAtMost + ALLOWANCE);
   const outcome: Outcome = isDeepEnough && keepsLoss ? 'met' : 'not-met';
-  const scaled = record.minutes === asked.over ? '' : `, as ${say(loss, 3)} in ${asked.over} min`;
-  const weak = isDeepEnough ? '' : ` It started at ${record.start} ${unit}; ${start} ${unit} asked.`;
+  const scaled =
+    record.minutes === asked.over ? '' : `, as much as ${sayBeside(loss, bounds, 3)} ${unit} in ${asked.over} min`;
+  const weak = isDeepEnough
+    ? ''
+    : `; it started at ${record.start} ${unit}, and ${isAbsolute ? 'at most' : 'at least'} ${start} ${unit} is asked`;
   return {
     ...known,
     outcome,
     observed: loss,
     possible: loss,
-    because: `The bag lost ${say(lost, 3)} ${unit} in ${record.minutes} min${scaled}; at most ${asked.lossAtMost} ${unit} in ${asked.over} min allowed.${weak}`,
+    because: `The bag lost ${say(lost, 3)} ${unit} in ${record.minutes} min${scaled}; at most ${asked.lossAtMost} ${unit} in ${asked.over} min allowed${weak}.`,
   };
 }

@@ -39,7 +39,11 @@ function workingLimit(j: Judgement, atLeast: number, span: Span): Found {
   const { count, ms } = leastWorking(j, span);
   const outcome: Outcome = count < atLeast ? 'not-met' : span.hasEnded ? 'met' : unfinished(j);
   const lost = j.sensors.filter((s) => s.untilMs <= span.until).map(({ name }) => name);
-  const without = lost.length === 0 ? '' : `; ${lost.join(', ')} excluded`;
+  const without = lost.length === 0 ? '' : ` (${lost.join(', ')} excluded)`;
+  const of = j.sensors.length;
+  const all = of === 1 ? 'The judged sensor' : of === 2 ? 'Both judged sensors' : `All ${of} judged sensors`;
+  const worked = count === of ? all : `No fewer than ${count} of ${of} judged sensors`;
+  const over = span.hasEnded ? 'worked from heat-on to the end of the last dwell' : 'have worked since heat-on';
   return {
     limit: 'sensors/working',
     outcome,
@@ -49,7 +53,7 @@ function workingLimit(j: Judgement, atLeast: number, span: Span): Found {
     unit: '',
     fromMs: ms,
     untilMs: span.until,
-    because: `At least ${count} of ${j.sensors.length} judged sensors worked at any instant from heat-on to the end of the last dwell${without}; at least ${atLeast} asked.`,
+    because: `${worked} ${over}${without}; at least ${atLeast} asked.`,
   };
 }
 
@@ -101,7 +105,7 @@ function mustWorkLimit(j: Judgement, dwells: Dwells, places: readonly string[], 
     const isLost = (s: JudgedSensor) => s.untilMs < span.until || overlaps(silences(j, s), span);
     if (!there.every(isLost)) continue;
     lost.push(
-      `${place} (${there.map(({ name }) => name).join(', ')}${wasLagging(j, dwells, there) ? ', which had been the lagging one' : ''})`,
+      `${there.map(({ name }) => name).join(', ')} at ${place}${wasLagging(j, dwells, there) ? ', which had been the lagging one,' : ''}`,
     );
     sensor ??= there[0]!.name;
     lostAtMs ??= Math.min(...there.map(({ untilMs }) => untilMs));
@@ -113,7 +117,12 @@ function mustWorkLimit(j: Judgement, dwells: Dwells, places: readonly string[], 
     fromMs: lostAtMs,
     untilMs: lost.length > 0 ? span.until : null,
   };
-  if (lost.length > 0) return { ...known, outcome: 'not-met', because: `The sensor was lost at: ${lost.join('; ')}.` };
+  if (lost.length > 0)
+    return {
+      ...known,
+      outcome: 'not-met',
+      because: `${lost.join(' and ')} ${lost.length === 1 ? 'was' : 'were'} lost.`,
+    };
   if (unknown.length > 0) {
     return {
       ...known,

@@ -10,9 +10,10 @@ import { knownUncertainty } from './dwell-band-limits.ts';
 import type { Dwells } from './dwells.ts';
 import type { Outcome } from './evaluation.ts';
 import { heatOnMs } from './events.ts';
-import { type Found, say, unfinished } from './finding.ts';
+import { type Found, sayBeside, unfinished } from './finding.ts';
 import { guarded } from './guarded.ts';
 import { type JudgedSensor, type Judgement, openingGaps, someBelieved } from './judgement.ts';
+import { whatIsOpen } from './what-is-open.ts';
 
 /** `ceiling`: no judged sensor above it, over the whole log. */
 export function ceilingLimit(j: Judgement): Found[] {
@@ -42,7 +43,7 @@ export function ceilingLimit(j: Judgement): Found[] {
     },
   );
   const observed = temperatureFromCelsius(highest.readingC, unit);
-  const hidden = outcome === 'cannot-tell' ? '; a gap, or the uncertainty of the reading, leaves it open' : '';
+  const mayHide = j.sensors.some((s) => mayExceed(j, s, ceilingC));
   return [
     {
       ...known,
@@ -53,7 +54,7 @@ export function ceilingLimit(j: Judgement): Found[] {
       sensor: highest.sensor.name,
       fromMs: highest.ms,
       untilMs: highest.ms,
-      because: `${highest.sensor.name} was hottest with ${say(observed, 2)} ${unit}; at most ${ceiling} ${unit} allowed${hidden}.`,
+      because: `${highest.sensor.name} was hottest with ${sayBeside(observed, { atMost: ceiling }, 2)} ${unit}; at most ${ceiling} ${unit} allowed${whatIsOpen(j, outcome, !j.isOpen, mayHide)}.`,
     },
   ];
 }
@@ -94,6 +95,7 @@ export function spreadLimit(j: Judgement, dwells: Dwells): Found[] {
     if (stretches.some((stretch) => mayPart(j, stretch, limit))) return 'cannot-tell';
     return isComplete && someBelieved(j) ? 'met' : unfinished(j);
   });
+  const mayHide = stretches.some((stretch) => mayPart(j, stretch, limitC));
   const observed = widest === null ? null : temperatureDifferenceFromCelsius(widest.spreadC, unit);
   const during = { heating: 'while heating', dwells: 'in the dwells', run: 'over the run' }[spread.during];
   return [
@@ -109,7 +111,7 @@ export function spreadLimit(j: Judgement, dwells: Dwells): Found[] {
       because:
         widest === null
           ? `No scan with all judged sensors lies ${during}; ${asked}.`
-          : `Hottest and coldest sensor were ${say(observed!, 2)} ${unit} apart at most ${during}; ${asked}.`,
+          : `Hottest and coldest sensor were ${sayBeside(observed!, { atMost: spread.atMost }, 2)} ${unit} apart at most ${during}; ${asked}${whatIsOpen(j, outcome, isComplete, mayHide)}.`,
     },
   ];
 }

@@ -1,15 +1,17 @@
 import type { WindowLimit } from '../cycle/cycle.ts';
+import { betweenWords, whenWords } from '../cycle/words-of-event.ts';
+import { bandWords } from '../cycle/words-of-figures.ts';
 import type { RunChannel } from '../run/channel.ts';
 import { gapsOf } from '../run/gaps.ts';
 import { type Interval, overlaps } from '../run/intervals.ts';
 import { parsePressureUnit } from '../units.ts';
 import { type ForgivenessC, forgivenessC, forgiver } from './dips.ts';
 import type { Outcome } from './evaluation.ts';
-import { type EventSources, type EventTime, eventInWords, eventTime } from './events.ts';
-import { capitalised, type Found, marginTo, say, sayBounds, unfinished, worst } from './finding.ts';
+import { type EventSources, type EventTime, eventTime } from './events.ts';
+import { capitalised, type Found, marginTo, sayBeside, unfinished, worst } from './finding.ts';
 import { guarded } from './guarded.ts';
 import { type Judgement, openingGaps } from './judgement.ts';
-import { channelsFor, type PressureScale, pressureScale, unitOf } from './pressure-scale.ts';
+import { channelsFor, decimalsOf, type PressureScale, pressureScale, unitOf } from './pressure-scale.ts';
 
 /** Where a window lay: the stretch that is certain, the widest it may have been, and whether it has closed. */
 export interface WindowStretch {
@@ -24,7 +26,7 @@ export function windowLimit(sources: EventSources, window: WindowLimit): Found {
   const unit = unitOf(j, window.quantity);
   const bounds = boundsOf(window);
   const known = { limit: `window/${window.name}`, bounds, unit };
-  const asked = `${sayBounds(bounds, unit)} asked`;
+  const asked = `${bandWords(bounds, unit)} asked`;
   const from = eventTime(sources, window.from);
   const until = eventTime(sources, window.until);
   const cannot = (because: string, outcome: Outcome = 'cannot-tell'): Found => ({ ...known, outcome, because });
@@ -32,7 +34,7 @@ export function windowLimit(sources: EventSources, window: WindowLimit): Found {
   if (unknown !== null) return cannot(`${capitalised(unknown)}; ${asked}.`);
   if (from.earlyMs === null) {
     return cannot(
-      `It begins at ${eventInWords(window.from, j.cycle.units)}, which is not seen to happen; ${asked}.`,
+      `It begins ${whenWords(j.cycle, window.from)}, which is not seen to happen; ${asked}.`,
       unfinished(j),
     );
   }
@@ -41,7 +43,7 @@ export function windowLimit(sources: EventSources, window: WindowLimit): Found {
   const stretch = windowStretch(j, from, until);
   if (stretch.widest.from > stretch.widest.until) {
     return cannot(
-      `The window closes (${eventInWords(window.until, j.cycle.units)}) before it opens (${eventInWords(window.from, j.cycle.units)}); ${asked}.`,
+      `The window closes ${whenWords(j.cycle, window.until)}, before it opens ${whenWords(j.cycle, window.from)}; ${asked}.`,
     );
   }
   const each = channels.map((channel) => channelInWindow(j, window, channel, stretch));
@@ -102,7 +104,7 @@ function channelInWindow(j: Judgement, window: WindowLimit, channel: RunChannel,
   if (seen === null) return { ...nothing, because: 'no reading lies in the window' };
   const by = window.forgive?.by ?? 0;
   const strict = marginTo(boundsOf(window), seen.observed) ?? 0;
-  const isForgiven = outcome !== 'not-met' && strict < -1e-9;
+  const isForgiven = outcome === 'met' && strict < -1e-9;
   const because = hidden && outcome === 'cannot-tell' ? 'part of the window lies in a gap of the log' : '';
   return { channel, outcome, ...seen, isForgiven, margin: isForgiven ? strict + by : strict, because };
 }
@@ -206,12 +208,12 @@ function sentence(
   hasClosed: boolean,
 ): string {
   const unit = unitOf(j, window.quantity);
-  const between = `from ${eventInWords(window.from, j.cycle.units)} until ${eventInWords(window.until, j.cycle.units)}`;
+  const between = betweenWords(j.cycle, window.from, window.until);
   const name = shown.channel.layout.name;
   if (shown.observed === null) return `${capitalised(name)}: ${shown.because}; ${asked} ${between}.`;
-  const read = `${capitalised(name)} read ${say(shown.observed, 3)} ${unit} at its nearest to the limit`;
-  if (outcome === 'not-met')
-    return `${capitalised(name)} went to ${say(shown.observed, 3)} ${unit}; ${asked} ${between}.`;
+  const figure = `${sayBeside(shown.observed, boundsOf(window), decimalsOf(unit))} ${unit}`;
+  const read = `${capitalised(name)} read ${figure} at its nearest to the limit`;
+  if (outcome === 'not-met') return `${capitalised(name)} went to ${figure}; ${asked} ${between}.`;
   if (outcome === 'met')
     return `${read}${shown.isForgiven ? ', briefly enough to be forgiven' : ''}; ${asked} ${between}.`;
   const why =
@@ -219,6 +221,8 @@ function sentence(
       ? shown.because
       : hasClosed
         ? 'its bounds, or the uncertainty of the reading, leave it open'
-        : `${eventInWords(window.until, j.cycle.units)} is not seen to happen`;
-  return `${read} so far; ${why}; ${asked} ${between}.`;
+        : j.isOpen
+          ? 'the run goes on'
+          : 'its end is not seen';
+  return `${read}; ${asked} ${between}; ${why}.`;
 }

@@ -10,6 +10,7 @@ import {
   partOf,
   QUICK,
   SLOW,
+  type Vertex,
 } from '../../support/made-run.ts';
 
 // The rules are those of the cycle and verdict document (§2, Dwells); every figure is worked out by hand.
@@ -21,6 +22,8 @@ const AIR = air([
   [230, 20], // 175 °C at 191.25 min
 ]);
 const TWO_AND_AIR = { TC1: QUICK, TC2: SLOW, air: AIR };
+
+type Histories = Readonly<Record<string, readonly Vertex[]>>;
 
 function clockRun(
   opens: Clock['opens'],
@@ -79,6 +82,12 @@ describe('the clock of a dwell at 175 to 185 °C', () => {
     expect(finding.because).toContain('no air channel');
   });
 
+  it('last-leaves waits for every sensor: TC2 still in when the log stops, the clock has not closed', () => {
+    const stopped = { TC1: [...QUICK.slice(0, 3), [205, 170]], TC2: [...SLOW.slice(0, 2), [205, 180]] } as Histories;
+    expect(course(clockRun('leading-enters', 'last-leaves', stopped)).closes).toBeNull();
+    expect(course(clockRun('leading-enters', 'first-leaves', stopped)).closes).toBe(202.5);
+  });
+
   it.each([0.5, 1, 4, 5, 20])('does not depend on a scan every %d min: 77.5 to 202.5 min', (every) => {
     const run = { ...clockRun('lagging-enters', 'first-leaves', { TC1: QUICK }), every };
     expect(course(run)).toMatchObject({ opens: 77.5, closes: 202.5, minutes: 125 });
@@ -128,7 +137,7 @@ describe('a clock that never opened', () => {
   it('gives no time, and names the sensor that stayed coldest: TC2 reached 170 °C, 5 °C short of 175', () => {
     const finding = findingOf(run(20), 'dwell/time')!;
     expect(finding).toMatchObject({ outcome: 'not-met', observed: 0, sensor: 'TC2' });
-    expect(finding.because).toContain('TC2 stayed coldest, reached 170 °C, 5 °C short');
+    expect(finding.because).toContain('TC2 stayed coldest and reached 170 °C, 5 °C short');
   });
 
   it.each([

@@ -44,6 +44,14 @@ describe('leaving a dwell at 105 to 115 °C towards one at 175 to 185 °C', () =
     expect(course({ channels: { TC1: held }, cycle: HOTTER }, 0)).toMatchObject({ closes: 147.5, minutes: 105 });
   });
 
+  it.each([
+    [145, 105 + (5 * 17) / 35], // 35 °C in 17 min: 5 °C of them
+    [144.5, 147.5], // back at 110 °C at 145 min, and up again at 2 °C/min
+  ])('takes exactly the midpoint as reached: up to %d °C and back, out at %d min', (turn, closes) => {
+    const held = towardsHotter([105, 110], [122, turn], [145, 110]);
+    expect(course({ channels: { TC1: held }, cycle: HOTTER }, 0).closes).toBeCloseTo(closes, 3);
+  });
+
   it('takes no notice of chatter of less than 1 °C: 116 °C, 114.5 °C, up; out at 100 min', () => {
     // 1 °C/min from 95 min on: 114 °C at 99 min, 115 °C at 100 min.
     const held = towardsHotter([95, 110], [101, 116], [103, 114.5], [104, 116.5]);
@@ -187,7 +195,7 @@ describe('a dwell colder than one that never opened', () => {
     ];
     const finding = findingOf({ channels: { TC1: staying(128), TC2: staying(130) }, cycle }, 'dwell 2/time')!;
     expect(finding).toMatchObject({ observed: 0, sensor: 'TC2' });
-    expect(finding.because).toContain('TC2 stayed hottest, came down to 130 °C, 5 °C above the band');
+    expect(finding.because).toContain('TC2 stayed hottest and came down to 130 °C, 5 °C above the band');
   });
 });
 

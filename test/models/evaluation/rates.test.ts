@@ -148,7 +148,7 @@ describe('the sentence of a rate', () => {
     expect(because(WINDOW)).toBe(
       'TC1 was slowest with 1 °C/min over 10 min from 50 to 100 °C; at least 0.5 °C/min asked.',
     );
-    expect(because({ ...WINDOW, window: 60 })).toContain('1.67 °C/min from end to end from 50 to 100 °C');
+    expect(because({ ...WINDOW, window: 60 })).toContain('slowest with 1.67 °C/min from 50 to 100 °C');
   });
 
   it('says of whom', () => {
@@ -272,6 +272,11 @@ describe('a gap in the range, which is run from 15 to 40 min', () => {
   ] as const)('from %d to %d min leaves a chord %s', (from, until, outcome) => {
     const { slowest } = heating({ TC1: part(QUICK, { absent: [[from, until]] }) }, CHORD);
     expect(slowest).toMatchObject({ outcome, observed: 2 });
+  });
+
+  it('only in the middle of a stretch shorter than a window leaves its chord exact: 50 to 66 °C from 15 to 23 min', () => {
+    const { slowest } = heating({ TC1: part(QUICK, { absent: [[16, 22]] }) }, { ...WINDOW, over: [50, 66] });
+    expect(slowest).toMatchObject({ outcome: 'met', observed: 2 });
   });
 });
 

@@ -35,7 +35,7 @@ describe('leak-test', () => {
 
   it('says what was measured and what it comes to over the asked time', () => {
     expect(leak({ start: 0.88, end: 0.76, minutes: 10 }, ASKED).because).toBe(
-      'The bag lost 0.12 bar in 10 min, as 0.06 in 5 min; at most 0.07 bar in 5 min allowed.',
+      'The bag lost 0.12 bar in 10 min, as much as 0.06 bar in 5 min; at most 0.07 bar in 5 min allowed.',
     );
   });
 
