@@ -63,3 +63,8 @@ export function looksStamped(row: JudgedRow): boolean {
   if (!Number.isNaN(row.stampMs)) return true;
   return /^ *\d/.test(row.stampText) && row.stampText.replace(/\D/g, '').length >= 4;
 }
+
+/** Whether the time cells are a stamp, whole or broken off: what a footer's words behind a date are not. */
+export function beginsStamp(row: JudgedRow): boolean {
+  return !Number.isNaN(row.stampMs) || (looksStamped(row) && /^[\d\s:/.,+-]*$/.test(row.stampText));
+}

@@ -8,7 +8,7 @@ import { rowErrors } from './row-errors.ts';
 import { nextScan, type ScanTable, scansTaken } from './scan-table.ts';
 import type { Row } from './split-row.ts';
 import type { StampReader } from './stamp-reader.ts';
-import { type JudgedRow, judgeRow, looksStamped } from './text-row.ts';
+import { beginsStamp, type JudgedRow, judgeRow, looksStamped } from './text-row.ts';
 
 /**
  * Decides about rows that are not plain readings: taken all the same, passed over, or refused.
@@ -100,7 +100,7 @@ export function unusualRows(
     if (row.isCutOff) passOverCutOff(judged, line, until);
     else if (line < topUntil && !looksStamped(judged)) passOverTop(line, until);
     else {
-      const isBrokenOff = judged.cells < plan.cells && looksStamped(judged) && judged.badCell === null;
+      const isBrokenOff = judged.cells < plan.cells && beginsStamp(judged) && judged.badCell === null;
       waiting ??= { from: line, until, error, brokenOff: null };
       waiting.until = until;
       if (isBrokenOff) waiting.brokenOff ??= error;
