@@ -37,6 +37,7 @@ describe('every screen', () => {
       await settle(page);
       const light = await runAxe(page, null);
       await page.emulateMedia({ colorScheme: 'dark' });
+      await coloursHaveSettled(page);
       // Dark differs from light in its colours alone.
       const dark = await runAxe(page, ['color-contrast', 'link-in-text-block']);
       expect([light.passes.length > 10, dark.passes.length > 0], name).toEqual([true, true]);
@@ -47,6 +48,14 @@ describe('every screen', () => {
     await close();
   });
 });
+
+/** Waits until no colour is on its way to another any more. */
+async function coloursHaveSettled(page: Page): Promise<void> {
+  await page.evaluate(async () => {
+    await new Promise((resolve) => requestAnimationFrame(() => requestAnimationFrame(resolve)));
+    await Promise.allSettled(document.getAnimations().map(({ finished }) => finished));
+  });
+}
 
 function violationsOf(where: string, { violations }: AxeResults): string[] {
   return violations.flatMap(({ id, nodes }) => nodes.map(({ html }) => `${where}: ${id}: ${html}`));
