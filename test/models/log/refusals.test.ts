@@ -71,6 +71,11 @@ describe('a log that cannot be read', () => {
     expect(refusalOf(() => read(text))).toMatchObject({ code, facts: { file: 'run.csv', line } });
   });
 
+  it('is refused for wrong quotes in a column nobody asked for, which may have moved the others', () => {
+    const text = 'Stamp,n,T1,T2\n2026-03-03 08:14:00,"a"b,20.0,20.5\n2026-03-03 08:14:30,a,20.1,20.6\n';
+    expect(refusalOf(() => read(text))).toMatchObject({ code: 'log-cell-unreadable', facts: { line: 2, column: 'n' } });
+  });
+
   it('counts the lines of quoted cells', () => {
     const text = `Stamp,T1,T2,n\n2026-03-03 08:14:00,20.0,20.5,"three\r\nlong\nlines"\n2026-03-03 08:14:30,hot,20.5,x\n`;
     expect(refusalOf(() => read(text)).facts.line).toBe(5);
@@ -130,6 +135,14 @@ describe('a log that cannot be read', () => {
     const refusal = refusalOf(() => read(`Stamp,T1,T1,T2\n`));
     expect(refusal.code).toBe('log-column-twice');
     expect(refusal.message).toContain('"#2" or "#3"');
+  });
+
+  it('is refused where one column is named twice, once by its number', () => {
+    const channels = [
+      { column: 'T1', name: 'TC1', role: 'part', unit: '°C' },
+      { column: '#2', name: 'TC2', role: 'part', unit: '°C' },
+    ];
+    expect(refusalOf(() => read(HEAD + GOOD, { channels })).code).toBe('log-column-twice');
   });
 
   it.each([
