@@ -119,21 +119,14 @@ function pressureBeforeGel(sources: EventSources, atLeast: number): Found {
     const scale = pressureScale(j, 'pressure', channel)!;
     const level = scale.paFrom(atLeast);
     const sinceMs = channel.track.crossings(level, '>=').firstOn(j.log.from);
-    const hasReached = sinceMs !== null && sinceMs <= gelEarlyMs;
-    const lowest = hasReached ? channel.track.lowestBetween(sinceMs, gelEarlyMs) : -1;
-    const fell = hasReached && lowest >= 0 && channel.track.reading(lowest) < level;
+    const lowest = sinceMs === null ? -1 : channel.track.lowestBetween(sinceMs, gelEarlyMs);
+    const fell = lowest >= 0 && channel.track.reading(lowest) < level;
     const shownPa = fell ? channel.track.reading(lowest) : channel.track.valueAt(gelEarlyMs);
     const isLate = sinceMs === null || sinceMs > gelLateMs;
     const gaps = gapsOf(channel.track, j.longestGapMs, j.log);
     const open = gelEarlyMs !== gelLateMs || overlaps(gaps, { from: sinceMs ?? j.log.from, until: gelLateMs });
     const each: Outcome =
-      isLate || fell
-        ? open && !fell && gaps.length > 0
-          ? 'cannot-tell'
-          : 'not-met'
-        : hasReached && !open
-          ? 'met'
-          : 'cannot-tell';
+      isLate || fell ? (open && !fell && gaps.length > 0 ? 'cannot-tell' : 'not-met') : open ? 'cannot-tell' : 'met';
     if (scale.figureFrom(shownPa) < observed) {
       observed = scale.figureFrom(shownPa);
       sensor = channel.layout.name;

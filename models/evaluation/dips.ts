@@ -22,6 +22,7 @@ export interface ForgivenessC {
   readonly inTotalMs: number;
 }
 
+/** What is forgiven, in °C (or whatever `byC` converts to) and ms; null where nothing is. */
 export function forgivenessC(forgive: Forgiveness | undefined, byC: (by: number) => number): ForgivenessC | null {
   if (forgive === undefined) return null;
   return {

@@ -23,6 +23,7 @@ export interface EventSources {
   readonly gel: GelTimes;
 }
 
+/** When an event of the cycle happened, as early and as late as gaps allow. */
 export function eventTime(sources: EventSources, event: CycleEvent): EventTime {
   const { j } = sources;
   const unknown = unknownBecause(sources, event);

@@ -51,11 +51,12 @@ export function marginTo({ atLeast, atMost }: Bounds, observed: number | null): 
   return margins.length === 0 ? null : Math.min(...margins);
 }
 
-/** Whether a computed figure keeps a bound, with the allowance of 1e-9 of the figure. */
+/** Whether a computed figure keeps a bound from below, with the allowance of 1e-9 of the figure. */
 export function isAtLeast(figure: number, bound: number | undefined): boolean {
   return bound === undefined || figure >= bound - ALLOWANCE * Math.abs(figure);
 }
 
+/** Whether a computed figure keeps a bound from above, with the same allowance. */
 export function isAtMost(figure: number, bound: number | undefined): boolean {
   return bound === undefined || figure <= bound + ALLOWANCE * Math.abs(figure);
 }
@@ -67,10 +68,12 @@ export function unfinished(j: Judgement): Outcome {
 
 const RANK: Readonly<Record<Outcome, number>> = { met: 0, pending: 1, 'cannot-tell': 2, 'not-met': 3 };
 
+/** `not-met` before `cannot-tell` before `pending` before `met`; of none, `met`. */
 export function worst(outcomes: readonly Outcome[]): Outcome {
   return outcomes.reduce<Outcome>((a, b) => (RANK[b] > RANK[a] ? b : a), 'met');
 }
 
+/** ISO 8601 to the ms; null where there is no such instant. */
 export function iso(ms: number | null): string | null {
   return ms === null || !Number.isFinite(ms) ? null : new Date(Math.round(ms)).toISOString();
 }

@@ -8,6 +8,7 @@ export interface GelTimes {
   readonly unknown: string | null;
 }
 
+/** The earliest estimated gel of a part's sensors; unknown without a resin set that says when it gels. */
 export function gelTimes(j: Judgement): GelTimes {
   const unknown = gelUnknown(j);
   if (unknown !== null) return { earlyMs: null, lateMs: null, unknown };
@@ -33,6 +34,7 @@ export function estimated(j: Judgement): JudgedSensor[] {
   return j.sensors.filter((s) => !isExcluded(s) && s.track.length > 0);
 }
 
+/** The estimated cure of one sensor, its gaps filled one way. */
 export function cureOf(j: Judgement, s: JudgedSensor, fill: CureFill): FollowedCure {
   const subject = {
     track: s.track,

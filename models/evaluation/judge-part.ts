@@ -60,6 +60,7 @@ export interface PartRecord {
   readonly cure: readonly CureEstimate[];
 }
 
+/** What happened to a part, whatever was asked: stages, windows, heat-on and estimates. */
 export function recordPart(sources: EventSources): PartRecord {
   const { j } = sources;
   return {

@@ -21,6 +21,7 @@ export interface JudgedSensor {
   readonly gaps: readonly Gap[];
 }
 
+/** Whether a person decided not to believe the sensor from some instant on. */
 export function isExcluded(s: JudgedSensor): boolean {
   return s.untilMs !== Number.POSITIVE_INFINITY;
 }
@@ -62,6 +63,7 @@ export interface Judgement {
   readonly ownSensors: boolean;
 }
 
+/** How long a stretch without readings may be before it is a gap: as written, or 5 median intervals, 60 s at least. */
 export function longestGapMs(cycle: Cycle, digest: RunDigest): number {
   const written = cycle.log?.longestGap;
   if (written !== undefined) return written * 60_000;
@@ -90,6 +92,7 @@ export interface RuleFigures {
   readonly coolingC: number;
 }
 
+/** The figures of the rules for a cycle's temperature unit. */
 export function ruleFigures(unit: TemperatureUnit): RuleFigures {
   return {
     chatterC: celsiusDifferenceFrom(inUnit(unit, 1, 2), unit),

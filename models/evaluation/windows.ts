@@ -50,6 +50,7 @@ export function windowLimit(sources: EventSources, window: WindowLimit): Found {
   return { ...known, ...worstChannel(j, window, each, stretch, asked) };
 }
 
+/** What lies between two events, as sure and as wide as their times allow. */
 export function windowStretch(j: Judgement, from: EventTime, until: EventTime): WindowStretch {
   return {
     sure: { from: from.lateMs ?? Number.POSITIVE_INFINITY, until: until.earlyMs ?? j.log.until },

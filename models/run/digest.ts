@@ -79,6 +79,7 @@ export class RunDigest {
   }
 }
 
+/** An empty digest of a run that is about to be read. */
 export function beginRun(channels: readonly ChannelLayout[], load: Load | null): RunDigest {
   return new RunDigest(channels, load);
 }

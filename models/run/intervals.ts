@@ -61,10 +61,12 @@ export function firstHold(a: Intervals, fromMs: number): number | null {
   return null;
 }
 
+/** Whether `a` holds at an instant, ends included. */
 export function holdsAt(a: Intervals, instantMs: number): boolean {
   return a.some((held) => held.from <= instantMs && instantMs <= held.until);
 }
 
+/** Whether `a` and `stretch` share more than an instant. */
 export function overlaps(a: Intervals, stretch: Interval): boolean {
   return a.some((held) => held.from < stretch.until && stretch.from < held.until);
 }

@@ -62,6 +62,37 @@ describe('ceiling', () => {
   });
 });
 
+describe('what a gap may hide', () => {
+  // Read at 100 °C at 40 min and at 120 °C at 50 min; at 10 °C/min up to (100 + 120) / 2 + 10 · 5 = 160 °C, or down to
+  // 60 °C, between.
+  const history: Vertex[] = [
+    [0, 20],
+    [40, 100],
+    [50, 120],
+    [60, 120],
+    [160, 20],
+  ];
+  const gapped = part(history, { absent: [[40, 50]] });
+  const log = { changesAtMost: 10 };
+
+  it.each([
+    [160, 'met'],
+    [159.9, 'cannot-tell'],
+  ] as const)('reaches from both ends: a ceiling of %d °C is %s', (ceiling, outcome) => {
+    const stages = [dwell({ target: 100 })];
+    const asked = { channels: { TC1: gapped }, cycle: cycleOf(stages, { ceiling, log }) };
+    expect(findingOf(asked, 'ceiling')!.outcome).toBe(outcome);
+  });
+
+  it.each([
+    [60, 'met'],
+    [45, 'cannot-tell'],
+  ] as const)('parts it from a sensor that was read: at most %d °C apart is %s', (atMost, outcome) => {
+    const channels = { TC1: history, TC2: gapped };
+    expect(findingOf(run(channels, { spread: { atMost, during: 'run' }, log }), 'spread')!.outcome).toBe(outcome);
+  });
+});
+
 describe('spread', () => {
   // While heating TC1 is 0.4 t ahead until 80 min: 32 °C. The dwell opens at 96.875 min, when TC2 is 5 °C behind:
   // 4.8 °C at the scan at 97 min, and 4 °C at 202 min, the last before it closes. In the cooling they are 20 °C apart.
