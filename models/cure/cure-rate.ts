@@ -36,7 +36,9 @@ export function cureRate(resin: Resin): CureRate {
 
 /** The branch that holds at a degree: a branch holds up to and at its end. */
 export function branchAt(rate: CureRate, alpha: number): number {
-  return rate.branchEnds.findIndex((end) => alpha <= end);
+  let branch = 0;
+  while (alpha > rate.branchEnds[branch]!) branch += 1;
+  return branch;
 }
 
 const neverStalls = () => Number.POSITIVE_INFINITY;
