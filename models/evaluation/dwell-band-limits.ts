@@ -91,7 +91,7 @@ function stretchInside(j: Judgement, s: JudgedSensor, course: DwellCourse, k: nu
   const left = course.left[k] ?? null;
   const until = left?.ms ?? (isExcluded(s) ? believedUntil(j, s) : j.log.until);
   if (left?.isUpwards !== true) return { from, until };
-  return { from, until: lastBackBelow(j, s, bandC(j, course.stage, s, course.shift), from, until) };
+  return { from, until: lastBackBelow(s, bandC(j, course.stage, s, course.shift), from, until) };
 }
 
 function overshoots(

@@ -2,9 +2,9 @@ import type { DwellStage } from '../cycle/cycle.ts';
 import { lowerOf, upperOf } from '../cycle/words-of-figures.ts';
 import { credited } from '../run/gaps.ts';
 import { firstHold, type Interval, within } from '../run/intervals.ts';
-import { celsiusFrom } from '../units.ts';
+import { celsiusFrom, round9 } from '../units.ts';
 import { type Fill, sensorStanding } from './holding.ts';
-import { isExcluded, type JudgedSensor, type Judgement, ruleFigures } from './judgement.ts';
+import { inUnit, isExcluded, type JudgedSensor, type Judgement, ruleFigures } from './judgement.ts';
 
 /** How a dwell's band is moved for a guarded decision, in expanded uncertainties: 1 inwards, −1 outwards. */
 export type Shift = -1 | 0 | 1;
@@ -48,12 +48,15 @@ export function bandC(j: Judgement, stage: DwellStage, s: Pick<JudgedSensor, 'un
   return {
     lowerC: celsiusFrom(lowerOf(stage), unit) + moved,
     upperC: celsiusFrom(upperOf(stage), unit) - moved,
+    backC: celsiusFrom(round9(upperOf(stage) - inUnit(unit, 1, 2)), unit) - moved,
   };
 }
 
 export interface Band {
   readonly lowerC: number;
   readonly upperC: number;
+  /** At or below which a sensor has come back from above `upper`: 1 °C (2 °F) under it. */
+  readonly backC: number;
 }
 
 /** The courses of all dwells of the cycle, in its order. `opened` tells whether a dwell's clock ever opened. */
@@ -166,28 +169,29 @@ export function leaves(
     const midpointC = (band.upperC + hotterLowerC + rule.shift * s.uncertaintyC) / 2;
     const midpointMs = s.track.crossings(midpointC, '>=').firstOn(enteredMs);
     if (midpointMs !== null && midpointMs <= endMs) {
-      const ms = wayOut(j, s, band, enteredMs, midpointMs) ?? midpointMs;
+      const ms = wayOut(s, band, enteredMs, midpointMs) ?? midpointMs;
       return { ms: inGap(j, s, ms, band.upperC, -1, rule.fill), isUpwards: true, isFinal: true };
     }
-    if (s.track.valueAt(endMs) > band.upperC - ruleFigures(j.cycle.units.temperature).chatterC) {
-      const ms = wayOut(j, s, band, enteredMs, endMs);
-      return ms === null ? null : { ms: inGap(j, s, ms, band.upperC, -1, rule.fill), isUpwards: true, isFinal: false };
+    if (s.track.valueAt(endMs) > band.backC) {
+      const ms = wayOut(s, band, enteredMs, endMs);
+      // It has left for now; one that is believed no further can no longer come back.
+      const isFinal = isExcluded(s);
+      return ms === null ? null : { ms: inGap(j, s, ms, band.upperC, -1, rule.fill), isUpwards: true, isFinal };
     }
   }
   return leavesDownwards(j, s, band, enteredMs, endMs, rule);
 }
 
 /** The first crossing of `upper` after the sensor was last at or below `upper` − 1 °C, up to an instant. */
-function wayOut(j: Judgement, s: JudgedSensor, band: Band, enteredMs: number, untilMs: number): number | null {
-  const backMs = lastBackBelow(j, s, band, enteredMs, untilMs);
+function wayOut(s: JudgedSensor, band: Band, enteredMs: number, untilMs: number): number | null {
+  const backMs = lastBackBelow(s, band, enteredMs, untilMs);
   const ms = s.track.crossings(band.upperC, '>').firstOn(backMs);
   return ms !== null && ms <= untilMs ? ms : null;
 }
 
 /** The last instant up to `untilMs` at which the sensor was at or below `upper` − 1 °C (2 °F). */
-export function lastBackBelow(j: Judgement, s: JudgedSensor, band: Band, enteredMs: number, untilMs: number): number {
-  const { chatterC } = ruleFigures(j.cycle.units.temperature);
-  const below = s.track.crossings(band.upperC - chatterC, '<=');
+export function lastBackBelow(s: JudgedSensor, band: Band, enteredMs: number, untilMs: number): number {
+  const below = s.track.crossings(band.backC, '<=');
   const endedMs = below.lastEndUntil(untilMs);
   const startedMs = below.lastStartUntil(untilMs);
   if (startedMs !== null && (endedMs === null || startedMs > endedMs)) return untilMs;

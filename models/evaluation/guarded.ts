@@ -1,4 +1,5 @@
 import type { Outcome } from './evaluation.ts';
+import { worst } from './finding.ts';
 
 /**
  * A limit decided with its guard band: met where it is met with the limit moved inwards by U, not met where it is not
@@ -12,6 +13,7 @@ export function guarded(isGuarded: boolean, decide: (shift: -1 | 0 | 1) => Outco
   const asWritten = decide(0);
   if (!isGuarded) return asWritten;
   const inside = decide(1);
-  if (inside !== 'not-met') return inside;
+  // What a gap leaves open as written stays open: another band may look at another stretch.
+  if (inside !== 'not-met') return asWritten === 'not-met' ? 'cannot-tell' : worst([inside, asWritten]);
   return decide(-1) === 'not-met' ? 'not-met' : 'cannot-tell';
 }

@@ -84,8 +84,6 @@ export function inUnit(unit: TemperatureUnit, forCelsius: number, forFahrenheit:
 
 /** The figures of the rules, in °C, for a cycle written in one unit. */
 export interface RuleFigures {
-  /** How far below `upper` counts as having come back: 1 °C, 2 °F. */
-  readonly chatterC: number;
   /** Rise of the leading sensor that is heat-on: 5 °C, 9 °F. */
   readonly heatOnC: number;
   /** Fall below the hottest that shows the cooling: 15 °C, 27 °F. */
@@ -95,7 +93,6 @@ export interface RuleFigures {
 /** The figures of the rules for a cycle's temperature unit. */
 export function ruleFigures(unit: TemperatureUnit): RuleFigures {
   return {
-    chatterC: celsiusDifferenceFrom(inUnit(unit, 1, 2), unit),
     heatOnC: celsiusDifferenceFrom(inUnit(unit, 5, 9), unit),
     coolingC: celsiusDifferenceFrom(inUnit(unit, 15, 27), unit),
   };

@@ -1,5 +1,6 @@
 import { furthest } from '../run/gaps.ts';
 import type { Interval } from '../run/intervals.ts';
+import type { Track } from '../run/track.ts';
 import {
   celsiusDifferenceFrom,
   celsiusFrom,
@@ -12,6 +13,7 @@ import type { Outcome } from './evaluation.ts';
 import { heatOnMs } from './events.ts';
 import { type Found, sayBeside, unfinished } from './finding.ts';
 import { guarded } from './guarded.ts';
+import type { Fill } from './holding.ts';
 import { type JudgedSensor, type Judgement, openingGaps, someBelieved } from './judgement.ts';
 import { whatIsOpen } from './what-is-open.ts';
 
@@ -76,7 +78,9 @@ export function spreadLimit(j: Judgement, dwells: Dwells): Found[] {
   if (j.sensors.length < 2) {
     return [{ ...known, outcome: 'cannot-tell', because: `One sensor has no spread; ${asked}.` }];
   }
-  const { stretches, isComplete } = coveredBySpread(j, dwells);
+  const { stretches, isComplete } = coveredBySpread(j, dwells, 'least');
+  // Where gaps leave an opening or a closing open, what lies between may or may not be looked at.
+  const atWidest = coveredBySpread(j, dwells, 'most').stretches;
   const track = j.digest.derived('spread', j.sensors);
   let widest: { spreadC: number; ms: number } | null = null;
   for (const { from, until } of stretches) {
@@ -92,10 +96,11 @@ export function spreadLimit(j: Judgement, dwells: Dwells): Found[] {
     const isOver = widest !== null && (shift === -1 ? widest.spreadC >= limit : widest.spreadC > limit + 1e-9);
     if (isOver) return 'not-met';
     if (widest === null) return unfinished(j);
-    if (stretches.some((stretch) => mayPart(j, stretch, limit))) return 'cannot-tell';
+    const isDoubtful = atWidest.some((stretch) => mayPart(j, stretch, limit) || parts(track, stretch) > limit + 1e-9);
+    if (isDoubtful) return 'cannot-tell';
     return isComplete && someBelieved(j) ? 'met' : unfinished(j);
   });
-  const mayHide = stretches.some((stretch) => mayPart(j, stretch, limitC));
+  const mayHide = atWidest.some((stretch) => mayPart(j, stretch, limitC));
   const observed = widest === null ? null : temperatureDifferenceFromCelsius(widest.spreadC, unit);
   const during = { heating: 'while heating', dwells: 'in the dwells', run: 'over the run' }[spread.during];
   return [
@@ -116,13 +121,19 @@ export function spreadLimit(j: Judgement, dwells: Dwells): Found[] {
   ];
 }
 
+/** The widest spread seen in a stretch; 0 where there is none. */
+function parts(track: Track, { from, until }: Interval): number {
+  const at = track.highestBetween(from, until);
+  return at < 0 ? 0 : track.reading(at);
+}
+
 interface Covered {
   readonly stretches: Interval[];
   readonly isComplete: boolean;
 }
 
 /** The stretches a spread is looked at in, and whether all of them are over. */
-function coveredBySpread(j: Judgement, dwells: Dwells): Covered {
+function coveredBySpread(j: Judgement, dwells: Dwells, fill: Fill): Covered {
   const { during, after = 0 } = j.cycle.spread!;
   if (during === 'run') return { stretches: [j.log], isComplete: !j.isOpen };
   const stretches: Interval[] = [];
@@ -133,8 +144,8 @@ function coveredBySpread(j: Judgement, dwells: Dwells): Covered {
   };
   let sinceMs = heatOnMs(j);
   dwells.stages.forEach((_, i) => {
-    const { clock } = dwells.at(i, 'least');
-    const opensMs = dwells.opensMs(i, 'least');
+    const { clock } = dwells.at(i, fill);
+    const opensMs = dwells.opensMs(i, fill);
     const closesMs = opensMs === null ? null : (clock.closing?.ms ?? null);
     if (during === 'heating') add(sinceMs, opensMs, true);
     else add(opensMs === null ? null : opensMs + after * 60_000, closesMs, clock.closing?.isFinal === true);
