@@ -180,6 +180,11 @@ describe('lines passed over', () => {
     ],
     ['a footer without line end', `${preamble}${first}${second}Signed: op. 2`, [2, 'after-last-reading 8-8']],
     [
+      'a signature with a time',
+      `${preamble}${first}${second}Printed\n2026-03-03 15:00 operator 2\n`,
+      [2, 'after-last-reading 8-9'],
+    ],
+    [
       'a footer with a time',
       `${preamble}${first}${second}2026-03-03 08:15:00;Run ended\n`,
       [2, 'after-last-reading 8-8'],

@@ -55,7 +55,7 @@ describe('an hour that comes twice', () => {
   it('goes on in the next file, also where that begins with scans of the one before', () => {
     const first = fileOfScans('00:30:00 1, 01:00:00 2, 01:30:00 3', '2026-10-25', 'a');
     const next = fileOfScans('01:00:00 4, 01:30:00 5, 02:00:00 6', '2026-10-25', 'b');
-    const overlapping = fileOfScans('01:30:00 3, 01:00:00 4, 01:30:00 5, 02:00:00 6', '2026-10-25', 'b');
+    const overlapping = fileOfScans('01:00:00 2, 01:30:00 3, 01:00:00 4, 01:30:00 5, 02:00:00 6', '2026-10-25', 'b');
     for (const second of [next, overlapping]) {
       const log = readLog([first, second], layout('Europe/Lisbon'));
       expect(times(log)).toEqual(['23:30:00Z', '00:00:00Z', '00:30:00Z', '01:00:00Z', '01:30:00Z', '02:00:00Z']);
