@@ -14,7 +14,7 @@ export interface HeatOptions {
   startDegree?: number;
   /** Moments to report at, rising, in s; default none. */
   atS?: Float64Array;
-  /** Length of history that need not be resolved, s; default 20. */
+  /** Length of history that need not be resolved, s; default 30. */
   resolveS?: number;
   /** Error estimate allowed in a step, in K (the degree's is a hundredth of it); default 0.02. */
   toleranceK?: number;
@@ -73,7 +73,7 @@ export function heatThrough(
   timeS: Float64Array,
   startK: number,
   resin: Resin,
-  { startDegree = resin.initialDegree, atS = new Float64Array(0), resolveS = 20, toleranceK = 0.02 }: HeatOptions = {},
+  { startDegree = resin.initialDegree, atS = new Float64Array(0), resolveS = 30, toleranceK = 0.02 }: HeatOptions = {},
 ): HeatHistory {
   refuseBadHistory(timeS, faces, startK);
   const expected = whyNotFrom(startDegree, resin.kinetics);
