@@ -56,8 +56,15 @@ describe('a gap inside a dwell, both of whose ends are in band', () => {
     expect(closes).toBe(partOf(runOf({ absent: [0, 0] })).stages[0]!.closes);
   });
 
-  it('of 5 min is none: 125 min', () => {
+  it('of 5 min is none, of 6 min is one: 125 min, or 76.5 from 126 min on', () => {
     expect(time({ absent: [120, 125] })).toMatchObject({ outcome: 'met', observed: 125, possible: 125 });
+    expect(time({ absent: [120, 126] })).toMatchObject({ outcome: 'cannot-tell', observed: 76.5, possible: 125 });
+  });
+
+  it('is over 60 s however often the recorder scans: at a scan every 6 s, 1 min is none, 1.1 min is one', () => {
+    const others = { every: 0.1 };
+    expect(time({ absent: [120, 121], others }).observed).toBe(125);
+    expect(time({ absent: [120, 121.1], others }).observed).toBeCloseTo(81.4, 6);
   });
 
   it.each([
