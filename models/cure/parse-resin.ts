@@ -1,4 +1,5 @@
 import { format, number, object, oneOf, pairOf, type Read, refuse, text } from '../document.ts';
+import { readCovariance, refuseStrangeParameters } from './parse-covariance.ts';
 import { readKinetics } from './parse-kinetics.ts';
 import { readViscosity } from './parse-viscosity.ts';
 import { refuseImplausible } from './refuse-implausible.ts';
@@ -15,6 +16,7 @@ export function parseResin(document: unknown): Resin {
   const resin = readResin(document, '');
   const expected = whyNotFrom(resin.initialDegree, resin.kinetics);
   if (expected !== null) refuse('initialDegree', expected, resin.initialDegree);
+  refuseStrangeParameters(resin);
   refuseImplausible(resin);
   return resin;
 }
@@ -75,6 +77,7 @@ const readResin: Read<Resin> = object((fields) => ({
     object((gel) => ({ degree: gel.required('degree', number({ above: 0, below: 1 })) })),
   ),
   ...fields.optional('viscosity', readViscosity),
+  ...fields.optional('covariance', readCovariance),
   ...fields.optional(
     'thermal',
     object((thermal) => ({

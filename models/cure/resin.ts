@@ -117,5 +117,13 @@ export interface Resin {
   readonly gel?: { readonly degree: number };
   /** Viscosity of the reacting resin before gel, of the same study. */
   readonly viscosity?: Viscosity;
+  /**
+   * Covariances of the fitted constants, where the study gives them. `parameters` are keys of `kinetics`, or `ln` and
+   * such a key for the natural logarithm of a constant (`lnA1`).
+   */
+  readonly covariance?: {
+    readonly parameters: readonly string[];
+    readonly matrix: readonly (readonly number[])[];
+  };
   readonly thermal?: { readonly heatOfReaction: number; readonly basis: 'resin' | 'composite' };
 }
