@@ -40,9 +40,11 @@ export class VitrificationWatch {
     this.#recent.push(timeS, temperatureK);
   }
 
-  /** As {@link accept}, for scans in a row. */
+  /** As {@link accept}, for scans in a row; those too old for any later moment to look back to are left out. */
   acceptAll(timeS: Float64Array, temperatureK: Float64Array, from: number, to: number): void {
-    for (let i = from; i < to; i += 1) this.#recent.push(timeS[i]!, temperatureK[i]!);
+    let first = to - 1;
+    while (first > from && timeS[first]! > timeS[to - 1]! - LOOK_BACK_S) first -= 1;
+    for (let i = Math.max(from, first); i < to; i += 1) this.#recent.push(timeS[i]!, temperatureK[i]!);
   }
 
   /** False where the temperature falls throughout a piece that starts at the last scan, so that nothing vitrifies. */

@@ -29,7 +29,7 @@ export class FastCure {
   constructor(law: SeparableLaw, rate: CureRate, { glassTransition, validC }: Resin) {
     this.#law = law;
     this.#rate = rate;
-    this.#shapes = new LocalShapes(law.diffusion?.C ?? 0, glassTransition ?? null);
+    this.#shapes = new LocalShapes(law.diffusion[0]!, glassTransition ?? null);
     this.#validK = validC === undefined ? null : [kelvinFromCelsius(validC[0]), kelvinFromCelsius(validC[1])];
   }
 

@@ -1,7 +1,7 @@
 import { glassTransitionK } from '../glass-transition.ts';
 import type { GlassTransition } from '../resin.ts';
 import type { Term } from './separable-law.ts';
-import type { TermShape } from './term-shape.ts';
+import { expandShape, reachOf, type TermShape } from './term-shape.ts';
 
 /** Natural logarithm by which the rate may change between a reference degree and the cure: half its square is left out. */
 const OFF = 1e-3;
@@ -28,13 +28,13 @@ export class LocalShapes {
 
   /** Renews the polynomials so that they reach from `alpha` onwards. */
   expand(first: Term, second: Term | undefined, alpha: number): void {
-    const reach = Math.min(first.shape.reach(alpha), second?.shape.reach(alpha) ?? 1);
+    const reach = Math.min(reachOf(first.shape, alpha), second === undefined ? 1 : reachOf(second.shape, alpha));
     this.center = alpha + reach;
     this.limit = alpha + 2 * reach;
     this.near = OFF / (this.#steepness + 0.05 / reach);
     this.#lookTo(this.limit);
-    first.shape.expand(this.center, this.taylor, 0);
-    second?.shape.expand(this.center, this.taylor, 5);
+    expandShape(first.shape, this.center, this.taylor, 0);
+    if (second !== undefined) expandShape(second.shape, this.center, this.taylor, 5);
   }
 
   /**
@@ -43,9 +43,9 @@ export class LocalShapes {
    * By differentiating dα/dθ = g three times: g g', g (g'² + g g''), g (g'³ + 4 g g' g'' + g² g''').
    */
   seriesInTheta(shape: TermShape, alpha: number): readonly [number, number, number, number, number] {
-    const reach = shape.reach(alpha);
+    const reach = reachOf(shape, alpha);
     this.#lookTo(alpha + reach);
-    shape.expand(alpha, this.taylor, 0);
+    expandShape(shape, alpha, this.taylor, 0);
     const [g, g1, g2, g3] = [this.taylor[0]!, this.taylor[1]!, 2 * this.taylor[2]!, 6 * this.taylor[3]!];
     const fourth = g1 * g1 * g1 + 4 * g * g1 * g2 + g * g * g3;
     return [reach / g, g, (g * g1) / 2, (g * (g1 * g1 + g * g2)) / 6, (g * fourth) / 24];

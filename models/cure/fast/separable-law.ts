@@ -1,34 +1,38 @@
-import type { DiffusionLine } from '../laws/diffusion-factor.ts';
 import type { Kinetics, Resin } from '../resin.ts';
-import { powerShape, stoichiometricAutocatalyticShape, stoichiometricShape, type TermShape } from './term-shape.ts';
+import { powerShape, stoichiometricShape, type TermShape } from './term-shape.ts';
 
 /** One term of a rate: A exp(−energyK/T) times a shape of α. */
 export interface Term {
-  readonly A: number;
-  /** E/R in K. */
-  readonly energyK: number;
+  /** [A in 1/s, E/R in K]. */
+  readonly constants: Float64Array;
   readonly shape: TermShape;
 }
 
 /** A rate written as one or two terms in each branch, with what diffusion holds back. */
 export interface SeparableLaw {
   readonly branches: readonly (readonly [Term] | readonly [Term, Term])[];
-  readonly diffusion: DiffusionLine | null;
+  /** [C, alphaC0, alphaCT in 1/K]; zeros where nothing is held. */
+  readonly diffusion: Float64Array;
   readonly held: 'nothing' | 'all' | 'second term';
 }
 
 /** The law of a resin as terms; null where it has no such form. */
 export function separableLaw({ kinetics, diffusion, gasConstant }: Resin): SeparableLaw | null {
-  const term = (A: number, E: number, shape: TermShape): Term => ({ A, energyK: E / gasConstant, shape });
+  const term = (A: number, E: number, shape: TermShape): Term => ({
+    constants: Float64Array.of(A, E / gasConstant),
+    shape,
+  });
   const branches = branchesOf(kinetics, term);
   if (branches === null) return null;
   if (kinetics.law === 'two-term') {
     // A diffusion factor on top of the law's own would need a third exponential: left to the step-by-step integrator.
     if (diffusion !== undefined) return null;
     const { D: C, alphaC0, alphaCT } = kinetics;
-    return { branches, diffusion: { C, alphaC0, alphaCT }, held: 'second term' };
+    return { branches, diffusion: Float64Array.of(C, alphaC0, alphaCT), held: 'second term' };
   }
-  return { branches, diffusion: diffusion ?? null, held: diffusion === undefined ? 'nothing' : 'all' };
+  if (diffusion === undefined) return { branches, diffusion: new Float64Array(3), held: 'nothing' };
+  const { C, alphaC0, alphaCT } = diffusion;
+  return { branches, diffusion: Float64Array.of(C, alphaC0, alphaCT), held: 'all' };
 }
 
 function branchesOf(
@@ -51,7 +55,7 @@ function branchesOf(
     case 'lee-loos-springer': {
       const { A1, E1, A2, E2, A3, E3, B } = kinetics;
       return [
-        [term(A1, E1, stoichiometricShape(B)), term(A2, E2, stoichiometricAutocatalyticShape(B))],
+        [term(A1, E1, stoichiometricShape(B, false)), term(A2, E2, stoichiometricShape(B, true))],
         [term(A3, E3, powerShape(0, 1))],
       ];
     }

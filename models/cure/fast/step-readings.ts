@@ -3,7 +3,8 @@ import type { VitrificationWatch } from '../vitrification.ts';
 import type { LocalShapes } from './local-shapes.ts';
 import type { SeparableLaw } from './separable-law.ts';
 
-// Constants and the series stand in this file because an imported one costs the inner loop a load each time.
+// Constants stand in this file, and e^d = 1 + d + … + d⁵/120 (within 1.6e-8 for |d| ≤ 0.15, 1e-12 for |d| ≤ 0.03) in the
+// loop itself, because an imported constant or a call costs every reading.
 
 /**
  * Greatest correction of the trapezoidal rule, per degree gained. For a rate that changes by a factor e^x over the step
@@ -71,14 +72,14 @@ export function stepReadings(
   alphaOut: Float64Array,
 ): number {
   const [first, second] = law.branches[state.branch]!;
-  const { A: A1, energyK: energy1K } = first;
+  const [A1, energy1K] = [first.constants[0]!, first.constants[1]!];
   const hasSecond = second !== undefined;
-  const A2 = second?.A ?? 0;
-  const energy2K = second?.energyK ?? 0;
+  const A2 = second === undefined ? 0 : second.constants[0]!;
+  const energy2K = second === undefined ? 0 : second.constants[1]!;
   const isAllHeld = law.held === 'all';
   const isSecondHeld = law.held === 'second term';
   const isHeld = isAllHeld || isSecondHeld;
-  const { C, alphaC0, alphaCT } = law.diffusion ?? { C: 0, alphaC0: 0, alphaCT: 0 };
+  const [C, alphaC0, alphaCT] = [law.diffusion[0]!, law.diffusion[1]!, law.diffusion[2]!];
   const taylor = shapes.taylor;
 
   /** Where the last part ended. */
@@ -146,7 +147,7 @@ export function stepReadings(
         break;
       }
       const d = onLine - center;
-      const nextK1 = k1 * exponentialSeries(d1);
+      const nextK1 = k1 * (1 + d1 * (1 + d1 * (1 / 2 + d1 * (1 / 6 + d1 * (1 / 24 + d1 * (1 / 120))))));
       const p3d = p3 + d * p4;
       const p2d = p2 + d * p3d;
       const p1d = p1 + d * p2d;
@@ -161,12 +162,13 @@ export function stepReadings(
           need = DIFFUSION;
           break;
         }
-        nextHeld = held * exponentialSeries(z - lastZ);
+        const dz = z - lastZ;
+        nextHeld = held * (1 + dz * (1 + dz * (1 / 2 + dz * (1 / 6 + dz * (1 / 24 + dz * (1 / 120))))));
         factor = 1 / (1 + nextHeld);
       }
       let nextK2 = 0;
       if (hasSecond) {
-        nextK2 = k2 * exponentialSeries(d2);
+        nextK2 = k2 * (1 + d2 * (1 + d2 * (1 / 2 + d2 * (1 / 6 + d2 * (1 / 24 + d2 * (1 / 120))))));
         const q3d = q3 + d * q4;
         const q2d = q2 + d * q3d;
         const q1d = q1 + d * q2d;
@@ -270,9 +272,4 @@ export const FIGURES = 13;
 /** The figures at a degree whose rate and slopes are known; nothing to carry on yet. */
 export function anchored(state: CureState, f: number, fT: number, fA: number): readonly number[] {
   return [f, fT, fA * f, state.timeS, state.alpha, f, 0, 1 / state.temperatureK, 0, 0, 0, 0, 0];
-}
-
-/** e^d for |d| ≤ 0.15 by its series to d⁵: within 1.6e-8, and 1e-12 where |d| ≤ 0.03. */
-function exponentialSeries(d: number): number {
-  return 1 + d * (1 + d * (1 / 2 + d * (1 / 6 + d * (1 / 24 + d * (1 / 120)))));
 }
