@@ -37,6 +37,8 @@ const LINE_FEED = 10;
 const CARRIAGE_RETURN = 13;
 /** So many digits are a whole number that is exact in a double; divided by an exact power of ten it is rounded once. */
 const MOST_DIGITS = 15;
+/** So many bytes of digits and mark are a whole number that is exact in 32 bits. */
+const MOST_INTEGER_BYTES = 9;
 const TEN_TO = Float64Array.from({ length: MOST_DIGITS + 1 }, (_, power) => 10 ** power);
 const MOST_STAMP_BYTES = 128;
 
@@ -65,62 +67,45 @@ export function plainRowReader(
     const mayBeMissing = missing.figures.some((figure) => figure >= low && figure <= high);
     return isScaled[k] || mayBeMissing ? Infinity : low;
   });
-  const hasOwnDecimal = decimal !== delimiter;
+  /** The decimal mark where it needs no quotes around it; no byte at all where it does. */
+  const plainDecimal = decimal === delimiter ? -1 : decimal;
   const reader: PlainRowReader = { read, next: 0, decimals: 0 };
   return reader;
 
   function read(bytes: Uint8Array, from: number, end: number, isOver: boolean): RowOutcome {
     const figures = table.blockFigures;
     const base = table.place * table.channels;
-    let lastDecimals = -1;
     let at = isSpaced ? endOfSpaces(bytes, from) : from;
     if (isLineEnd(bytes[at]!)) return endRow(bytes, at, end, isOver, BLANK);
     for (let column = 0; ; column++) {
       const target = column < cells ? targets[column]! : SKIPPED;
       if (target >= 0) {
-        const cellFrom = at;
+        // As nearly all figures are: digits, perhaps a mark and digits, the delimiter. Anything else is read anew below.
+        let last = at;
         let byte = bytes[at]!;
-        if (byte === SPACE && !isSpaced) {
-          at = endOfSpaces(bytes, at);
-          byte = bytes[at]!;
-        }
-        const isQuoted = byte === QUOTE && at === cellFrom;
-        if (isQuoted) byte = bytes[++at]!;
-        const isNegative = byte === MINUS;
-        if (isNegative || byte === PLUS) byte = bytes[++at]!;
         let figure = 0;
-        let digitsFrom = at;
         for (let digit = byte - ZERO; digit >>> 0 <= 9; digit = byte - ZERO) {
-          figure = figure * 10 + digit;
-          byte = bytes[++at]!;
+          figure = (Math.imul(figure, 10) + digit) | 0;
+          byte = bytes[++last]!;
         }
-        let digits = at - digitsFrom;
         let decimals = 0;
-        if (byte === decimal && (hasOwnDecimal || isQuoted)) {
-          byte = bytes[++at]!;
-          digitsFrom = at;
+        if (byte === plainDecimal && last > at) {
+          byte = bytes[++last]!;
+          const decimalsFrom = last;
           for (let digit = byte - ZERO; digit >>> 0 <= 9; digit = byte - ZERO) {
-            figure = figure * 10 + digit;
-            byte = bytes[++at]!;
+            figure = (Math.imul(figure, 10) + digit) | 0;
+            byte = bytes[++last]!;
           }
-          decimals = at - digitsFrom;
-          digits += decimals;
+          decimals = last - decimalsFrom;
         }
-        if (isQuoted) {
-          if (byte !== QUOTE) return NOT_PLAIN;
-          byte = bytes[++at]!;
-        }
-        const isEnd = byte === delimiter || byte === LINE_FEED || byte === CARRIAGE_RETURN;
-        if (isEnd && digits > 0 && digits <= MOST_DIGITS) {
-          const size = figure / TEN_TO[decimals]!;
-          const value = isNegative ? 0 - size : size;
-          const isPlain = value >= plainLeast[target]! && value <= greatest[target]!;
-          figures[base + target] = isPlain || isReading(bytes, cellFrom, at, value, target) ? value : Number.NaN;
-          lastDecimals = decimals;
+        const value = figure / TEN_TO[decimals]!;
+        const isShort = last > at && last - at <= MOST_INTEGER_BYTES && isCellEnd(byte);
+        if (isShort && value >= plainLeast[target]! && value <= greatest[target]!) {
+          figures[base + target] = value;
+          reader.decimals = decimals;
+          at = last;
         } else {
-          at = isQuoted ? -1 : endOfMissing(bytes, cellFrom);
-          figures[base + target] = Number.NaN;
-          lastDecimals = -1;
+          at = readFigure(bytes, at, target);
         }
       } else if (target < SKIPPED) at = readTimePart(bytes, at, -2 - target);
       else at = column < cells ? skipCell(bytes, at) : endOfSpaces(bytes, at);
@@ -138,8 +123,40 @@ export function plainRowReader(
     const stampMs = joinedStamp(bytes);
     if (Number.isNaN(stampMs)) return NOT_PLAIN;
     table.blockStampMs[table.place] = stampMs;
-    reader.decimals = lastDecimals;
     return endRow(bytes, at, end, isOver, READ);
+  }
+
+  /** Reads any figure, a missing code or nothing into the table; returns where the cell ends, or −1. */
+  function readFigure(bytes: Uint8Array, from: number, channel: number): number {
+    const place = table.place * table.channels + channel;
+    let at = isSpaced ? from : endOfSpaces(bytes, from);
+    const isQuoted = bytes[at] === QUOTE && at === from;
+    if (isQuoted) at++;
+    const isNegative = bytes[at] === MINUS;
+    if (isNegative || bytes[at] === PLUS) at++;
+    let figure = 0;
+    let digits = 0;
+    let decimals = -1;
+    for (; ; at++) {
+      const digit = bytes[at]! - ZERO;
+      if (digit >>> 0 <= 9) {
+        figure = figure * 10 + digit;
+        digits++;
+        if (decimals >= 0) decimals++;
+      } else if (bytes[at] === decimal && decimals < 0 && (isQuoted || decimal !== delimiter)) decimals = 0;
+      else break;
+    }
+    if (isQuoted && bytes[at++] !== QUOTE) return -1;
+    if (digits === 0 || digits > MOST_DIGITS || !isCellEnd(bytes[at]!)) {
+      table.blockFigures[place] = Number.NaN;
+      reader.decimals = -1;
+      return isQuoted ? -1 : endOfMissing(bytes, from);
+    }
+    const size = figure / TEN_TO[Math.max(0, decimals)]!;
+    const value = isNegative ? 0 - size : size;
+    reader.decimals = Math.max(0, decimals);
+    table.blockFigures[place] = isReading(bytes, from, at, value, channel) ? value : Number.NaN;
+    return at;
   }
 
   /** Whether a figure is a reading: within the channel's range, and no missing code. */

@@ -5,27 +5,29 @@ import Papa from 'papaparse';
 import type { Layout } from '../../models/log/layout.ts';
 import { parseLayout } from '../../models/log/parse-layout.ts';
 import { readLog } from '../../models/log/read-log.ts';
+import type { Readings } from '../../models/log/readings.ts';
 import { fileBytes, fileChunks } from '../../server/files/file-chunks.ts';
 import type { BenchResult } from './result.ts';
 import { inTemporaryFolder } from './temporary-workshop.ts';
+import { tenHourRun } from './ten-hour-run.ts';
 
-const SENSORS = 24;
 const BYTES = 100e6;
 const GOAL_MB_PER_S = 100;
 
 /**
- * Reads a log of 100 MB from the disk into readings, as a recorder writes it: date and time apart, 24 sensors, semicolons,
- * decimal comma. Floor: the faster of csv-parse and papaparse, which only take the same file apart into cells.
+ * Reads a log of 100 MB from the disk into readings, as a recorder writes it: date and time apart, 27 sensors, semicolons,
+ * decimal comma, a run of ten hours over and over. Floor: the faster of csv-parse and papaparse, which only take the same file apart into cells.
  */
 export async function benchRead100Mb(): Promise<BenchResult[]> {
   return inTemporaryFolder(async (folder) => {
     const path = join(folder, 'long.csv');
-    const scans = writeLog(path);
+    const run = tenHourRun();
+    const layout = layoutOf(run);
+    const scans = writeLog(path, run);
     const megabytes = statSync(path).size / 1e6;
-    const own = [1, 2, 3].map(() => timed(() => readOnce(path, scans)));
-    const value = megabytes / Math.min(...own);
-    const csvParse = megabytes / (await timedAsync(() => csvParseOnce(path, scans)));
-    const papaparse = megabytes / (await timedAsync(() => papaparseOnce(path, scans)));
+    const value = megabytes / (await fastest(5, async () => readOnce(path, layout, scans)));
+    const papaparse = megabytes / (await fastest(3, () => papaparseOnce(path, scans)));
+    const csvParse = megabytes / (await fastest(1, () => csvParseOnce(path, scans)));
     const floor = Math.max(csvParse, papaparse);
     return [
       {
@@ -36,13 +38,13 @@ export async function benchRead100Mb(): Promise<BenchResult[]> {
         ratio: value / floor,
         goal: `≥ ${GOAL_MB_PER_S} MB/s, and faster than csv-parse and papaparse`,
         holds: value >= GOAL_MB_PER_S && value > floor,
-        note: `csv-parse ${csvParse.toFixed(0)}, papaparse ${papaparse.toFixed(0)} MB/s; ${heldBeyondReadings(path, scans).toFixed(0)} MB held beyond the readings`,
+        note: `csv-parse ${csvParse.toFixed(0)}, papaparse ${papaparse.toFixed(0)} MB/s; ${heldBeyondReadings(path, layout, scans).toFixed(0)} MB held beyond the readings`,
       },
     ];
   });
 }
 
-function layout(): Layout {
+function layoutOf({ channels }: Readings): Layout {
   return parseLayout({
     format: 'dwellbook-layout/1',
     name: 'bench',
@@ -50,31 +52,25 @@ function layout(): Layout {
     decimal: ',',
     header: 1,
     time: { columns: ['Date', 'Time'], pattern: 'dd/MM/yyyy HH:mm:ss', zone: 'Europe/Lisbon' },
-    channels: Array.from({ length: SENSORS }, (_, i) => ({
-      column: `T${i + 1}`,
-      name: `TC${i + 1}`,
-      role: 'part',
-      unit: '°C',
-    })),
+    channels: channels.map(({ channel }) => channel),
     missing: ['OPEN', '----', '9999'],
   });
 }
 
 /** Writes the log, a scan a second; returns how many scans. */
-function writeLog(path: string): number {
+function writeLog(path: string, { channels }: Readings): number {
   const file = openSync(path, 'w');
-  let text = `Date;Time;${layout()
-    .channels.map(({ column }) => column)
-    .join(';')}\r\n`;
+  let text = `Date;Time;${channels.map(({ channel }) => channel.column).join(';')}\r\n`;
   let bytes = 0;
   let scans = 0;
-  const cells = Array.from({ length: 2000 }, (_, tenths) => `;${(tenths / 10).toFixed(1).replace('.', ',')}`);
-  while (bytes + text.length < BYTES) {
+  for (; bytes + text.length < BYTES; scans++) {
     const [date = '', time = ''] = new Date(Date.UTC(2026, 2, 3) + scans * 1000).toISOString().split('T');
     text += `${date.slice(8)}/${date.slice(5, 7)}/${date.slice(0, 4)};${time.slice(0, 8)}`;
-    for (let sensor = 0; sensor < SENSORS; sensor++) text += cells[200 + ((scans * 7 + sensor * 131) % 1790)];
+    for (const { channel, value } of channels) {
+      const decimals = channel.unit === '°C' ? 1 : 3;
+      text += `;${value[scans % value.length]!.toFixed(decimals).replace('.', ',')}`;
+    }
     text += '\r\n';
-    scans++;
     if (text.length > 1e6) {
       bytes += writeSync(file, text);
       text = '';
@@ -85,8 +81,8 @@ function writeLog(path: string): number {
   return scans;
 }
 
-function readOnce(path: string, scans: number): void {
-  const { readings } = readLog([{ name: 'long.csv', chunks: fileChunks(path), bytes: fileBytes(path) }], layout());
+function readOnce(path: string, layout: Layout, scans: number): void {
+  const { readings } = readLog([{ name: 'long.csv', chunks: fileChunks(path), bytes: fileBytes(path) }], layout);
   expectScans(readings.timeMs.length, scans);
 }
 
@@ -115,7 +111,7 @@ function papaparseOnce(path: string, scans: number): Promise<void> {
 }
 
 /** MB of memory that reading took at its most, less the readings themselves. */
-function heldBeyondReadings(path: string, scans: number): number {
+function heldBeyondReadings(path: string, layout: Layout, scans: number): number {
   globalThis.gc?.();
   const before = held();
   let most = 0;
@@ -125,8 +121,8 @@ function heldBeyondReadings(path: string, scans: number): number {
       most = Math.max(most, held() - before);
     }
   }
-  readLog([{ name: 'long.csv', chunks: watched(), bytes: fileBytes(path) }], layout());
-  return (Math.max(most, held() - before) - scans * (SENSORS + 1) * 8) / 1e6;
+  readLog([{ name: 'long.csv', chunks: watched(), bytes: fileBytes(path) }], layout);
+  return (Math.max(most, held() - before) - scans * (layout.channels.length + 1) * 8) / 1e6;
 }
 
 function held(): number {
@@ -138,14 +134,13 @@ function expectScans(read: number, scans: number): void {
   if (read !== scans) throw new Error(`${read} of ${scans} scans were read`);
 }
 
-function timed(work: () => void): number {
-  const startMs = performance.now();
-  work();
-  return (performance.now() - startMs) / 1000;
-}
-
-async function timedAsync(work: () => Promise<void>): Promise<number> {
-  const startMs = performance.now();
-  await work();
-  return (performance.now() - startMs) / 1000;
+/** Seconds of the fastest of some turns: one after the other, so that none cleans up after another. */
+async function fastest(turns: number, work: () => Promise<void>): Promise<number> {
+  let least = Number.POSITIVE_INFINITY;
+  for (let turn = 0; turn < turns; turn++) {
+    const startMs = performance.now();
+    await work();
+    least = Math.min(least, performance.now() - startMs);
+  }
+  return least / 1000;
 }
