@@ -20,7 +20,7 @@ export async function asLogFile(name: string, chunks: Iterable<Uint8Array>, byte
 }
 
 function firstBytes(chunks: Iterable<Uint8Array>): Uint8Array {
-  for (const chunk of chunks) if (chunk.length > 0) return chunk.subarray(0, 8);
+  for (const chunk of chunks) if (chunk.length > 0) return chunk.slice(0, 8);
   return new Uint8Array(0);
 }
 
@@ -35,7 +35,7 @@ function allBytes(name: string, chunks: Iterable<Uint8Array>): Uint8Array {
         mostBytes: MOST_WORKBOOK_BYTES,
       });
     }
-    parts.push(chunk);
+    parts.push(Uint8Array.from(chunk)); // whoever gives the pieces may use their memory again
   }
   return Buffer.concat(parts, length);
 }

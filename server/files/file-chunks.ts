@@ -1,15 +1,19 @@
 import { closeSync, openSync, readSync, statSync } from 'node:fs';
 import { DomainError } from '../../models/errors.ts';
 
-const CHUNK_BYTES = 1 << 18;
+const CHUNK_BYTES = 1 << 16;
 
-/** A file's bytes from its start, read as they are asked for; throws `file-unreadable`. */
-export function* fileChunks(path: string): Generator<Uint8Array, void> {
+/**
+ * A file's bytes from its start, read as they are asked for; throws `file-unreadable`.
+ *
+ * @param shared  Read into again and again where given, so that a piece is good only until the next is asked for.
+ */
+export function* fileChunks(path: string, shared?: Uint8Array): Generator<Uint8Array, void> {
   const file = orUnreadable(path, () => openSync(path, 'r'));
   try {
     for (;;) {
-      const chunk = new Uint8Array(CHUNK_BYTES);
-      const length = orUnreadable(path, () => readSync(file, chunk, 0, CHUNK_BYTES, null));
+      const chunk = shared ?? Buffer.allocUnsafeSlow(CHUNK_BYTES);
+      const length = orUnreadable(path, () => readSync(file, chunk, 0, chunk.length, null));
       if (length === 0) return;
       yield chunk.subarray(0, length);
     }

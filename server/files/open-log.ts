@@ -4,6 +4,8 @@ import type { LogFile } from '../../models/log/log-file.ts';
 import { asLogFile } from './as-log-file.ts';
 import { fileBytes, fileChunks } from './file-chunks.ts';
 
+const CHUNK_BYTES = 1 << 18;
+
 /** A file on the disk as the log reader takes it, and the hash of what was read. */
 export interface OpenedLog extends LogFile {
   /** SHA-256 in hex of the bytes as they came. To be asked once the log was read to its end. */
@@ -16,7 +18,7 @@ export async function openLog(path: string): Promise<OpenedLog> {
   const hashed: Iterable<Uint8Array> = {
     *[Symbol.iterator]() {
       const sum = createHash('sha256');
-      for (const chunk of fileChunks(path)) {
+      for (const chunk of fileChunks(path, new Uint8Array(CHUNK_BYTES))) {
         sum.update(chunk);
         yield chunk;
       }
