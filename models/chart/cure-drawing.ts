@@ -6,13 +6,17 @@ import { decimate } from './decimate.ts';
 import { labelOfLine } from './line-roles.ts';
 import type { DrawnLine } from './lines.ts';
 import { type Conversion, converted, drawn } from './shown-unit.ts';
-import { hoursAt, type TimeScale } from './time-scale.ts';
+import { hoursAt, lineHours, type TimeScale } from './time-scale.ts';
 
 interface CureLine {
   readonly strip: Extract<Strip, 'cure' | 'tg'>;
   readonly figures: Float64Array;
   readonly conversion: Conversion;
 }
+
+/** A course of cure never falls and has no spikes: so many times fewer points draw it as well as a temperature. */
+const FEWER_POINTS = 4;
+const LEAST_POINTS = 20;
 
 /** Estimated degree of cure and Tg along each channel. */
 export function cureLines(
@@ -22,10 +26,11 @@ export function cureLines(
   scale: TimeScale,
   options: { readonly points: number; readonly longestGapMs: number },
 ): DrawnLine[] {
+  const points = Math.max(LEAST_POINTS, Math.floor(options.points / FEWER_POINTS));
   return courses.flatMap((course) =>
     linesOf(course, tgConversion).map(({ strip, figures, conversion }): DrawnLine => {
       const { fromMs, untilMs } = scale;
-      const kept = decimate(course.timeMs, figures, { ...options, fromMs, untilMs });
+      const kept = decimate(course.timeMs, figures, { ...options, points, fromMs, untilMs });
       const role = roleOf(course.channel);
       return {
         line: {
@@ -35,7 +40,7 @@ export function cureLines(
           state: 'working',
           excludedFromH: null,
           label: labelOfLine(course.channel, role),
-          hours: Array.from(kept.timeMs, (ms) => hoursAt(scale, ms)),
+          hours: lineHours(scale, kept.timeMs),
           value: Array.from(kept.value, (value) => (Number.isNaN(value) ? null : drawn(converted(value, conversion)))),
         },
         gaps: [],

@@ -4,7 +4,7 @@ import { decimate } from './decimate.ts';
 import type { DrawnChannel } from './drawn-channel.ts';
 import { labelOfLine } from './line-roles.ts';
 import { drawn } from './shown-unit.ts';
-import { hoursAt, hoursOf, type TimeScale } from './time-scale.ts';
+import { hoursAt, hoursOf, lineHours, type TimeScale } from './time-scale.ts';
 
 /** A line before its label has found its place, and the stretches its channel was silent. */
 export interface DrawnLine {
@@ -32,7 +32,7 @@ export function lineOf(
       state: state?.state ?? 'working',
       excludedFromH: hoursOf(scale, state?.exclusion?.from ?? null),
       label: labelOfLine(layout.name, role),
-      hours: Array.from(kept.timeMs, (ms) => hoursAt(scale, ms)),
+      hours: lineHours(scale, kept.timeMs),
       value: Array.from(kept.value, (figure) => (Number.isNaN(figure) ? null : drawn(shown(figure)))),
     },
     gaps: kept.gaps,
