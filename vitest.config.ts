@@ -3,7 +3,6 @@ import { defineConfig } from 'vitest/config';
 export default defineConfig({
   test: {
     include: ['test/**/*.test.ts'],
-    exclude: ['test/slow/**'],
     testTimeout: 60_000,
     hookTimeout: 60_000,
   },
