@@ -30,11 +30,18 @@ export function dwellUpperLimit(j: Judgement, dwells: Dwells, index: number): Fo
   const hasEnded = j.sensors.every((s, k) => isDone(j, s, sure, k));
   const mayBeOver = (shift: Shift) => {
     const { course } = dwells.at(index, 'most', shift);
-    return j.sensors.some((s, k) => overshoots(j, s, course, k, forgive) || mayOvershoot(j, s, course, k, forgive));
+    return j.sensors.some((s, k) => {
+      const inside = insideOf(j, s, course, k);
+      return inside !== null && (overshoots(inside, s, shift, forgive) || mayOvershoot(j, inside, s, forgive));
+    });
   };
   const outcome = guarded(dwells.shifts.length > 1, (shift) => {
     const { course } = dwells.at(index, 'least', shift);
-    if (j.sensors.some((s, k) => overshoots(j, s, course, k, forgive))) return 'not-met';
+    const isOver = j.sensors.some((s, k) => {
+      const inside = insideOf(j, s, course, k);
+      return inside !== null && overshoots(inside, s, shift, forgive);
+    });
+    if (isOver) return 'not-met';
     if (mayBeOver(shift)) return 'cannot-tell';
     return hasEnded ? 'met' : unfinished(j);
   });
@@ -59,7 +66,7 @@ export function dwellUpperLimit(j: Judgement, dwells: Dwells, index: number): Fo
       fromMs: highest.ms,
       untilMs: highest.ms,
       isForgiven,
-      because: `${upperSentence(outcome, highest.sensor.name, observed, upper, unit, isForgiven)}${whatIsOpen(j, outcome, hasEnded, mayBeOver(0))}.`,
+      because: `${upperSentence(outcome, highest.sensor.name, observed, upper, unit, isForgiven)}${whatIsOpen(j, outcome, hasEnded, () => mayBeOver(0))}.`,
     },
   ];
 }
@@ -84,6 +91,17 @@ function isDone(j: Judgement, s: JudgedSensor, course: DwellCourse, k: number): 
   return course.entered[k] === null ? !j.isOpen || showsCooling(j) : course.left[k]?.isFinal === true;
 }
 
+interface Inside {
+  readonly stretch: Interval;
+  readonly upperC: number;
+}
+
+/** Where a sensor was inside a dwell, and its own upper limit there; null where it never entered. */
+function insideOf(j: Judgement, s: JudgedSensor, course: DwellCourse, k: number): Inside | null {
+  const stretch = stretchInside(j, s, course, k);
+  return stretch === null ? null : { stretch, upperC: bandC(j, course.stage, s, course.shift).upperC };
+}
+
 /** From its entering to its leaving; on the way to a hotter dwell, to when it was last at or below `upper` − 1 °C. */
 function stretchInside(j: Judgement, s: JudgedSensor, course: DwellCourse, k: number): Interval | null {
   const from = course.entered[k] ?? null;
@@ -94,43 +112,32 @@ function stretchInside(j: Judgement, s: JudgedSensor, course: DwellCourse, k: nu
   return { from, until: lastBackBelow(s, bandC(j, course.stage, s, course.shift), from, until) };
 }
 
-function overshoots(
-  j: Judgement,
-  s: JudgedSensor,
-  course: DwellCourse,
-  k: number,
-  forgive: ForgivenessC | null,
-): boolean {
-  const stretch = stretchInside(j, s, course, k);
-  if (stretch === null) return false;
-  const { upperC } = bandC(j, course.stage, s, course.shift);
+/** Whether readings of a sensor inside a dwell lie above its upper limit by more than is forgiven. */
+function overshoots({ stretch, upperC }: Inside, s: JudgedSensor, shift: Shift, forgive: ForgivenessC | null): boolean {
   const isForgiven = forgiver(forgive);
-  const side = course.shift === -1 && s.uncertaintyC > 0 ? '>=' : '>';
+  const side = shift === -1 && s.uncertaintyC > 0 ? '>=' : '>';
   for (const over of s.track.crossings(upperC, side).intervals()) {
     const from = Math.max(over.from, stretch.from);
     const until = Math.min(over.until, stretch.until);
     const highest = from > until ? -1 : s.track.highestBetween(from, until);
-    if (highest < 0 || !isOutside(s.track.reading(highest), upperC, course.shift)) continue;
+    if (highest < 0 || !isOutside(s.track.reading(highest), upperC, shift)) continue;
     if (!isForgiven(until - from, round9(s.track.reading(highest) - upperC))) return true;
   }
   return false;
 }
 
 /** Above the limit; with the limit moved outwards by U, outside by U is outside. */
-function isOutside(reading: number, limit: number, shift: -1 | 0 | 1): boolean {
+function isOutside(reading: number, limit: number, shift: Shift): boolean {
   return shift === -1 ? reading >= limit : reading > limit;
 }
 
+/** Whether a gap inside the dwell leaves room for more than is forgiven. */
 function mayOvershoot(
   j: Judgement,
+  { stretch, upperC }: Inside,
   s: JudgedSensor,
-  course: DwellCourse,
-  k: number,
   forgive: ForgivenessC | null,
 ): boolean {
-  const stretch = stretchInside(j, s, course, k);
-  if (stretch === null) return false;
-  const { upperC } = bandC(j, course.stage, s, course.shift);
   return openingGaps(j, s.gaps).some((gap) => {
     if (gap.from >= stretch.until || gap.until <= stretch.from) return false;
     const hottest = furthest(gap, 1, j.changesAtMost, stretch);
@@ -192,7 +199,7 @@ export function dwellLowerLimit(j: Judgement, dwells: Dwells, index: number): Fo
   ];
 }
 
-function dipsOutcome(j: Judgement, dwells: Dwells, index: number, shift: -1 | 0 | 1): Outcome {
+function dipsOutcome(j: Judgement, dwells: Dwells, index: number, shift: Shift): Outcome {
   const least = dwells.at(index, 'least', shift);
   const most = dwells.at(index, 'most', shift);
   if (least.time.dips.some(({ isForgiven, depthC }) => !isForgiven && depthC !== null)) return 'not-met';

@@ -45,7 +45,7 @@ export function ceilingLimit(j: Judgement): Found[] {
     },
   );
   const observed = temperatureFromCelsius(highest.readingC, unit);
-  const mayHide = j.sensors.some((s) => mayExceed(j, s, ceilingC));
+  const mayHide = () => j.sensors.some((s) => mayExceed(j, s, ceilingC));
   return [
     {
       ...known,
@@ -100,7 +100,7 @@ export function spreadLimit(j: Judgement, dwells: Dwells): Found[] {
     if (isDoubtful) return 'cannot-tell';
     return isComplete && someBelieved(j) ? 'met' : unfinished(j);
   });
-  const mayHide = atWidest.some((stretch) => mayPart(j, stretch, limitC));
+  const mayHide = () => atWidest.some((stretch) => mayPart(j, stretch, limitC));
   const observed = widest === null ? null : temperatureDifferenceFromCelsius(widest.spreadC, unit);
   const during = { heating: 'while heating', dwells: 'in the dwells', run: 'over the run' }[spread.during];
   return [

@@ -68,9 +68,7 @@ export function credited(gap: Gap, level: number, sign: 1 | -1, changesAtMost: C
   const after = gap.after === null ? Number.NEGATIVE_INFINITY : sign * (gap.after - level);
   if (before < 0 && after < 0) return null;
   const lasts = gap.until - gap.from;
-  const isBeyondReach =
-    gap.before !== null && gap.after !== null && Math.abs(gap.after - gap.before) > changesAtMost * lasts;
-  const bound = isBeyondReach ? Math.abs(gap.after! - gap.before!) / lasts : changesAtMost;
+  const bound = isBeyondReach(gap, changesAtMost) ? Math.abs(gap.after! - gap.before!) / lasts : changesAtMost;
   const from = before >= 0 || gap.before === null ? gap.from : gap.from + -before / bound;
   const until = after >= 0 || gap.after === null ? gap.until : gap.until - -after / bound;
   return from <= until ? { from, until } : null;
@@ -85,10 +83,7 @@ export function furthest(gap: Gap, sign: 1 | -1, changesAtMost: ChangeBound, str
   const until = Math.min(gap.until, stretch.until);
   if (from > until) return null;
   const lasts = gap.until - gap.from;
-  const rate =
-    gap.before !== null && gap.after !== null && Math.abs(gap.after - gap.before) > changesAtMost * lasts
-      ? null
-      : changesAtMost;
+  const rate = isBeyondReach(gap, changesAtMost) ? null : changesAtMost;
   const at = (instantMs: number): number => {
     if (rate === null) return gap.before! + ((gap.after! - gap.before!) * (instantMs - gap.from)) / lasts;
     const onwards = gap.before === null ? Number.POSITIVE_INFINITY : sign * gap.before + rate * (instantMs - gap.from);
@@ -101,4 +96,9 @@ export function furthest(gap: Gap, sign: 1 | -1, changesAtMost: ChangeBound, str
     if (peak > from && peak < until) instants.push(peak);
   }
   return sign * Math.max(...instants.map((instant) => sign * at(instant)));
+}
+
+/** Whether the ends of a gap are further apart than the bound on change allows. */
+function isBeyondReach({ from, until, before, after }: Gap, changesAtMost: ChangeBound): boolean {
+  return before !== null && after !== null && Math.abs(after - before) > changesAtMost * (until - from);
 }

@@ -3,7 +3,7 @@ import type { Track } from './track.ts';
 
 /** What one sensor looked like beside its neighbours (the channels of the same role), so far. Temperatures in °C. */
 export interface Comparison {
-  readonly track: Track;
+  readonly channel: RunChannel;
   start: number | null;
   neighboursAtStart: number;
   /** Equal readings in a row, and how far the neighbours' median moved meanwhile. */
@@ -57,7 +57,7 @@ export class NeighbourWatch {
   #isHeating = false;
 
   constructor(channels: readonly RunChannel[], air: readonly RunChannel[]) {
-    this.comparisons = channels.map(({ track }) => newComparison(track));
+    this.comparisons = channels.map(newComparison);
     this.#air = air.map(({ track }) => track);
     this.#taken = new Int32Array(channels.length);
     this.#airTaken = new Int32Array(air.length);
@@ -83,14 +83,15 @@ export class NeighbourWatch {
     let present = 0;
     for (let i = 0; i < comparisons.length; i++) {
       const comparison = comparisons[i]!;
-      const { length } = comparison.track;
+      const { track } = comparison.channel;
+      const { length } = track;
       if (length === this.#taken[i]) {
         this.#reading[i] = Number.POSITIVE_INFINITY;
         comparison.equalReadings = 0;
         continue;
       }
       this.#taken[i] = length;
-      const reading = comparison.track.reading(length - 1);
+      const reading = track.reading(length - 1);
       this.#reading[i] = reading;
       comparison.start ??= reading;
       if (reading >= comparison.start + HEAT_ON_RISE) this.#isHeating = true;
@@ -197,9 +198,9 @@ function watchForEqualReadings(c: Comparison, timeMs: number, reading: number, m
   }
 }
 
-function newComparison(track: Track): Comparison {
+function newComparison(channel: RunChannel): Comparison {
   return {
-    track,
+    channel,
     start: null,
     neighboursAtStart: 0,
     equalSinceMs: 0,

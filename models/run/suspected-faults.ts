@@ -25,7 +25,7 @@ export function suspectedFaults(digest: RunDigest, longestGapMs: number): Map<Ru
   const byChannel = new Map<RunChannel, SuspectedFault[]>();
   for (const watch of digest.watches) {
     for (const comparison of watch.comparisons) {
-      const channel = digest.channels.find(({ track }) => track === comparison.track)!;
+      const { channel } = comparison;
       const open = openCircuit(digest, channel, longestGapMs);
       const faults = [...(open === null ? [] : [open]), ...comparedFaults(comparison, digest.log.from)];
       faults.sort((a, b) => a.fromMs - b.fromMs);

@@ -5,8 +5,7 @@ import { evaluateLog } from '../../models/evaluation/judge.ts';
 import { parseLayout } from '../../models/log/parse-layout.ts';
 import { readLog } from '../../models/log/read-log.ts';
 import { parseBarometer, parseExclusion, parseLoad } from '../../models/run/parse-load.ts';
-import { fileAtPath } from '../actions/file-at-path.ts';
-import { logFileOf } from '../actions/log-file-of.ts';
+import { openLog } from '../files/open-log.ts';
 import { oneHash, sha256OfDocument } from '../store/canonical.ts';
 import { evaluationTable } from './evaluation-table.ts';
 import { readDocumentFile } from './read-document.ts';
@@ -62,8 +61,8 @@ export const checkCommand: Command = {
     const exclusions = (values.exclude ?? []).map((words) => asUsage('check', 'exclude', () => parseExclusion(words)));
     const barometer = values.barometer ?? null;
     if (barometer !== null) asUsage('check', 'barometer', () => parseBarometer(barometer));
-    const files = logs.map((path) => fileAtPath(path));
-    const log = readLog(await Promise.all(files.map(logFileOf)), layout);
+    const files = await Promise.all(logs.map((path) => openLog(path, path)));
+    const log = readLog(files, layout);
     const judged = evaluateLog(log, {
       cycle,
       load,
@@ -74,7 +73,7 @@ export const checkCommand: Command = {
     });
     const evaluation: Evaluation = {
       ...judged,
-      log: { ...judged.log, sha256: oneHash(files.map(({ sha256 }) => sha256)) },
+      log: { ...judged.log, sha256: oneHash(files.map((file) => file.sha256())) },
       cycle: { ...judged.cycle, sha256: sha256OfDocument(cycle) },
     };
     process.stdout.write(values.json ? `${JSON.stringify(evaluation, null, 1)}\n` : evaluationTable(evaluation, cycle));

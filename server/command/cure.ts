@@ -1,8 +1,7 @@
 import { parseResin } from '../../models/cure/parse-resin.ts';
 import { parseLayout } from '../../models/log/parse-layout.ts';
 import { readLog } from '../../models/log/read-log.ts';
-import { fileAtPath } from '../actions/file-at-path.ts';
-import { logFileOf } from '../actions/log-file-of.ts';
+import { openLog } from '../files/open-log.ts';
 import { type ChannelCure, cureOfChannels } from './cure-of-channels.ts';
 import { readDocumentFile } from './read-document.ts';
 import { type Command, EXIT, needed, readWords, wholeNumber, wrongUsage } from './usage.ts';
@@ -39,7 +38,7 @@ export const cureCommand: Command = {
       values.every === undefined ? null : wholeNumber('cure', 'every', values.every, { atLeast: 1, atMost: 86_400 });
     const layout = await readDocumentFile(needed('cure', 'layout', values.layout), parseLayout);
     const resin = await readDocumentFile(needed('cure', 'resin', values.resin), parseResin);
-    const files = await Promise.all(logs.map((path) => logFileOf(fileAtPath(path))));
+    const files = await Promise.all(logs.map((path) => openLog(path, path)));
     const channels = cureOfChannels(readLog(files, layout).readings, resin, everyS);
     const { code, source } = resin;
     const answer = { resin: { code, status: source.status, citation: source.citation }, channels };

@@ -32,7 +32,5 @@ export const cycleView = cycleLine.extend({
 export type CycleView = z.infer<typeof cycleView>;
 
 export const importCycleRequest = z.strictObject({ document: cycleDocument });
-export type ImportCycleRequest = z.infer<typeof importCycleRequest>;
 
 export const changeStatusRequest = z.strictObject({ reason });
-export type ChangeStatusRequest = z.infer<typeof changeStatusRequest>;

@@ -46,7 +46,6 @@ export const proposal = z.object({
   layout: layoutDocument,
   statements: z.array(proposalStatement),
 });
-export type Proposal = z.infer<typeof proposal>;
 
 export const importView = importLine.extend({
   /** The first lines of the file as text, line 1 first, cut at 300 characters. */
@@ -63,7 +62,6 @@ export type ImportView = z.infer<typeof importView>;
 export const uploadQuery = z.strictObject({ name, recorder: name.optional() });
 
 export const previewRequest = z.strictObject({ layout: layoutDocument });
-export type PreviewRequest = z.infer<typeof previewRequest>;
 
 const lines = z.tuple([z.number(), z.number()]).readonly();
 
@@ -107,4 +105,3 @@ export const recordedRun = z.object({ run: runNumber });
 export type RecordedRun = z.infer<typeof recordedRun>;
 
 export const discardImportRequest = z.strictObject({ reason });
-export type DiscardImportRequest = z.infer<typeof discardImportRequest>;

@@ -11,7 +11,6 @@ export const RESINS_PATH = '/api/resins';
 export const PARTS_PATH = '/api/parts';
 export const AUDIT_PATH = '/api/audit';
 export const AUDIT_VERIFY_PATH = '/api/audit/verify';
-export const OPENAPI_PATH = '/api/openapi.json';
 
 /** A query as it is put into an address; what is null or absent is left out. */
 export type Query = Readonly<Record<string, string | number | boolean | null | undefined>>;
@@ -56,9 +55,6 @@ export function runEvaluationsPath(run: number): string {
   return `${runPath(run)}/evaluations`;
 }
 
-export function runEvaluationPath(run: number, evaluation: number): string {
-  return `${runPath(run)}/evaluations/${evaluation}`;
-}
 
 export function runNotesPath(run: number): string {
   return `${runPath(run)}/notes`;
@@ -96,10 +92,6 @@ export function importDiscardPath(id: number): string {
 
 export function recorderPath(name: string): string {
   return `${RECORDERS_PATH}/${encodeURIComponent(name)}`;
-}
-
-export function recorderLayoutsPath(name: string): string {
-  return `${recorderPath(name)}/layouts`;
 }
 
 export function cyclePath(code: string, issue: string): string {

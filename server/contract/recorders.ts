@@ -20,7 +20,5 @@ export const recorders = z.object({ recorders: z.array(recorder) });
 export type Recorders = z.infer<typeof recorders>;
 
 export const addRecorderRequest = z.strictObject({ name, vessel: name.nullish(), layout: layoutDocument.optional() });
-export type AddRecorderRequest = z.infer<typeof addRecorderRequest>;
 
 export const keepLayoutRequest = z.strictObject({ layout: layoutDocument });
-export type KeepLayoutRequest = z.infer<typeof keepLayoutRequest>;

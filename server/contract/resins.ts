@@ -22,4 +22,3 @@ export const resinView = resinLine.extend({ document: resinDocument });
 export type ResinView = z.infer<typeof resinView>;
 
 export const importResinRequest = z.strictObject({ document: resinDocument });
-export type ImportResinRequest = z.infer<typeof importResinRequest>;

@@ -11,7 +11,6 @@ export const verdict = z.enum(['conforms', 'does-not-conform', 'cannot-tell', 'p
 
 /** Who did something, and when. */
 export const deed = z.object({ at: instant, by: z.string() });
-export type Deed = z.infer<typeof deed>;
 
 /** Numbers arrive as text in an address. */
 export const countInQuery = (most: number, otherwise: number) =>

@@ -1,6 +1,8 @@
 import { DomainError } from '../../models/errors.ts';
 import type { LogFile } from '../../models/log/log-file.ts';
-import { delimitedFromXlsx, isOldWorkbook, isZip, MOST_WORKBOOK_BYTES } from './read-xlsx.ts';
+
+/** Largest workbook taken, packed: a day of 24 channels at 1 Hz is some 15 MB. */
+const MOST_WORKBOOK_BYTES = 64 * 2 ** 20;
 
 /**
  * A file as the log reader takes it: a text as it is, a workbook (.xlsx) as comma-delimited UTF-8 with decimal point.
@@ -16,7 +18,19 @@ export async function asLogFile(name: string, chunks: Iterable<Uint8Array>, byte
     });
   }
   if (!isZip(head)) return bytes === undefined ? { name, chunks } : { name, chunks, bytes };
+  // Loaded for a workbook alone: the library that reads them takes longer to load than a text to read.
+  const { delimitedFromXlsx } = await import('./read-xlsx.ts');
   return { name, chunks: [await delimitedFromXlsx(allBytes(name, chunks), name)] };
+}
+
+/** What an .xlsx workbook begins with, as every zip archive does. */
+function isZip(head: Uint8Array): boolean {
+  return head[0] === 0x50 && head[1] === 0x4b && head[2] === 0x03 && head[3] === 0x04;
+}
+
+/** The compound files that .xls workbooks are. */
+function isOldWorkbook(head: Uint8Array): boolean {
+  return head[0] === 0xd0 && head[1] === 0xcf && head[2] === 0x11 && head[3] === 0xe0;
 }
 
 function firstBytes(chunks: Iterable<Uint8Array>): Uint8Array {

@@ -12,8 +12,8 @@ export interface OpenedLog extends LogFile {
   sha256(): string;
 }
 
-/** Opens a recorder's file, text or workbook; throws `file-unreadable`. */
-export async function openLog(path: string): Promise<OpenedLog> {
+/** Opens a recorder's file, text or workbook, which refusals then call `name`; throws `file-unreadable`. */
+export async function openLog(path: string, name = basename(path)): Promise<OpenedLog> {
   let hash: string | null = null;
   const hashed: Iterable<Uint8Array> = {
     *[Symbol.iterator]() {
@@ -25,7 +25,7 @@ export async function openLog(path: string): Promise<OpenedLog> {
       hash = sum.digest('hex');
     },
   };
-  const file = await asLogFile(basename(path), hashed, fileBytes(path));
+  const file = await asLogFile(name, hashed, fileBytes(path));
   return {
     ...file,
     sha256() {

@@ -2,18 +2,8 @@ import { type CellValue, InvalidInputError, InvalidSpreadsheetError, readSheet }
 import { DomainError } from '../../models/errors.ts';
 import { unpackedBytes } from './unpacked-bytes.ts';
 
-/** Largest workbook taken, packed and unpacked: a day of 24 channels at 1 Hz is some 15 MB packed. */
-export const MOST_WORKBOOK_BYTES = 64 * 2 ** 20;
+/** Largest workbook taken, unpacked. */
 const MOST_UNPACKED_BYTES = 2 ** 30;
-
-export function isZip(head: Uint8Array): boolean {
-  return head[0] === 0x50 && head[1] === 0x4b && head[2] === 0x03 && head[3] === 0x04;
-}
-
-/** The compound files that .xls workbooks are. */
-export function isOldWorkbook(head: Uint8Array): boolean {
-  return head[0] === 0xd0 && head[1] === 0xcf && head[2] === 0x11 && head[3] === 0xe0;
-}
 
 /**
  * The first sheet of a workbook as comma-delimited UTF-8 with decimal point: row n of the sheet is line n.

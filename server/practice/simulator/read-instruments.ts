@@ -1,4 +1,5 @@
 import type { ChannelLayout } from '../../../models/log/layout.ts';
+import { correctionAt } from '../../../models/run/channel.ts';
 import { isTemperatureUnit, parsePressureUnit, temperatureFromCelsius } from '../../../models/units.ts';
 import type { History } from './history.ts';
 import { beginRandom, seedFrom } from './random.ts';
@@ -105,18 +106,7 @@ function thermocouple(
     if (Number.isNaN(temperatureC)) return NaN;
     const reading = temperatureFromCelsius(temperatureC, unit);
     if (isFrozen(faults, channel.name, minute) && !Number.isNaN(last)) return last;
-    last = rounded(reading - correctionAt(corrections, reading), recorder.temperature);
+    last = rounded(reading - correctionAt(reading, corrections), recorder.temperature);
     return last;
   };
-}
-
-/** Straight between the points, held beyond the ends. */
-export function correctionAt(points: readonly (readonly [number, number])[], reading: number): number {
-  const above = points.findIndex(([at]) => at >= reading);
-  if (points.length === 0) return 0;
-  if (above < 0) return points.at(-1)![1];
-  if (above === 0) return points[0]![1];
-  const [lowAt, low] = points[above - 1]!;
-  const [highAt, high] = points[above]!;
-  return low + ((high - low) * (reading - lowAt)) / (highAt - lowAt);
 }

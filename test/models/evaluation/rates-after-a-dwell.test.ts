@@ -1,22 +1,8 @@
 import { describe, expect, it } from 'vitest';
-import type { CoolStage, HeatStage, RateLimit } from '../../../models/cycle/cycle.ts';
+import { CHORD, cool, heat, LIMITS } from '../../support/made-ramps.ts';
 import { cycleOf, dwell, findingOf, minutesTo, QUICK, type Vertex } from '../../support/made-run.ts';
 
 // The rules are those of the cycle and verdict document (§2, Rates).
-
-const LIMITS = { atLeast: 0.5, atMost: 5 };
-const CHORD = { average: 'chord' } as const;
-
-const heat = (rate: Partial<RateLimit> & Pick<RateLimit, 'average'>): HeatStage => ({
-  name: 'heat',
-  kind: 'heat',
-  rate: { ...LIMITS, over: [50, 100], of: 'every', ...rate },
-});
-const cool = (rate: Partial<RateLimit>): CoolStage => ({
-  name: 'cool',
-  kind: 'cool',
-  rate: { ...LIMITS, over: [170, 70], average: 'chord', of: 'every', ...rate },
-});
 
 describe('a range after a dwell', () => {
   // 30 °C at 5 min and 130 °C at 55 min (2 °C/min) are before dwell 1 is entered for the second time; the range of

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import type { CoolStage, HeatStage, RateLimit } from '../../../models/cycle/cycle.ts';
+import { CHORD, cool, heat } from '../../support/made-ramps.ts';
 import {
   air,
   cycleOf,
@@ -16,20 +16,7 @@ import {
 
 // The rules are those of the cycle and verdict document (§2, Rates).
 
-const LIMITS = { atLeast: 0.5, atMost: 5 };
 const WINDOW = { average: 'window', window: 10 } as const;
-const CHORD = { average: 'chord' } as const;
-
-const heat = (rate: Partial<RateLimit> & Pick<RateLimit, 'average'>): HeatStage => ({
-  name: 'heat',
-  kind: 'heat',
-  rate: { ...LIMITS, over: [50, 100], of: 'every', ...rate },
-});
-const cool = (rate: Partial<RateLimit>): CoolStage => ({
-  name: 'cool',
-  kind: 'cool',
-  rate: { ...LIMITS, over: [170, 70], average: 'chord', of: 'every', ...rate },
-});
 
 function heating(channels: MadeRun['channels'], rate: Parameters<typeof heat>[0], more: Partial<MadeRun> = {}) {
   const run = { channels, cycle: cycleOf([heat(rate), dwell()]), ...more };

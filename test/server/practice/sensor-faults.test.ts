@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
+import { correctionAt } from '../../../models/run/channel.ts';
 import { beginRandom } from '../../../server/practice/simulator/random.ts';
-import { correctionAt } from '../../../server/practice/simulator/read-instruments.ts';
 import { indicationOf, type SensorFault } from '../../../server/practice/simulator/sensor-faults.ts';
 
 function indicated(fault: SensorFault, minute: number, junctionC: number, airC = 0): number {
@@ -53,13 +53,13 @@ describe('correctionAt', () => {
       [100, -0.4],
       [180, -0.8],
     ] as const;
-    expect([20, 100, 140, 180, 300].map((reading) => correctionAt(points, reading))).toEqual([
+    expect([20, 100, 140, 180, 300].map((reading) => correctionAt(reading, points))).toEqual([
       -0.4,
       -0.4,
       expect.closeTo(-0.6, 12),
       -0.8,
       -0.8,
     ]);
-    expect(correctionAt([], 50)).toBe(0);
+    expect(correctionAt(50, [])).toBe(0);
   });
 });
