@@ -55,7 +55,6 @@ export function runEvaluationsPath(run: number): string {
   return `${runPath(run)}/evaluations`;
 }
 
-
 export function runNotesPath(run: number): string {
   return `${runPath(run)}/notes`;
 }
