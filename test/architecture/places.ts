@@ -71,14 +71,14 @@ export const PLACES: Readonly<Record<string, Place>> = {
   'server/contract/paths.ts': room([]),
   'server/store': room(['server/store', ...CONTRACT, ...MODELS], ['node:', 'better-sqlite3']),
   'server/files': room(['server/files', ...CONTRACT, ...MODELS], ['node:', 'read-excel-file']),
-  'server/report': room(['server/report', ...CONTRACT, ...MODELS], ['node:']),
+  'server/report': room(['server/report', ...CONTRACT, ...MODELS], ['node:', '@bwip-js/node']),
   'server/actions': room(
     ['server/actions', 'server/store', 'server/files', 'server/report', ...CONTRACT, ...MODELS],
     ['node:'],
   ),
   'server/live': room(
     ['server/live', 'server/actions', 'server/store', 'server/files', ...CONTRACT, ...MODELS],
-    ['node:', 'chokidar', 'pino'],
+    ['node:', 'chokidar', 'modbus-serial', 'mqtt', 'nodemailer'],
   ),
   'server/practice': room(
     ['server/practice', 'server/actions', 'server/store', 'server/files', ...CONTRACT, ...MODELS],
@@ -95,11 +95,11 @@ export const PLACES: Readonly<Record<string, Place>> = {
       ...CONTRACT,
       ...MODELS,
     ],
-    ['node:', 'express', 'compression', 'helmet', 'pino', 'zod'],
+    ['node:', 'express', 'compression', 'helmet', 'zod'],
   ),
   'server/app.ts': room(
     ['server/http', 'server/live', 'server/store', 'server/actions', ...CONTRACT, ...MODELS],
-    ['node:', 'express', 'compression', 'helmet', 'pino'],
+    ['node:', 'express', 'compression', 'helmet'],
   ),
   'server/command': room(
     [
@@ -115,7 +115,7 @@ export const PLACES: Readonly<Record<string, Place>> = {
       ...CONTRACT,
       ...MODELS,
     ],
-    ['node:', 'pino'],
+    ['node:'],
   ),
   'server/main.ts': room(['server/command', 'server/app.ts', 'models'], ['node:']),
 
