@@ -22,6 +22,28 @@ BEGIN SELECT RAISE(ABORT, 'the audit trail is never deleted from'); END;
 CREATE TRIGGER audit_is_never_updated BEFORE UPDATE ON audit
 BEGIN SELECT RAISE(ABORT, 'the audit trail is never updated'); END;
 
+CREATE TABLE coupons (
+  id       INTEGER PRIMARY KEY,
+  code     TEXT NOT NULL CHECK (code <> ''),
+  part_id  INTEGER NOT NULL REFERENCES parts (id),
+  -- The run it was cured in, where that is known already.
+  run_id   INTEGER REFERENCES runs (id),
+  position TEXT,
+  reason   TEXT,
+  at       TEXT NOT NULL,
+  by       TEXT NOT NULL CHECK (by <> '')
+) STRICT;
+
+CREATE INDEX coupons_by_code ON coupons (code, id);
+
+CREATE INDEX coupons_by_part ON coupons (part_id, id);
+
+CREATE TRIGGER coupons_are_never_deleted BEFORE DELETE ON coupons
+BEGIN SELECT RAISE(ABORT, 'the record of a coupon is never deleted'); END;
+
+CREATE TRIGGER coupons_are_never_updated BEFORE UPDATE ON coupons
+BEGIN SELECT RAISE(ABORT, 'the record of a coupon is never updated'); END;
+
 CREATE TABLE cycle_statuses (
   id       INTEGER PRIMARY KEY,
   cycle_id INTEGER NOT NULL REFERENCES cycles (id),
@@ -169,6 +191,23 @@ CREATE INDEX imports_waiting ON imports (state, id);
 CREATE TRIGGER imports_are_never_deleted BEFORE DELETE ON imports
 BEGIN SELECT RAISE(ABORT, 'an import is never deleted'); END;
 
+CREATE TABLE layup_debulks (
+  layup_id    INTEGER NOT NULL REFERENCES part_layups (id),
+  n           INTEGER NOT NULL CHECK (n >= 0),
+  began_at    TEXT,
+  minutes     REAL CHECK (minutes > 0),
+  vacuum      REAL,
+  vacuum_unit TEXT,
+  PRIMARY KEY (layup_id, n),
+  CHECK ((vacuum IS NULL) = (vacuum_unit IS NULL))
+) STRICT, WITHOUT ROWID;
+
+CREATE TRIGGER layup_debulks_are_never_deleted BEFORE DELETE ON layup_debulks
+BEGIN SELECT RAISE(ABORT, 'a lay-up is never deleted'); END;
+
+CREATE TRIGGER layup_debulks_are_never_updated BEFORE UPDATE ON layup_debulks
+BEGIN SELECT RAISE(ABORT, 'a lay-up is never updated'); END;
+
 CREATE TABLE load_parts (
   load_id  INTEGER NOT NULL REFERENCES loads (id),
   part_id  INTEGER NOT NULL REFERENCES parts (id),
@@ -214,6 +253,47 @@ CREATE TABLE migrations (
   at     TEXT NOT NULL
 ) STRICT;
 
+CREATE TABLE part_layups (
+  id                     INTEGER PRIMARY KEY,
+  part_id                INTEGER NOT NULL REFERENCES parts (id),
+  tool_id                INTEGER REFERENCES tools (id),
+  work_order             TEXT,
+  customer               TEXT,
+  -- Of the cured part.
+  thickness_mm           REAL CHECK (thickness_mm > 0),
+  plies                  INTEGER CHECK (plies > 0),
+  -- By volume.
+  fibre_fraction         REAL CHECK (fibre_fraction > 0 AND fibre_fraction < 1),
+  laminate               TEXT,
+  density_kg_m3          REAL CHECK (density_kg_m3 > 0),
+  specific_heat_j_kg_k   REAL CHECK (specific_heat_j_kg_k > 0),
+  -- Across the thickness.
+  conductivity_w_m_k     REAL CHECK (conductivity_w_m_k > 0),
+  resin_density_kg_m3    REAL CHECK (resin_density_kg_m3 > 0),
+  source                 TEXT,
+  began_at               TEXT,
+  ended_at               TEXT,
+  room_c                 REAL,
+  humidity_percent       REAL CHECK (humidity_percent BETWEEN 0 AND 100),
+  reason                 TEXT,
+  at                     TEXT NOT NULL,
+  by                     TEXT NOT NULL CHECK (by <> ''),
+  CHECK ((laminate IS NULL) = (density_kg_m3 IS NULL) AND (laminate IS NULL) = (specific_heat_j_kg_k IS NULL)
+    AND (laminate IS NULL) = (conductivity_w_m_k IS NULL) AND (laminate IS NULL) = (source IS NULL))
+) STRICT;
+
+CREATE INDEX part_layups_by_part ON part_layups (part_id, id);
+
+CREATE INDEX part_layups_by_tool ON part_layups (tool_id, id);
+
+CREATE INDEX part_layups_by_work_order ON part_layups (work_order);
+
+CREATE TRIGGER part_layups_are_never_deleted BEFORE DELETE ON part_layups
+BEGIN SELECT RAISE(ABORT, 'a lay-up is never deleted'); END;
+
+CREATE TRIGGER part_layups_are_never_updated BEFORE UPDATE ON part_layups
+BEGIN SELECT RAISE(ABORT, 'a lay-up is never updated'); END;
+
 CREATE TABLE part_particulars (
   id            INTEGER PRIMARY KEY,
   part_id       INTEGER NOT NULL REFERENCES parts (id),
@@ -225,7 +305,11 @@ CREATE TABLE part_particulars (
   by            TEXT NOT NULL CHECK (by <> '')
 ) STRICT;
 
+CREATE INDEX part_particulars_by_drawing ON part_particulars (drawing);
+
 CREATE INDEX part_particulars_by_part ON part_particulars (part_id, id);
+
+CREATE INDEX part_particulars_by_tool ON part_particulars (tool);
 
 CREATE TRIGGER part_particulars_are_never_deleted BEFORE DELETE ON part_particulars
 BEGIN SELECT RAISE(ABORT, 'particulars are never deleted'); END;
@@ -254,6 +338,27 @@ BEGIN SELECT RAISE(ABORT, 'a test result is never deleted'); END;
 
 CREATE TRIGGER part_results_are_never_updated BEFORE UPDATE ON part_results
 BEGIN SELECT RAISE(ABORT, 'a test result is never updated'); END;
+
+CREATE TABLE part_works (
+  id          INTEGER PRIMARY KEY,
+  part_id     INTEGER NOT NULL REFERENCES parts (id),
+  replaces_id INTEGER UNIQUE REFERENCES part_works (id),
+  work        TEXT NOT NULL CHECK (work IN ('trimming', 'drilling', 'other')),
+  text        TEXT NOT NULL CHECK (text <> ''),
+  done_at     TEXT NOT NULL,
+  reason      TEXT,
+  at          TEXT NOT NULL,
+  by          TEXT NOT NULL CHECK (by <> ''),
+  CHECK (replaces_id IS NULL OR reason IS NOT NULL)
+) STRICT;
+
+CREATE INDEX part_works_by_part ON part_works (part_id, id);
+
+CREATE TRIGGER part_works_are_never_deleted BEFORE DELETE ON part_works
+BEGIN SELECT RAISE(ABORT, 'work on a part is never deleted'); END;
+
+CREATE TRIGGER part_works_are_never_updated BEFORE UPDATE ON part_works
+BEGIN SELECT RAISE(ABORT, 'work on a part is never updated'); END;
 
 CREATE TABLE parts (
   id     INTEGER PRIMARY KEY,
@@ -415,6 +520,39 @@ BEGIN SELECT RAISE(ABORT, 'readings are never deleted'); END;
 
 CREATE TRIGGER source_files_are_never_updated BEFORE UPDATE ON source_files
 BEGIN SELECT RAISE(ABORT, 'readings are never updated'); END;
+
+CREATE TABLE tool_records (
+  id                    INTEGER PRIMARY KEY,
+  tool_id               INTEGER NOT NULL REFERENCES tools (id),
+  title                 TEXT,
+  drawing               TEXT,
+  -- Under the part.
+  thickness_mm          REAL CHECK (thickness_mm > 0),
+  material              TEXT,
+  density_kg_m3         REAL CHECK (density_kg_m3 > 0),
+  specific_heat_j_kg_k  REAL CHECK (specific_heat_j_kg_k > 0),
+  conductivity_w_m_k    REAL CHECK (conductivity_w_m_k > 0),
+  -- Where the figures of the material come from.
+  source                TEXT,
+  reason                TEXT,
+  at                    TEXT NOT NULL,
+  by                    TEXT NOT NULL CHECK (by <> ''),
+  CHECK ((material IS NULL) = (density_kg_m3 IS NULL) AND (material IS NULL) = (specific_heat_j_kg_k IS NULL)
+    AND (material IS NULL) = (conductivity_w_m_k IS NULL) AND (material IS NULL) = (source IS NULL))
+) STRICT;
+
+CREATE INDEX tool_records_by_tool ON tool_records (tool_id, id);
+
+CREATE TRIGGER tool_records_are_never_deleted BEFORE DELETE ON tool_records
+BEGIN SELECT RAISE(ABORT, 'the record of a tool is never deleted'); END;
+
+CREATE TRIGGER tool_records_are_never_updated BEFORE UPDATE ON tool_records
+BEGIN SELECT RAISE(ABORT, 'the record of a tool is never updated'); END;
+
+CREATE TABLE tools (
+  id   INTEGER PRIMARY KEY,
+  code TEXT NOT NULL UNIQUE CHECK (code <> '')
+) STRICT;
 
 CREATE TABLE vessels (
   id   INTEGER PRIMARY KEY,

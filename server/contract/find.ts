@@ -1,6 +1,17 @@
 import * as z from 'zod';
 
-export const FIND_KINDS = ['run', 'part', 'cycle', 'resin', 'work-order', 'vessel', 'recorder', 'file'] as const;
+export const FIND_KINDS = [
+  'run',
+  'part',
+  'tool',
+  'coupon',
+  'cycle',
+  'resin',
+  'work-order',
+  'vessel',
+  'recorder',
+  'file',
+] as const;
 
 export const findQuery = z.strictObject({ code: z.string().trim().min(1).max(200) });
 

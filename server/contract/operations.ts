@@ -14,6 +14,7 @@ import {
   recordRunRequest,
   uploadQuery,
 } from './imports.ts';
+import { addPartWorkRequest, layupQuery, layupView, setCouponRequest, setLayupRequest } from './layups.ts';
 import { now } from './now.ts';
 import { addPartResultRequest, parts, partsQuery, partView } from './parts.ts';
 import { addRecorderRequest, keepLayoutRequest, recorder, recorders } from './recorders.ts';
@@ -30,6 +31,8 @@ import {
   runView,
   setLoadRequest,
 } from './runs.ts';
+import { setToolRequest } from './tool-record.ts';
+import { tools, toolView } from './tools.ts';
 import { addVesselRequest, setWorkshopRequest, vessels, workshop } from './workshop.ts';
 
 /** A route with the shapes of what it takes and answers. */
@@ -82,6 +85,13 @@ export const OPERATIONS = {
   listParts: { ...ROUTES.listParts, query: partsQuery, answer: parts },
   readPart: { ...ROUTES.readPart, answer: partView },
   addPartResult: { ...ROUTES.addPartResult, body: addPartResultRequest, answer: partView, status: 201 },
+  readLayup: { ...ROUTES.readLayup, query: layupQuery, answer: layupView },
+  setLayup: { ...ROUTES.setLayup, body: setLayupRequest, answer: layupView, status: 201 },
+  addPartWork: { ...ROUTES.addPartWork, body: addPartWorkRequest, answer: partView, status: 201 },
+  setCoupon: { ...ROUTES.setCoupon, body: setCouponRequest, answer: partView, status: 201 },
+  listTools: { ...ROUTES.listTools, answer: tools },
+  readTool: { ...ROUTES.readTool, answer: toolView },
+  setTool: { ...ROUTES.setTool, body: setToolRequest, answer: toolView, status: 201 },
   find: { ...ROUTES.find, query: findQuery, answer: found },
   readAudit: { ...ROUTES.readAudit, query: auditQuery, answer: audit },
   verifyAudit: { ...ROUTES.verifyAudit, answer: auditVerification },

@@ -1,8 +1,10 @@
 import * as z from 'zod';
 import { auditLine } from './audit.ts';
 import { partEvaluationDocument } from './documents.ts';
+import { coupon, layup, partWork } from './layups.ts';
 import { runFile, runLine, sensorDecision } from './runs.ts';
 import { countInQuery, deed, instant, reason, verdict } from './scalars.ts';
+import { toolRecord } from './tool-record.ts';
 
 export const RESULT_OUTCOMES = ['passed', 'failed', 'noted'] as const;
 
@@ -65,6 +67,13 @@ export const partView = z.object({
   verdict: verdict.nullable(),
   runs: z.array(partRun),
   results: z.array(partResult),
+  /** How it was laid up; null where nobody wrote it down. */
+  layup: layup.nullable(),
+  /** What is on record of the tool it was laid up on. */
+  toolRecord: toolRecord.nullable(),
+  /** What was done to it after cure, in order of time. */
+  works: z.array(partWork),
+  coupons: z.array(coupon),
   /** Parts that share something with it, and what. */
   shares: z.array(
     z.object({ serial: z.string(), verdict: verdict.nullable(), failedTest: z.boolean(), what: z.array(z.string()) }),

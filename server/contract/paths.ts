@@ -9,6 +9,7 @@ export const VESSELS_PATH = '/api/vessels';
 export const CYCLES_PATH = '/api/cycles';
 export const RESINS_PATH = '/api/resins';
 export const PARTS_PATH = '/api/parts';
+export const TOOLS_PATH = '/api/tools';
 export const AUDIT_PATH = '/api/audit';
 export const AUDIT_VERIFY_PATH = '/api/audit/verify';
 
@@ -119,6 +120,23 @@ export function partPath(serial: string): string {
 
 export function partResultsPath(serial: string): string {
   return `${partPath(serial)}/results`;
+}
+
+/** `drawing` and `tool` find a part like it where the part itself has none on record yet. */
+export function partLayupPath(serial: string, query: { drawing?: string; tool?: string } = {}): string {
+  return withQuery(`${partPath(serial)}/layup`, query);
+}
+
+export function partWorksPath(serial: string): string {
+  return `${partPath(serial)}/works`;
+}
+
+export function partCouponsPath(serial: string): string {
+  return `${partPath(serial)}/coupons`;
+}
+
+export function toolPath(code: string): string {
+  return `${TOOLS_PATH}/${encodeURIComponent(code)}`;
 }
 
 export function findPath(code: string): string {

@@ -15,3 +15,10 @@ export const deed = z.object({ at: instant, by: z.string() });
 /** Numbers arrive as text in an address. */
 export const countInQuery = (most: number, otherwise: number) =>
   z.coerce.number().int().min(1).max(most).default(otherwise);
+
+/** A figure whose bounds no sound one lies outside of: one in another unit is caught by them. */
+export const figureWithin = (least: number, most: number, unit: string) =>
+  z
+    .number()
+    .min(least, { error: `expected ${least} to ${most} ${unit}` })
+    .max(most, { error: `expected ${least} to ${most} ${unit}` });

@@ -3,6 +3,7 @@ import type { Handlers } from './handler.ts';
 import { importHandlers } from './import-handlers.ts';
 import { partHandlers } from './part-handlers.ts';
 import { runHandlers } from './run-handlers.ts';
+import { toolHandlers } from './tool-handlers.ts';
 import { workshopHandlers } from './workshop-handlers.ts';
 
 /** One handler for every operation of the contract: one that lacks does not compile. */
@@ -12,4 +13,5 @@ export const HANDLERS: Handlers = {
   ...runHandlers,
   ...cycleHandlers,
   ...partHandlers,
+  ...toolHandlers,
 };

@@ -1,19 +1,49 @@
 import { addPartResult } from '../actions/add-part-result.ts';
+import { addPartWork } from '../actions/add-part-work.ts';
+import { setCoupon } from '../actions/set-coupon.ts';
+import { setLayup } from '../actions/set-layup.ts';
 import { readAudit } from '../store/audit.ts';
 import { findCode } from '../store/find.ts';
 import { listParts } from '../store/parts.ts';
 import type { SomeHandlers } from './handler.ts';
+import { layupView } from './layup-view.ts';
 import { openApi } from './open-api.ts';
 import { partView } from './part-view.ts';
 
 export const partHandlers: SomeHandlers<
-  'listParts' | 'readPart' | 'addPartResult' | 'find' | 'readAudit' | 'verifyAudit' | 'readOpenApi'
+  | 'listParts'
+  | 'readPart'
+  | 'addPartResult'
+  | 'readLayup'
+  | 'setLayup'
+  | 'addPartWork'
+  | 'setCoupon'
+  | 'find'
+  | 'readAudit'
+  | 'verifyAudit'
+  | 'readOpenApi'
 > = {
   listParts: ({ db }, { query }) => listParts(db, query),
   readPart: ({ db }, { params }) => partView(db, params.serial ?? ''),
   addPartResult(parts, { params, body }) {
     const { serial = '' } = params;
     addPartResult(parts, serial, body);
+    return partView(parts.db, serial);
+  },
+  readLayup: ({ db }, { params, query }) => layupView(db, params.serial ?? '', query),
+  setLayup(parts, { params, body }) {
+    const { serial = '' } = params;
+    setLayup(parts, serial, body);
+    return layupView(parts.db, serial);
+  },
+  addPartWork(parts, { params, body }) {
+    const { serial = '' } = params;
+    addPartWork(parts, serial, body);
+    return partView(parts.db, serial);
+  },
+  setCoupon(parts, { params, body }) {
+    const { serial = '' } = params;
+    setCoupon(parts, serial, body);
     return partView(parts.db, serial);
   },
   find: ({ db }, { query }) => findCode(db, query.code),

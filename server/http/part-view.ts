@@ -2,13 +2,17 @@ import { DomainError } from '../../models/errors.ts';
 import type { LoadSensor } from '../../models/run/load.ts';
 import type { PartRun, PartView } from '../contract/parts.ts';
 import { readAudit } from '../store/audit.ts';
+import { readCoupons } from '../store/coupons.ts';
 import type { Db } from '../store/database.ts';
 import { readDecisions } from '../store/decisions.ts';
 import { findLatestEvaluation } from '../store/evaluations.ts';
+import { findLayup } from '../store/layups.ts';
 import { findLoad } from '../store/loads.ts';
+import { readPartWorks } from '../store/part-works.ts';
 import { readParticulars, readPartResults, readRunsOfPart, requirePart } from '../store/parts.ts';
 import { findRunLine } from '../store/run-lines.ts';
 import { readSources } from '../store/sources.ts';
+import { findToolRecord } from '../store/tools.ts';
 import { sharesOf } from './part-shares.ts';
 
 const AUDIT_LINES = 100;
@@ -18,13 +22,18 @@ export function partView(db: Db, serial: string): PartView {
   const id = requirePart(db, serial);
   const runs = readRunsOfPart(db, id).map((run) => partRun(db, run, serial));
   const latest = runs.findLast(({ evaluation }) => evaluation !== null);
+  const particulars = readParticulars(db, id);
   return {
     serial,
-    ...readParticulars(db, id),
+    ...particulars,
     quantity: Math.max(1, ...runs.map(({ quantity }) => quantity)),
     verdict: latest?.evaluation?.verdict ?? null,
     runs: runs.map(({ quantity: _quantity, ...run }) => run),
     results: readPartResults(db, id),
+    layup: findLayup(db, id),
+    toolRecord: particulars.tool === null ? null : findToolRecord(db, particulars.tool),
+    works: readPartWorks(db, id),
+    coupons: readCoupons(db, id),
     shares: sharesOf(db, id, serial, runs),
     audit: [
       ...readAudit(db, { subject: `part/${serial}`, limit: AUDIT_LINES }).lines,

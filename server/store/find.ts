@@ -22,6 +22,15 @@ const SELECT = `
   SELECT * FROM (SELECT 'part', serial, '/parts' || char(31) || serial, serial = @code COLLATE NOCASE AS exact, 2
     FROM parts WHERE serial LIKE @start ESCAPE '\\' ORDER BY exact DESC, serial LIMIT 20)
   UNION ALL
+  SELECT 'tool', 'Tool ' || code, '/tools' || char(31) || code, code = @code COLLATE NOCASE, 2
+    FROM tools WHERE code LIKE @start ESCAPE '\\'
+  UNION ALL
+  SELECT * FROM (SELECT 'coupon', 'Coupon ' || code || ' of ' || serial, '/parts' || char(31) || serial,
+      code = @code COLLATE NOCASE AS exact, 3
+    FROM coupons JOIN parts ON parts.id = part_id
+    WHERE code LIKE @start ESCAPE '\\' AND coupons.id = (SELECT max(id) FROM coupons AS latest WHERE latest.code = coupons.code)
+    ORDER BY exact DESC, code LIMIT 20)
+  UNION ALL
   SELECT 'cycle', code || ' issue ' || issue, '/cycles' || char(31) || code || char(31) || issue,
     code = @code COLLATE NOCASE, 3 FROM cycles WHERE code LIKE @start ESCAPE '\\'
   UNION ALL

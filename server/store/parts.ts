@@ -3,22 +3,29 @@ import type { PartLine, PartResult, Parts } from '../contract/parts.ts';
 import type { Particulars } from '../contract/runs.ts';
 import type { Db } from './database.ts';
 import { isoFromMs } from './instants.ts';
+import { keepTool } from './tools.ts';
 
 /** The row of a part, made where it is new. */
 export function keepPart(db: Db, serial: string): number {
-  const known = db.prepare<[string], number>('SELECT id FROM parts WHERE serial = ?').pluck().get(serial);
-  return known ?? Number(db.prepare('INSERT INTO parts (serial) VALUES (?)').run(serial).lastInsertRowid);
+  return (
+    findPart(db, serial) ?? Number(db.prepare('INSERT INTO parts (serial) VALUES (?)').run(serial).lastInsertRowid)
+  );
+}
+
+export function findPart(db: Db, serial: string): number | undefined {
+  return db.prepare<[string], number>('SELECT id FROM parts WHERE serial = ?').pluck().get(serial);
 }
 
 /** The row of a part that must be there. */
 export function requirePart(db: Db, serial: string): number {
-  const id = db.prepare<[string], number>('SELECT id FROM parts WHERE serial = ?').pluck().get(serial);
+  const id = findPart(db, serial);
   if (id === undefined) throw new DomainError('not-found', `There is no part "${serial}"`, { part: serial });
   return id;
 }
 
 export function insertParticulars(db: Db, { part, ...particulars }: Particulars, at: string, by: string): void {
   const { title = null, drawing = null, drawingIssue = null, tool = null } = particulars;
+  if (tool !== null && tool !== '') keepTool(db, tool);
   db.prepare(
     `INSERT INTO part_particulars (part_id, title, drawing, drawing_issue, tool, at, by)
      VALUES (?, ?, ?, ?, ?, ?, ?)`,
@@ -76,6 +83,19 @@ export function listParts(db: Db, { q = '', limit }: { q?: string | undefined; l
     )
     .all({ ...values, limit });
   return { parts: rows.map((row) => lineOf(db, row)), total };
+}
+
+/** Parts whose particulars name this tool now, those that came last first. */
+export function listPartsOfTool(db: Db, tool: string): PartLine[] {
+  return db
+    .prepare<[string], PartRow>(
+      `SELECT parts.id, serial, ${latest('title')} AS title, ${latest('drawing')} AS drawing, ${VERDICT} AS verdict,
+         ${FAILED} AS failed
+       FROM parts WHERE id IN (SELECT part_id FROM part_particulars AS about WHERE tool = ? AND ${IS_LATEST})
+       ORDER BY id DESC`,
+    )
+    .all(tool)
+    .map((row) => lineOf(db, row));
 }
 
 /** Runs whose load holds this part now, in order of time. */

@@ -3,6 +3,7 @@ import { evaluateLog } from '../../models/evaluation/judge.ts';
 import type { Layout } from '../../models/log/layout.ts';
 import { addNote } from '../../server/actions/add-note.ts';
 import { addPartResult } from '../../server/actions/add-part-result.ts';
+import { addPartWork } from '../../server/actions/add-part-work.ts';
 import { addRecorder } from '../../server/actions/add-recorder.ts';
 import { addSource } from '../../server/actions/add-source.ts';
 import { addVessel } from '../../server/actions/add-vessel.ts';
@@ -17,7 +18,10 @@ import { readAgain } from '../../server/actions/read-again.ts';
 import { receiveFile } from '../../server/actions/receive-file.ts';
 import { recordRun } from '../../server/actions/record-run.ts';
 import { releaseCycle } from '../../server/actions/release-cycle.ts';
+import { setCoupon } from '../../server/actions/set-coupon.ts';
+import { setLayup } from '../../server/actions/set-layup.ts';
 import { setLoad } from '../../server/actions/set-load.ts';
+import { setTool } from '../../server/actions/set-tool.ts';
 import { setWorkshop } from '../../server/actions/set-workshop.ts';
 import { verifyChains } from '../../server/actions/verify-chains.ts';
 import { withdrawCycle } from '../../server/actions/withdraw-cycle.ts';
@@ -78,6 +82,22 @@ const DEEDS: readonly [string, (parts: JudgingParts, n: number) => unknown][] = 
     'add-part-result',
     (parts) => addPartResult(parts, 'P-0', { at: '2026-03-04T08:00:00Z', test: 'DSC', outcome: 'noted' }),
   ],
+  ['set-tool', (parts) => setTool(parts, 'T-0', { title: 'Mould', thicknessMm: 12 })],
+  [
+    'set-layup',
+    (parts) =>
+      setLayup(parts, 'P-0', {
+        drawing: 'D-1',
+        tool: 'T-1',
+        thicknessMm: 30,
+        debulks: [{ minutes: 15 }, { minutes: 30 }],
+      }),
+  ],
+  [
+    'add-part-work',
+    (parts) => addPartWork(parts, 'P-0', { work: 'trimming', text: 'edges', at: '2026-03-05T08:00:00Z' }),
+  ],
+  ['set-coupon', (parts) => setCoupon(parts, 'P-0', { code: 'C-0', run: 1 })],
   ['receive-file', (parts, n) => receiveFile(parts, { file: file(Buffer.from(`rubbish ${n}`)), origin: 'upload' })],
   ['discard-import', (parts) => discardImport(parts, 1, 'rubbish')],
   ['withdraw-cycle', (parts) => withdrawCycle(parts, cycle.code, cycle.issue, 'done')],

@@ -50,6 +50,10 @@ describe('from a part to its history', () => {
         },
       ],
       results: [],
+      layup: null,
+      toolRecord: null,
+      works: [],
+      coupons: [],
       shares: [
         {
           serial: mate,
