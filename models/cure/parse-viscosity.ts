@@ -16,6 +16,7 @@ export const readViscosity: Read<Viscosity> = object((fields) => {
       gelDegree: fields.required('gelDegree', degree),
       a: fields.required('a', number({ atLeast: 0, atMost: 50 })),
       b: fields.required('b', number({ atLeast: -50, atMost: 50 })),
+      ...fields.optional('flowsBelow', viscosity),
     };
   }
   return {
@@ -24,5 +25,6 @@ export const readViscosity: Read<Viscosity> = object((fields) => {
     U: fields.required('U', energy),
     K: fields.required('K', number({ above: 0, atMost: 200 })),
     validTo: fields.required('validTo', degree),
+    ...fields.optional('flowsBelow', viscosity),
   };
 });

@@ -54,6 +54,7 @@ export type Isoconversional = Extract<Kinetics, { law: 'isoconversional' }>;
 export const RESIN_STATUSES = ['published', 'recalled', 'fitted', 'illustrative'] as const;
 export type ResinStatus = (typeof RESIN_STATUSES)[number];
 
+/** `flowsBelow`, in Pa s, is the viscosity below which its author says that the resin flows; there is no common one. */
 export type Viscosity =
   | {
       readonly law: 'castro-macosko';
@@ -65,6 +66,7 @@ export type Viscosity =
       /** Exponent a + b α of αg/(αg − α). */
       readonly a: number;
       readonly b: number;
+      readonly flowsBelow?: number;
     }
   | {
       readonly law: 'lee-loos-springer';
@@ -75,6 +77,7 @@ export type Viscosity =
       readonly K: number;
       /** Degree up to which the fit was made. */
       readonly validTo: number;
+      readonly flowsBelow?: number;
     };
 export type CastroMacosko = Extract<Viscosity, { law: 'castro-macosko' }>;
 export type ViscosityLeeLoosSpringer = Extract<Viscosity, { law: 'lee-loos-springer' }>;

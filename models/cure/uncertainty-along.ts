@@ -1,13 +1,12 @@
 import { DomainError } from '../errors.ts';
-import { cholesky } from '../numerics/cholesky.ts';
 import { type CureHistory, cureAlong } from './cure-along.ts';
-import { withParameters } from './parameters.ts';
+import { type CureTrial, cureTrials, expandedUncertainty } from './cure-trials.ts';
 import type { Resin } from './resin.ts';
 
 /** A figure with its expanded uncertainty (k = 2), both in the unit of the figure. */
 export interface WithUncertainty {
   readonly value: number;
-  /** Null where it cannot be told: the figure exists on one side of the interval only. */
+  /** Null where it cannot be told: on one side of the interval the figure does not exist, or the set cannot go on. */
   readonly expanded: number | null;
 }
 
@@ -54,29 +53,16 @@ export function uncertaintyAlong(
   resin: Resin,
   { temperatureUncertaintyK = 0, startDegree }: UncertaintyOptions = {},
 ): CureUncertainty {
-  if (!(temperatureUncertaintyK >= 0)) {
-    throw new DomainError('option-out-of-range', 'An uncertainty cannot be negative', { temperatureUncertaintyK });
-  }
   const options = startDegree === undefined ? {} : { startDegree };
-  const cured = (trial: Resin, offsetK = 0) =>
-    cureAlong(timeS, offsetK === 0 ? temperatureK : temperatureK.map((k) => k + offsetK), trial, options);
-  const shares: [CureHistory, CureHistory][] = [];
-  if (temperatureUncertaintyK > 0) {
-    shares.push([cured(resin, temperatureUncertaintyK / 2), cured(resin, -temperatureUncertaintyK / 2)]);
-  }
-  for (const column of columnsOf(resin)) shares.push([cured(moved(resin, column, 1)), cured(moved(resin, column, -1))]);
-
-  const whole = cured(resin);
+  const pairs = cureTrials(resin, temperatureUncertaintyK).map(
+    ([plus, minus]) => [tried(timeS, temperatureK, plus, options), tried(timeS, temperatureK, minus, options)] as const,
+  );
+  const whole = cureAlong(timeS, temperatureK, resin, options);
   const spread = (figure: (history: CureHistory) => number | null): WithUncertainty | null => {
     const value = figure(whole);
     if (value === null) return null;
-    let sum = 0;
-    for (const [plus, minus] of shares) {
-      const [above, below] = [figure(plus), figure(minus)];
-      if (above === null || below === null) return { value, expanded: null };
-      sum += ((above - below) / 2) ** 2;
-    }
-    return { value, expanded: 2 * Math.sqrt(sum) };
+    const of = (history: CureHistory | null) => (history === null ? null : figure(history));
+    return { value, expanded: expandedUncertainty(pairs.map(([plus, minus]) => [of(plus), of(minus)])) };
   };
   return {
     degree: spread(({ finalAlpha }) => finalAlpha)!,
@@ -89,19 +75,19 @@ export function uncertaintyAlong(
   };
 }
 
-/** Directions in which the constants move independently, each as moves by name for one standard uncertainty. */
-function columnsOf({ covariance }: Resin): Map<string, number>[] {
-  if (covariance === undefined) return [];
-  const L = cholesky(covariance.matrix);
-  return covariance.parameters
-    .map((_, j) => new Map(covariance.parameters.map((name, i) => [name, L[i]![j]!])))
-    .filter((column) => [...column.values()].some((move) => move !== 0));
-}
-
-function moved(resin: Resin, column: ReadonlyMap<string, number>, sign: 1 | -1): Resin {
-  const trial = withParameters(resin, new Map([...column].map(([name, move]) => [name, sign * move])));
-  if (trial !== null) return trial;
-  throw new DomainError('option-out-of-range', 'A covariance names a constant that the kinetics have not', {
-    parameters: [...column.keys()].join(', '),
-  });
+/** Null where the moved set stalls or cannot be integrated although the set itself can. */
+function tried(
+  timeS: Float64Array,
+  temperatureK: Float64Array,
+  { resin, offsetK }: CureTrial,
+  options: { readonly startDegree?: number },
+): CureHistory | null {
+  try {
+    return cureAlong(timeS, offsetK === 0 ? temperatureK : temperatureK.map((k) => k + offsetK), resin, options);
+  } catch (error) {
+    if (error instanceof DomainError && (error.code === 'cure-stalls' || error.code === 'cure-out-of-bounds')) {
+      return null;
+    }
+    throw error;
+  }
 }

@@ -23,6 +23,8 @@ export interface CureSubject {
   readonly longestGapMs: number;
   /** In °C per ms. */
   readonly changesAtMost: number;
+  /** Added to every temperature, K: a thermocouple moved by its uncertainty. */
+  readonly offsetK: number;
 }
 
 /** No gap takes a temperature beyond what a thermocouple can read, in °C. */
@@ -40,8 +42,8 @@ export function followCure(digest: RunDigest, subject: CureSubject, fill: CureFi
     followers = new Map();
     followersOf.set(digest, followers);
   }
-  const { track, resin, startDegree, longestGapMs, changesAtMost } = subject;
-  const key = [track.name, numberOf(resin), startDegree, longestGapMs, changesAtMost, fill].join('/');
+  const { track, resin, startDegree, longestGapMs, changesAtMost, offsetK } = subject;
+  const key = [track.name, numberOf(resin), startDegree, longestGapMs, changesAtMost, offsetK, fill].join('/');
   let follower = followers.get(key);
   if (follower === undefined) {
     follower = new Follower(subject, fill, digest.log.from);
@@ -111,6 +113,7 @@ class Follower {
   }
 
   #accept(timeMs: number, temperatureC: number): void {
-    this.#progress.accept((timeMs - this.#originMs) / 1000, kelvinFromCelsius(temperatureC));
+    const temperatureK = kelvinFromCelsius(temperatureC) + this.#subject.offsetK;
+    this.#progress.accept((timeMs - this.#originMs) / 1000, temperatureK);
   }
 }

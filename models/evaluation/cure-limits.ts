@@ -1,12 +1,19 @@
 import { glassTransitionK } from '../cure/glass-transition.ts';
 import { gapsOf } from '../run/gaps.ts';
 import { overlaps } from '../run/intervals.ts';
-import { celsiusFromKelvin, kelvinFromCelsius, temperatureFromCelsius } from '../units.ts';
+import {
+  celsiusFromKelvin,
+  kelvinFromCelsius,
+  type TemperatureUnit,
+  temperatureDifferenceFromCelsius,
+  temperatureFromCelsius,
+} from '../units.ts';
+import { uncertaintyOf } from './cure-estimates.ts';
 import { HOTTEST_C } from './cure-followers.ts';
 import { showsCooling } from './dwell-time.ts';
-import type { CureEstimate, Outcome } from './evaluation.ts';
+import type { Outcome } from './evaluation.ts';
 import { type EventSources, eventTime } from './events.ts';
-import { type Found, isAtLeast, iso, say, sayBeside, unfinished } from './finding.ts';
+import { type Found, isAtLeast, say, sayBeside, unfinished } from './finding.ts';
 import { cureOf, estimated } from './gel-times.ts';
 import type { JudgedSensor, Judgement } from './judgement.ts';
 import { channelsFor, decimalsOf, pressureScale, unitOf } from './pressure-scale.ts';
@@ -34,7 +41,13 @@ export function cureLimits(sources: EventSources): Found[] {
 
 type Figure = (alpha: number, tgK: number | null) => number | null;
 
-function leastEstimate(j: Judgement, limit: string, atLeast: number, unit: string, figure: Figure): Found {
+function leastEstimate(
+  j: Judgement,
+  limit: string,
+  atLeast: number,
+  unit: '' | TemperatureUnit,
+  figure: Figure,
+): Found {
   const known = { limit, bounds: { atLeast }, unit };
   const asked = `${atLeast}${unit === '' ? '' : ` ${unit}`} asked`;
   if (j.resin === null)
@@ -76,11 +89,19 @@ function leastEstimate(j: Judgement, limit: string, atLeast: number, unit: strin
     outcome,
     observed: least.value,
     possible: high,
+    uncertainty: uncertaintyOfFigure(j, least.s, unit),
     sensor: least.s.name,
     fromMs: j.log.from,
     untilMs: j.log.until,
     because: `Least at ${least.s.name}: ${sayBeside(least.value, { atLeast }, digits)}${unit === '' ? '' : ` ${unit}`} at the end of the log, at least ${asked}${gap}; ${source}.`,
   };
+}
+
+/** Of the degree where there is no unit, else of Tg in it; told beside the figure, and moving no limit. */
+function uncertaintyOfFigure(j: Judgement, s: JudgedSensor, unit: '' | TemperatureUnit): number | null {
+  const expanded = uncertaintyOf(j, s);
+  if (unit === '') return expanded?.degree ?? null;
+  return expanded?.tgK == null ? null : temperatureDifferenceFromCelsius(expanded.tgK, unit);
 }
 
 /** The figure at the end of the log, had the sensor got hotter after its last reading as fast as it can. */
@@ -139,24 +160,4 @@ function pressureBeforeGel(sources: EventSources, atLeast: number): Found {
       ? `Pressure had reached ${atLeast} ${unit} and kept it when the first sensor is estimated to gel; ${source}.`
       : `Pressure was ${sayBeside(observed, { atLeast }, decimalsOf(unit))} ${unit} when the first sensor is estimated to gel; at least ${atLeast} ${unit} asked by then; ${source}.`;
   return { ...known, outcome, observed, possible: observed, sensor, fromMs: gelEarlyMs, untilMs: gelLateMs, because };
-}
-
-/** The estimates of every judged sensor at the end of the log, for the record. */
-export function cureEstimates(j: Judgement): CureEstimate[] {
-  if (j.resin === null) return [];
-  return estimated(j).flatMap((s) => {
-    const { progress, refusal } = cureOf(j, s, 'line');
-    if (refusal !== null) return [];
-    const tgK = progress.tgK();
-    const at = (timeS: number | null) => (timeS === null ? null : iso(j.log.from + 1000 * timeS));
-    return [
-      {
-        channel: s.name,
-        degree: progress.alpha(),
-        tgC: tgK === null ? null : celsiusFromKelvin(tgK),
-        gelAt: at(progress.gelS),
-        vitrifiesAt: at(progress.vitrifiesS),
-      },
-    ];
-  });
 }

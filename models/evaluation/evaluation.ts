@@ -106,7 +106,18 @@ export interface CureEstimate {
   readonly tgC: number | null;
   readonly gelAt: string | null;
   readonly vitrifiesAt: string | null;
+  /**
+   * Coverage intervals (k = 2) from the thermocouple's uncertainty and, where the set has it, the covariance of its
+   * constants; null where the first is not on record. Absent in what was judged before they were reckoned.
+   */
+  readonly degreeInterval?: Interval | null;
+  readonly tgIntervalC?: Interval | null;
+  /** ISO instants. */
+  readonly gelInterval?: readonly [string, string] | null;
 }
+
+/** From the least to the greatest, in the unit of the figure. */
+export type Interval = readonly [number, number];
 
 export interface PartEvaluation {
   readonly part: string | null;

@@ -1,3 +1,4 @@
+import type { CureTrial } from '../cure/cure-trials.ts';
 import { type CureFill, type FollowedCure, followCure } from './cure-followers.ts';
 import { isExcluded, type JudgedSensor, type Judgement } from './judgement.ts';
 
@@ -34,11 +35,12 @@ export function estimated(j: Judgement): JudgedSensor[] {
   return j.sensors.filter((s) => !isExcluded(s) && s.track.length > 0);
 }
 
-/** The estimated cure of one sensor, its gaps filled one way. */
-export function cureOf(j: Judgement, s: JudgedSensor, fill: CureFill): FollowedCure {
+/** The estimated cure of one sensor, its gaps filled one way; of a trial in place of the set as it stands. */
+export function cureOf(j: Judgement, s: JudgedSensor, fill: CureFill, trial?: CureTrial): FollowedCure {
   const subject = {
     track: s.track,
-    resin: j.resin!,
+    resin: trial?.resin ?? j.resin!,
+    offsetK: trial?.offsetK ?? 0,
     startDegree: j.part?.startDegree ?? null,
     longestGapMs: j.longestGapMs,
     changesAtMost: j.changesAtMost,

@@ -1,5 +1,6 @@
 import { temperatureDifferenceFromCelsius } from '../units.ts';
-import { cureEstimates, cureLimits } from './cure-limits.ts';
+import { cureEstimates } from './cure-estimates.ts';
+import { cureLimits } from './cure-limits.ts';
 import type { ClockDip } from './dips.ts';
 import { dwellLowerLimit, dwellUpperLimit } from './dwell-band-limits.ts';
 import { dwellLongestLimit, dwellTimeLimit } from './dwell-time-limit.ts';

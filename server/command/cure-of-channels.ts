@@ -1,8 +1,18 @@
 import { beginCure, type CureProgress } from '../../models/cure/cure-progress.ts';
 import { glassTransitionK } from '../../models/cure/glass-transition.ts';
 import type { Resin } from '../../models/cure/resin.ts';
+import { uncertaintyAlong, type WithUncertainty } from '../../models/cure/uncertainty-along.ts';
+import type { Interval } from '../../models/evaluation/evaluation.ts';
+import type { ChannelLayout } from '../../models/log/layout.ts';
 import { type ChannelReadings, type Readings, scaledReading } from '../../models/log/readings.ts';
-import { celsiusFrom, celsiusFromKelvin, isTemperatureUnit, kelvinFromCelsius } from '../../models/units.ts';
+import { temperaturesOfEmf } from '../../models/log/temperatures-of-emf.ts';
+import {
+  celsiusDifferenceFrom,
+  celsiusFrom,
+  celsiusFromKelvin,
+  isTemperatureUnit,
+  kelvinFromCelsius,
+} from '../../models/units.ts';
 
 /** Estimated cure along one channel. */
 export interface ChannelCure {
@@ -11,6 +21,12 @@ export interface ChannelCure {
   readonly tgC: number | null;
   readonly gelAt: string | null;
   readonly vitrifiesAt: string | null;
+  /** Coverage intervals (k = 2); null where `intervalBecause` says why, or where the figure is on one side only. */
+  readonly degreeInterval: Interval | null;
+  readonly tgIntervalC: Interval | null;
+  readonly gelInterval: readonly [string, string] | null;
+  /** What the intervals were worked out from, or why there are none. */
+  readonly intervalBecause: string;
   /** Seconds spent outside the range the resin set is valid in. */
   readonly outsideValidS: number;
   readonly series?: { readonly t: string[]; readonly degree: number[]; readonly tgC: (number | null)[] };
@@ -18,8 +34,8 @@ export interface ChannelCure {
 
 /** Cure along every part and tool channel; where one has no reading at all it is left out. */
 export function cureOfChannels(readings: Readings, resin: Resin, everyS: number | null): ChannelCure[] {
-  return readings.channels
-    .filter(({ channel }) => channel.role === 'part' || channel.role === 'tool')
+  return temperaturesOfEmf(readings)
+    .channels.filter(({ channel }) => channel.role === 'part' || channel.role === 'tool')
     .flatMap((one) => cureOfChannel(readings.timeMs, one, resin, everyS) ?? []);
 }
 
@@ -42,17 +58,55 @@ function cureOfChannel(
     last = scan;
   }
   const tgK = progress.tgK();
-  const instant = (timeS: number | null) =>
-    timeS === null ? null : new Date(beginsMs + Math.round(timeS * 1000)).toISOString();
+  const at = (timeS: number) => new Date(beginsMs + Math.round(timeS * 1000)).toISOString();
+  const instant = (timeS: number | null) => (timeS === null ? null : at(timeS));
   return {
     channel: readings.channel.name,
     degree: progress.alpha(),
     tgC: tgK === null ? null : celsiusFromKelvin(tgK),
     gelAt: instant(progress.gelS),
     vitrifiesAt: instant(progress.vitrifiesS),
+    ...intervalsOf(scans, beginsMs, readings.channel, resin, at),
     outsideValidS: progress.outsideValidS,
     ...(series === null ? {} : { series: series.written }),
   };
+}
+
+function intervalsOf(
+  scans: readonly Scan[],
+  beginsMs: number,
+  { name, unit, uncertainty }: ChannelLayout,
+  resin: Resin,
+  at: (timeS: number) => string,
+): Pick<ChannelCure, 'degreeInterval' | 'tgIntervalC' | 'gelInterval' | 'intervalBecause'> {
+  if (uncertainty === undefined || !isTemperatureUnit(unit)) {
+    const intervalBecause = `no uncertainty of ${name} is on record`;
+    return { degreeInterval: null, tgIntervalC: null, gelInterval: null, intervalBecause };
+  }
+  const temperatureUncertaintyK = celsiusDifferenceFrom(uncertainty, unit);
+  const { degree, tgK, gelS } = uncertaintyAlong(
+    Float64Array.from(scans, ({ atMs }) => (atMs - beginsMs) / 1000),
+    Float64Array.from(scans, ({ temperatureK }) => temperatureK),
+    resin,
+    { temperatureUncertaintyK },
+  );
+  const gel = intervalAbout(gelS);
+  return {
+    degreeInterval: intervalAbout(degree),
+    tgIntervalC: intervalAbout(tgK && { ...tgK, value: celsiusFromKelvin(tgK.value) }),
+    gelInterval: gel && [at(gel[0]), at(gel[1])],
+    intervalBecause:
+      `k = 2, from U ${uncertainty} ${unit} of ${name}` +
+      (resin.covariance === undefined
+        ? '; the set gives no covariance of its constants'
+        : ' and the covariance of the constants'),
+  };
+}
+
+function intervalAbout(figure: WithUncertainty | null): Interval | null {
+  return figure === null || figure.expanded === null
+    ? null
+    : [figure.value - figure.expanded, figure.value + figure.expanded];
 }
 
 interface Scan {

@@ -45,11 +45,26 @@ export const cureCommand: Command = {
     process.stdout.write(
       values.json
         ? `${JSON.stringify(answer)}\n`
-        : `Resin set ${code} (${source.status}): ${source.citation}\n${table(channels)}`,
+        : `Resin set ${code} (${source.status}): ${source.citation}\n${table(channels)}${intervals(channels)}`,
     );
     return EXIT.done;
   },
 };
+
+/** A line for each channel: its intervals, or why it has none. */
+function intervals(channels: readonly ChannelCure[]): string {
+  const about = ([low, high]: readonly [number, number], digits: number) => ((high - low) / 2).toFixed(digits);
+  return channels
+    .map(({ channel, degreeInterval, tgIntervalC, gelInterval, intervalBecause }) => {
+      const said = [
+        degreeInterval && `degree ± ${about(degreeInterval, 4)}`,
+        tgIntervalC && `Tg ± ${about(tgIntervalC, 1)} °C`,
+        gelInterval && `gel ${gelInterval.join(' to ')}`,
+      ].filter(Boolean);
+      return `${channel}: ${[...said, intervalBecause].join('; ')}\n`;
+    })
+    .join('');
+}
 
 function table(channels: readonly ChannelCure[]): string {
   const head = ['channel', 'degree', 'Tg °C', 'gel', 'vitrifies'];

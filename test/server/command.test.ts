@@ -148,6 +148,23 @@ describe('dwellbook cure', () => {
     }
     const table = await dwellbook(...cure);
     expect(table.stdout).toMatch(/^Resin set .+\nchannel +degree +Tg °C +gel +vitrifies\nTC1 +0\.\d{4} /);
+    expect(table.stdout).toContain('\nTC1: no uncertainty of TC1 is on record\n');
+    expect(channels[0]).toMatchObject({ degreeInterval: null, tgIntervalC: null, gelInterval: null });
+  });
+
+  it('says how far each figure may be off where the uncertainty of the thermocouple is on record', async () => {
+    const document = JSON.parse(readFileSync(layout, 'utf8'));
+    const channels = document.channels.map((one: object) => ({ ...one, uncertainty: 2.2 }));
+    const known = written('known.json', JSON.stringify({ ...document, channels }));
+    const cure = ['cure', '--log', log, '--layout', known, '--resin', resin];
+    const answer = JSON.parse((await dwellbook(...cure, '--json')).stdout).channels[0];
+    expect(answer.degreeInterval[0]).toBeLessThan(answer.degree);
+    expect(answer.tgIntervalC[1]).toBeGreaterThan(answer.tgC);
+    expect(Date.parse(answer.gelInterval[1])).toBeGreaterThan(Date.parse(answer.gelAt));
+    const table = await dwellbook(...cure);
+    expect(table.stdout).toMatch(
+      /\nTC1: degree ± 0\.\d{4}; Tg ± \d+\.\d °C; gel \S+Z to \S+Z; k = 2, from U 2\.2 °C of TC1/,
+    );
   });
 
   it('refuses a resin set that is none, naming the key', async () => {
