@@ -15,13 +15,23 @@ export type ChannelRole = (typeof CHANNEL_ROLES)[number];
 export const ENCODINGS = ['utf-8', 'utf-16le', 'utf-16be', 'windows-1252'] as const;
 export type LogEncoding = (typeof ENCODINGS)[number];
 
+export const THERMOCOUPLE_TYPES = ['K', 'J', 'T', 'N', 'E'] as const;
+export type ThermocoupleType = (typeof THERMOCOUPLE_TYPES)[number];
+
+/** How a recorded emf becomes a temperature. */
+export interface Thermocouple {
+  readonly type: ThermocoupleType;
+  /** Name of the channel of the same log that read the cold junction; or its temperature in °C, where it was held. */
+  readonly coldJunction: string | number;
+}
+
 export interface ChannelLayout {
   /** Heading of the column in the file; or `#5`, the fifth, where its heading is empty or stands twice. */
   readonly column: string;
   /** What the product calls the channel: `TC1`, `vessel pressure`. */
   readonly name: string;
   readonly role: ChannelRole;
-  /** Unit of the readings after `scale` and `offset`: `°C`, `bar`, `mbar abs` … */
+  /** Unit of the readings after `scale` and `offset`: `°C`, `bar`, `mbar abs` …; `mV` where emf was recorded. */
   readonly unit: string;
   /** Multiplies what stands in the file; default 1. */
   readonly scale?: number;
@@ -29,8 +39,10 @@ export interface ChannelLayout {
   readonly offset?: number;
   /** Least and greatest believable value in `unit`; outside it a reading is absent. Temperatures: −200 to 1372 °C. */
   readonly range?: readonly [number, number];
-  /** Expanded uncertainty U (k = 2) in `unit`. */
+  /** Expanded uncertainty U (k = 2) in `unit`; of a thermocouple in mV that of its temperature, in °C. */
   readonly uncertainty?: number;
+  /** With a `unit` of mV only: what is judged and shown is then the temperature in °C. */
+  readonly thermocouple?: Thermocouple;
   /** For a one-off check: the parts this channel belongs to. A stored layout never keeps it. */
   readonly parts?: readonly string[];
 }

@@ -22,6 +22,7 @@ import {
   type Layout,
   type TimeLayout,
 } from './layout.ts';
+import { checkThermocouple, readThermocouple, refuseStrangeColdJunctions } from './parse-thermocouple.ts';
 import { parsePattern } from './stamp-pattern.ts';
 import { findZone } from './time-zone.ts';
 
@@ -35,6 +36,7 @@ export function parseLayout(document: unknown): Layout {
   refuseNamedTwice([...layout.time.columns, ...layout.channels.map(({ column }) => column.trim())], (i) =>
     columnPath(i, layout.time.columns.length),
   );
+  refuseStrangeColdJunctions(layout.channels);
   checkLines(layout);
   return layout;
 }
@@ -134,12 +136,13 @@ const readChannelKeys = object<ChannelLayout>((fields) => ({
   ...fields.optional('offset', number()),
   ...fields.optional('range', pairOf(number())),
   ...fields.optional('uncertainty', number({ atLeast: 0 })),
+  ...fields.optional('thermocouple', readThermocouple),
   ...fields.optional('parts', listOf(text, { atLeast: 1 })),
 }));
 
 function readChannel(value: unknown, path: string): ChannelLayout {
   const channel = readChannelKeys(value, path);
-  checkUnit(channel.role, channel.unit, `${path}.unit`);
+  if (!checkThermocouple(channel, path)) checkUnit(channel.role, channel.unit, `${path}.unit`);
   if (channel.scale === 0) refuse(`${path}.scale`, 'a number other than 0', 0);
   if (channel.range && channel.range[0] >= channel.range[1]) {
     refuse(`${path}.range`, 'the least believable value, then a greater one', channel.range);
@@ -154,10 +157,11 @@ function checkUnit(role: ChannelRole, unit: string, path: string): void {
   const isPressure = Object.hasOwn(PA_PER_UNIT, unit.replace(/ abs$/, ''));
   if (!isTemperature && !isPressure) {
     const known = ['°C', '°F', ...Object.keys(PA_PER_UNIT)].join(', ');
-    throw new DomainError('unit-unknown', `${path} is "${unit}"; expected one of ${known}, absolute ones with " abs"`, {
-      key: path,
-      unit,
-    });
+    throw new DomainError(
+      'unit-unknown',
+      `${path} is "${unit}"; expected one of ${known}, absolute ones with " abs", or mV with a thermocouple`,
+      { key: path, unit },
+    );
   }
   const isPressureRole = role === 'pressure' || role === 'vacuum' || role === 'vacuum-source';
   if (isPressureRole && !isPressure) refuse(path, `a unit of pressure for the role "${role}"`, unit);

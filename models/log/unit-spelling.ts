@@ -1,8 +1,8 @@
 /** What a units row says of one column. */
 export interface SpelledUnit {
-  /** The product's name of the unit, without ` abs`; `K` for kelvin, which no channel has. */
+  /** The product's name of the unit, without ` abs`; `K` for kelvin and `µV`, which no channel has. */
   readonly unit: string;
-  readonly quantity: 'temperature' | 'pressure';
+  readonly quantity: 'temperature' | 'pressure' | 'emf';
   /** What the spelling says of the zero point; null where it says nothing. */
   readonly reference: 'gauge' | 'absolute' | null;
 }
@@ -15,6 +15,17 @@ const TEMPERATURE_SPELLINGS: Readonly<Record<string, string>> = {
   fahrenheit: '°F',
   k: 'K',
   kelvin: 'K',
+};
+
+/** NFKC turns the micro sign into the Greek letter. */
+const EMF_SPELLINGS: Readonly<Record<string, string>> = {
+  mv: 'mV',
+  millivolt: 'mV',
+  millivolts: 'mV',
+  μv: 'µV',
+  uv: 'µV',
+  microvolt: 'µV',
+  microvolts: 'µV',
 };
 
 const PRESSURE_SPELLINGS: Readonly<Record<string, string>> = {
@@ -50,6 +61,7 @@ export function unitFromSpelling(spelling: string): SpelledUnit | null {
   if (Object.hasOwn(TEMPERATURE_SPELLINGS, scale)) {
     return { unit: TEMPERATURE_SPELLINGS[scale]!, quantity: 'temperature', reference: null };
   }
+  if (Object.hasOwn(EMF_SPELLINGS, bare)) return { unit: EMF_SPELLINGS[bare]!, quantity: 'emf', reference: null };
   if (Object.hasOwn(PRESSURE_SPELLINGS, bare)) return pressure(bare, undefined);
   const [, name = '', suffix] = /^(.+?)\(?(g|gauge|gage|rel|a|abs|absolute|vac|vacuum)\)?$/u.exec(bare) ?? [];
   return Object.hasOwn(PRESSURE_SPELLINGS, name) ? pressure(name, suffix) : null;

@@ -43,12 +43,26 @@ export function judgedChannels(layouts: readonly ChannelLayout[], load: Load | n
       );
     }
   }
+  refuseCorrectedColdJunctions(layouts, load);
   const loadNamesParts = (load?.parts.length ?? 0) > 0;
   return layouts.map((layout) => {
     const sensor = load?.sensors.find(({ channel }) => channel === layout.name);
     const parts = bagPartsOf(layout, load) ?? sensor?.parts ?? (loadNamesParts ? [] : (layout.parts ?? []));
     return runChannel(layout, sensor, parts);
   });
+}
+
+/** A correction of a cold junction would come too late: the temperatures that rest on it are read already. */
+function refuseCorrectedColdJunctions(layouts: readonly ChannelLayout[], load: Load | null): void {
+  for (const { channel, corrections } of load?.sensors ?? []) {
+    const layout = layouts.find(({ thermocouple }) => thermocouple?.coldJunction === channel);
+    if (corrections === undefined || layout === undefined) continue;
+    throw new DomainError(
+      'document-wrong-value',
+      `The load corrects "${channel}", the cold junction of "${layout.name}"; give it an offset in the layout instead`,
+      { channel, coldJunctionOf: layout.name },
+    );
+  }
 }
 
 /** Parts whose bag hangs on this vacuum line; null where none does. */

@@ -1,6 +1,7 @@
 import { DomainError } from '../errors.ts';
 import type { ChannelLayout, ChannelRole } from '../log/layout.ts';
 import type { Readings } from '../log/readings.ts';
+import { asTemperature, scanOfEmf } from '../log/temperatures-of-emf.ts';
 import { judgedChannels, type RunChannel } from './channel.ts';
 import { derivedTrack, type Member, type Statistic } from './derived-track.ts';
 import { GrowingRow } from './growing-row.ts';
@@ -24,11 +25,13 @@ export class RunDigest {
   readonly scanMs = new GrowingRow();
   readonly watches: readonly NeighbourWatch[];
   readonly #byColumn: readonly (RunChannel | null)[];
+  readonly #asTemperatures: (figures: ArrayLike<number>) => ArrayLike<number>;
   readonly #intervals = new MedianInterval();
   readonly #derived = new Map<string, { extend(): Track }>();
 
   constructor(layouts: readonly ChannelLayout[], load: Load | null) {
-    this.#byColumn = judgedChannels(layouts, load);
+    this.#byColumn = judgedChannels(layouts.map(asTemperature), load);
+    this.#asTemperatures = scanOfEmf(layouts);
     this.channels = this.#byColumn.filter((channel) => channel !== null);
     this.load = load;
     this.watches = TEMPERATURE_ROLES.map((role) => new NeighbourWatch(this.withRole(role), this.withRole('air')));
@@ -46,9 +49,10 @@ export class RunDigest {
     }
     if (scan > 0) this.#intervals.push(timeMs - previousMs!);
     this.scanMs.push(timeMs);
+    const seen = this.#asTemperatures(figures);
     for (let i = 0; i < this.#byColumn.length; i++) {
       const channel = this.#byColumn[i];
-      const figure = figures[i]!;
+      const figure = seen[i]!;
       if (channel && !Number.isNaN(figure)) channel.track.push(timeMs, channel.judgedReading(figure), scan);
     }
     for (const watch of this.watches) watch.accept(timeMs, scan);

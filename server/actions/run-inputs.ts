@@ -1,6 +1,7 @@
 import type { Resin } from '../../models/cure/resin.ts';
 import type { Cycle } from '../../models/cycle/cycle.ts';
 import type { ReadLog } from '../../models/log/readings.ts';
+import { temperaturesOfEmf } from '../../models/log/temperatures-of-emf.ts';
 import type { Exclusion, Load } from '../../models/run/load.ts';
 import type { SensorDecision } from '../contract/runs.ts';
 import { oneHash, sha256OfDocument } from '../store/canonical.ts';
@@ -90,9 +91,14 @@ export function sourceInputs(db: Db, run: number): (SourceInput & { readonly n: 
   }));
 }
 
-/** All readings of a run, of however many sources. */
+/** All readings of a run, of however many sources; where a recorder wrote emf, as the temperatures it stands for. */
 export function readRunLog(sources: readonly SourceInput[]): ReadLog {
-  return mergeLogs(sources.map(({ readLog }) => readLog()));
+  return mergeLogs(
+    sources.map(({ readLog }) => {
+      const log = readLog();
+      return { ...log, readings: temperaturesOfEmf(log.readings) };
+    }),
+  );
 }
 
 function cycleOf(db: Db, named: { readonly code: string; readonly issue: string } | null): CycleRow | null {

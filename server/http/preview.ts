@@ -2,6 +2,7 @@ import type { Layout } from '../../models/log/layout.ts';
 import { parseLayout } from '../../models/log/parse-layout.ts';
 import { readLog } from '../../models/log/read-log.ts';
 import { type ChannelReadings, type Readings, scaledReading } from '../../models/log/readings.ts';
+import { temperaturesOfEmf } from '../../models/log/temperatures-of-emf.ts';
 import type { IncomingFile } from '../actions/incoming-file.ts';
 import { logFileOf } from '../actions/log-file-of.ts';
 import type { Preview } from '../contract/imports.ts';
@@ -11,7 +12,8 @@ const FIRST_SCANS = 12;
 
 /** A file read whole by a layout, nothing kept: what a person looks at before making a run of it. */
 export async function previewOf(file: IncomingFile, document: Layout): Promise<Preview> {
-  const { readings, repairs, passedOver } = readLog([await logFileOf(file)], parseLayout(document));
+  const { readings: asRead, repairs, passedOver } = readLog([await logFileOf(file)], parseLayout(document));
+  const readings = temperaturesOfEmf(asRead);
   const { timeMs, channels } = readings;
   return {
     scans: timeMs.length,

@@ -1,4 +1,5 @@
 import { DomainError } from '../../models/errors.ts';
+import { asTemperature } from '../../models/log/temperatures-of-emf.ts';
 import type { RunView } from '../contract/runs.ts';
 import { findCycle, readCycleDocument } from '../store/cycles.ts';
 import type { Db } from '../store/database.ts';
@@ -25,7 +26,7 @@ export function runView(db: Db, run: number): RunView {
   return {
     ...line,
     channels: sources.flatMap(({ n, layout }) =>
-      layout.channels.map(({ name, role, unit }) => ({ name, role, unit, source: n })),
+      layout.channels.map(asTemperature).map(({ name, role, unit }) => ({ name, role, unit, source: n })),
     ),
     sources,
     load: load?.document ?? null,

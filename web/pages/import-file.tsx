@@ -20,7 +20,7 @@ import { usePreview } from '../use-preview.ts';
 import { useRead } from '../use-read.ts';
 import { bytes, count, listed } from '../words/figures.ts';
 import { withMissing } from '../words/layout-edits.ts';
-import { placeName } from '../words/layouts.ts';
+import { openQuestions, placeName } from '../words/layouts.ts';
 
 /** One file: how it is read stands beside its first lines, and can be corrected until it is right. */
 export default function ImportFilePage() {
@@ -86,7 +86,7 @@ function Reading({ view, proposal }: { view: ImportView; proposal: NonNullable<I
   const [layout, setLayout] = useState<Layout>(known?.layout ?? proposal.layout);
   const [answered, setAnswered] = useState<ReadonlySet<string>>(new Set());
   const statements = source === null ? proposal.statements : [];
-  const open = statements.filter(({ key, basis }) => basis === 'asked' && !answered.has(key));
+  const open = openQuestions(layout, statements, answered);
   const { preview, problem, isReading } = usePreview(view.id, open.length === 0 ? layout : null);
   const onChange = (next: Layout, key: string) => {
     setLayout(next);

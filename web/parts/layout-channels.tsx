@@ -5,10 +5,13 @@ import { withChannel, withoutChannel } from '../words/layout-edits.ts';
 import { ROLE_WORDS } from '../words/layouts.ts';
 import { Basis } from './basis.tsx';
 import type { LayoutEditing } from './layout-editor.tsx';
+import { isOpen, wrongIfOpen } from './open-field.ts';
+import { ThermocoupleFields } from './thermocouple-fields.tsx';
 
 const UNITS = [
   '°C',
   '°F',
+  'mV',
   'bar',
   'mbar',
   'kPa',
@@ -89,6 +92,7 @@ function ChannelLine({
           onInput={(event) => change('unit', event.currentTarget.value)}
         />
       </label>
+      {channel.thermocouple && <ThermocoupleFields editing={editing} n={n} thermocouple={channel.thermocouple} />}
       <button
         type="button"
         class="quiet"
@@ -99,7 +103,7 @@ function ChannelLine({
       </button>
       <p class="read small soft">
         {read &&
-          `${figure(read.least, channel.unit)} to ${figure(read.greatest, channel.unit)}${read.absent > 0 ? `, ${read.absent} absent` : ''}. `}
+          `${figure(read.least, read.unit)} to ${figure(read.greatest, read.unit)}${read.absent > 0 ? `, ${read.absent} absent` : ''}. `}
         <ChannelBasis editing={editing} n={n} />
       </p>
     </fieldset>
@@ -118,12 +122,4 @@ function ChannelBasis({ editing, n }: { editing: LayoutEditing; n: number }) {
       ))}
     </>
   );
-}
-
-function isOpen({ statements, answered }: LayoutEditing, key: string): boolean {
-  return statements.some((one) => one.key === key && one.basis === 'asked') && !answered.has(key);
-}
-
-function wrongIfOpen(editing: LayoutEditing, key: string) {
-  return isOpen(editing, key) ? { 'aria-invalid': 'true' as const } : {};
 }

@@ -1,4 +1,5 @@
-import type { Layout } from '../../models/log/layout.ts';
+import type { Layout, Thermocouple } from '../../models/log/layout.ts';
+import { asTemperature } from '../../models/log/temperatures-of-emf.ts';
 import { asWritten } from '../words/figures.ts';
 import { delimiterName, ROLE_WORDS, timeWords } from '../words/layouts.ts';
 import { Wide } from './wide.tsx';
@@ -61,7 +62,16 @@ function changes(channel: Layout['channels'][number]): string {
     channel.range === undefined
       ? ''
       : `believed from ${asWritten(channel.range[0])} to ${asWritten(channel.range[1], channel.unit)}`,
-    channel.uncertainty === undefined ? '' : `U ${asWritten(channel.uncertainty, channel.unit)}`,
+    channel.uncertainty === undefined ? '' : `U ${asWritten(channel.uncertainty, asTemperature(channel).unit)}`,
+    channel.thermocouple === undefined
+      ? ''
+      : `type ${channel.thermocouple.type} to °C, ${coldJunctionWords(channel.thermocouple)}`,
   ];
   return said.filter(Boolean).join(', ') || 'nothing';
+}
+
+function coldJunctionWords({ coldJunction }: Thermocouple): string {
+  return typeof coldJunction === 'number'
+    ? `cold junction held at ${asWritten(coldJunction, '°C')}`
+    : `cold junction read by ${coldJunction}`;
 }

@@ -1,12 +1,12 @@
 import { answerAt, withAnswer } from '../words/layout-edits.ts';
-import { placeName } from '../words/layouts.ts';
+import { openQuestions, placeName } from '../words/layouts.ts';
 import { zone } from '../workshop.ts';
 import type { LayoutEditing } from './layout-editor.tsx';
 
 /** What the file cannot tell, asked first, with the answers that are likely; all others are given in the fields below. */
 export function OpenQuestions({ editing }: { editing: LayoutEditing }) {
   const { layout, statements, answered, onChange } = editing;
-  const open = statements.filter(({ key, basis }) => basis === 'asked' && !answered.has(key));
+  const open = openQuestions(layout, statements, answered);
   if (open.length === 0) return null;
   return (
     <section class="notice amber questions" aria-label="Questions to answer first">

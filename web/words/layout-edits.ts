@@ -1,4 +1,4 @@
-import type { ChannelLayout, Layout } from '../../models/log/layout.ts';
+import type { ChannelLayout, Layout, Thermocouple } from '../../models/log/layout.ts';
 
 /** Keys of a layout that hold a line's number. */
 const LINE_KEYS = ['header', 'units', 'firstReading'];
@@ -6,7 +6,7 @@ const LINE_KEYS = ['header', 'units', 'firstReading'];
 /** The layout with one place changed: `delimiter`, `time.pattern`, `channels/3/role`. Empty text takes a key out. */
 export function withAnswer(layout: Layout, key: string, answer: string): Layout {
   const [first = '', ...rest] = key.split(/[./]/);
-  const value = LINE_KEYS.includes(first) ? Number(answer) : answer;
+  const value = LINE_KEYS.includes(first) || isHeldJunction(key, answer) ? Number(answer) : answer;
   return setIn(layout as unknown as Tree, [first, ...rest], answer === '' ? undefined : value) as unknown as Layout;
 }
 
@@ -20,7 +20,19 @@ export function answerAt(layout: Layout, key: string): string {
 }
 
 export function withChannel(layout: Layout, n: number, change: Partial<ChannelLayout>): Layout {
-  return { ...layout, channels: layout.channels.map((channel, i) => (i === n ? { ...channel, ...change } : channel)) };
+  const changed = (channel: ChannelLayout) => withThermocouple({ ...channel, ...change });
+  return { ...layout, channels: layout.channels.map((channel, i) => (i === n ? changed(channel) : channel)) };
+}
+
+/** A channel of emf has a thermocouple, unknown at first; no other channel has one. */
+function withThermocouple(channel: ChannelLayout): ChannelLayout {
+  const { thermocouple = { type: '', coldJunction: '' } as unknown as Thermocouple, ...rest } = channel;
+  return rest.unit === 'mV' && ['part', 'tool', 'air'].includes(rest.role) ? { ...rest, thermocouple } : rest;
+}
+
+/** Whether an answer says at how many °C a cold junction was held, and no channel's name. */
+function isHeldJunction(key: string, answer: string): boolean {
+  return key.endsWith('/coldJunction') && answer.trim() !== '' && Number.isFinite(Number(answer));
 }
 
 export function withoutChannel(layout: Layout, n: number): Layout {

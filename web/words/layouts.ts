@@ -1,4 +1,5 @@
 import type { Layout } from '../../models/log/layout.ts';
+import type { LayoutStatement } from '../../models/log/proposal/statement.ts';
 
 const DELIMITERS: Readonly<Record<string, string>> = {
   ',': 'comma',
@@ -40,9 +41,25 @@ const PLACES: Readonly<Record<string, string>> = {
   decimal: 'the decimal sign',
 };
 
+const KEY_WORDS: Readonly<Record<string, string>> = { type: 'thermocouple type', coldJunction: 'cold junction' };
+
+/** What must still be answered before a proposed layout can be used. */
+export function openQuestions<S extends LayoutStatement>(
+  layout: Layout,
+  statements: readonly S[],
+  answered: ReadonlySet<string>,
+): S[] {
+  return statements.filter(({ key, basis }) => {
+    const [, n] = /^channels\/(\d+)\/thermocouple\//.exec(key) ?? [];
+    const isOfNone = n !== undefined && layout.channels[Number(n)]?.thermocouple === undefined;
+    return basis === 'asked' && !answered.has(key) && !isOfNone;
+  });
+}
+
 /** A place of a layout as a question names it: `the unit of column P`. */
 export function placeName(key: string, layout: Layout): string {
-  const [, n, what] = /^channels\/(\d+)\/(\w+)$/.exec(key) ?? [];
-  if (n !== undefined) return `the ${what} of column ${layout.channels[Number(n)]?.column ?? n}`;
+  const [, n, what] = /^channels\/(\d+)\/(?:thermocouple\/)?(\w+)$/.exec(key) ?? [];
+  if (n !== undefined)
+    return `the ${KEY_WORDS[what ?? ''] ?? what} of column ${layout.channels[Number(n)]?.column ?? n}`;
   return PLACES[key] ?? key;
 }

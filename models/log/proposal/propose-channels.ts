@@ -1,6 +1,7 @@
 import { figureFromText } from '../figure.ts';
-import type { ChannelLayout, ChannelRole } from '../layout.ts';
+import type { ChannelLayout, ChannelRole, Thermocouple } from '../layout.ts';
 import { unitFromSpelling } from '../unit-spelling.ts';
+import { askThermocouples, COLD_JUNCTION_WORDS } from './ask-thermocouples.ts';
 import type { Table } from './find-table.ts';
 import { guessed, type LayoutStatement } from './statement.ts';
 
@@ -38,7 +39,9 @@ export function proposeChannels(
       name,
       role: role.value,
       unit: unit.value,
+      ...(unit.scale === undefined ? {} : { scale: unit.scale }),
       ...(unit.offset === undefined ? {} : { offset: unit.offset }),
+      ...(unit.value === 'mV' && role.value !== 'other' ? { thermocouple: UNKNOWN_THERMOCOUPLE } : {}),
     });
     statements.push(guessed(`${key}/role`, role.because));
     if (role.value !== 'other' || unit.basis === 'proved') {
@@ -46,12 +49,16 @@ export function proposeChannels(
       statements.push({ key: `${key}/unit`, basis, because, choices });
     }
   }
+  statements.push(...askThermocouples(channels));
   if (codes.size > 0) {
     const words = [...codes].map(([code, where]) => `${code} (${where})`).join(', ');
     statements.push(guessed('missing', `These cells hold no figure: ${words}.`));
   }
   return { channels: channels.map(withUnit), missing: [...codes.keys()], statements };
 }
+
+/** Empty text where two statements ask. */
+const UNKNOWN_THERMOCOUPLE = { type: '', coldJunction: '' } as unknown as Thermocouple;
 
 /** A channel that nothing is known of needs some unit; `-` is what recorders write. */
 function withUnit(channel: ChannelLayout): ChannelLayout {
@@ -84,6 +91,7 @@ function contentOf(table: Table, column: number, decimal: '.' | ','): Content | 
 
 interface FoundUnit extends Omit<LayoutStatement, 'key'> {
   readonly value: string;
+  readonly scale?: number;
   readonly offset?: number;
 }
 
@@ -97,6 +105,10 @@ function findUnit(table: Table, column: number, first: number): FoundUnit {
   if (said?.unit === 'K') {
     const because = `${inCell ? `Line ${table.units}` : 'Its heading'} says K; 273.15 is taken off.`;
     return { value: '°C', offset: -273.15, basis: 'proved', because, choices: [] };
+  }
+  if (said?.unit === 'µV') {
+    const because = `${inCell ? `Line ${table.units}` : 'Its heading'} says µV; a thousandth of it is taken.`;
+    return { value: 'mV', scale: 0.001, basis: 'proved', because, choices: [] };
   }
   if (said) {
     const value = said.reference === 'absolute' ? `${said.unit} abs` : said.unit;
@@ -129,6 +141,8 @@ const PRESSURE_UNITS = [
 /** What a column measures, by its unit or, where the file gives none, by its heading. */
 function quantityOf(heading: string, unit: string): 'temperature' | 'pressure' | null {
   const byUnit = unitFromSpelling(unit)?.quantity;
+  // Emf is a thermocouple's, unless its heading speaks of pressure: that of a transducer says nothing by itself.
+  if (byUnit === 'emf') return PRESSURE_WORDS.test(heading) || VACUUM_WORDS.test(heading) ? null : 'temperature';
   if (byUnit || unit !== '') return byUnit ?? null;
   if (PRESSURE_WORDS.test(heading) || VACUUM_WORDS.test(heading)) return 'pressure';
   return THERMAL_WORDS.test(heading) ? 'temperature' : null;
@@ -148,6 +162,7 @@ function thermalUnit(first: number): FoundUnit {
 }
 
 const THERMAL_ROLES: readonly (readonly [RegExp, ChannelRole, string])[] = [
+  [COLD_JUNCTION_WORDS, 'other', 'a cold junction'],
   [/set ?-?point|\bsp\b|\bsv\b|soll|consign|program|sollwert|target/i, 'setpoint', 'a set point'],
   [/air|luft|gas|ambient|chamber|oven|autoclave|forno|ofen|four|\bar\b|ambiente|atmos/i, 'air', 'the air'],
   [/tool|mould|mold|werkzeug|form\b|molde|stampo|moule|caul/i, 'tool', 'the tool'],

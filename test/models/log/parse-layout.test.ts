@@ -30,6 +30,39 @@ describe('parseLayout', () => {
     expect(parseLayout(least)).toStrictEqual(least);
   });
 
+  const cold = { column: 'CJ', name: 'terminals', role: 'other', unit: '°C' };
+  const emf = (thermocouple: unknown, more: object = {}) => ({
+    channels: [{ ...channel, unit: 'mV', thermocouple, ...more }, cold],
+  });
+
+  it('returns a channel of emf with its thermocouple', () => {
+    for (const coldJunction of ['terminals', 23.5, -40]) {
+      const document = { ...good, ...emf({ type: 'K', coldJunction }, { range: [-1, 60], scale: 0.001 }) };
+      expect(parseLayout(document)).toStrictEqual(document);
+    }
+    const unjudged = { ...good, channels: [{ ...channel, role: 'other', unit: 'mV' }] };
+    expect(parseLayout(unjudged)).toStrictEqual(unjudged);
+  });
+
+  it.each([
+    [emf({ type: 'S', coldJunction: 20 }), 'channels[0].thermocouple.type'],
+    [emf({ type: 'k', coldJunction: 20 }), 'channels[0].thermocouple.type'],
+    [emf({ coldJunction: 20 }), 'channels[0].thermocouple.type'],
+    [emf({ type: 'K' }), 'channels[0].thermocouple.coldJunction'],
+    [emf({ type: 'K', coldJunction: 296.65 }), 'channels[0].thermocouple.coldJunction'],
+    [emf({ type: 'K', coldJunction: null }), 'channels[0].thermocouple.coldJunction'],
+    [emf({ type: 'K', coldJunction: 'clamps' }), 'channels[0].thermocouple.coldJunction'],
+    [emf({ type: 'K', coldJunction: 'TC1' }), 'channels[0].thermocouple.coldJunction'],
+    [emf({ type: 'K', coldJunction: 20, gain: 2 }), 'channels[0].thermocouple.gain'],
+    [emf({ type: 'K', coldJunction: 20 }, { unit: '°C' }), 'channels[0].unit'],
+    [emf({ type: 'K', coldJunction: 20 }, { role: 'pressure' }), 'channels[0].role'],
+    [emf({ type: 'K', coldJunction: 20 }, { role: 'other' }), 'channels[0].role'],
+    [{ channels: [{ ...channel, unit: 'mV' }] }, 'channels[0].thermocouple'],
+    [{ channels: [{ ...channel, unit: 'µV' }] }, 'channels[0].unit'],
+  ])('refuses %j', (change, place) => {
+    expect(refusalOf(() => parseLayout({ ...good, ...change })).message).toContain(place);
+  });
+
   it.each([
     [{ delimeter: ';' }, 'document-unknown-key', 'delimeter'],
     [{ format: 'dwellbook-layout/2' }, 'document-wrong-format', 'format'],

@@ -27,6 +27,8 @@ describe('unitFromSpelling', () => {
     ],
     ['°F', ['°F', 'degF', 'deg. F', 'F', '℉', 'Fahrenheit']],
     ['K', ['K', 'kelvin']],
+    ['mV', ['mV', '[mV]', '(mV)', 'millivolts']],
+    ['µV', ['µV', 'μV', 'uV', '(µV)']],
   ])('reads %s', (unit, spellings) => {
     for (const spelling of spellings) expect([spelling, unitFromSpelling(spelling)?.unit]).toEqual([spelling, unit]);
   });
@@ -50,7 +52,7 @@ describe('unitFromSpelling', () => {
     }
   });
 
-  it.each(['', 'rpm', '%', 'mV', 'constructor', 'toString', '-', 'g', 'a'])('knows no unit "%s"', (spelling) => {
+  it.each(['', 'rpm', '%', 'V', 'constructor', 'toString', '-', 'g', 'a'])('knows no unit "%s"', (spelling) => {
     expect(unitFromSpelling(spelling)).toBeNull();
   });
 });
