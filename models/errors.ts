@@ -36,9 +36,12 @@ export const ERROR_CODES = [
   'time-not-increasing',
   'cure-out-of-bounds',
   'cure-stalls',
+  // ledgers
+  'event-impossible',
   // the database and the server
   'not-found',
   'already-recorded',
+  'record-missing',
   'state-conflict',
   'database-newer',
   'database-damaged',

@@ -5,6 +5,9 @@ import type { Evaluation, PartEvaluation } from '../../models/evaluation/evaluat
 import type { Forecast } from '../../models/forecast/forecast.ts';
 import type { Layout } from '../../models/log/layout.ts';
 import type { LiveSource } from '../../models/log/live-source.ts';
+import type { LedgerEvent } from '../../models/material/ledger.ts';
+import type { Material } from '../../models/material/material.ts';
+import type { MaterialState } from '../../models/material/material-state.ts';
 import type { Load } from '../../models/run/load.ts';
 
 /**
@@ -29,3 +32,6 @@ export const partEvaluationDocument = document<PartEvaluation>('PartEvaluation',
 export const forecastDocument = document<Forecast>('Forecast', 'Where an open run is heading, for one part');
 /** Plain geometry, made and typed by `models/chart`. */
 export const chartDocument = document<object>('Chart', 'What is to be drawn of a run, as plain geometry');
+export const materialDocument = document<Material>('Material', 'Material document, dwellbook-material/1');
+export const ledgerEventDocument = document<LedgerEvent>('LedgerEvent', 'One line of an out-life ledger');
+export const materialStateDocument = document<MaterialState>('MaterialState', 'What a roll or kit has aged to');

@@ -132,8 +132,18 @@ export const PROBLEM_KINDS = {
     'Cure estimate stalls',
     'The resin set cannot be followed along this history with the accuracy asked for.',
   ),
+  'event-impossible': kind(
+    422,
+    'Cannot have happened so',
+    'The line contradicts what the ledger says already, or the calendar. Correct whichever of the two is wrong.',
+  ),
   'not-found': kind(404, 'Not found', 'There is nothing by that name or number.'),
   'already-recorded': kind(409, 'Already recorded', 'It is here already. Nothing was changed.'),
+  'record-missing': kind(
+    409,
+    'Not on record yet',
+    'What was asked stands on a record that nobody has made. The detail says which, and where it is written down.',
+  ),
   'state-conflict': kind(
     409,
     'Not as things stand',

@@ -52,6 +52,7 @@ export const PLACES: Readonly<Record<string, Place>> = {
     'models/log',
     'models/cycle',
     'models/cure',
+    'models/material',
   ]),
   'models/chart': room([
     ...SHARED,
@@ -62,7 +63,7 @@ export const PLACES: Readonly<Record<string, Place>> = {
     'models/cycle',
     'models/cure',
   ]),
-  'models/material': room([...SHARED, 'models/material', 'models/log']),
+  'models/material': room([...SHARED, 'models/material', 'models/cure']),
   'models/trace': room([...SHARED, 'models/trace', 'models/evaluation']),
   'models/forecast': room([...MODELS.filter((place) => !/chart|material|trace/.test(place))]),
 

@@ -20,6 +20,7 @@ const FROZEN: Record<string, string> = {
   '0007-evaluations': 'b0f3a956862d89e9b5e9f244158b4eb96e4981bf060470ccecb928119c89f12b',
   '0008-imports': '458d5af01ebe12efa6f121ca0b11f52565b448cbaa585ac0f7065490ac114576',
   '0009-tools-and-layups': '018da31967e9a47e9c0004a6abb0119421c6692ba542c27593e410b9bfc84504',
+  '0010-materials': '76c3171f46c651b42d1df11e4b1c42d5434cd762825cd3540ce3aabf28084c47',
 };
 
 function schemaOf(db: Database.Database): string {
