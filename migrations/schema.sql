@@ -22,33 +22,6 @@ BEGIN SELECT RAISE(ABORT, 'the audit trail is never deleted from'); END;
 CREATE TRIGGER audit_is_never_updated BEFORE UPDATE ON audit
 BEGIN SELECT RAISE(ABORT, 'the audit trail is never updated'); END;
 
-CREATE TABLE batch_particulars (
-  id          INTEGER PRIMARY KEY,
-  batch_id    INTEGER NOT NULL REFERENCES batches (id),
-  material_id INTEGER NOT NULL REFERENCES materials (id),
-  made        TEXT CHECK (made IS NULL OR length(made) = 10),
-  expires     TEXT CHECK (expires IS NULL OR length(expires) = 10),
-  certificate TEXT,
-  reason      TEXT,
-  at          TEXT NOT NULL,
-  by          TEXT NOT NULL CHECK (by <> '')
-) STRICT;
-
-CREATE INDEX batch_particulars_by_batch ON batch_particulars (batch_id, id);
-
-CREATE INDEX batch_particulars_by_material ON batch_particulars (material_id);
-
-CREATE TRIGGER batch_particulars_are_never_deleted BEFORE DELETE ON batch_particulars
-BEGIN SELECT RAISE(ABORT, 'what was known of a batch is never deleted'); END;
-
-CREATE TRIGGER batch_particulars_are_never_updated BEFORE UPDATE ON batch_particulars
-BEGIN SELECT RAISE(ABORT, 'what was known of a batch is never updated'); END;
-
-CREATE TABLE batches (
-  id   INTEGER PRIMARY KEY,
-  code TEXT NOT NULL UNIQUE CHECK (code <> '')
-) STRICT;
-
 CREATE TABLE coupons (
   id       INTEGER PRIMARY KEY,
   code     TEXT NOT NULL CHECK (code <> ''),
@@ -155,7 +128,7 @@ CREATE TABLE evaluations (
   packed           BLOB NOT NULL,
   at               TEXT NOT NULL,
   by               TEXT NOT NULL CHECK (by <> '')
-, materials_sha256 TEXT REFERENCES documents (sha256)) STRICT;
+) STRICT;
 
 CREATE INDEX evaluations_by_run ON evaluations (run_id, id);
 
@@ -235,6 +208,113 @@ BEGIN SELECT RAISE(ABORT, 'a lay-up is never deleted'); END;
 CREATE TRIGGER layup_debulks_are_never_updated BEFORE UPDATE ON layup_debulks
 BEGIN SELECT RAISE(ABORT, 'a lay-up is never updated'); END;
 
+CREATE TABLE live_arrivals (
+  id          INTEGER PRIMARY KEY CHECK (id = 1),
+  reserved_to INTEGER NOT NULL CHECK (reserved_to >= 0)
+) STRICT;
+
+CREATE TABLE live_runs (
+  run_id         INTEGER PRIMARY KEY REFERENCES runs (id),
+  vessel_id      INTEGER NOT NULL REFERENCES vessels (id),
+  begun_ms       REAL NOT NULL,
+  -- The last arrival before it was begun, ended, closed: which scans came when is told by it.
+  begun_arrival  INTEGER NOT NULL,
+  -- Scans up to here count.
+  ended_ms       REAL,
+  ended_arrival  INTEGER,
+  closed_at      TEXT,
+  closed_arrival INTEGER,
+  -- When the last of its live rows, merged and verified, was taken away.
+  cleared_at     TEXT,
+  CHECK (ended_ms >= begun_ms),
+  CHECK ((ended_ms IS NULL) = (ended_arrival IS NULL)),
+  CHECK ((closed_at IS NULL) = (closed_arrival IS NULL)),
+  CHECK (closed_at IS NULL OR ended_ms IS NOT NULL),
+  CHECK (cleared_at IS NULL OR closed_at IS NOT NULL)
+) STRICT;
+
+CREATE INDEX live_runs_by_vessel ON live_runs (vessel_id, ended_ms);
+
+CREATE INDEX live_runs_not_cleared ON live_runs (run_id) WHERE cleared_at IS NULL;
+
+CREATE UNIQUE INDEX live_runs_open ON live_runs (vessel_id) WHERE closed_at IS NULL;
+
+CREATE TRIGGER live_runs_are_never_deleted BEFORE DELETE ON live_runs
+BEGIN SELECT RAISE(ABORT, 'a run is never deleted'); END;
+
+CREATE TRIGGER live_runs_only_go_on BEFORE UPDATE ON live_runs
+WHEN NEW.run_id <> OLD.run_id OR NEW.vessel_id <> OLD.vessel_id OR NEW.begun_ms <> OLD.begun_ms
+  OR NEW.begun_arrival <> OLD.begun_arrival
+  OR (OLD.ended_ms IS NOT NULL AND (NEW.ended_ms IS NOT OLD.ended_ms OR NEW.ended_arrival IS NOT OLD.ended_arrival))
+  OR (OLD.closed_at IS NOT NULL AND (NEW.closed_at IS NOT OLD.closed_at OR NEW.closed_arrival IS NOT OLD.closed_arrival))
+  OR (OLD.cleared_at IS NOT NULL AND NEW.cleared_at IS NOT OLD.cleared_at)
+BEGIN SELECT RAISE(ABORT, 'a run is ended once and closed once'); END;
+
+CREATE TABLE live_scans (
+  source_id   INTEGER NOT NULL REFERENCES live_sources (id),
+  time_ms     REAL NOT NULL,
+  -- Rises with every scan that is kept, whatever its instant.
+  arrival     INTEGER NOT NULL,
+  settings_id INTEGER NOT NULL REFERENCES live_source_settings (id),
+  sequence    INTEGER,
+  arrived_ms  REAL NOT NULL,
+  -- One binary64 a channel of the settings' document, little endian; 0x7ff8000000000000 is an absent reading.
+  packed      BLOB NOT NULL,
+  -- On the last scan of each commit in an open run: SHA-256 of the canonical form of all its scans known by then.
+  chain       BLOB CHECK (chain IS NULL OR length(chain) = 32),
+  PRIMARY KEY (source_id, time_ms)
+) STRICT, WITHOUT ROWID;
+
+CREATE TRIGGER live_scans_are_never_updated BEFORE UPDATE ON live_scans
+WHEN OLD.chain IS NOT NULL OR NEW.source_id <> OLD.source_id OR NEW.time_ms <> OLD.time_ms
+  OR NEW.arrival <> OLD.arrival OR NEW.settings_id <> OLD.settings_id OR NEW.sequence IS NOT OLD.sequence
+  OR NEW.arrived_ms <> OLD.arrived_ms OR NEW.packed <> OLD.packed
+BEGIN SELECT RAISE(ABORT, 'a scan is never updated'); END;
+
+CREATE TRIGGER live_scans_of_an_open_run_stay BEFORE DELETE ON live_scans
+WHEN EXISTS (
+  SELECT 1 FROM live_sources JOIN live_runs ON live_runs.vessel_id = live_sources.vessel_id AND closed_at IS NULL
+  WHERE live_sources.id = OLD.source_id AND begun_ms <= OLD.time_ms)
+BEGIN SELECT RAISE(ABORT, 'scans of an open run stay'); END;
+
+CREATE TABLE live_source_passwords (
+  source_id INTEGER PRIMARY KEY REFERENCES live_sources (id),
+  password  TEXT NOT NULL
+) STRICT;
+
+CREATE TABLE live_source_settings (
+  id              INTEGER PRIMARY KEY,
+  source_id       INTEGER NOT NULL REFERENCES live_sources (id),
+  document_sha256 TEXT NOT NULL REFERENCES documents (sha256),
+  resting         INTEGER NOT NULL CHECK (resting IN (0, 1)),
+  at              TEXT NOT NULL,
+  by              TEXT NOT NULL CHECK (by <> '')
+) STRICT;
+
+CREATE INDEX live_source_settings_by_source ON live_source_settings (source_id, id);
+
+CREATE TRIGGER live_source_settings_are_never_deleted BEFORE DELETE ON live_source_settings
+BEGIN SELECT RAISE(ABORT, 'settings are never deleted'); END;
+
+CREATE TRIGGER live_source_settings_are_never_updated BEFORE UPDATE ON live_source_settings
+BEGIN SELECT RAISE(ABORT, 'settings are never updated'); END;
+
+CREATE TABLE live_sources (
+  id        INTEGER PRIMARY KEY,
+  name      TEXT NOT NULL UNIQUE CHECK (name <> ''),
+  vessel_id INTEGER NOT NULL REFERENCES vessels (id),
+  at        TEXT NOT NULL,
+  by        TEXT NOT NULL CHECK (by <> '')
+) STRICT;
+
+CREATE INDEX live_sources_by_vessel ON live_sources (vessel_id, id);
+
+CREATE TRIGGER live_sources_are_never_deleted BEFORE DELETE ON live_sources
+BEGIN SELECT RAISE(ABORT, 'a live source is never deleted'); END;
+
+CREATE TRIGGER live_sources_are_never_updated BEFORE UPDATE ON live_sources
+BEGIN SELECT RAISE(ABORT, 'a live source is never updated'); END;
+
 CREATE TABLE load_parts (
   load_id  INTEGER NOT NULL REFERENCES loads (id),
   part_id  INTEGER NOT NULL REFERENCES parts (id),
@@ -273,75 +353,6 @@ BEGIN SELECT RAISE(ABORT, 'a load is never deleted'); END;
 
 CREATE TRIGGER loads_are_never_updated BEFORE UPDATE ON loads
 BEGIN SELECT RAISE(ABORT, 'a load is never updated'); END;
-
-CREATE TABLE material_events (
-  id          INTEGER PRIMARY KEY,
-  item_id     INTEGER NOT NULL REFERENCES material_items (id),
-  kind        TEXT NOT NULL CHECK (kind IN ('received', 'cut', 'out', 'in', 'room', 'thawed', 'opened', 'excursion',
-                'extended', 'scrapped', 'void')),
-  happened_at TEXT NOT NULL,
-  -- Of `received`.
-  batch_id    INTEGER REFERENCES batches (id),
-  -- Of `cut`: what it was cut from.
-  parent_id   INTEGER REFERENCES material_items (id),
-  length_m    REAL CHECK (length_m > 0),
-  -- The line as models/material reads it.
-  line        TEXT NOT NULL CHECK (json_valid(line)),
-  replaces_id INTEGER UNIQUE REFERENCES material_events (id),
-  reason      TEXT,
-  at          TEXT NOT NULL,
-  by          TEXT NOT NULL CHECK (by <> ''),
-  CHECK ((kind = 'received') = (batch_id IS NOT NULL)),
-  CHECK ((kind = 'cut') = (parent_id IS NOT NULL)),
-  CHECK (parent_id IS NOT item_id),
-  CHECK (replaces_id IS NULL OR reason IS NOT NULL),
-  CHECK (kind <> 'void' OR replaces_id IS NOT NULL)
-) STRICT;
-
-CREATE INDEX material_events_by_batch ON material_events (batch_id) WHERE batch_id IS NOT NULL;
-
-CREATE INDEX material_events_by_item ON material_events (item_id, id);
-
-CREATE INDEX material_events_by_parent ON material_events (parent_id) WHERE parent_id IS NOT NULL;
-
-CREATE TRIGGER material_events_are_never_deleted BEFORE DELETE ON material_events
-BEGIN SELECT RAISE(ABORT, 'a line of the out-life ledger is never deleted'); END;
-
-CREATE TRIGGER material_events_are_never_updated BEFORE UPDATE ON material_events
-BEGIN SELECT RAISE(ABORT, 'a line of the out-life ledger is never updated'); END;
-
-CREATE VIEW material_events_now AS
-SELECT * FROM material_events
-WHERE kind <> 'void' AND NOT EXISTS (SELECT 1 FROM material_events AS later WHERE later.replaces_id = material_events.id);
-
-CREATE TABLE material_items (
-  id   INTEGER PRIMARY KEY,
-  code TEXT NOT NULL UNIQUE CHECK (code <> ''),
-  kind TEXT NOT NULL CHECK (kind IN ('roll', 'kit'))
-) STRICT;
-
-CREATE TRIGGER material_items_are_never_deleted BEFORE DELETE ON material_items
-BEGIN SELECT RAISE(ABORT, 'a roll or kit is never deleted'); END;
-
-CREATE TRIGGER material_items_are_never_updated BEFORE UPDATE ON material_items
-BEGIN SELECT RAISE(ABORT, 'a roll or kit is never updated'); END;
-
-CREATE TABLE materials (
-  id              INTEGER PRIMARY KEY,
-  code            TEXT NOT NULL CHECK (code <> ''),
-  issue           TEXT NOT NULL CHECK (issue <> ''),
-  name            TEXT NOT NULL CHECK (name <> ''),
-  document_sha256 TEXT NOT NULL REFERENCES documents (sha256),
-  at              TEXT NOT NULL,
-  by              TEXT NOT NULL CHECK (by <> ''),
-  UNIQUE (code, issue)
-) STRICT;
-
-CREATE TRIGGER materials_are_never_deleted BEFORE DELETE ON materials
-BEGIN SELECT RAISE(ABORT, 'an issue of a material is never deleted'); END;
-
-CREATE TRIGGER materials_are_never_updated BEFORE UPDATE ON materials
-BEGIN SELECT RAISE(ABORT, 'an issue of a material is never updated'); END;
 
 CREATE TABLE migrations (
   name   TEXT PRIMARY KEY,
@@ -389,48 +400,6 @@ BEGIN SELECT RAISE(ABORT, 'a lay-up is never deleted'); END;
 
 CREATE TRIGGER part_layups_are_never_updated BEFORE UPDATE ON part_layups
 BEGIN SELECT RAISE(ABORT, 'a lay-up is never updated'); END;
-
-CREATE TABLE part_material_sets (
-  id      INTEGER PRIMARY KEY,
-  part_id INTEGER NOT NULL REFERENCES parts (id),
-  reason  TEXT,
-  at      TEXT NOT NULL,
-  by      TEXT NOT NULL CHECK (by <> '')
-) STRICT;
-
-CREATE INDEX part_material_sets_by_part ON part_material_sets (part_id, id);
-
-CREATE TRIGGER part_material_sets_are_never_deleted BEFORE DELETE ON part_material_sets
-BEGIN SELECT RAISE(ABORT, 'what a part was laid up from is never deleted'); END;
-
-CREATE TRIGGER part_material_sets_are_never_updated BEFORE UPDATE ON part_material_sets
-BEGIN SELECT RAISE(ABORT, 'what a part was laid up from is never updated'); END;
-
-CREATE TABLE part_materials (
-  set_id     INTEGER NOT NULL REFERENCES part_material_sets (id),
-  n          INTEGER NOT NULL CHECK (n >= 0),
-  part_id    INTEGER NOT NULL REFERENCES parts (id),
-  item_id    INTEGER NOT NULL REFERENCES material_items (id),
-  plies      INTEGER CHECK (plies > 0),
-  laid_from  TEXT,
-  laid_until TEXT,
-  PRIMARY KEY (set_id, n),
-  CHECK (laid_until IS NULL OR laid_from IS NOT NULL)
-) STRICT, WITHOUT ROWID;
-
-CREATE INDEX part_materials_by_item ON part_materials (item_id, part_id);
-
-CREATE INDEX part_materials_by_part ON part_materials (part_id, set_id);
-
-CREATE TRIGGER part_materials_are_never_deleted BEFORE DELETE ON part_materials
-BEGIN SELECT RAISE(ABORT, 'what a part was laid up from is never deleted'); END;
-
-CREATE TRIGGER part_materials_are_never_updated BEFORE UPDATE ON part_materials
-BEGIN SELECT RAISE(ABORT, 'what a part was laid up from is never updated'); END;
-
-CREATE VIEW part_materials_now AS
-SELECT part_materials.* FROM part_materials
-WHERE set_id = (SELECT max(id) FROM part_material_sets WHERE part_material_sets.part_id = part_materials.part_id);
 
 CREATE TABLE part_particulars (
   id            INTEGER PRIMARY KEY,
@@ -620,6 +589,30 @@ CREATE INDEX runs_by_vessel ON runs (vessel_id, from_ms);
 CREATE TRIGGER runs_are_never_deleted BEFORE DELETE ON runs
 BEGIN SELECT RAISE(ABORT, 'a run is never deleted'); END;
 
+CREATE TABLE sender_keys (
+  id           INTEGER PRIMARY KEY,
+  vessel_id    INTEGER NOT NULL REFERENCES vessels (id),
+  name         TEXT NOT NULL CHECK (name <> ''),
+  sha256       TEXT NOT NULL UNIQUE CHECK (length(sha256) = 64),
+  at           TEXT NOT NULL,
+  by           TEXT NOT NULL CHECK (by <> ''),
+  revoked_at   TEXT,
+  revoked_by   TEXT,
+  last_used_at TEXT,
+  CHECK ((revoked_at IS NULL) = (revoked_by IS NULL))
+) STRICT;
+
+CREATE INDEX sender_keys_by_vessel ON sender_keys (vessel_id, id);
+
+CREATE TRIGGER sender_keys_are_never_deleted BEFORE DELETE ON sender_keys
+BEGIN SELECT RAISE(ABORT, 'a key is never deleted'); END;
+
+CREATE TRIGGER sender_keys_are_only_revoked
+BEFORE UPDATE OF id, vessel_id, name, sha256, at, by, revoked_at, revoked_by ON sender_keys
+WHEN OLD.revoked_at IS NOT NULL OR NEW.id <> OLD.id OR NEW.vessel_id <> OLD.vessel_id OR NEW.name <> OLD.name
+  OR NEW.sha256 <> OLD.sha256 OR NEW.at <> OLD.at OR NEW.by <> OLD.by
+BEGIN SELECT RAISE(ABORT, 'a key is revoked once, and nothing else of it changes'); END;
+
 CREATE TABLE sensor_decisions (
   id       INTEGER PRIMARY KEY,
   run_id   INTEGER NOT NULL REFERENCES runs (id),
@@ -641,6 +634,21 @@ BEGIN SELECT RAISE(ABORT, 'a decision is never deleted'); END;
 CREATE TRIGGER sensor_decisions_are_never_updated BEFORE UPDATE ON sensor_decisions
 BEGIN SELECT RAISE(ABORT, 'a decision is never updated'); END;
 
+CREATE TABLE silent_sources (
+  run_id        INTEGER NOT NULL REFERENCES runs (id),
+  n             INTEGER NOT NULL CHECK (n > 0),
+  layout_sha256 TEXT NOT NULL REFERENCES documents (sha256),
+  at            TEXT NOT NULL,
+  by            TEXT NOT NULL CHECK (by <> ''),
+  PRIMARY KEY (run_id, n)
+) STRICT, WITHOUT ROWID;
+
+CREATE TRIGGER silent_sources_are_never_deleted BEFORE DELETE ON silent_sources
+BEGIN SELECT RAISE(ABORT, 'readings are never deleted'); END;
+
+CREATE TRIGGER silent_sources_are_never_updated BEFORE UPDATE ON silent_sources
+BEGIN SELECT RAISE(ABORT, 'readings are never updated'); END;
+
 CREATE TABLE source_files (
   source_id INTEGER NOT NULL REFERENCES run_sources (id),
   n         INTEGER NOT NULL CHECK (n >= 0),
@@ -657,6 +665,19 @@ CREATE TRIGGER source_files_are_never_deleted BEFORE DELETE ON source_files
 BEGIN SELECT RAISE(ABORT, 'readings are never deleted'); END;
 
 CREATE TRIGGER source_files_are_never_updated BEFORE UPDATE ON source_files
+BEGIN SELECT RAISE(ABORT, 'readings are never updated'); END;
+
+CREATE TABLE source_joins (
+  source_id INTEGER PRIMARY KEY REFERENCES run_sources (id),
+  -- Added to the instants of its scans when it is read; what is stored keeps its own clock.
+  shift_ms  REAL NOT NULL,
+  because   TEXT NOT NULL CHECK (because <> '')
+) STRICT;
+
+CREATE TRIGGER source_joins_are_never_deleted BEFORE DELETE ON source_joins
+BEGIN SELECT RAISE(ABORT, 'readings are never deleted'); END;
+
+CREATE TRIGGER source_joins_are_never_updated BEFORE UPDATE ON source_joins
 BEGIN SELECT RAISE(ABORT, 'readings are never updated'); END;
 
 CREATE TABLE tool_records (
