@@ -29,20 +29,27 @@ import { findZone } from './time-zone.ts';
 /** The layout document as typed; every wrong, unknown or missing key is refused by its path. */
 export function parseLayout(document: unknown): Layout {
   const layout = readLayout(document, '');
-  refuseNamedTwice(
-    layout.channels.map(({ name }) => name),
-    (i) => `channels[${i}].name`,
-  );
-  refuseNamedTwice([...layout.time.columns, ...layout.channels.map(({ column }) => column.trim())], (i) =>
-    columnPath(i, layout.time.columns.length),
-  );
-  refuseStrangeColdJunctions(layout.channels);
+  checkChannels(layout.channels, layout.time.columns);
   checkLines(layout);
   return layout;
 }
 
-function columnPath(index: number, timeColumns: number): string {
-  return index < timeColumns ? `time.columns[${index}]` : `channels[${index - timeColumns}].column`;
+/** A list of channels that stands outside a layout, under the key `channels`. */
+export function parseChannels(value: unknown): readonly ChannelLayout[] {
+  const channels = readChannels(value, 'channels');
+  checkChannels(channels, []);
+  return channels;
+}
+
+function checkChannels(channels: readonly ChannelLayout[], timeColumns: readonly string[]): void {
+  refuseNamedTwice(
+    channels.map(({ name }) => name),
+    (i) => `channels[${i}].name`,
+  );
+  refuseNamedTwice([...timeColumns, ...channels.map(({ column }) => column.trim())], (i) =>
+    i < timeColumns.length ? `time.columns[${i}]` : `channels[${i - timeColumns.length}].column`,
+  );
+  refuseStrangeColdJunctions(channels);
 }
 
 const line = number({ atLeast: 1, whole: true });
@@ -57,7 +64,7 @@ const readLayout = object<Layout>((fields) => ({
   ...fields.optional('units', line),
   ...fields.optional('firstReading', line),
   time: fields.required('time', readTime),
-  channels: fields.required('channels', listOf(readChannel, { atLeast: 1 })),
+  channels: fields.required('channels', readChannels),
   ...fields.optional('missing', listOf(text)),
 }));
 
@@ -148,6 +155,10 @@ function readChannel(value: unknown, path: string): ChannelLayout {
     refuse(`${path}.range`, 'the least believable value, then a greater one', channel.range);
   }
   return channel;
+}
+
+function readChannels(value: unknown, path: string): readonly ChannelLayout[] {
+  return listOf(readChannel, { atLeast: 1 })(value, path);
 }
 
 /** The quantity each role reads. A set point may be either; what is `other` is never judged and may have any unit. */
