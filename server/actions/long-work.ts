@@ -1,12 +1,16 @@
 import type { CureCourse } from '../../models/chart/chart-inputs.ts';
+import type { ThroughPart } from '../../models/cure/heat/through-part.ts';
 import type { Evaluation } from '../../models/evaluation/evaluation.ts';
 import type { Readings } from '../../models/log/readings.ts';
+import type { CureThroughPart } from './ask-thickness.ts';
 import type { EstimateCure, EvaluateLog } from './evaluate-log.ts';
 import { startThread } from './thread.ts';
 
 export interface LongWork {
   readonly evaluate: EvaluateLog;
   readonly estimateCure: EstimateCure;
+  /** Always in the thread: it takes a tenth of a second and more, however small the log. */
+  readonly cureThroughPart: CureThroughPart;
   readonly close: () => Promise<void>;
 }
 
@@ -27,6 +31,7 @@ export function createLongWork({ doneHere = READINGS_DONE_HERE } = {}): LongWork
       const { cureCourses } = await import('./cure-courses.ts');
       return cureCourses(...given);
     },
+    cureThroughPart: (asked) => thread.ask<readonly ThroughPart[]>('throughPart', [asked]),
     close: thread.close,
   };
 }

@@ -1,10 +1,11 @@
 import { parentPort } from 'node:worker_threads';
+import { throughPart } from '../../models/cure/heat/through-part.ts';
 import { DomainError, type ErrorCode, type Facts } from '../../models/errors.ts';
 import { evaluateLog } from '../../models/evaluation/judge.ts';
 import { cureCourses } from './cure-courses.ts';
 
 /** What a thread can be asked to do; its arguments are plain data. */
-export const LONG_WORK = { evaluateLog, cureCourses } as const;
+export const LONG_WORK = { evaluateLog, cureCourses, throughPart } as const;
 
 export interface Question {
   readonly id: number;

@@ -42,6 +42,7 @@ export async function serveWorkshop(options: ServerOptions): Promise<void> {
   const app = createApp({
     ...parts,
     estimateCure: longWork.estimateCure,
+    cureThroughPart: longWork.cureThroughPart,
     log,
     siteFolder: findSite(),
     incomingFolder,

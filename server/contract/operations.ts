@@ -31,6 +31,7 @@ import {
   runView,
   setLoadRequest,
 } from './runs.ts';
+import { thickness, thicknessQuery } from './thickness.ts';
 import { setToolRequest } from './tool-record.ts';
 import { tools, toolView } from './tools.ts';
 import { addVesselRequest, setWorkshopRequest, vessels, workshop } from './workshop.ts';
@@ -87,6 +88,7 @@ export const OPERATIONS = {
   addPartResult: { ...ROUTES.addPartResult, body: addPartResultRequest, answer: partView, status: 201 },
   readLayup: { ...ROUTES.readLayup, query: layupQuery, answer: layupView },
   setLayup: { ...ROUTES.setLayup, body: setLayupRequest, answer: layupView, status: 201 },
+  readThickness: { ...ROUTES.readThickness, query: thicknessQuery, answer: thickness },
   addPartWork: { ...ROUTES.addPartWork, body: addPartWorkRequest, answer: partView, status: 201 },
   setCoupon: { ...ROUTES.setCoupon, body: setCouponRequest, answer: partView, status: 201 },
   listTools: { ...ROUTES.listTools, answer: tools },

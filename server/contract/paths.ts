@@ -127,6 +127,15 @@ export function partLayupPath(serial: string, query: { drawing?: string; tool?: 
   return withQuery(`${partPath(serial)}/layup`, query);
 }
 
+/** `bag` and `tool` name the channels of the two sides, `bagFilm` and `toolFilm` coefficients in W/(m² K). */
+export function partThicknessPath(
+  serial: string,
+  run: number,
+  query: { bag?: string; tool?: string; bagFilm?: number; toolFilm?: number; resin?: string } = {},
+): string {
+  return withQuery(`${partPath(serial)}/runs/${run}/thickness`, query);
+}
+
 export function partWorksPath(serial: string): string {
   return `${partPath(serial)}/works`;
 }

@@ -88,6 +88,12 @@ export const ROUTES = {
   addPartResult: route('post', '/api/parts/{serial}/results', 'Record a test or inspection', DECIDERS, 'json'),
   readLayup: route('get', '/api/parts/{serial}/layup', 'How a part was laid up, and the last part like it', ANYONE),
   setLayup: route('post', '/api/parts/{serial}/layup', 'Record how a part was laid up', ANYONE, 'json'),
+  readThickness: route(
+    'get',
+    '/api/parts/{serial}/runs/{run}/thickness',
+    'How hot a part got between its faces, and how far it cured there',
+    ANYONE,
+  ),
   addPartWork: route('post', '/api/parts/{serial}/works', 'Record what was done to a part after cure', ANYONE, 'json'),
   setCoupon: route('post', '/api/parts/{serial}/coupons', 'Record a witness coupon of a part', ANYONE, 'json'),
   listTools: route('get', '/api/tools', 'Tools', ANYONE),

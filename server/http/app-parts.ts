@@ -1,3 +1,4 @@
+import type { CureThroughPart } from '../actions/ask-thickness.ts';
 import type { EstimateCure } from '../actions/evaluate-log.ts';
 import type { JudgingParts } from '../actions/judge-run.ts';
 import type { AuditVerification } from '../contract/audit.ts';
@@ -5,6 +6,7 @@ import type { AuditVerification } from '../contract/audit.ts';
 /** What the server is made of. Everything is opened by who makes it. */
 export interface AppParts extends JudgingParts {
   readonly estimateCure: EstimateCure;
+  readonly cureThroughPart: CureThroughPart;
   /** Folder of the built pages; null where none are served. */
   readonly siteFolder: string | null;
   /** Folder an upload is written to while it arrives. */

@@ -7,8 +7,10 @@ import { findCode } from '../store/find.ts';
 import { listParts } from '../store/parts.ts';
 import type { SomeHandlers } from './handler.ts';
 import { layupView } from './layup-view.ts';
+import { numberIn } from './number-in.ts';
 import { openApi } from './open-api.ts';
 import { partView } from './part-view.ts';
+import { readThickness } from './read-thickness.ts';
 
 export const partHandlers: SomeHandlers<
   | 'listParts'
@@ -16,6 +18,7 @@ export const partHandlers: SomeHandlers<
   | 'addPartResult'
   | 'readLayup'
   | 'setLayup'
+  | 'readThickness'
   | 'addPartWork'
   | 'setCoupon'
   | 'find'
@@ -36,6 +39,8 @@ export const partHandlers: SomeHandlers<
     setLayup(parts, serial, body);
     return layupView(parts.db, serial);
   },
+  readThickness: (parts, { params, query }) =>
+    readThickness(parts, params.serial ?? '', numberIn(params, 'run'), query),
   addPartWork(parts, { params, body }) {
     const { serial = '' } = params;
     addPartWork(parts, serial, body);

@@ -48,7 +48,7 @@ export async function readChart(
 }
 
 /** Zooming asks for the same readings again and again; they never change while the run's sources do not. */
-function readLogOnce(db: Db, run: number): ReadLog {
+export function readLogOnce(db: Db, run: number): ReadLog {
   const sources = sourceInputs(db, run);
   const key = `log ${run} ${sources.map(({ chainSha256, layoutSha256 }) => `${chainSha256} ${layoutSha256}`).join(' ')}`;
   return remember(db, key, () => readRunLog(sources));

@@ -2,6 +2,7 @@ import { readFileSync } from 'node:fs';
 import { createServer, type Server } from 'node:http';
 import type { AddressInfo } from 'node:net';
 import { join } from 'node:path';
+import { throughPart } from '../../models/cure/heat/through-part.ts';
 import { evaluateLog } from '../../models/evaluation/judge.ts';
 import type { Layout } from '../../models/log/layout.ts';
 import type { Readings } from '../../models/log/readings.ts';
@@ -122,6 +123,7 @@ function serve(parts: JudgingParts, folder: string): Promise<Server> {
     watchedFolder: null,
     mostUploadBytes: 0,
     estimateCure: async (...given) => cureCourses(...given),
+    cureThroughPart: async (asked) => throughPart(asked),
     verify: async () => verifyChains(parts.db),
   });
   const server = createServer(app);

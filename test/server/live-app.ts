@@ -3,6 +3,7 @@ import { createServer } from 'node:http';
 import type { AddressInfo } from 'node:net';
 import { join } from 'node:path';
 import { afterEach, expect } from 'vitest';
+import { throughPart } from '../../models/cure/heat/through-part.ts';
 import { evaluateLog } from '../../models/evaluation/judge.ts';
 import { cureCourses } from '../../server/actions/cure-courses.ts';
 import { verifyChains } from '../../server/actions/verify-chains.ts';
@@ -54,6 +55,7 @@ export async function liveApp(changes: Partial<AppParts> = {}): Promise<LiveApp>
     actor: { name: 'inspector 2', roles: ROLES },
     evaluate: async (log, inputs) => evaluateLog(log, inputs),
     estimateCure: async (...given) => cureCourses(...given),
+    cureThroughPart: async (asked) => throughPart(asked),
     siteFolder: null,
     incomingFolder,
     watchedFolder: null,

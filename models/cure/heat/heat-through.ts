@@ -38,6 +38,8 @@ export interface HeatHistory {
   /** At the moments asked for. */
   readonly profiles: readonly Profile[];
   readonly hottest: Hottest;
+  /** The same of the places where something reacts; null where nothing does. */
+  readonly hottestReacting: Hottest | null;
   /** Least and most cured place at the end. */
   readonly leastCured: { readonly alpha: number; readonly positionM: number };
   readonly mostCured: { readonly alpha: number; readonly positionM: number };
@@ -96,7 +98,14 @@ export function heatThrough(
   });
   const profiles: Profile[] = [];
   const watch = new HottestWatch(stack.positionM);
-  watch.accept(timeS[0]!, temperatureK);
+  const reacting = reactingNodes(stack.reactionHeat);
+  const reactingK = temperatureK.subarray(...reacting);
+  const watchReacting = new HottestWatch(stack.positionM.subarray(...reacting));
+  const look = (at: number) => {
+    watch.accept(at, temperatureK);
+    if (reactingK.length > 0) watchReacting.accept(at, reactingK);
+  };
+  look(timeS[0]!);
   let h = 1;
   let steps = 0;
   let wanted = 0;
@@ -124,7 +133,7 @@ export function heatThrough(
       temperatureK.set(step.temperatureK);
       alpha.set(step.alpha);
       at = isLast ? piece.endS : at + taken;
-      watch.accept(at, temperatureK);
+      look(at);
       h = Math.max(isLast ? h : 0, taken * Math.min(3, 0.9 / Math.sqrt(excess)));
     }
     report(at);
@@ -137,6 +146,7 @@ export function heatThrough(
     endTgK: glassTransition === undefined ? null : end.alpha.map((degree) => glassTransitionK(degree, glassTransition)),
     profiles,
     hottest: watch.hottest()!,
+    hottestReacting: watchReacting.hottest(),
     leastCured: placeOf(end.alpha, stack.positionM, (degree, best) => degree < best),
     mostCured: placeOf(end.alpha, stack.positionM, (degree, best) => degree > best),
     steps,
@@ -146,6 +156,12 @@ export function heatThrough(
 function historyOfFace(face: Face): Float64Array {
   if (face.meets === 'gas') return face.gasK;
   return face.meets === 'thermocouple' ? face.temperatureK : new Float64Array(0);
+}
+
+/** From the first node that reacts to after the last. */
+function reactingNodes(reactionHeat: Float64Array): [number, number] {
+  const first = reactionHeat.findIndex((heat) => heat > 0);
+  return first < 0 ? [0, 0] : [first, reactionHeat.findLastIndex((heat) => heat > 0) + 1];
 }
 
 /** What a face does from a moment of a piece on. */
