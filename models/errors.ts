@@ -50,6 +50,8 @@ export const ERROR_CODES = [
   'too-large',
   'media-type-wrong',
   'not-permitted',
+  'key-unknown',
+  'disk-full',
   'usage',
 ] as const;
 

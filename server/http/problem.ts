@@ -172,6 +172,16 @@ export const PROBLEM_KINDS = {
     'Send JSON as application/json and a file as application/octet-stream.',
   ),
   'not-permitted': kind(403, 'Not permitted', 'Your roles do not include one that may do this.'),
+  'key-unknown': kind(
+    401,
+    'Key not known',
+    'Send the key that was shown when it was made, as "Authorization: Bearer KEY". A lost one is made anew.',
+  ),
+  'disk-full': kind(
+    507,
+    'Cannot be kept now',
+    'Nothing of it was kept. Make room on the disk of the workshop, and send it again: sending twice does no harm.',
+  ),
   usage: kind(400, 'Wrong usage', 'The command was not understood; its --help says how it is written.'),
 } as const satisfies Record<ErrorCode, ProblemKind>;
 

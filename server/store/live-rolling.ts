@@ -1,5 +1,6 @@
 import type { Db } from './database.ts';
-import { findOpenRunOf, listRunsToClear, markCleared } from './live-runs.ts';
+import { findOpenRunOf, type LiveRunRow, listRunsToClear, markCleared } from './live-runs.ts';
+import { listLiveSources } from './live-sources.ts';
 
 /** First and last scan kept of a source, ms; null where none is. */
 export function keptSpanOf(db: Db, sourceId: number): { readonly fromMs: number; readonly untilMs: number } | null {
@@ -62,27 +63,38 @@ export function pruneScans(
 
 /**
  * Takes away live rows of a closed run, at most so many: they were merged into its blocks and compared with them.
- * What came after it was closed stays in the rolling store.
+ * What came after it was closed stays in the rolling store. Null where no closed run has any left.
  */
-export function clearClosedRun(db: Db, atMost: number, at: string): { sourceId: number; scans: number } | null {
+export function clearClosedRun(db: Db, atMost: number, at: string): ClearedScans | null {
   const [closed] = listRunsToClear(db);
   if (closed === undefined) return null;
-  const { vesselId, begunMs, endedMs, closedArrival } = closed;
-  const sources = db.prepare<[number], number>('SELECT id FROM live_sources WHERE vessel_id = ?').pluck().all(vesselId);
   return db
     .transaction(() => {
-      for (const sourceId of sources) {
-        const { changes } = db
-          .prepare(
-            `DELETE FROM live_scans WHERE (source_id, time_ms) IN
-               (SELECT source_id, time_ms FROM live_scans WHERE source_id = @sourceId
-                  AND time_ms BETWEEN @begunMs AND @endedMs AND arrival <= @closedArrival LIMIT @atMost)`,
-          )
-          .run({ sourceId, begunMs, endedMs, closedArrival, atMost });
-        if (changes > 0) return { sourceId, scans: changes };
-      }
-      markCleared(db, closed.run, at);
-      return { sourceId: 0, scans: 0 };
+      const cleared = listLiveSources(db, closed.vesselId)
+        .map(({ id }) => clearScans(db, closed, id, atMost))
+        .find(({ scans }) => scans > 0);
+      if (cleared === undefined) markCleared(db, closed.run, at);
+      return cleared ?? { sourceId: 0, scans: 0, bytes: 0 };
     })
     .immediate();
+}
+
+export interface ClearedScans {
+  readonly sourceId: number;
+  readonly scans: number;
+  readonly bytes: number;
+}
+
+function clearScans(db: Db, closed: LiveRunRow, sourceId: number, atMost: number): ClearedScans {
+  const { begunMs, endedMs, closedArrival } = closed;
+  const gone = db
+    .prepare<object, number>(
+      `DELETE FROM live_scans WHERE (source_id, time_ms) IN
+         (SELECT source_id, time_ms FROM live_scans WHERE source_id = @sourceId
+            AND time_ms BETWEEN @begunMs AND @endedMs AND arrival <= @closedArrival LIMIT @atMost)
+       RETURNING length(packed)`,
+    )
+    .pluck()
+    .all({ sourceId, begunMs, endedMs, closedArrival, atMost });
+  return { sourceId, scans: gone.length, bytes: gone.reduce((sum, bytes) => sum + bytes, 0) };
 }

@@ -4,6 +4,7 @@ import type { LiveSource } from '../../models/log/live-source.ts';
 import type { Db } from './database.ts';
 import { keepDocument, readDocument } from './documents.ts';
 import { findOpenRunOf } from './live-runs.ts';
+import { prepared } from './prepared.ts';
 
 export interface LiveSourceRow {
   readonly id: number;
@@ -80,9 +81,8 @@ export function requireLiveSource(db: Db, id: number): LiveSourceRow {
 
 /** The settings that hold for a source: the latest. */
 export function findSettings(db: Db, sourceId: number): LiveSettings | undefined {
-  const row = db
-    .prepare<[number], SettingsRow>('SELECT * FROM live_source_settings WHERE source_id = ? ORDER BY id DESC LIMIT 1')
-    .get(sourceId);
+  const sql = 'SELECT * FROM live_source_settings WHERE source_id = ? ORDER BY id DESC LIMIT 1';
+  const row = prepared<[number], SettingsRow>(db, sql).get(sourceId);
   return row === undefined ? undefined : settingsOf(db, row);
 }
 
@@ -133,7 +133,21 @@ function rowOf(db: Db, { id, name, vessel_id, vessel }: SourceRow): LiveSourceRo
   return { id, name, vesselId: vessel_id, vessel, settings };
 }
 
+const settingsByDb = new WeakMap<Db, Map<number, LiveSettings>>();
+
+/** Settings never change, and are asked for with every scan. */
 function settingsOf(db: Db, row: SettingsRow): LiveSettings {
+  const byId = settingsByDb.get(db) ?? new Map<number, LiveSettings>();
+  settingsByDb.set(db, byId);
+  const known = byId.get(row.id);
+  // The number of settings that were rolled back is given again.
+  if (known !== undefined && known.sha256 === row.document_sha256 && known.at === row.at) return known;
+  const settings = readSettings(db, row);
+  byId.set(row.id, settings);
+  return settings;
+}
+
+function readSettings(db: Db, row: SettingsRow): LiveSettings {
   return {
     id: row.id,
     sourceId: row.source_id,
