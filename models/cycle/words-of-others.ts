@@ -17,7 +17,7 @@ export function otherSentences(cycle: Cycle): NamedSentences[] {
     { name: 'Log', sentences: logSentences(cycle) },
     { name: 'Bag leak test', sentences: leakTestSentences(cycle) },
     { name: 'Cure, estimated', sentences: cureSentences(cycle) },
-    { name: 'Material', sentences: cycle.material?.outLife ? ['All material was within its out-life.'] : [] },
+    { name: 'Material', sentences: cycle.material?.outLife ? [OUT_LIFE] : [] },
     {
       name: 'Instruments',
       sentences: cycle.instruments?.calibration ? ['All instruments were in calibration on the day of the run.'] : [],
@@ -25,6 +25,9 @@ export function otherSentences(cycle: Cycle): NamedSentences[] {
     { name: 'Decision rule', sentences: cycle.decision === undefined ? [] : [DECISION[cycle.decision.rule]] },
   ].filter(({ sentences }) => sentences.length > 0);
 }
+
+const OUT_LIFE =
+  'As the heat came on, all material was within its out-life and whatever else its document limits: shelf life, tack, re-freezing.';
 
 /** What each decision rule means. */
 export const DECISION = {

@@ -3,6 +3,7 @@ import type { Cycle } from '../cycle/cycle.ts';
 import { defaultSentences } from '../cycle/words-of-defaults.ts';
 import { DomainError } from '../errors.ts';
 import type { ReadLog } from '../log/readings.ts';
+import type { MaterialRecords } from '../material/ledger.ts';
 import type { RunChannel } from '../run/channel.ts';
 import { foldReadings, type RunDigest } from '../run/digest.ts';
 import { gapsOf } from '../run/gaps.ts';
@@ -29,6 +30,8 @@ export interface JudgementInputs {
   readonly cycle: Cycle;
   readonly load: Load | null;
   readonly resin: Resin | null;
+  /** What the parts were laid up from, as their ledgers tell it. */
+  readonly materials?: MaterialRecords | null;
   /** Decisions that do not stand in the load document. */
   readonly exclusions: readonly Exclusion[];
   /** Channels that a person decided to go on believing although a fault was suspected. */
@@ -157,6 +160,7 @@ function judgementOf(
     cycle,
     part,
     resin: inputs.resin,
+    materials: inputs.materials ?? null,
     log: digest.log,
     isOpen: inputs.open,
     longestGapMs: gapMs,

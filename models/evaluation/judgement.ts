@@ -1,5 +1,6 @@
 import type { Resin } from '../cure/resin.ts';
 import type { Cycle } from '../cycle/cycle.ts';
+import type { MaterialRecords } from '../material/ledger.ts';
 import type { RunChannel } from '../run/channel.ts';
 import type { RunDigest } from '../run/digest.ts';
 import { type Gap, gapsOf } from '../run/gaps.ts';
@@ -50,6 +51,8 @@ export interface Judgement {
   readonly cycle: Cycle;
   readonly part: LoadPart | null;
   readonly resin: Resin | null;
+  /** What the parts were laid up from; null where nothing of it is on record. */
+  readonly materials: MaterialRecords | null;
   readonly log: Interval;
   /** The run goes on: what has not ended is pending. */
   readonly isOpen: boolean;

@@ -2,6 +2,7 @@ import { ALLOWANCE } from './dips.ts';
 import type { Outcome } from './evaluation.ts';
 import { type Found, isAtMost, say, sayBeside } from './finding.ts';
 import type { Judgement } from './judgement.ts';
+import { outLifeLimit } from './out-life-limit.ts';
 
 /** Limits on what was recorded before the run: `leak-test`, `material/out-life`, `instruments/calibration`. */
 export function recordLimits(j: Judgement): Found[] {
@@ -9,7 +10,7 @@ export function recordLimits(j: Judgement): Found[] {
   const notRecorded = (limit: string): Found => ({ limit, outcome: 'cannot-tell', unit: '', because: 'Not recorded.' });
   return [
     ...(leakTest === undefined ? [] : [leakTestLimit(j)]),
-    ...(material?.outLife === true ? [notRecorded('material/out-life')] : []),
+    ...(material?.outLife === true ? [outLifeLimit(j)] : []),
     ...(instruments?.calibration === true ? [notRecorded('instruments/calibration')] : []),
   ];
 }

@@ -3,10 +3,10 @@ import type { Material } from './material.ts';
 
 /** What a room was like. What is left out was not recorded. */
 export interface Room {
-  readonly temperature?: number;
+  readonly temperature?: number | undefined;
   readonly unit: TemperatureUnit;
   /** % RH. */
-  readonly humidity?: number;
+  readonly humidity?: number | undefined;
 }
 
 /** Which of a material's lives an extension is about. */
@@ -20,13 +20,13 @@ export type LedgerEvent = { readonly at: string } & (
       readonly kind: 'received';
       readonly batch: string;
       readonly as: 'frozen' | 'out';
-      readonly room?: Room;
+      readonly room?: Room | undefined;
       /** Out-time that the maker or carrier states, in minutes. */
-      readonly outMinutesBefore?: number;
+      readonly outMinutesBefore?: number | undefined;
     }
   /** A kit was cut from a roll or from another kit; it is out from then on. */
-  | { readonly kind: 'cut'; readonly from: string; readonly room?: Room }
-  | { readonly kind: 'out'; readonly room?: Room }
+  | { readonly kind: 'cut'; readonly from: string; readonly room?: Room | undefined }
+  | { readonly kind: 'out'; readonly room?: Room | undefined }
   | { readonly kind: 'in' }
   /** The room it lies in was measured. */
   | { readonly kind: 'room'; readonly room: Room }
@@ -44,7 +44,7 @@ export type LedgerEvent = { readonly at: string } & (
       readonly kind: 'extended';
       readonly life: ExtendedLife;
       /** Of an out-life: the new one. */
-      readonly lifeDays?: number;
+      readonly lifeDays?: number | undefined;
       /** The extension's own end, and a shelf life's new one. */
       readonly until: string;
       readonly authority: string;

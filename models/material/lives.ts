@@ -23,6 +23,13 @@ export interface Life {
   readonly why: readonly string[];
 }
 
+export const LIFE_WORDS: Readonly<Record<Life['name'], string>> = {
+  'out-life': 'out-life',
+  'shelf-life': 'shelf life',
+  'tack-life': 'tack life',
+  're-freezing': 're-freezings',
+};
+
 // As in judging: computed figures are compared with an allowance of 1e-9 of the figure.
 const ALLOWANCE = 1e-9;
 
@@ -110,13 +117,13 @@ function clock(
     readonly item: string;
   },
 ): Life {
-  const keeps = (used: number) => used <= limit + ALLOWANCE * used;
+  const keeps = (used: number) => Number.isFinite(used) && used <= limit + ALLOWANCE * used;
   const outcome = !keeps(least) ? 'not-met' : keeps(most) ? 'met' : 'cannot-tell';
   const words = most === least ? durationWords(least) : `at least ${durationWords(least)}`;
   const open = said.unknown.map((reason) => `${reason.charAt(0).toUpperCase()}${reason.slice(1)}.`);
   const because =
     outcome === 'cannot-tell'
-      ? `Whether ${said.item} was within its ${name.replace('-', ' ')} cannot be told: ${said.unknown[0] ?? 'its ledger is not whole'}.`
+      ? `Whether ${said.item} was within its ${LIFE_WORDS[name]} cannot be told: ${said.unknown[0] ?? 'its ledger is not whole'}.`
       : said.used(outcome === 'met' && most !== least ? `at most ${durationWords(most)}` : words);
   return {
     name,

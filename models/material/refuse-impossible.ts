@@ -9,7 +9,9 @@ import type { MaterialRecords } from './ledger.ts';
  * @throws {DomainError} `event-impossible` naming the item and the line.
  */
 export function refuseImpossible(records: MaterialRecords, nowMs: number): void {
-  for (const { item, events } of records.items) {
+  for (const { item, events, uses = [] } of records.items) {
+    // Everything that was written of it was taken back.
+    if (events.length === 0 && uses.length === 0) continue;
     for (const event of events) {
       const lastly = event.kind === 'excursion' ? (event.points.at(-1)?.[0] ?? event.at) : event.at;
       if (Date.parse(lastly) > nowMs) {

@@ -19,6 +19,7 @@ export async function addSource(parts: JudgingParts, run: number, recording: New
     chainSha256: chainOfReadings(read.log.readings),
     layoutSha256: sha256OfDocument(read.layout),
     fileSha256s: read.files.map(({ sha256 }) => sha256),
+    untilMs: Math.trunc(read.log.readings.timeMs.at(-1) ?? 0),
     readLog: () => read.log,
   };
   const sources = [...sourceInputs(db, run), added];

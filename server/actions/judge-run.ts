@@ -54,13 +54,15 @@ export async function judgeRun(parts: JudgingParts, run: number, because = 'judg
   );
 }
 
-async function evaluateInputs(evaluate: EvaluateLog, inputs: RunInputs): Promise<Evaluation> {
-  const { cycle, load, resin, decisions } = inputs;
+/** Judges by inputs; nothing is written. */
+export async function evaluateInputs(evaluate: EvaluateLog, inputs: RunInputs): Promise<Evaluation> {
+  const { cycle, load, resin, materials, decisions } = inputs;
   const { exclusions, believed } = decisions;
   const evaluation = await evaluate(inputs.readLog(), {
     cycle,
     load,
     resin,
+    materials,
     exclusions,
     believed,
     barometer: null,
@@ -73,7 +75,8 @@ async function evaluateInputs(evaluate: EvaluateLog, inputs: RunInputs): Promise
   };
 }
 
-function writeEvaluation(
+/** Writes a judgement, unless its run was changed since its inputs were gathered; part of a larger write. */
+export function writeEvaluation(
   parts: ActionParts,
   run: number,
   because: string,
@@ -88,6 +91,7 @@ function writeEvaluation(
     });
   }
   keepDocument(db, inputs.decisions);
+  if (inputs.materials !== null) keepDocument(db, inputs.materials);
   const { at, by } = deedOf(parts);
   const { hashes } = inputs;
   const id = insertEvaluation(db, { run, because, engine: VERSION, inputs: hashes, document, at, by });

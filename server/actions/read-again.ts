@@ -43,6 +43,7 @@ export async function readAgain(
     chainSha256: chainOfReadings(log.readings),
     layoutSha256: sha256OfDocument(layout),
     fileSha256s: source.files.map(({ sha256 }) => sha256),
+    untilMs: Math.trunc(log.readings.timeMs.at(-1) ?? 0),
     readLog: () => log,
   };
   const others = sourceInputs(db, run).filter(({ n: other }) => other !== n);

@@ -2,6 +2,7 @@ import type { Resin } from '../../models/cure/resin.ts';
 import type { Cycle } from '../../models/cycle/cycle.ts';
 import type { ReadLog } from '../../models/log/readings.ts';
 import { temperaturesOfEmf } from '../../models/log/temperatures-of-emf.ts';
+import type { MaterialRecords } from '../../models/material/ledger.ts';
 import type { Exclusion, Load } from '../../models/run/load.ts';
 import type { SensorDecision } from '../contract/runs.ts';
 import { oneHash, sha256OfDocument } from '../store/canonical.ts';
@@ -10,6 +11,7 @@ import type { Db } from '../store/database.ts';
 import { readDecisions } from '../store/decisions.ts';
 import type { EvaluationInputs } from '../store/evaluations.ts';
 import { findLoad } from '../store/loads.ts';
+import { recordsOfParts } from '../store/material-records.ts';
 import { findResin, readResinDocument } from '../store/resins.ts';
 import { readSourceLog, readSources } from '../store/sources.ts';
 import { mergeLogs } from './merge-logs.ts';
@@ -28,6 +30,8 @@ export interface RunInputs {
   readonly cycle: Cycle;
   readonly resin: Resin | null;
   readonly decisions: DecisionsDocument;
+  /** What the parts were laid up from; null where the cycle does not ask, or nothing of it is on record. */
+  readonly materials: MaterialRecords | null;
   readonly hashes: EvaluationInputs;
   /** Of the bytes as they came. */
   readonly logSha256: string;
@@ -49,6 +53,8 @@ export interface SourceInput {
   readonly chainSha256: string;
   readonly layoutSha256: string;
   readonly fileSha256s: readonly string[];
+  /** The last scan, in whole ms. */
+  readonly untilMs: number;
   readonly readLog: () => ReadLog;
 }
 
@@ -62,11 +68,21 @@ export function gatherInputs(db: Db, run: number, changes: Changes = {}): RunInp
   const resin = cycle.cure === undefined ? undefined : findResin(db, cycle.cure.resin);
   const decisions = decisionsDocument([...readDecisions(db, run), ...(changes.decisions ?? [])]);
   const sources = changes.sources ?? sourceInputs(db, run);
+  const untilMs = Math.max(...sources.map((source) => source.untilMs));
+  const asks = cycle.material?.outLife === true;
+  const materials = asks
+    ? recordsOfParts(
+        db,
+        load.parts.map(({ part }) => part),
+        untilMs,
+      )
+    : null;
   return {
     load,
     cycle,
     resin: resin === undefined ? null : readResinDocument(db, resin),
     decisions,
+    materials,
     hashes: {
       readings: oneHash(sources.map(({ chainSha256 }) => chainSha256)),
       layout: oneHash(sources.map(({ layoutSha256 }) => layoutSha256)),
@@ -74,6 +90,7 @@ export function gatherInputs(db: Db, run: number, changes: Changes = {}): RunInp
       cycle: cycleRow.sha256,
       resin: resin?.sha256 ?? null,
       decisions: sha256OfDocument(decisions),
+      materials: materials === null ? null : sha256OfDocument(materials),
     },
     logSha256: oneHash(sources.flatMap(({ fileSha256s }) => fileSha256s)),
     readLog: () => readRunLog(sources),
@@ -87,6 +104,7 @@ export function sourceInputs(db: Db, run: number): (SourceInput & { readonly n: 
     chainSha256: source.chainSha256,
     layoutSha256: source.layoutSha256,
     fileSha256s: source.files.map(({ sha256 }) => sha256),
+    untilMs: Date.parse(source.until),
     readLog: () => readSourceLog(db, source),
   }));
 }

@@ -38,18 +38,19 @@ export const itemLine = z.object({
   batch: z.string().nullable(),
   material: z.object({ code: z.string(), issue: z.string(), name: z.string() }).nullable(),
   cutFrom: z.string().nullable(),
-  /** Computed by `models/material` as of now. */
-  state: materialStateDocument,
+  /** Worked out by `models/material` as of now; null where every line of it was taken back. */
+  state: materialStateDocument.nullable(),
 });
 export type ItemLine = z.infer<typeof itemLine>;
 
-/** What is in life and what is due; the soonest first, then what nobody can tell, scrapped ones left out. */
+/** What is in life and what is due: the soonest first, last what nobody can tell. */
 export const materials = z.object({
   now: instant,
   materials: z.array(materialLine),
   batches: z.array(batchLine),
   items: z.array(itemLine),
-  scrapped: z.number(),
+  /** Left out: scrapped ones, and kits that lie in a part. */
+  done: z.number(),
 });
 export type Materials = z.infer<typeof materials>;
 
@@ -136,6 +137,12 @@ export type CutKitRequest = z.input<typeof cutKitRequest>;
 
 const at = instant.optional();
 
+/** A freezer's record: instants and temperatures, in rising time. */
+const points = z
+  .array(z.tuple([instant, z.number().min(-200).max(100)]))
+  .min(2)
+  .max(10_000);
+
 /** What anyone in the shop writes. `at` is when it happened; default: now. */
 export const itemEvent = z.discriminatedUnion('kind', [
   z.strictObject({ kind: z.literal('out'), at, room: room.optional() }),
@@ -171,9 +178,35 @@ export const recordExcursionRequest = z.strictObject({
 });
 export type RecordExcursionRequest = z.input<typeof recordExcursionRequest>;
 
+/** Any line of a ledger, whole. */
+const writtenEvent = z.discriminatedUnion('kind', [
+  z.strictObject({
+    kind: z.literal('received'),
+    at: instant,
+    batch: name,
+    as: z.enum(['frozen', 'out']),
+    room: room.optional(),
+    outMinutesBefore: z.number().min(0).max(1e7).optional(),
+  }),
+  z.strictObject({ kind: z.literal('cut'), at: instant, from: name, room: room.optional() }),
+  z.strictObject({ kind: z.literal('out'), at: instant, room: room.optional() }),
+  z.strictObject({ kind: z.enum(['in', 'thawed', 'opened', 'scrapped']), at: instant }),
+  z.strictObject({ kind: z.literal('room'), at: instant, room }),
+  z.strictObject({ kind: z.literal('excursion'), at: instant, points, unit: z.enum(TEMPERATURE_UNITS) }),
+  z.strictObject({
+    kind: z.literal('extended'),
+    at: instant,
+    life: z.enum(EXTENDED_LIVES),
+    lifeDays: z.number().positive().max(36_500).optional(),
+    until: instant,
+    authority: name,
+    tests: reason,
+  }),
+]);
+
 /** The line that should have been written instead; null: it never happened. */
 export const correctEventRequest = z.strictObject({
-  event: ledgerEventDocument.nullable(),
+  event: writtenEvent.nullable(),
   lengthM,
   reason,
 });

@@ -15,6 +15,23 @@ import {
   uploadQuery,
 } from './imports.ts';
 import { addPartWorkRequest, layupQuery, layupView, setCouponRequest, setLayupRequest } from './layups.ts';
+import {
+  batchLine,
+  correctEventRequest,
+  cutKitRequest,
+  extendLifeRequest,
+  importMaterialRequest,
+  itemEvent,
+  itemView,
+  materials,
+  materialView,
+  partMaterials,
+  partMaterialsQuery,
+  receiveRollRequest,
+  recordExcursionRequest,
+  setBatchRequest,
+  setPartMaterialsRequest,
+} from './materials.ts';
 import { now } from './now.ts';
 import { addPartResultRequest, parts, partsQuery, partView } from './parts.ts';
 import { addRecorderRequest, keepLayoutRequest, recorder, recorders } from './recorders.ts';
@@ -94,6 +111,24 @@ export const OPERATIONS = {
   listTools: { ...ROUTES.listTools, answer: tools },
   readTool: { ...ROUTES.readTool, answer: toolView },
   setTool: { ...ROUTES.setTool, body: setToolRequest, answer: toolView, status: 201 },
+  listMaterials: { ...ROUTES.listMaterials, answer: materials },
+  importMaterial: { ...ROUTES.importMaterial, body: importMaterialRequest, answer: materialView, status: 201 },
+  readMaterial: { ...ROUTES.readMaterial, answer: materialView },
+  setBatch: { ...ROUTES.setBatch, body: setBatchRequest, answer: batchLine, status: 201 },
+  receiveRoll: { ...ROUTES.receiveRoll, body: receiveRollRequest, answer: itemView, status: 201 },
+  recordExcursion: { ...ROUTES.recordExcursion, body: recordExcursionRequest, answer: materials, status: 201 },
+  readItem: { ...ROUTES.readItem, answer: itemView },
+  addItemEvent: { ...ROUTES.addItemEvent, body: itemEvent, answer: itemView, status: 201 },
+  correctEvent: { ...ROUTES.correctEvent, body: correctEventRequest, answer: itemView, status: 201 },
+  cutKit: { ...ROUTES.cutKit, body: cutKitRequest, answer: itemView, status: 201 },
+  extendLife: { ...ROUTES.extendLife, body: extendLifeRequest, answer: itemView, status: 201 },
+  readPartMaterials: { ...ROUTES.readPartMaterials, query: partMaterialsQuery, answer: partMaterials },
+  setPartMaterials: {
+    ...ROUTES.setPartMaterials,
+    body: setPartMaterialsRequest,
+    answer: partMaterials,
+    status: 201,
+  },
   find: { ...ROUTES.find, query: findQuery, answer: found },
   readAudit: { ...ROUTES.readAudit, query: auditQuery, answer: audit },
   verifyAudit: { ...ROUTES.verifyAudit, answer: auditVerification },

@@ -10,6 +10,10 @@ export const CYCLES_PATH = '/api/cycles';
 export const RESINS_PATH = '/api/resins';
 export const PARTS_PATH = '/api/parts';
 export const TOOLS_PATH = '/api/tools';
+export const MATERIALS_PATH = '/api/materials';
+export const BATCHES_PATH = '/api/batches';
+export const ROLLS_PATH = '/api/rolls';
+export const EXCURSIONS_PATH = '/api/freezer-excursions';
 export const AUDIT_PATH = '/api/audit';
 export const AUDIT_VERIFY_PATH = '/api/audit/verify';
 
@@ -146,6 +150,37 @@ export function partCouponsPath(serial: string): string {
 
 export function toolPath(code: string): string {
   return `${TOOLS_PATH}/${encodeURIComponent(code)}`;
+}
+
+export function materialPath(code: string): string {
+  return `${MATERIALS_PATH}/${encodeURIComponent(code)}`;
+}
+
+/** A roll or a kit, by its code. */
+export function itemPath(code: string): string {
+  return `/api/items/${encodeURIComponent(code)}`;
+}
+
+export function itemEventsPath(code: string): string {
+  return `${itemPath(code)}/events`;
+}
+
+export function itemKitsPath(code: string): string {
+  return `${itemPath(code)}/kits`;
+}
+
+export function itemExtensionsPath(code: string): string {
+  return `${itemPath(code)}/extensions`;
+}
+
+/** Where a wrong line of a ledger is corrected; `line` is its `id`. */
+export function itemCorrectionPath(code: string, line: number): string {
+  return `${itemEventsPath(code)}/${line}/correction`;
+}
+
+/** `at` is the ISO instant that the materials' ages are asked for. */
+export function partMaterialsPath(serial: string, query: { at?: string } = {}): string {
+  return withQuery(`${partPath(serial)}/materials`, query);
 }
 
 export function findPath(code: string): string {

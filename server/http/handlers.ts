@@ -1,6 +1,7 @@
 import { cycleHandlers } from './cycle-handlers.ts';
 import type { Handlers } from './handler.ts';
 import { importHandlers } from './import-handlers.ts';
+import { materialHandlers } from './material-handlers.ts';
 import { partHandlers } from './part-handlers.ts';
 import { runHandlers } from './run-handlers.ts';
 import { toolHandlers } from './tool-handlers.ts';
@@ -14,4 +15,5 @@ export const HANDLERS: Handlers = {
   ...cycleHandlers,
   ...partHandlers,
   ...toolHandlers,
+  ...materialHandlers,
 };

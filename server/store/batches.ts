@@ -46,6 +46,12 @@ export function findBatch(db: Db, batch: string): BatchLine | undefined {
   return row === undefined ? undefined : lineOf(db, row);
 }
 
+export function requireBatch(db: Db, batch: string): BatchLine {
+  const line = findBatch(db, batch);
+  if (line === undefined) throw new DomainError('not-found', `There is no batch "${batch}"`, { batch });
+  return line;
+}
+
 interface BatchRow {
   readonly id: number;
   readonly batch: string;

@@ -31,6 +31,21 @@ const SELECT = `
     WHERE code LIKE @start ESCAPE '\\' AND coupons.id = (SELECT max(id) FROM coupons AS latest WHERE latest.code = coupons.code)
     ORDER BY exact DESC, code LIMIT 20)
   UNION ALL
+  SELECT * FROM (SELECT kind, CASE kind WHEN 'roll' THEN 'Roll ' ELSE 'Kit ' END || code,
+      CASE kind WHEN 'roll' THEN '/rolls' ELSE '/kits' END || char(31) || code, code = @code COLLATE NOCASE AS exact, 3
+    FROM material_items WHERE code LIKE @start ESCAPE '\\' ORDER BY exact DESC, code LIMIT 20)
+  UNION ALL
+  SELECT * FROM (SELECT 'batch', 'Batch ' || batches.code || ' of ' || name, '/materials' || char(31) || materials.code,
+      batches.code = @code COLLATE NOCASE AS exact, 3
+    FROM batches JOIN batch_particulars AS about
+      ON about.id = (SELECT max(id) FROM batch_particulars WHERE batch_id = batches.id)
+    JOIN materials ON materials.id = material_id
+    WHERE batches.code LIKE @start ESCAPE '\\' ORDER BY exact DESC, batches.code LIMIT 20)
+  UNION ALL
+  SELECT 'material', name, '/materials' || char(31) || code, code = @code COLLATE NOCASE, 3
+    FROM materials WHERE code LIKE @start ESCAPE '\\'
+      AND id = (SELECT max(id) FROM materials AS latest WHERE latest.code = materials.code)
+  UNION ALL
   SELECT 'cycle', code || ' issue ' || issue, '/cycles' || char(31) || code || char(31) || issue,
     code = @code COLLATE NOCASE, 3 FROM cycles WHERE code LIKE @start ESCAPE '\\'
   UNION ALL

@@ -20,8 +20,11 @@ export function requireItem(db: Db, item: string): ItemRow {
   throw new DomainError('not-found', `There is no roll or kit "${item}"`, { item });
 }
 
+/** A new roll or kit; a code whose every line was taken back is free again. */
 export function insertItem(db: Db, item: string, kind: LedgerItem['kind']): ItemRow {
-  if (findItem(db, item) !== undefined) {
+  const known = findItem(db, item);
+  if (known !== undefined) {
+    if (known.kind === kind && readEvents(db, known.id).length === 0) return known;
     throw new DomainError('already-recorded', `There is a roll or kit "${item}" already`, { item });
   }
   const { lastInsertRowid } = db.prepare('INSERT INTO material_items (code, kind) VALUES (?, ?)').run(item, kind);
@@ -94,8 +97,14 @@ export function readChildren(db: Db, itemId: number): { item: string; at: string
     .all(itemId);
 }
 
+/** Rolls and kits that were received or cut. */
 export function listItems(db: Db): ItemRow[] {
-  return db.prepare<[], ItemRow>('SELECT id, code AS item, kind FROM material_items ORDER BY code').all();
+  return db
+    .prepare<[], ItemRow>(
+      `SELECT id, code AS item, kind FROM material_items
+       WHERE id IN (SELECT item_id FROM material_events_now WHERE kind IN ('received', 'cut')) ORDER BY code`,
+    )
+    .all();
 }
 
 /** An item with everything it was cut from, and everything that was cut from it. */

@@ -56,6 +56,18 @@ export function readUsesOfItem(db: Db, itemId: number): ItemUse[] {
     .all(itemId);
 }
 
+/** Codes of the rolls and kits that some part is laid up from. */
+export function listLaidUpItems(db: Db): ReadonlySet<string> {
+  return new Set(
+    db
+      .prepare<[], string>(
+        'SELECT DISTINCT code FROM part_materials_now AS used JOIN material_items ON material_items.id = item_id',
+      )
+      .pluck()
+      .all(),
+  );
+}
+
 /**
  * Judged runs whose load holds a part laid up from one of these items now, and whose cycle asks for its out-life, that
  * still went on at an instant: those that a line of the ledger may judge otherwise.
