@@ -49,7 +49,8 @@ function outcomeOf(findings: readonly Finding[], { limit, outcome }: Finding): O
   return findings.find((one) => one.limit === limit)?.outcome ?? outcome;
 }
 
-function setsOf(suspects: readonly Suspect[]): Suspect[][] {
+/** Every set of suspects that is tried: all of them up to four, beyond that each alone and all together. */
+export function setsOf(suspects: readonly Suspect[]): Suspect[][] {
   if (suspects.length > TRIED_WHOLE) return [...suspects.map((one) => [one]), [...suspects]];
   const sets: Suspect[][] = [];
   for (let bits = 1; bits < 1 << suspects.length; bits++) sets.push(suspects.filter((_, i) => bits & (1 << i)));

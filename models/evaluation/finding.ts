@@ -1,6 +1,6 @@
 import type { Bounds } from '../cycle/cycle.ts';
 import { ALLOWANCE } from './dips.ts';
-import type { Finding, Outcome } from './evaluation.ts';
+import type { Finding, Outcome, Verdict } from './evaluation.ts';
 import type { Judgement } from './judgement.ts';
 
 /** A finding as a limit works it out: instants in ms, figures in the cycle's unit, nothing rounded yet. */
@@ -99,4 +99,16 @@ export function sayBeside(figure: number, { atLeast, atMost }: Bounds, decimals 
 
 export function capitalised(text: string): string {
   return text.charAt(0).toUpperCase() + text.slice(1);
+}
+
+const VERDICTS = {
+  met: 'conforms',
+  'not-met': 'does-not-conform',
+  'cannot-tell': 'cannot-tell',
+  pending: 'pending',
+} as const;
+
+/** The verdict findings come to: their worst. */
+export function verdictOf(findings: readonly Finding[]): Verdict {
+  return VERDICTS[worst(findings.map(({ outcome }) => outcome))];
 }

@@ -10,17 +10,9 @@ import { gapsOf } from '../run/gaps.ts';
 import type { Exclusion, Load, LoadPart } from '../run/load.ts';
 import { parseBarometer } from '../run/parse-load.ts';
 import { type SuspectedFault, suspectedFaults } from '../run/suspected-faults.ts';
-import { type Suspect, withUndecided } from './decide-suspects.ts';
-import type {
-  Evaluation,
-  Finding,
-  GapRecord,
-  OpenDecision,
-  PartEvaluation,
-  SensorState,
-  Verdict,
-} from './evaluation.ts';
-import { iso, say, worst } from './finding.ts';
+import { type Suspect, setsOf, withUndecided } from './decide-suspects.ts';
+import type { Evaluation, Finding, GapRecord, OpenDecision, PartEvaluation, SensorState } from './evaluation.ts';
+import { iso, say, verdictOf } from './finding.ts';
 import { judgePart, recordPart, sourcesOf } from './judge-part.ts';
 import { changesAtMost, type Judgement, judgedSensor, longestGapMs } from './judgement.ts';
 import { usesAir } from './log-gap-limit.ts';
@@ -63,18 +55,11 @@ export function judge(digest: RunDigest, inputs: JudgementInputs): Evaluation {
       },
     );
   }
-  const gapMs = longestGapMs(cycle, digest);
-  const exclusions = [...(inputs.load?.exclusions ?? []), ...inputs.exclusions];
-  const excludedMs = exclusionInstants(digest, exclusions);
-  const believed = new Set(inputs.believed ?? []);
-  const faults = suspectedFaults(digest, gapMs);
-  const suspects = [...faults]
-    .filter(([{ layout }]) => !excludedMs.has(layout.name) && !believed.has(layout.name))
-    .map(([channel, found]): Suspect => ({ channel, faults: found }));
-  const setting = { digest, inputs, gapMs, excludedMs };
+  const setting = settingOf(digest, inputs);
+  const { gapMs, exclusions, faults, suspects } = setting;
   const parts: PartEvaluation[] = [];
   const changes = new Map<string, Set<string>>();
-  for (const part of partsOf(digest, inputs.load)) parts.push(evaluatePart(setting, part, suspects, changes));
+  for (const part of partsOf(digest, inputs.load)) parts.push(evaluatePart(setting, part, changes));
   return {
     format: 'dwellbook-evaluation/1',
     verdict: verdictOf(parts.flatMap(({ findings }) => findings)),
@@ -96,32 +81,68 @@ export function judge(digest: RunDigest, inputs: JudgementInputs): Evaluation {
   };
 }
 
+/** What one part's limits look at: with every suspect believed, and without each set of them that is undecided. */
+export interface PartJudgements {
+  readonly part: string | null;
+  readonly asIs: Judgement;
+  readonly without: readonly { readonly j: Judgement; readonly without: readonly string[] }[];
+}
+
+/** The judgements behind `judge`, for what is foretold of an open run. */
+export function judgementsOf(digest: RunDigest, inputs: JudgementInputs): PartJudgements[] {
+  const setting = settingOf(digest, inputs);
+  return partsOf(digest, inputs.load).map((part) => {
+    const asIs = judgementOf(setting, part, new Map());
+    const without = setsOf(relevantSuspects(setting, asIs)).map((set) => ({
+      j: judgementOf(setting, part, instantsOf(set)),
+      without: set.map(({ channel }) => channel.layout.name),
+    }));
+    return { part: part?.part ?? null, asIs, without };
+  });
+}
+
 interface Setting {
   readonly digest: RunDigest;
   readonly inputs: JudgementInputs;
   readonly gapMs: number;
+  readonly exclusions: readonly Exclusion[];
   readonly excludedMs: ReadonlyMap<string, number>;
+  readonly faults: ReadonlyMap<RunChannel, readonly SuspectedFault[]>;
+  readonly suspects: readonly Suspect[];
 }
 
-function evaluatePart(
-  setting: Setting,
-  part: LoadPart | null,
-  suspects: readonly Suspect[],
-  changes: Map<string, Set<string>>,
-): PartEvaluation {
+function settingOf(digest: RunDigest, inputs: JudgementInputs): Setting {
+  const gapMs = longestGapMs(inputs.cycle, digest);
+  const exclusions = [...(inputs.load?.exclusions ?? []), ...inputs.exclusions];
+  const excludedMs = exclusionInstants(digest, exclusions);
+  const believed = new Set(inputs.believed ?? []);
+  const faults = suspectedFaults(digest, gapMs);
+  const suspects = [...faults]
+    .filter(([{ layout }]) => !excludedMs.has(layout.name) && !believed.has(layout.name))
+    .map(([channel, found]): Suspect => ({ channel, faults: found }));
+  return { digest, inputs, gapMs, exclusions, excludedMs, faults, suspects };
+}
+
+/** Suspects among the sensors a part's limits look at. */
+function relevantSuspects({ inputs, suspects }: Setting, { sensors, air }: Judgement): Suspect[] {
+  const looked = usesAir(inputs.cycle) ? [...sensors, ...air] : sensors;
+  return suspects.filter(({ channel }) => looked.some((s) => s.channel === channel));
+}
+
+/** From when on each of a set of suspects is left out. */
+function instantsOf(set: readonly Suspect[]): Map<string, number> {
+  return new Map(set.map(({ channel, faults }) => [channel.layout.name, faults[0]!.fromMs]));
+}
+
+function evaluatePart(setting: Setting, part: LoadPart | null, changes: Map<string, Set<string>>): PartEvaluation {
   const asIs = judgementOf(setting, part, new Map());
   const sources = sourcesOf(asIs);
-  const looked = usesAir(setting.inputs.cycle) ? [...asIs.sensors, ...asIs.air] : asIs.sensors;
-  const relevant = suspects.filter(({ channel }) => looked.some((s) => s.channel === channel));
+  const relevant = relevantSuspects(setting, asIs);
   const findings =
     asIs.sensors.length === 0
       ? nothingToJudge(setting.inputs.cycle)
       : withUndecided(relevant, changes, (without) => {
-          const j = judgementOf(
-            setting,
-            part,
-            new Map(without.map(({ channel, faults }) => [channel.layout.name, faults[0]!.fromMs])),
-          );
+          const j = judgementOf(setting, part, instantsOf(without));
           return judgePart(without.length === 0 ? sources : sourcesOf(j));
         });
   const { stages, windows, heatOn, cure } = recordPart(sources);
@@ -205,17 +226,6 @@ function nothingToJudge(cycle: Cycle): Finding[] {
     margin: null,
   };
   return [{ limit: 'sensors/working', ...cannot, uncertainty: null, sensor: null, from: null, until: null, because }];
-}
-
-const VERDICTS = {
-  met: 'conforms',
-  'not-met': 'does-not-conform',
-  'cannot-tell': 'cannot-tell',
-  pending: 'pending',
-} as const;
-
-function verdictOf(findings: readonly Finding[]): Verdict {
-  return VERDICTS[worst(findings.map(({ outcome }) => outcome))];
 }
 
 function sensorStates(
