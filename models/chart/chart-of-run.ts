@@ -2,10 +2,11 @@ import type { Cycle } from '../cycle/cycle.ts';
 import { DomainError } from '../errors.ts';
 import type { PartEvaluation } from '../evaluation/evaluation.ts';
 import { parseBarometer } from '../run/parse-load.ts';
-import type { Band, Mark, RunChart, Strip } from './chart.ts';
+import { type Band, type Mark, type RunChart, STRIPS, type Strip } from './chart.ts';
 import type { ChartInputs } from './chart-inputs.ts';
 import { clockTimeIn } from './clock-time.ts';
-import { cureDots, cureLines } from './cure-drawing.ts';
+import { cureDots } from './cure-drawing.ts';
+import { drawEstimates } from './draw-estimates.ts';
 import { type DrawnChannels, drawnChannels } from './drawn-channels.ts';
 import { drawDwells } from './dwell-drawing.ts';
 import { findingStretches } from './finding-stretches.ts';
@@ -22,7 +23,7 @@ import { hoursAt, type TimeScale } from './time-scale.ts';
 
 /** What is to be drawn of a run, for one part of it: courses, and where the limits it was judged by apply. */
 export function chartOfRun(inputs: ChartInputs): RunChart {
-  const { readings, cycle, evaluation, part, load, cure = [], zone, points = 1500 } = inputs;
+  const { readings, cycle, evaluation, part, load, cure, zone, points = 1500 } = inputs;
   const scale = timeScale(inputs);
   const clock = clockTimeIn(zone);
   const barometerPa = inputs.barometerPa ?? (load?.barometer === undefined ? null : parseBarometer(load.barometer));
@@ -35,23 +36,32 @@ export function chartOfRun(inputs: ChartInputs): RunChart {
   const temperatureUnit = drawable.units.get('temperature') ?? '°C';
   const tgConversion = temperatureConversion('°C', temperatureUnit) ?? AS_IT_STANDS;
   const roleOf = (name: string) => lines.find(({ line }) => line.channel === name)?.line.role ?? 'other';
-  const estimated = cureLines(cure, roleOf, tgConversion, scale, options);
+  const isRecalled = evaluation?.resin?.status === 'recalled';
+  const { lines: estimated, ...estimates } = drawEstimates({
+    ...{ cure, roleOf, tgConversion, barometerPa, isRecalled, clock, scale, options },
+    pressureUnit: drawable.units.get('pressure'),
+    isHumidityKnown: load?.parts.some((one) => one.part === part?.part && one.humidity !== undefined) ?? false,
+  });
   const limits = cycle === null || part === null ? NOTHING : limitsDrawn(cycle, part, drawable, scale);
 
   const all = [...lines, ...estimated].map(({ line }) => line);
-  const view = { bands: limits.bands, fromH: hoursAt(scale, scale.fromMs), untilH: hoursAt(scale, scale.untilMs) };
-  const units = new Map<Strip, string>([
-    ...drawable.units,
-    ...estimated.map(({ line }) => [line.strip, line.strip === 'tg' ? temperatureUnit : ''] as const),
-  ]);
-  const strips = [...units].map(([strip, unit]) =>
-    axisOf(
-      strip,
-      unit,
-      all.filter((line) => line.strip === strip),
-      view,
+  const view = {
+    bands: limits.bands,
+    fromH: hoursAt(scale, scale.fromMs),
+    untilH: hoursAt(scale, scale.untilMs),
+    isRecalled,
+  };
+  const units: ReadonlyMap<Strip, string> = new Map([
+    ...[...ESTIMATED_UNITS, ['tg', temperatureUnit] as const].filter(([strip]) =>
+      estimated.some(({ line }) => line.strip === strip),
     ),
-  );
+    ...drawable.units,
+  ]);
+  const strips = STRIPS.flatMap((strip) => {
+    const unit = units.get(strip);
+    const own = all.filter((line) => line.strip === strip);
+    return unit === undefined ? [] : [axisOf(strip, unit, own, view)];
+  });
   return {
     zeroMs: scale.zeroMs,
     isFromHeatOn: scale.isFromHeatOn,
@@ -66,15 +76,22 @@ export function chartOfRun(inputs: ChartInputs): RunChart {
     lines: placeLabels(all, strips),
     ...limits,
     hatches: hatchesOf(lines, scale),
-    dots: part === null ? [] : cureDots(part, cure, clock, scale),
+    dots: part === null || cure === undefined ? [] : [...cureDots(part, cure.courses, clock, scale), ...estimates.dots],
+    flows: estimates.flows,
     table: runTable({
       ...{ cycle, part, channels, tgConversion, clock, scale },
       units: drawable.units,
       roleOf: (channel) => roleOfLine(channel, part, lead),
     }),
+    estimates: estimates.words,
     notDrawn: drawable.notDrawn,
   };
 }
+
+const ESTIMATED_UNITS = [
+  ['cure', ''],
+  ['viscosity', 'Pa s'],
+] as const;
 
 type LimitsDrawn = Pick<RunChart, 'bands' | 'wedges' | 'marks' | 'dips' | 'breaches' | 'stretches'>;
 

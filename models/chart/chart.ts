@@ -3,7 +3,7 @@ import type { Outcome } from '../evaluation/evaluation.ts';
 /** What is to be drawn of a run: plain geometry for screen and paper. Hours count from hour 0; values are in `units`. */
 
 /** Strips from top to bottom; all share one axis of hours. */
-export const STRIPS = ['temperature', 'pressure', 'vacuum', 'cure', 'tg'] as const;
+export const STRIPS = ['temperature', 'pressure', 'vacuum', 'cure', 'viscosity', 'tg'] as const;
 export type Strip = (typeof STRIPS)[number];
 
 export type LineRole =
@@ -15,6 +15,7 @@ export type LineRole =
   | 'pressure'
   | 'vacuum'
   | 'source'
+  | 'guide'
   | 'other';
 
 /** A point of the picture: hours along, the strip's unit upwards. */
@@ -104,14 +105,25 @@ export interface Hatch {
   readonly isOfAll: boolean;
 }
 
-/** A mark on a course: estimated gel or vitrification. */
+/** A mark on a course: estimated gel or vitrification, or where the resin is thinnest. */
 export interface Dot {
-  readonly kind: 'gel' | 'vitrification';
+  readonly kind: 'gel' | 'vitrification' | 'thinnest';
   readonly strip: Strip;
   readonly atH: number;
   readonly value: number;
   readonly channel: string;
   /** `TC3 gels 11:29`; empty where another of its kind says it. */
+  readonly text: string;
+}
+
+/** The stretch in which the resin at a sensor is estimated to flow: from softening to gel. */
+export interface Flow {
+  readonly strip: Extract<Strip, 'viscosity' | 'cure'>;
+  readonly channel: string;
+  readonly role: LineRole;
+  readonly fromH: number;
+  readonly untilH: number;
+  /** `TC3 flows 125 min` */
   readonly text: string;
 }
 
@@ -129,6 +141,7 @@ export interface StripAxis {
   readonly strip: Strip;
   readonly title: string;
   readonly unit: string;
+  readonly scale: 'linear' | 'log';
   readonly low: number;
   readonly high: number;
   readonly ticks: readonly number[];
@@ -198,8 +211,11 @@ export interface RunChart {
   readonly breaches: readonly Breach[];
   readonly hatches: readonly Hatch[];
   readonly dots: readonly Dot[];
+  readonly flows: readonly Flow[];
   readonly stretches: readonly Stretch[];
   readonly table: RunTable;
+  /** What is estimated over the whole run, in sentences. */
+  readonly estimates: readonly string[];
   /** Channels that could not be drawn, and why. */
   readonly notDrawn: readonly { readonly channel: string; readonly because: string }[];
 }

@@ -14,10 +14,6 @@ interface CureLine {
   readonly conversion: Conversion;
 }
 
-/** A course of cure never falls and has no spikes: so many times fewer points draw it as well as a temperature. */
-const FEWER_POINTS = 4;
-const LEAST_POINTS = 20;
-
 /** Estimated degree of cure and Tg along each channel. */
 export function cureLines(
   courses: readonly CureCourse[],
@@ -26,11 +22,10 @@ export function cureLines(
   scale: TimeScale,
   options: { readonly points: number; readonly longestGapMs: number },
 ): DrawnLine[] {
-  const points = Math.max(LEAST_POINTS, Math.floor(options.points / FEWER_POINTS));
   return courses.flatMap((course) =>
     linesOf(course, tgConversion).map(({ strip, figures, conversion }): DrawnLine => {
       const { fromMs, untilMs } = scale;
-      const kept = decimate(course.timeMs, figures, { ...options, points, fromMs, untilMs });
+      const kept = decimate(course.timeMs, figures, { ...options, fromMs, untilMs });
       const role = roleOf(course.channel);
       return {
         line: {

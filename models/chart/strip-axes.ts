@@ -10,17 +10,50 @@ export interface InView {
   readonly bands: readonly Band[];
   readonly fromH: number;
   readonly untilH: number;
+  /** The resin's figures are from memory, which every name of an estimate says. */
+  readonly isRecalled: boolean;
 }
 
-const TICKS: Readonly<Record<Strip, number>> = { temperature: 10, pressure: 4, vacuum: 4, cure: 2, tg: 4 };
+const TICKS: Readonly<Record<Strip, number>> = {
+  temperature: 10,
+  pressure: 4,
+  vacuum: 4,
+  cure: 2,
+  viscosity: 4,
+  tg: 4,
+};
 
 /** Least height of a strip's axis, so that noise of a steady reading does not fill it. */
-const LEAST_SPAN: Readonly<Record<Strip, number>> = { temperature: 8, pressure: 0.2, vacuum: 0.02, cure: 1, tg: 20 };
+const LEAST_SPAN: Readonly<Record<Strip, number>> = {
+  temperature: 8,
+  pressure: 0.2,
+  vacuum: 0.02,
+  cure: 1,
+  viscosity: 0,
+  tg: 20,
+};
 
 /** The axis of one strip: what is drawn of it in view, and the bands that apply there. */
 export function axisOf(strip: Strip, unit: string, lines: readonly Unplaced[], view: InView): StripAxis {
+  const title = titleOf(strip, unit, view.isRecalled);
+  if (strip === 'viscosity') return { strip, title, unit, scale: 'log', ...decadesOf(lines) };
   const { low, high } = rangeOf(strip, lines, view);
-  return { strip, title: titleOf(strip, unit), unit, low, high, ticks: roundTicks(low, high, TICKS[strip]) };
+  return { strip, title, unit, scale: 'linear', low, high, ticks: roundTicks(low, high, TICKS[strip]) };
+}
+
+/** Whole decades, two at least; a tick for each, or for every other where there are many. */
+function decadesOf(lines: readonly Unplaced[]): Pick<StripAxis, 'low' | 'high' | 'ticks'> {
+  const decades = lines.flatMap(({ value }) => value.flatMap((one) => (one === null ? [] : Math.log10(one))));
+  const first = decades.length === 0 ? 0 : Math.floor(Math.min(...decades));
+  const last = decades.length === 0 ? 2 : Math.max(first + 2, Math.ceil(Math.max(...decades)));
+  const step = Math.ceil((last - first) / TICKS.viscosity);
+  const ticks: number[] = [];
+  for (let decade = first; decade <= last; decade += step) ticks.push(powerOfTen(decade));
+  return { low: powerOfTen(first), high: powerOfTen(last), ticks };
+}
+
+function powerOfTen(exponent: number): number {
+  return Number(`1e${exponent}`);
 }
 
 function rangeOf(strip: Strip, lines: readonly Unplaced[], view: InView): { low: number; high: number } {
@@ -55,7 +88,8 @@ function rangeOf(strip: Strip, lines: readonly Unplaced[], view: InView): { low:
   };
 }
 
-function titleOf(strip: Strip, unit: string): string {
+function titleOf(strip: Strip, unit: string, isRecalled: boolean): string {
+  const estimate = isRecalled ? '(estimate, set from memory)' : '(estimate)';
   switch (strip) {
     case 'temperature':
       return unit;
@@ -64,9 +98,11 @@ function titleOf(strip: Strip, unit: string): string {
     case 'vacuum':
       return `vacuum, ${unit}${unit.endsWith(' abs') ? '' : ' below ambient'}`;
     case 'cure':
-      return 'degree of cure (estimate)';
+      return `degree of cure ${estimate}`;
+    case 'viscosity':
+      return `viscosity ${estimate}, ${unit}`;
     case 'tg':
-      return `Tg (estimate), ${unit}`;
+      return `Tg ${estimate}, ${unit}`;
   }
 }
 
@@ -76,25 +112,31 @@ const LABEL_SHARE: Readonly<Record<Strip, number>> = {
   pressure: 0.18,
   vacuum: 0.22,
   cure: 0.14,
+  viscosity: 0.14,
   tg: 0.14,
 };
 
 /** Labels at the lines' ends in view, moved apart. */
 export function placeLabels(lines: readonly Unplaced[], axes: readonly StripAxis[]): Line[] {
   const placed = new Map<Unplaced, number>();
-  for (const { strip, low, high } of axes) {
+  for (const { strip, scale, low, high } of axes) {
+    const [rise, back] = scale === 'log' ? [Math.log10, (decade: number) => 10 ** decade] : [asItIs, asItIs];
     const ends = lines.flatMap((line) => {
       const end = line.strip === strip ? line.value.findLast((value) => value !== null) : undefined;
       return typeof end === 'number' ? [{ line, end }] : [];
     });
-    const apart = LABEL_SHARE[strip] * (high - low);
+    const [lowest, highest] = [rise(low), rise(high)];
     const places = spreadLabels(
-      ends.map(({ end }) => end),
-      { apart, lowest: low, highest: high },
+      ends.map(({ end }) => rise(end)),
+      { apart: LABEL_SHARE[strip] * (highest - lowest), lowest, highest },
     );
     ends.forEach(({ line }, i) => {
-      placed.set(line, drawn(places[i]!));
+      placed.set(line, drawn(back(places[i]!)));
     });
   }
   return lines.map((line) => ({ ...line, labelAt: placed.get(line) ?? null }));
+}
+
+function asItIs(value: number): number {
+  return value;
 }

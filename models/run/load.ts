@@ -14,6 +14,8 @@ export interface LoadPart {
   readonly bagLine?: string;
   /** Degree of cure at the first scan, where the roll had aged; default: the resin set's own. */
   readonly startDegree?: number;
+  /** Relative humidity of the room it was laid up in, %. */
+  readonly humidity?: number;
   readonly leakTest?: LeakTestRecord;
 }
 

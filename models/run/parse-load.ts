@@ -99,6 +99,7 @@ const part: Read<LoadPart> = object((fields) => ({
   ...fields.optional('quantity', number({ atLeast: 1, whole: true })),
   ...fields.optional('bagLine', text),
   ...fields.optional('startDegree', number({ atLeast: 0, below: 1 })),
+  ...fields.optional('humidity', number({ above: 0, atMost: 100 })),
   ...fields.optional('leakTest', leakTest),
 }));
 

@@ -1,4 +1,4 @@
-import type { CureCourse } from '../../models/chart/chart-inputs.ts';
+import type { CureOfPart } from '../../models/chart/chart-inputs.ts';
 import type { Resin } from '../../models/cure/resin.ts';
 import type { Evaluation, PartEvaluation } from '../../models/evaluation/evaluation.ts';
 import type { JudgementInputs } from '../../models/evaluation/judge.ts';
@@ -9,9 +9,4 @@ import type { Load } from '../../models/run/load.ts';
 export type EvaluateLog = (log: ReadLog, inputs: JudgementInputs) => Promise<Evaluation>;
 
 /** Estimates the cure along every sensor a part is judged by, here or in a thread. */
-export type EstimateCure = (
-  readings: Readings,
-  load: Load,
-  resin: Resin,
-  part: PartEvaluation,
-) => Promise<readonly CureCourse[]>;
+export type EstimateCure = (readings: Readings, load: Load, resin: Resin, part: PartEvaluation) => Promise<CureOfPart>;

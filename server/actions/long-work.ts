@@ -1,4 +1,4 @@
-import type { CureCourse } from '../../models/chart/chart-inputs.ts';
+import type { CureOfPart } from '../../models/chart/chart-inputs.ts';
 import type { ThroughPart } from '../../models/cure/heat/through-part.ts';
 import type { Evaluation } from '../../models/evaluation/evaluation.ts';
 import type { Readings } from '../../models/log/readings.ts';
@@ -27,7 +27,7 @@ export function createLongWork({ doneHere = READINGS_DONE_HERE } = {}): LongWork
       return evaluateLog(log, inputs);
     },
     async estimateCure(...given) {
-      if (countReadings(given[0]) > doneHere) return thread.ask<readonly CureCourse[]>('cureCourses', given);
+      if (countReadings(given[0]) > doneHere) return thread.ask<CureOfPart>('cureCourses', given);
       const { cureCourses } = await import('./cure-courses.ts');
       return cureCourses(...given);
     },

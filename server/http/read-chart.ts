@@ -1,5 +1,5 @@
 import type { RunChart } from '../../models/chart/chart.ts';
-import type { CureCourse } from '../../models/chart/chart-inputs.ts';
+import type { CureOfPart } from '../../models/chart/chart-inputs.ts';
 import { chartOfRun } from '../../models/chart/chart-of-run.ts';
 import { DomainError } from '../../models/errors.ts';
 import type { PartEvaluation } from '../../models/evaluation/evaluation.ts';
@@ -26,12 +26,12 @@ export async function readChart(
   const part = partOf(evaluation?.parts ?? [], query.part);
   const { readings } = readLogOnce(db, run);
   const load = inputs?.load ?? findLoad(db, run)?.document ?? null;
-  const cure = await remember<Promise<readonly CureCourse[]>>(
+  const cure = await remember<Promise<CureOfPart | null>>(
     db,
     `cure ${run} ${part?.part} ${JSON.stringify(inputs?.hashes)}`,
     () =>
       inputs === null || inputs.resin === null || part === null
-        ? Promise.resolve([])
+        ? Promise.resolve(null)
         : estimateCure(readings, inputs.load, inputs.resin, part),
   );
   return chartOfRun({
@@ -40,7 +40,7 @@ export async function readChart(
     evaluation,
     part,
     load,
-    cure,
+    ...(cure === null ? {} : { cure }),
     zone: zoneOfWorkshop(db),
     view: viewOf(query, readings.timeMs),
     points: query.points,

@@ -13,6 +13,7 @@ export const SKERRY_180: Resin = {
   diffusion: { law: 'logistic', C: 34, alphaC0: -1.355, alphaCT: 0.00502 },
   glassTransition: { law: 'dibenedetto', tg0C: -8, tgInfC: 221, lambda: 0.58, method: 'DMA, storage modulus onset' },
   gel: { degree: 0.5 },
+  viscosity: { law: 'castro-macosko', A: 2.1e-9, E: 68000, gelDegree: 0.5, a: 1.6, b: 1.2, flowsBelow: 100 },
   thermal: { heatOfReaction: 466000, basis: 'resin' },
 };
 

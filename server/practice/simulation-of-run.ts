@@ -38,6 +38,7 @@ export function simulationOf(planned: PlannedRun): SimulationPlan {
       ...(part.quantity === undefined ? {} : { quantity: part.quantity }),
       ...(part.bagLine === undefined ? {} : { bagLine: part.bagLine }),
       startDegree: startDegreeOf(part),
+      ...humidityOf(part, planned),
       ...(part.leakTest === undefined ? {} : { leakTest: part.leakTest }),
     })),
     sensors: planned.parts.flatMap((part) => sensorsOf(part, planned)),
@@ -104,6 +105,15 @@ function withScatter(programme: Programme, run: string): Programme {
 function ambientOn({ startsAt, run }: PlannedRun): number {
   const month = new Date(startsAt).getUTCMonth();
   return AMBIENT_C + 2.5 * Math.sin(((month - 3) / 6) * Math.PI) + 2 * (scattered(run, 0.5) - 1);
+}
+
+/**
+ * Relative humidity of the lay-up room, %, written down where the barometer is; none for what comes in cured. Such
+ * rooms are kept between about 40 and 60 % (common practice).
+ */
+function humidityOf({ kind }: PlannedPart, { run, isBarometerRecorded }: PlannedRun): { humidity?: number } {
+  if (!isBarometerRecorded || KINDS[kind].startDegree !== undefined) return {};
+  return { humidity: Math.round(48 * scattered(`${run} lay-up`, 0.12)) };
 }
 
 /** A factor peculiar to a name, within `share` of 1. */

@@ -112,8 +112,8 @@ describe('the load form', () => {
   });
 
   it('sends a decimal comma as the figure it is', () => {
-    const form = { ...formOfRun(run), parts: [{ ...newPart(1, 'A'), startDegree: '0,012' }] };
-    expect(requestOfForm(form, null).load.parts).toEqual([{ part: 'A', startDegree: 0.012 }]);
+    const form = { ...formOfRun(run), parts: [{ ...newPart(1, 'A'), startDegree: '0,012', humidity: '45,5' }] };
+    expect(requestOfForm(form, null).load.parts).toEqual([{ part: 'A', startDegree: 0.012, humidity: 45.5 }]);
   });
 });
 

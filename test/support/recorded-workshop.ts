@@ -1,4 +1,5 @@
 import { existsSync, readFileSync } from 'node:fs';
+import type { Resin } from '../../models/cure/resin.ts';
 import type { Layout } from '../../models/log/layout.ts';
 import type { Load } from '../../models/run/load.ts';
 
@@ -15,8 +16,18 @@ export function recordedJson<T>(name: string, file: string): T {
   return JSON.parse(recordedFile(name, file).toString()) as T;
 }
 
+/** What a workshop knows besides what the recorded case holds. */
+export interface KnownBesides {
+  readonly resin?: Partial<Resin>;
+  readonly load?: (load: Load) => Load;
+}
+
 /** A workshop with these recorded runs on record, each with its own part; run numbers by case. */
-export async function recordWorkshop(address: string, names: readonly string[]): Promise<Map<string, number>> {
+export async function recordWorkshop(
+  address: string,
+  names: readonly string[],
+  besides: KnownBesides = {},
+): Promise<Map<string, number>> {
   await post(address, '/api/workshop', {
     name: 'Test workshop',
     zone: 'Europe/Lisbon',
@@ -24,7 +35,7 @@ export async function recordWorkshop(address: string, names: readonly string[]):
   });
   await post(address, '/api/vessels', { name: 'Autoclave 1', kind: 'autoclave' });
   const runs = new Map<string, number>();
-  for (const name of names) runs.set(name, await recordRun(address, name));
+  for (const name of names) runs.set(name, await recordRun(address, name, besides));
   return runs;
 }
 
@@ -33,12 +44,12 @@ export async function leaveWaiting(address: string, name: string): Promise<numbe
   return (await postBytes(address, `/api/imports?name=${name}.csv`, recordedFile(name, 'run.csv'))).id;
 }
 
-async function recordRun(address: string, name: string): Promise<number> {
+async function recordRun(address: string, name: string, { resin, load = (as) => as }: KnownBesides): Promise<number> {
   const cycle = recordedJson<{ code: string; issue: string }>(name, 'cycle.json');
   // Cases share a code; each keeps its own limits under an issue of its own.
   const document = { ...cycle, issue: `${cycle.issue}-${name}` };
   if (existsSync(new URL(`../golden/recorded/${name}/resin.json`, import.meta.url))) {
-    await post(address, '/api/resins', { document: recordedJson(name, 'resin.json') });
+    await post(address, '/api/resins', { document: { ...recordedJson<Resin>(name, 'resin.json'), ...resin } });
   }
   await post(address, '/api/cycles', { document });
   const layout = recordedJson<Layout>(name, 'layout.json');
@@ -50,7 +61,7 @@ async function recordRun(address: string, name: string): Promise<number> {
     vessel: 'Autoclave 1',
   });
   await post(address, `/api/runs/${run}/load`, {
-    load: loadOf(layout, name),
+    load: load(loadOf(layout, name)),
     cycle: { code: document.code, issue: document.issue },
   });
   return run;

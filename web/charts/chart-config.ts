@@ -68,6 +68,8 @@ function strokeOf({ role }: Line, ink: Ink) {
       return { borderColor: ink.ink, borderWidth: 1.5 };
     case 'judged':
       return { borderColor: ink.other, borderWidth: 1 };
+    case 'guide':
+      return { borderColor: ink.soft, borderWidth: 1, borderDash: [1, 3] };
     default:
       return { borderColor: ink.other, borderWidth: 1, borderDash: [5, 3] };
   }
@@ -114,7 +116,7 @@ function hourScale(chart: RunChart, ink: Ink, width: number, zone: string) {
 
 function stripScale(axis: StripAxis, ink: Ink, width: number) {
   return {
-    type: 'linear',
+    type: axis.scale === 'log' ? 'logarithmic' : 'linear',
     position: 'left',
     stack: 'strips',
     stackWeight: stripHeight(axis.strip, width),

@@ -126,7 +126,7 @@ function drawDot(pen: Pen, dot: Dot): void {
   ctx.fillStyle = ink.ink;
   ctx.fill();
   letters(pen);
-  const { left, right } = pen.area(dot.strip);
+  const { left, right, bottom } = pen.area(dot.strip);
   const room = ctx.measureText(dot.text).width + 12;
   // Beside the dot where there is room on either side, else from the strip's left edge.
   const [from, align] =
@@ -135,5 +135,5 @@ function drawDot(pen: Pen, dot: Dot): void {
       : x - room > left
         ? [x - 10, 'right' as const]
         : [left + 4, 'left' as const];
-  write(pen, dot.text, from, y + 10, align, ink.ink);
+  write(pen, dot.text, from, y + 18 > bottom ? y - 12 : y + 10, align, ink.ink);
 }

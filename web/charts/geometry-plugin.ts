@@ -2,6 +2,7 @@ import type { Chart, Plugin } from 'chart.js';
 import type { RunChart, Stretch } from '../../models/chart/chart.ts';
 import { drawCursor, drawStretch } from './draw-cursor.ts';
 import { drawBreaches, drawDips, drawDots, drawHatches, drawMarks } from './draw-events.ts';
+import { drawFlows } from './draw-flows.ts';
 import { drawBandNames, drawLimits } from './draw-limits.ts';
 import { drawNames } from './draw-names.ts';
 import type { Ink } from './ink.ts';
@@ -35,6 +36,7 @@ export function geometryPlugin(scene: Scene): Plugin<'line'> {
         if (scene.stretch && !scene.ink.isOnPaper) drawStretch(pen, scene.stretch);
         drawDips(pen, scene.chart.dips);
         drawBreaches(pen, scene.chart.breaches, scene.lit);
+        drawFlows(pen, scene.chart.flows);
         drawDots(pen, scene.chart.dots);
         drawBandNames(pen, scene.chart);
         drawNames(pen, scene.chart);

@@ -56,7 +56,7 @@ interface Plan {
 
 function planOf({ strip, unit }: StripAxis, units: Units): Plan {
   const asItIs = { unit, conversion: AS_IT_STANDS };
-  if (strip === 'cure') return asItIs;
+  if (strip === 'cure' || strip === 'viscosity') return asItIs;
   const wanted = strip === 'temperature' || strip === 'tg' ? units.temperature : units[strip];
   const conversion =
     strip === 'temperature' || strip === 'tg'

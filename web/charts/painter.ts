@@ -1,4 +1,4 @@
-import { Chart, LinearScale, LineController, LineElement, PointElement } from 'chart.js';
+import { Chart, LinearScale, LineController, LineElement, LogarithmicScale, PointElement } from 'chart.js';
 import { followScheme } from '../scheme.ts';
 import { zone } from '../workshop.ts';
 import { chartConfig, datasetsOf, type Point, scalesOf } from './chart-config.ts';
@@ -6,7 +6,7 @@ import type { Scene } from './geometry-plugin.ts';
 import { type Ink, inkOnPaper, readInk } from './ink.ts';
 import { chartHeight, rightRoom } from './strips.ts';
 
-Chart.register(LineController, LineElement, PointElement, LinearScale);
+Chart.register(LineController, LineElement, PointElement, LinearScale, LogarithmicScale);
 
 /** Width a run's chart has on A4 beside the margin of the book, px. */
 const PAPER_WIDTH = 560;

@@ -20,6 +20,7 @@ export function pictureInWords(chart: RunChart): string {
     strong.length > 0 ? `Named: ${listed(strong.map(({ label }) => label))}.` : '',
     ...chart.bands.filter(({ kind }) => kind === 'dwell').map(({ text }) => `${text}.`),
     ...chart.breaches.map((breach) => `Broken at ${at(breach.fromH)}: ${breach.text}.`),
+    ...(chart.estimates.length > 0 ? ['Estimated:', ...chart.estimates] : []),
     gaps.size > 0 ? `${count(gaps.size, 'gap')} without readings.` : '',
     'The table holds the figures.',
   ]

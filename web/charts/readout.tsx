@@ -45,4 +45,4 @@ function valuesOf(chart: RunChart, { strip, unit }: StripAxis, atH: number): Val
     }));
 }
 
-const NAMES: Readonly<Record<string, string>> = { cure: 'degree', tg: 'Tg' };
+const NAMES: Readonly<Record<string, string>> = { cure: 'degree', viscosity: 'viscosity', tg: 'Tg' };

@@ -3,6 +3,7 @@ import type { RunChart as RunChartDocument } from '../../models/chart/chart.ts';
 import type { PartEvaluation } from '../../models/evaluation/evaluation.ts';
 import { runChartPath } from '../../server/contract/paths.ts';
 import type { RunView } from '../../server/contract/runs.ts';
+import type { EstimatesTold } from '../parts/estimates-told.tsx';
 import { Problem } from '../parts/problem.tsx';
 import { isTyping } from '../parts/scan-box.tsx';
 import { Waiting } from '../parts/waiting.tsx';
@@ -24,6 +25,7 @@ export function RunChart({
   part,
   lit,
   onNext,
+  onEstimates,
 }: {
   run: RunView;
   part: PartEvaluation | null;
@@ -31,6 +33,8 @@ export function RunChart({
   lit: string | null;
   /** Key `f`: on to the next finding. */
   onNext: () => void;
+  /** Hears what is estimated over the run, to be told elsewhere on the page. */
+  onEstimates?: (told: EstimatesTold) => void;
 }) {
   const whole = useMemo(
     () => ({ fromMs: Date.parse(run.from), untilMs: Date.parse(run.until) }),
@@ -48,6 +52,10 @@ export function RunChart({
   const latest = useLatest<RunChartDocument>(runChartPath(run.run, query), run);
   const units = shownUnits.value;
   const drawing = useMemo(() => (latest.value ? inUnits(latest.value, units) : null), [latest.value, units]);
+  const told = latest.value;
+  useEffect(() => {
+    if (told) onEstimates?.({ part: told.part, sentences: told.estimates });
+  }, [told]);
   const stretch = drawing?.stretches.find(({ limit }) => limit === lit) ?? null;
 
   const table = useMemo(() => (isTable && drawing ? <ChartTable chart={drawing} /> : null), [isTable, drawing]);

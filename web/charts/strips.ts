@@ -1,7 +1,14 @@
 import type { RunChart, Strip } from '../../models/chart/chart.ts';
 
 /** Heights in px: above each strip there is room for its name. */
-const HEIGHT: Readonly<Record<Strip, number>> = { temperature: 330, pressure: 84, vacuum: 64, cure: 100, tg: 84 };
+const HEIGHT: Readonly<Record<Strip, number>> = {
+  temperature: 330,
+  pressure: 84,
+  vacuum: 64,
+  cure: 100,
+  viscosity: 110,
+  tg: 84,
+};
 export const NAME_ROOM = 34;
 const AXIS_ROOM = 46;
 

@@ -4,6 +4,7 @@ import { withQuery } from '../../server/contract/paths.ts';
 import type { EvaluationView, RunView } from '../../server/contract/runs.ts';
 import { RunChart } from '../charts/run-chart.tsx';
 import { Decisions } from '../parts/decisions.tsx';
+import type { EstimatesTold } from '../parts/estimates-told.tsx';
 import { FindingList, focusNextFinding } from '../parts/finding-list.tsx';
 import { RunHead } from '../parts/run-head.tsx';
 import { RunMargin } from '../parts/run-margin.tsx';
@@ -15,6 +16,7 @@ import { partName, worstPart } from '../words/verdicts.ts';
 export function RunJudged({ run, evaluation, again }: { run: RunView; evaluation: EvaluationView; again: () => void }) {
   const { query, route } = useLocation();
   const [lit, setLit] = useState<string | null>(null);
+  const [estimates, setEstimates] = useState<EstimatesTold | null>(null);
   const findings = useRef<HTMLDivElement>(null);
   const parts = evaluation.document.parts;
   const named = parts.find((one) => one.part !== null && one.part === query.part);
@@ -29,7 +31,13 @@ export function RunJudged({ run, evaluation, again }: { run: RunView; evaluation
         <RunHead run={run} />
         <RunVerdict evaluation={evaluation.document} />
         <Decisions run={run} evaluation={evaluation.document} onDecided={again} />
-        <RunChart run={run} part={part} lit={lit} onNext={() => focusNextFinding(findings.current)} />
+        <RunChart
+          run={run}
+          part={part}
+          lit={lit}
+          onNext={() => focusNextFinding(findings.current)}
+          onEstimates={setEstimates}
+        />
       </div>
       <div class="side" ref={findings}>
         {parts.length > 1 && (
@@ -58,7 +66,7 @@ export function RunJudged({ run, evaluation, again }: { run: RunView; evaluation
         </div>
       </div>
       <div class="rest">
-        <RunPapers run={run} evaluation={evaluation} again={again} />
+        <RunPapers run={run} evaluation={evaluation} estimates={estimates} again={again} />
       </div>
     </div>
   );

@@ -75,6 +75,11 @@ function reasonOf(finding: Finding): string {
   if (finding.outcome !== 'met' && finding.possible !== null && finding.possible !== finding.observed) {
     said.push(`${figure(finding.possible, finding.unit)} at best, counting what gaps may hide.`);
   }
-  if (finding.uncertainty !== null) said.push(`U (k = 2) ${asWritten(finding.uncertainty, finding.unit)}.`);
+  if (finding.uncertainty !== null) said.push(`U (k = 2) ${asWritten(uncertaintyOf(finding), finding.unit)}.`);
   return said.filter(Boolean).join(' ');
+}
+
+/** As it was written; one that was worked out with two digits, which is all it bears (JCGM 100, 7.2.6). */
+function uncertaintyOf({ limit, uncertainty }: Finding): number {
+  return limit.startsWith('cure/') ? Number(uncertainty?.toPrecision(2)) : (uncertainty ?? Number.NaN);
 }

@@ -87,7 +87,12 @@ function PartLine({
 }) {
   const asksLeakTest = cycle?.leakTest !== undefined;
   const hasMore =
-    part.quantity !== '' || part.startDegree !== '' || part.tool !== '' || part.title !== '' || part.drawing !== '';
+    part.quantity !== '' ||
+    part.startDegree !== '' ||
+    Boolean(part.humidity) ||
+    part.tool !== '' ||
+    part.title !== '' ||
+    part.drawing !== '';
   return (
     <fieldset>
       <legend>
@@ -120,7 +125,10 @@ function PartLine({
         Take out
       </button>
       <details open={hasMore}>
-        <summary>Quantity, tool, drawing, degree of cure at the start{asksLeakTest ? '' : ', leak test'}</summary>
+        <summary>
+          Quantity, tool, drawing, degree of cure at the start, humidity of the lay-up
+          {asksLeakTest ? '' : ', leak test'}
+        </summary>
         <div class="fields">
           <Figure
             label="Quantity"
@@ -133,6 +141,12 @@ function PartLine({
             hint="0 to 1; where the roll had aged"
             value={part.startDegree}
             onValue={(startDegree) => onChange({ startDegree })}
+          />
+          <Figure
+            label="Relative humidity of the lay-up, %"
+            hint="Of the room it was laid up in; for the pressure that voids need"
+            value={part.humidity ?? ''}
+            onValue={(humidity) => onChange({ humidity })}
           />
           <TextField label="Tool" maxLength={120} value={part.tool} onValue={(tool) => onChange({ tool })} />
           <TextField label="What it is" maxLength={200} value={part.title} onValue={(title) => onChange({ title })} />

@@ -1,14 +1,22 @@
 import type { CureEstimate, Evaluation } from '../../models/evaluation/evaluation.ts';
-import { temperatureFromCelsius } from '../../models/units.ts';
 import type { RunView } from '../../server/contract/runs.ts';
 import { clock } from '../words/clock.ts';
-import { plain } from '../words/figures.ts';
+import { degreeWords, gelWords, intervalSentences, tgWords } from '../words/estimates.ts';
 import { shownUnits, zone } from '../workshop.ts';
+import { type EstimatesTold, EstimatesToldList } from './estimates-told.tsx';
 import { RESIN_STATUS_WORDS } from './resin-status-tag.tsx';
 import { Wide } from './wide.tsx';
 
 /** Estimated cure of each judged thermocouple, said to be estimates, with the source they rest on. */
-export function RunEstimates({ run, evaluation }: { run: RunView; evaluation: Evaluation }) {
+export function RunEstimates({
+  run,
+  evaluation,
+  told,
+}: {
+  run: RunView;
+  evaluation: Evaluation;
+  told: EstimatesTold | null;
+}) {
   const estimates = new Map(evaluation.parts.flatMap((part) => part.cure).map((one) => [one.channel, one]));
   if (estimates.size === 0 || !evaluation.resin) return null;
   const status = run.resin?.document.source.status;
@@ -44,15 +52,21 @@ export function RunEstimates({ run, evaluation }: { run: RunView; evaluation: Ev
             {[...estimates.values()].sort(leastFirst).map((one) => (
               <tr key={one.channel}>
                 <th scope="row">{one.channel}</th>
-                <td class="figure-cell">{plain(one.degree, 3)}</td>
-                <td class="figure-cell">{one.tgC === null ? '–' : plain(temperatureFromCelsius(one.tgC, unit), 0)}</td>
-                <td class="figure-cell">{one.gelAt ? clock(one.gelAt, zone.value) : 'not seen'}</td>
+                <td class="figure-cell">{degreeWords(one)}</td>
+                <td class="figure-cell">{tgWords(one, unit)}</td>
+                <td class="figure-cell">{gelWords(one, zone.value)}</td>
                 <td class="figure-cell">{one.vitrifiesAt ? clock(one.vitrifiesAt, zone.value) : 'not seen'}</td>
               </tr>
             ))}
           </tbody>
         </table>
       </Wide>
+      {intervalSentences([...estimates.values()], run.resin?.document.covariance !== undefined).map((sentence) => (
+        <p class="small soft" key={sentence}>
+          {sentence}
+        </p>
+      ))}
+      {told && <EstimatesToldList told={told} />}
     </section>
   );
 }

@@ -61,6 +61,7 @@ function aboutPart(part: LoadPart): string {
     part.quantity && part.quantity > 1 && `${part.quantity} pieces`,
     part.bagLine && `bag line ${part.bagLine}`,
     part.startDegree !== undefined && `degree of cure at the start ${asWritten(part.startDegree)}`,
+    part.humidity !== undefined && `laid up at ${asWritten(part.humidity, '%')} relative humidity`,
     leak && `leak test ${asWritten(leak.start)} to ${asWritten(leak.end)} in ${asWritten(leak.minutes, 'min')}`,
   ]
     .filter(Boolean)

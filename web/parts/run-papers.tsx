@@ -1,6 +1,7 @@
 import { runReadingsCsvPath } from '../../server/contract/paths.ts';
 import type { EvaluationView, RunView } from '../../server/contract/runs.ts';
 import { sentence } from '../words/verdicts.ts';
+import type { EstimatesTold } from './estimates-told.tsx';
 import { RunEstimates } from './run-estimates.tsx';
 import { RunEvaluations } from './run-evaluations.tsx';
 import { RunFiles } from './run-files.tsx';
@@ -12,15 +13,18 @@ import { RunSensors } from './run-sensors.tsx';
 export function RunPapers({
   run,
   evaluation,
+  estimates = null,
   again,
 }: {
   run: RunView;
   evaluation: EvaluationView | null;
+  /** What the chart says is estimated of the part in view. */
+  estimates?: EstimatesTold | null;
   again: () => void;
 }) {
   return (
     <>
-      {evaluation && <RunEstimates run={run} evaluation={evaluation.document} />}
+      {evaluation && <RunEstimates run={run} evaluation={evaluation.document} told={estimates} />}
       <RunLoad run={run} />
       {evaluation && <RunSensors run={run} evaluation={evaluation.document} />}
       <RunFiles run={run} />

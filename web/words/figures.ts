@@ -79,6 +79,7 @@ const DIGITS: Readonly<Record<string, number>> = {
   inHg: 1,
   mmHg: 0,
   torr: 0,
+  'Pa s': 2,
 };
 
 export function digitsOf(unit: string): number {

@@ -19,6 +19,8 @@ export interface PartForm {
   readonly quantity: string;
   readonly bagLine: string;
   readonly startDegree: string;
+  /** Absent in a form kept from before it was asked for. */
+  readonly humidity?: string;
   readonly leakStart: string;
   readonly leakEnd: string;
   readonly leakMinutes: string;
@@ -37,7 +39,15 @@ export interface SensorForm {
 }
 
 export function newPart(id: number, part: string): PartForm {
-  const empty = { quantity: '', bagLine: '', startDegree: '', leakStart: '', leakEnd: '', leakMinutes: '' };
+  const empty = {
+    quantity: '',
+    bagLine: '',
+    startDegree: '',
+    humidity: '',
+    leakStart: '',
+    leakEnd: '',
+    leakMinutes: '',
+  };
   return { id, part, ...empty, title: '', drawing: '', drawingIssue: '', tool: '' };
 }
 
@@ -78,6 +88,7 @@ function partForm(id: number, part: LoadPart): PartForm {
     quantity: text(part.quantity),
     bagLine: part.bagLine ?? '',
     startDegree: text(part.startDegree),
+    humidity: text(part.humidity),
     leakStart: text(part.leakTest?.start),
     leakEnd: text(part.leakTest?.end),
     leakMinutes: text(part.leakTest?.minutes),
@@ -112,6 +123,7 @@ function loadPart(form: PartForm): LoadPart {
     ...number('quantity', form.quantity),
     ...filled('bagLine', form.bagLine),
     ...number('startDegree', form.startDegree),
+    ...number('humidity', form.humidity ?? ''),
     ...(hasLeakTest
       ? { leakTest: { start: Number(form.leakStart), end: Number(form.leakEnd), minutes: Number(form.leakMinutes) } }
       : {}),

@@ -56,8 +56,9 @@ describe('estimated cure', () => {
     timeMs: Float64Array.of(fromMs, untilMs),
     degree: Float64Array.of(0, 1),
     tgC: Float64Array.of(-8, 192),
+    ...{ viscosityPaS: null, thinnest: null, flow: null },
   }));
-  const chart = chartOfRun({ ...inputs, cure: courses });
+  const chart = chartOfRun({ ...inputs, cure: { courses, viscosity: null, voidGrowth: null } });
 
   it('has strips of its own, with the roles of the temperatures', () => {
     expect(chart.strips.map(({ strip }) => strip)).toEqual(['temperature', 'pressure', 'vacuum', 'cure', 'tg']);
