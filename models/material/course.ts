@@ -63,8 +63,9 @@ export function courseOf(
 }
 
 /** Material taken from an item at an instant, and out of the freezer from then on. */
-export function takenFrom(course: Course, what: string, ms: number, untilMs: number): Course {
-  const stays = staysUsed(course, what, ms);
+export function takenFrom(whole: Course, what: string, ms: number, untilMs: number): Course {
+  const course = asUsed(whole, what, ms);
+  const { stays } = course;
   const last = stays.at(-1);
   const laid: Stay = {
     kind: 'out',
@@ -115,7 +116,8 @@ function courseOfKit(
       from: birth.from,
     });
   }
-  const stays = staysUsed(parent, `${item.item} was cut from it`, ms);
+  const used = asUsed(parent, `${item.item} was cut from it`, ms);
+  const { stays } = used;
   const last = stays.at(-1);
   const begun: Beginning = {
     ms,
@@ -124,17 +126,20 @@ function courseOfKit(
     beganFrozen: last?.kind === 'out' && last.beganFrozen,
     thawedMs: last?.kind === 'out' ? last.thawedMs : null,
   };
-  return goOn({ ...parent, item: item.item, kind: item.kind, stays, scrappedMs: null }, item, begun, untilMs);
+  return goOn({ ...used, item: item.item, kind: item.kind, scrappedMs: null }, item, begun, untilMs);
 }
 
 /** Whoever used an item had it out of the freezer, whatever the ledger says. */
-function staysUsed({ item, stays }: Course, what: string, ms: number): readonly Stay[] {
+function asUsed(course: Course, what: string, ms: number): Course {
+  const { item, stays, refreezings } = course;
   const last = stays.at(-1);
-  if (last === undefined || (last.kind !== 'frozen' && last.kind !== 'freezer-record')) return stays;
-  return [
-    ...stays.slice(0, -1),
-    { kind: 'unknown', fromMs: last.fromMs, untilMs: ms, because: notTakenOut(item, { ms, what }) },
-  ];
+  if (last === undefined || (last.kind !== 'frozen' && last.kind !== 'freezer-record')) return course;
+  // Put back the minute it was used: the use came first.
+  if (last.fromMs === ms && stays.at(-2)?.kind === 'out') {
+    return { ...course, stays: stays.slice(0, -1), refreezings: refreezings - 1 };
+  }
+  const because = notTakenOut(item, { ms, what });
+  return { ...course, stays: [...stays.slice(0, -1), { kind: 'unknown', fromMs: last.fromMs, untilMs: ms, because }] };
 }
 
 function goOn(begun: Course, item: LedgerItem, beginning: Beginning, untilMs: number): Course {

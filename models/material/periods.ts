@@ -54,6 +54,8 @@ export function periodsOf(item: LedgerItem, begun: Beginning, untilMs: number): 
       impossible(`${item.item}: ${wordsOf(mark)}, after it was scrapped on ${dayOf(scrappedMs)}`, { item: item.item });
     }
     if (mark.kind === 'use') {
+      // Put back the minute it was used: the use came first.
+      if (mark.ms === now.fromMs && done.at(-1)?.place === 'out') continue;
       now = { ...now, uses: [...now.uses, { ms: mark.ms, what: mark.what }] };
       continue;
     }

@@ -68,6 +68,15 @@ describe('a ledger that cannot be true is refused by name', () => {
     );
   });
 
+  it('but a kit cut the minute its roll was put back is true, and was out until then', () => {
+    const at = '2026-03-03T12:00:00Z';
+    const parent = roll('K-1', out('2026-03-03T08:00:00Z'), back(at));
+    const records = recordsOf([{ ...parent, uses: [{ at, what: 'A was cut from it' }] }, kit('A', 'K-1', at)]);
+    refuseImpossible(records, NOW);
+    expect(lifeOf(records, 'A', '2026-03-03T13:00:00Z')).toMatchObject({ outcome: 'met', used: 300 });
+    expect(lifeOf(records, 'K-1', '2026-03-03T13:00:00Z')).toMatchObject({ outcome: 'met', used: 240 });
+  });
+
   it('but a kit cut the minute its roll came out, and a roll scrapped the minute its last kit was cut, are true', () => {
     const at = '2026-03-03T08:00:00Z';
     const records = recordsOf([roll('K-1', out(at), { kind: 'scrapped', at }), kit('A', 'K-1', at)]);
