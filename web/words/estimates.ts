@@ -7,7 +7,8 @@ import { listed, plain } from './figures.ts';
 export function degreeWords({ degree, degreeInterval }: CureEstimate): string {
   if (!degreeInterval) return plain(degree, 3);
   const expanded = halfOf(degreeInterval);
-  return `${plain(degree, 3)} ± ${plain(expanded, expanded < 0.0005 ? 4 : 3)}`;
+  const digits = expanded < 0.0005 ? 4 : 3;
+  return `${plain(degree, digits)} ± ${plain(expanded, digits)}`;
 }
 
 /** `172 ± 3` in a unit; a dash where the resin gives no Tg. */
