@@ -8,9 +8,11 @@ import type { Forecast } from './forecast.ts';
 export function needsOf(j: Judgement, evaluation: Evaluation, part: PartEvaluation): Forecast['needs'] {
   const sensors = new Set(part.judgedBy);
   const needs = [
-    ...evaluation.decisions
-      .filter(({ channel }) => sensors.has(channel))
-      .map(({ channel, because, from }) => ({ text: `Decide on ${channel}: ${because}`, since: from })),
+    ...evaluation.sensors
+      .filter(({ channel, state }) => state === 'suspect' && sensors.has(channel))
+      .flatMap(({ channel, faults: [fault] }) =>
+        fault === undefined ? [] : [{ text: `Decide on ${channel}: ${fault.because}`, since: fault.from }],
+      ),
     ...silent(j),
     ...part.findings
       .filter(({ outcome }) => outcome === 'not-met')

@@ -90,4 +90,20 @@ describe('what is ahead of an open run', () => {
       true,
     );
   });
+
+  it('asks for a decision on a suspect, whether or not a finding hangs on it yet', () => {
+    const stuck: MadeRun = {
+      ...RAMP,
+      channels: {
+        ...RAMP.channels,
+        TC3: [
+          [0, 20],
+          [10, 40],
+          [200, 40],
+        ],
+      },
+    };
+    expect(at(40, stuck, []).forecast.needs.some(({ text }) => text.startsWith('Decide on TC3'))).toBe(true);
+    expect(at(40, stuck).forecast.needs).toEqual([]);
+  });
 });
