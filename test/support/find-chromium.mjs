@@ -1,7 +1,6 @@
-import { execFileSync } from 'node:child_process';
-import { accessSync, constants, existsSync } from 'node:fs';
 import { platform } from 'node:process';
 import { pathToFileURL } from 'node:url';
+import { isRunnable, say, tryInstalling } from './apt-install.mjs';
 
 const PLACES = {
   linux: [
@@ -32,33 +31,6 @@ export function findChromium(environment = process.env) {
   return (PLACES[platform] ?? []).find(isRunnable) ?? null;
 }
 
-function isRunnable(path) {
-  try {
-    accessSync(path, platform === 'win32' ? constants.F_OK : constants.X_OK);
-    return true;
-  } catch {
-    return false;
-  }
-}
-
-function canInstall() {
-  return platform === 'linux' && process.getuid?.() === 0 && existsSync('/usr/bin/apt-get');
-}
-
-function install() {
-  const apt = (...words) =>
-    execFileSync('/usr/bin/apt-get', words, {
-      stdio: 'inherit',
-      env: { ...process.env, DEBIAN_FRONTEND: 'noninteractive' },
-    });
-  apt('update');
-  apt('install', '--yes', '--no-install-recommends', 'chromium');
-}
-
-function say(text) {
-  process.stdout.write(`${text}\n`);
-}
-
 /** Finds Chromium, or installs Debian's where that is possible, or says plainly what to do. */
 function main() {
   const named = process.env.CHROMIUM_PATH;
@@ -67,14 +39,7 @@ function main() {
     say('Set it to the full path of Chromium, Chrome or Edge, or unset it to have the usual places looked through.');
     return 1;
   }
-  if (findChromium() === null && canInstall()) {
-    say('The browser tests need Chromium; installing it with apt-get.');
-    try {
-      install();
-    } catch (error) {
-      say(`apt-get could not install it: ${error instanceof Error ? error.message : error}`);
-    }
-  }
+  if (findChromium() === null) tryInstalling('chromium', 'The browser tests need Chromium');
   const found = findChromium();
   if (found !== null) {
     say(`Browser tests use ${found}`);

@@ -3,7 +3,7 @@ import { correctionAt } from '../../../models/run/channel.ts';
 import { isTemperatureUnit, parsePressureUnit, temperatureFromCelsius } from '../../../models/units.ts';
 import type { History } from './history.ts';
 import { beginRandom, seedFrom } from './random.ts';
-import type { Figures, Recorder } from './recorder.ts';
+import type { Figures, Indicator } from './recorder.ts';
 import { indicationOf, isFrozen, type SensorFault } from './sensor-faults.ts';
 
 /** A thermocouple as it is wired: its socket, and what its calibration says must be added, in the channel's unit. */
@@ -13,7 +13,7 @@ export interface Wired {
 }
 
 export interface Instruments {
-  readonly recorder: Recorder;
+  readonly recorder: Indicator;
   /** In the order of the history's points. */
   readonly sensors: readonly Wired[];
   /** In the order of the history's bag lines. */
@@ -34,7 +34,7 @@ export interface Recorded {
 /** Reads what really happened through the recorder's instruments: calibration, fault, noise, resolution. */
 export function readInstruments(history: History, instruments: Instruments): Recorded {
   const { recorder } = instruments;
-  const every = recorder.intervalS / history.stepS;
+  const every = Math.round(recorder.intervalS / history.stepS);
   const count = Math.floor((history.count - 1) / every) + 1;
   const instantsMs = Array.from({ length: count }, (_, n) => history.startMs + n * recorder.intervalS * 1000);
   const values = recorder.layout.channels.map((channel) => {
@@ -82,7 +82,7 @@ function blankedBar(history: History, step: number, pumpBar: number): number {
   return pumpBar * (1 - Math.exp((-step * history.stepS) / 20));
 }
 
-function temperatureAs(temperatureC: number, unit: '°C' | '°F', { temperature }: Recorder): number {
+function temperatureAs(temperatureC: number, unit: '°C' | '°F', { temperature }: Indicator): number {
   const power = 10 ** temperature.decimals;
   return Math.round(temperatureFromCelsius(temperatureC, unit) * power) / power;
 }

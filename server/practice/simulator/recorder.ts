@@ -30,3 +30,8 @@ export interface Recorder {
   /** Ending of the file's name. */
   readonly extension: string;
 }
+
+/** What of a recorder decides how it shows what it reads. */
+export type Indicator = Pick<Recorder, 'intervalS' | 'temperature' | 'pressure' | 'vacuum'> & {
+  readonly layout: Pick<Layout, 'channels'>;
+};
