@@ -22,6 +22,9 @@ const ReadAgainPage = lazy(() => import('./pages/read-again.tsx'));
 const ImportFilePage = lazy(() => import('./pages/import-file.tsx'));
 const CyclePage = lazy(() => import('./pages/cycle.tsx'));
 const CycleImportPage = lazy(() => import('./pages/cycle-import.tsx'));
+const LayupPage = lazy(() => import('./pages/layup.tsx'));
+const ToolsPage = lazy(() => import('./pages/tools.tsx'));
+const ToolPage = lazy(() => import('./pages/tool.tsx'));
 const ResinPage = lazy(() => import('./pages/resin.tsx'));
 
 export function App() {
@@ -45,6 +48,9 @@ export function App() {
               <Route path="/runs/:run/sources/:source" component={ReadAgainPage} />
               <Route path="/parts" component={PartsPage} />
               <Route path="/parts/:serial" component={PartPage} />
+              <Route path="/parts/:serial/layup" component={LayupPage} />
+              <Route path="/tools" component={ToolsPage} />
+              <Route path="/tools/:tool" component={ToolPage} />
               <Route path="/cycles" component={CyclesPage} />
               <Route path="/cycles/import" component={CycleImportPage} />
               <Route path="/cycles/:code/:issue" component={CyclePage} />

@@ -110,6 +110,10 @@ export const thickness = z.object({
       throughout: z.enum(['reached', 'not-reached', 'cannot-tell']),
     }),
   ),
+  /** The cycle's ceiling, in its unit, beside the hottest place: it limits thermocouples, not estimates. */
+  ceiling: z
+    .object({ atMost: z.number(), unit: z.enum(['°C', '°F']), stayed: z.enum(['below', 'above', 'cannot-tell']) })
+    .nullable(),
   assumptions: z.array(z.string()),
 });
 export type Thickness = z.infer<typeof thickness>;

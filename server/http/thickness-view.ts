@@ -52,6 +52,7 @@ export function thicknessView(found: ThicknessFound): Thickness {
     leastDegree: rangeOf(cases.map(({ least }) => least.degree)) ?? [0, 0],
     leastTgC: tgs(({ least }) => least.tgC),
     reached: reachedOf(found, cases),
+    ceiling: ceilingOf(found, cases),
     assumptions: assumptionsOf(found, records),
   };
 }
@@ -164,6 +165,17 @@ function reachedOf(found: ThicknessFound, cases: readonly ThicknessCase[]): Thic
     });
   }
   return reached;
+}
+
+function ceilingOf(found: ThicknessFound, cases: readonly ThicknessCase[]): Thickness['ceiling'] {
+  const { cycle } = found;
+  if (cycle?.ceiling === undefined) return null;
+  const { ceiling: atMost } = cycle;
+  const unit = cycle.units.temperature;
+  const peaks = cases.map(({ peak }) => temperatureFromCelsius(peak.temperatureC, unit));
+  const isAbove = peaks.every((peak) => peak > atMost);
+  const isBelow = peaks.every((peak) => peak <= atMost) && thicknessGaps(found).length === 0;
+  return { atMost, unit, stayed: isAbove ? 'above' : isBelow ? 'below' : 'cannot-tell' };
 }
 
 /** The thermocouples that a face was taken from, and those said to be inside, over the stretch. */

@@ -23,7 +23,14 @@ export type Tool = keyof typeof TOOLS;
 export const ZONES = { door: 0.88, front: 0.96, middle: 1.02, back: 1.1 } as const;
 export type Zone = keyof typeof ZONES;
 
-export type PartKind = 'strut' | 'rudder-stock' | 'radome' | 'radome-skin' | 'post-cured-strut' | 'repair';
+export type PartKind =
+  | 'strut'
+  | 'rudder-stock'
+  | 'heavy-stock'
+  | 'radome'
+  | 'radome-skin'
+  | 'post-cured-strut'
+  | 'repair';
 
 /** What is alike in all parts of a kind. */
 export interface Kind {
@@ -60,9 +67,25 @@ export const KINDS: Readonly<Record<PartKind, Kind>> = {
     drawingIssue: 'A',
     tool: 'aluminium',
     sensors: [
-      { place: 'centre', column: { laminateM: 0.026, nodes: 5, junction: 2, position: 1, bagM2KPerW: BAG } },
+      { place: 'embedded, centre', column: { laminateM: 0.026, nodes: 5, junction: 2, position: 1, bagM2KPerW: BAG } },
       { place: 'lag', column: { laminateM: 0.03, nodes: 5, junction: 4, position: 0.86, bagM2KPerW: BAG } },
       { place: 'end', column: { laminateM: 0.012, nodes: 3, junction: 1, position: 1.06, bagM2KPerW: BAG } },
+    ],
+  },
+  'heavy-stock': {
+    title: 'Rudder stock, heavy',
+    drawing: 'SR-D-1212',
+    drawingIssue: 'A',
+    tool: 'aluminium',
+    sensors: [
+      {
+        place: 'bag side, root',
+        column: { laminateM: 0.046, nodes: 12, junction: 11, position: 1.13, bagM2KPerW: 0.003 },
+      },
+      {
+        place: 'tool side, root',
+        column: { laminateM: 0.046, nodes: 12, junction: 0, position: 1.13, bagM2KPerW: 0.003 },
+      },
     ],
   },
   radome: {

@@ -35,6 +35,14 @@ export function stocks(first: number, count: 1 | 2, roll: string): PlannedPart[]
   }));
 }
 
+/** A stock thicker than any before it, its two thermocouples on its surfaces. */
+export function heavyStock(n: number, roll: string): PlannedPart[] {
+  const part = serial('RS', n);
+  return [
+    { part, kind: 'heavy-stock', tool: 'RT-03', zone: 'middle', bagLine: 'bag 1', channels: thermocouples(0, 2), roll },
+  ];
+}
+
 /** Radomes in Oven 2: the first under one bag, the others together under the second. */
 export function radomes(first: number, count: 2 | 3, roll: string): PlannedPart[] {
   const each = count === 2 ? 3 : 2;

@@ -5,6 +5,7 @@ import { usePageTitle } from '../page-title.ts';
 import { AuditEntries } from '../parts/audit-entries.tsx';
 import { Notebook, PageHead } from '../parts/notebook.tsx';
 import { OutcomeMark, VerdictLine } from '../parts/outcome-mark.tsx';
+import { PartLayup } from '../parts/part-layup.tsx';
 import { PartResults } from '../parts/part-results.tsx';
 import { PartRunEntry } from '../parts/part-run.tsx';
 import { Shown } from '../parts/shown.tsx';
@@ -12,6 +13,7 @@ import { useRead } from '../use-read.ts';
 import { day } from '../words/clock.ts';
 import { missingOfPart } from '../words/missing.ts';
 import { zone } from '../workshop.ts';
+import { PartThickness } from './part-thickness.tsx';
 
 /** A part's whole cure history: everything that touched it, everything that shares it, and what is not on record. */
 export function PartPage() {
@@ -32,7 +34,7 @@ export function PartPage() {
 
 function About({ view }: { view: PartView }) {
   const drawing = view.drawing && `drawing ${view.drawing}${view.drawingIssue ? ` issue ${view.drawingIssue}` : ''}`;
-  const said = [view.title, drawing, view.tool && `tool ${view.tool}`, view.quantity > 1 && `${view.quantity} pieces`];
+  const said = [view.title, drawing, view.quantity > 1 && `${view.quantity} pieces`].filter(Boolean).join(' · ');
   const hasFailed = view.results.some(({ outcome }) => outcome === 'failed');
   return (
     <>
@@ -45,7 +47,14 @@ function About({ view }: { view: PartView }) {
           </span>
         )}
       </div>
-      <p class="soft">{said.filter(Boolean).join(' · ')}</p>
+      <p class="soft">
+        {said}
+        {view.tool && (
+          <>
+            {said && ' · '}tool <a href={`/tools/${encodeURIComponent(view.tool)}`}>{view.tool}</a>
+          </>
+        )}
+      </p>
     </>
   );
 }
@@ -80,6 +89,8 @@ function Body({ view, again }: { view: PartView; again: () => void }) {
           </ul>
         )}
       </section>
+      <PartThickness view={view} />
+      <PartLayup view={view} onChanged={again} />
       <section class="section">
         <h2>Not on record</h2>
         {missing.length === 0 ? (

@@ -26,6 +26,9 @@ export function PartsPage() {
     <Notebook>
       <PageHead title="Parts">
         <p class="soft">{reading.value ? `${count(reading.value.total, 'part')}${q ? ` like “${q}”` : ''}` : ''}</p>
+        <p>
+          <a href="/tools">Tools they are made on</a>
+        </p>
       </PageHead>
       <form class="row filters" onSubmit={look}>
         <TextField label="Serial, title or drawing" type="search" value={typed} onValue={setTyped} />
@@ -95,7 +98,10 @@ function NoParts({ q }: { q: string }) {
   ) : (
     <div class="empty">
       <h2>No part is on record yet</h2>
-      <p>A part comes on record when the load of a run names it. Import a log, then say what was in the vessel.</p>
+      <p>
+        A part comes on record when the load of a run names it, or when its lay-up is written down. Import a log, then
+        say what was in the vessel.
+      </p>
       <a class="button" href="/import">
         Import a log
       </a>
