@@ -57,7 +57,7 @@ describe('on paper', () => {
     timeout: 120_000,
   }, async () => {
     const { page, expectNoComplaints, close } = await openPage(browser, program.address, { colorScheme: 'dark' });
-    for (const name of ['run-does-not-conform', 'run-of-two-parts', 'part', 'cycle']) {
+    for (const name of ['run-does-not-conform', 'run-of-two-parts', 'part', 'cycle', 'resin']) {
       await page.goto(screens[name] ?? '');
       await settle(page);
       await page.emulateMedia({ media: 'print', colorScheme: 'dark' });

@@ -7,6 +7,7 @@ import { usePageTitle } from '../page-title.ts';
 import { CycleStatus } from '../parts/cycle-status.tsx';
 import { CycleWordsView } from '../parts/cycle-words.tsx';
 import { Notebook, PageHead } from '../parts/notebook.tsx';
+import { ResinOfCycle } from '../parts/resin-of-cycle.tsx';
 import { RunEntry } from '../parts/run-entry.tsx';
 import { Shown } from '../parts/shown.tsx';
 import { StatusTag } from '../parts/status-tag.tsx';
@@ -50,6 +51,7 @@ function Body({ view, again }: { view: CycleView; again: () => void }) {
         </div>
         <CycleWordsView cycle={view.document} onLight={setLit} />
       </div>
+      {view.document.cure && <ResinOfCycle code={view.document.cure.resin} />}
       <CycleStatus view={view} onChanged={again} />
       <section class="section">
         <h2>Runs judged by this issue</h2>

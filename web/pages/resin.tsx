@@ -1,15 +1,17 @@
 import { useRoute } from 'preact-iso';
-import type { Resin } from '../../models/cure/resin.ts';
 import { resinPath } from '../../server/contract/paths.ts';
 import type { ResinView } from '../../server/contract/resins.ts';
 import { TgCurve } from '../charts/tg-curve.tsx';
 import { usePageTitle } from '../page-title.ts';
 import { Notebook, PageHead } from '../parts/notebook.tsx';
-import { RESIN_STATUS_WORDS, ResinStatusTag } from '../parts/resin-status-tag.tsx';
+import { ResinFigures } from '../parts/resin-figures.tsx';
+import { ResinStanding } from '../parts/resin-status-tag.tsx';
 import { Shown } from '../parts/shown.tsx';
 import { When } from '../parts/when.tsx';
 import { useRead } from '../use-read.ts';
 import { asWritten } from '../words/figures.ts';
+import { ResinProgramme } from './resin-programme.tsx';
+import { ResinRates } from './resin-rates.tsx';
 
 /** A resin set as it is: where it comes from, what it may be used for, its figures. */
 export default function ResinPage() {
@@ -32,7 +34,7 @@ export default function ResinPage() {
     >
       <PageHead title={code}>{view && <p class="lead">{view.name}</p>}</PageHead>
       <Shown reading={reading} what="Reading the resin set">
-        {(resin) => <Body view={resin} />}
+        {(resin) => <Body key={resin.code} view={resin} />}
       </Shown>
     </Notebook>
   );
@@ -43,9 +45,7 @@ function Body({ view }: { view: ResinView }) {
   return (
     <>
       <div class="stack">
-        <p>
-          <ResinStatusTag status={resin.source.status} /> {RESIN_STATUS_WORDS[resin.source.status]}
-        </p>
+        <ResinStanding status={resin.source.status} />
         <p>Source: {resin.source.citation}.</p>
         <p>
           {resin.validC
@@ -53,6 +53,8 @@ function Body({ view }: { view: ResinView }) {
             : 'The range of temperature it was fitted in is not written.'}
         </p>
       </div>
+      <ResinProgramme resin={resin} />
+      <ResinRates resin={resin} />
       {resin.glassTransition && (
         <section class="section">
           <h2>Glass transition over degree of cure</h2>
@@ -66,7 +68,7 @@ function Body({ view }: { view: ResinView }) {
       )}
       <section class="section">
         <h2>Figures of the set</h2>
-        <Figures resin={resin} />
+        <ResinFigures resin={resin} />
       </section>
       <section class="section">
         <h2>Cycles that estimate with it</h2>
@@ -89,56 +91,4 @@ function Body({ view }: { view: ResinView }) {
       </p>
     </>
   );
-}
-
-function Figures({ resin }: { resin: Resin }) {
-  const { law, ...constants } = resin.kinetics;
-  return (
-    <dl class="facts">
-      <dt>Law of the rate</dt>
-      <dd>{law}</dd>
-      {Object.entries(constants).map(([name, value]) => (
-        <Line
-          key={name}
-          name={name}
-          value={Array.isArray(value) ? value.join(', ') : `${asWritten(value)}${unitOf(name)}`}
-        />
-      ))}
-      <Line name="Gas constant" value={asWritten(resin.gasConstant, 'J/(mol K)')} />
-      <Line name="Degree of cure at the start" value={asWritten(resin.initialDegree)} />
-      {resin.diffusion && (
-        <Line
-          name="Diffusion, logistic"
-          value={`C ${asWritten(resin.diffusion.C)}, α at 0 K ${asWritten(resin.diffusion.alphaC0)}, per K ${asWritten(resin.diffusion.alphaCT)}`}
-        />
-      )}
-      {resin.glassTransition && (
-        <Line
-          name="Tg, DiBenedetto"
-          value={`${asWritten(resin.glassTransition.tg0C)} to ${asWritten(resin.glassTransition.tgInfC, '°C')}, λ ${asWritten(resin.glassTransition.lambda)}`}
-        />
-      )}
-      {resin.gel && <Line name="Gels at a degree of" value={asWritten(resin.gel.degree)} />}
-      {resin.thermal && (
-        <Line
-          name="Heat of reaction"
-          value={`${asWritten(resin.thermal.heatOfReaction, 'J/kg')} of ${resin.thermal.basis}`}
-        />
-      )}
-    </dl>
-  );
-}
-
-function Line({ name, value }: { name: string; value: string }) {
-  return (
-    <>
-      <dt>{name}</dt>
-      <dd>{value}</dd>
-    </>
-  );
-}
-
-function unitOf(name: string): string {
-  if (name.startsWith('A')) return '\u00a01/s';
-  return name.startsWith('E') ? '\u00a0J/mol' : '';
 }

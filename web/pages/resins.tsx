@@ -3,7 +3,7 @@ import type { Resins } from '../../server/contract/resins.ts';
 import { usePageTitle } from '../page-title.ts';
 import { Entry, Notebook, PageHead } from '../parts/notebook.tsx';
 import { ResinImport } from '../parts/resin-import.tsx';
-import { ResinStatusTag } from '../parts/resin-status-tag.tsx';
+import { ResinStanding } from '../parts/resin-status-tag.tsx';
 import { Shown } from '../parts/shown.tsx';
 import { When } from '../parts/when.tsx';
 import { useRead } from '../use-read.ts';
@@ -34,9 +34,9 @@ export function ResinsPage() {
                 <Entry key={resin.code} when={<When at={resin.imported.at} />}>
                   <div class="head">
                     <a href={`/resins/${encodeURIComponent(resin.code)}`}>{resin.code}</a>
-                    <ResinStatusTag status={resin.status} />
                   </div>
                   <p>{resin.name}</p>
+                  <ResinStanding status={resin.status} />
                   <p class="soft">
                     {resin.citation}
                     {resin.cycles.length > 0 &&
