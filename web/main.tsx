@@ -10,6 +10,7 @@ import './style/chart.css';
 import './style/import.css';
 import './style/load.css';
 import './style/cycle.css';
+import './style/resin.css';
 import './style/thickness.css';
 import './style/print.css';
 import { render } from 'preact';

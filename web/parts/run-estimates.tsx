@@ -4,7 +4,7 @@ import { clock } from '../words/clock.ts';
 import { degreeWords, gelWords, intervalSentences, tgWords } from '../words/estimates.ts';
 import { shownUnits, zone } from '../workshop.ts';
 import { type EstimatesTold, EstimatesToldList } from './estimates-told.tsx';
-import { RESIN_STATUS_WORDS } from './resin-status-tag.tsx';
+import { ResinStanding } from './resin-status-tag.tsx';
 import { Wide } from './wide.tsx';
 
 /** Estimated cure of each judged thermocouple, said to be estimates, with the source they rest on. */
@@ -27,8 +27,9 @@ export function RunEstimates({
       <p>
         Worked out from the temperatures by a model, not measured. Set{' '}
         <a href={`/resins/${encodeURIComponent(evaluation.resin.code)}`}>{evaluation.resin.code}</a>,{' '}
-        {evaluation.resin.citation}. {status && RESIN_STATUS_WORDS[status]}
+        {evaluation.resin.citation}.
       </p>
+      {status && <ResinStanding status={status} />}
       <Wide label="Cure at the end, estimated">
         <table>
           <thead>
