@@ -1,4 +1,4 @@
-import type { ChannelLayout } from './layout.ts';
+import type { ChannelLayout, Layout } from './layout.ts';
 import type { LiveSource } from './live-source.ts';
 
 /**
@@ -20,4 +20,9 @@ export function channelsOfSource({ reads, channels }: LiveSource): readonly Chan
     const uncertainty = Math.sqrt((channel.uncertainty ?? 0) ** 2 + (4 * half ** 2) / 3);
     return { ...channel, uncertainty };
   });
+}
+
+/** The channels a file's layout or a live source's document describes, as they are judged. */
+export function channelsOf(document: Layout | LiveSource): readonly ChannelLayout[] {
+  return document.format === 'dwellbook-source/1' ? channelsOfSource(document) : document.channels;
 }

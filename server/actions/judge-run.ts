@@ -32,7 +32,7 @@ export async function changeAndJudge(
   const { db } = parts;
   requireRun(db, run);
   const inputs = gatherInputs(db, run, changes);
-  const document = inputs === null ? null : await evaluateInputs(parts.evaluate, inputs);
+  const document = inputs === null || inputs.scans === 0 ? null : await evaluateInputs(parts.evaluate, inputs);
   return db
     .transaction(() => {
       write();
@@ -66,7 +66,7 @@ export async function evaluateInputs(evaluate: EvaluateLog, inputs: RunInputs): 
     exclusions,
     believed,
     barometer: null,
-    open: false,
+    open: inputs.open,
   });
   return {
     ...evaluation,
@@ -85,7 +85,7 @@ export function writeEvaluation(
 ): number {
   const { db } = parts;
   const now = gatherInputs(db, run);
-  if (now === null || Object.entries(inputs.hashes).some(([key, hash]) => Object(now.hashes)[key] !== hash)) {
+  if (now === null || changedInputs(inputs, now).length > 0) {
     throw new DomainError('state-conflict', `Run ${run} was changed while it was being judged; judge it again`, {
       run,
     });
@@ -104,4 +104,12 @@ export function writeEvaluation(
     details: { evaluation: id, verdict: document.verdict, engine: VERSION, ...hashes },
   });
   return id;
+}
+
+/** What a run is judged by now and was not when its inputs were gathered. Of an open run readings go on coming. */
+function changedInputs({ hashes, open }: RunInputs, now: RunInputs): string[] {
+  const grows: readonly string[] = open ? ['readings', 'layout', 'materials'] : [];
+  return Object.entries(hashes).flatMap(([key, hash]) =>
+    Object(now.hashes)[key] === hash || grows.includes(key) ? [] : [key],
+  );
 }

@@ -9,7 +9,8 @@ import { insertSource, readSources } from '../store/sources.ts';
 import { deedOf } from './action-parts.ts';
 import type { IncomingFile } from './incoming-file.ts';
 import { changeAndJudge, type JudgingParts } from './judge-run.ts';
-import { readRunLog, sourceInputs } from './run-inputs.ts';
+import { readRunLog, type SourceInput, sourceInputs } from './run-inputs.ts';
+import { shiftedLog } from './shifted-log.ts';
 import { readFiles } from './write-source.ts';
 
 /**
@@ -29,6 +30,13 @@ export async function readAgain(
   if (source === undefined) {
     throw new DomainError('not-found', `Run ${run} has no source ${n} that counts now`, { run, source: n });
   }
+  if (source.layout.format === 'dwellbook-source/1') {
+    throw new DomainError(
+      'state-conflict',
+      `Source ${n} of run ${run}, "${source.layout.name}", was logged as it happened; there is no file to read again`,
+      { run, source: n },
+    );
+  }
   const kept = source.files.map(({ sha256, name, bytes }) => {
     const file = findFile(db, sha256);
     if (file === undefined) throw new DomainError('database-damaged', `The file ${sha256} is not there`, { sha256 });
@@ -39,12 +47,17 @@ export async function readAgain(
     kept.map(({ file }) => file),
     document,
   );
-  const again = {
+  const { shiftMs, fills } = source;
+  const again: SourceInput = {
+    n,
+    shiftMs,
+    fills,
+    scans: log.readings.timeMs.length,
     chainSha256: chainOfReadings(log.readings),
     layoutSha256: sha256OfDocument(layout),
     fileSha256s: source.files.map(({ sha256 }) => sha256),
-    untilMs: Math.trunc(log.readings.timeMs.at(-1) ?? 0),
-    readLog: () => log,
+    untilMs: Math.trunc((log.readings.timeMs.at(-1) ?? 0) + shiftMs),
+    readLog: () => shiftedLog(log, shiftMs),
   };
   const others = sourceInputs(db, run).filter(({ n: other }) => other !== n);
   const sources = [...others, again];
@@ -58,6 +71,7 @@ export async function readAgain(
       layout,
       log,
       files: kept.map(({ id, file }) => ({ name: file.name, fileId: id })),
+      join: source.joined === null ? null : { shiftMs, because: source.joined.because },
       ...deed,
     });
     refreshSpan(db, run);

@@ -5,16 +5,18 @@ import { temperaturesOfEmf } from '../../models/log/temperatures-of-emf.ts';
 import type { MaterialRecords } from '../../models/material/ledger.ts';
 import type { Exclusion, Load } from '../../models/run/load.ts';
 import type { SensorDecision } from '../contract/runs.ts';
-import { oneHash, sha256OfDocument } from '../store/canonical.ts';
+import { oneHash, sha256Of, sha256OfDocument } from '../store/canonical.ts';
 import { type CycleRow, readCycleDocument, requireCycle } from '../store/cycles.ts';
 import type { Db } from '../store/database.ts';
 import { readDecisions } from '../store/decisions.ts';
 import type { EvaluationInputs } from '../store/evaluations.ts';
+import { findOpenRun } from '../store/live-runs.ts';
 import { findLoad } from '../store/loads.ts';
 import { recordsOfParts } from '../store/material-records.ts';
 import { findResin, readResinDocument } from '../store/resins.ts';
 import { readSourceLog, readSources } from '../store/sources.ts';
-import { mergeLogs } from './merge-logs.ts';
+import { type MergedLog, mergeLogs } from './merge-logs.ts';
+import { shiftedLog } from './shifted-log.ts';
 
 /** What people decided about suspects, as one document: hashed and kept with each evaluation. */
 export interface DecisionsDocument {
@@ -35,6 +37,10 @@ export interface RunInputs {
   readonly hashes: EvaluationInputs;
   /** Of the bytes as they came. */
   readonly logSha256: string;
+  /** Whether it is still being logged: what is to come is pending then. */
+  readonly open: boolean;
+  /** Scans of all its sources; without one there is nothing to judge. */
+  readonly scans: number;
   /** Reads the readings: the one costly part, put off until it is needed. */
   readonly readLog: () => ReadLog;
 }
@@ -46,12 +52,20 @@ export interface Changes {
   readonly decisions?: readonly SensorDecision[];
   /** All sources as they would stand, in order. */
   readonly sources?: readonly SourceInput[];
+  /** Whether it is judged as one that is still being logged. */
+  readonly open?: boolean;
 }
 
 /** One source's part in a judgement. */
 export interface SourceInput {
+  readonly n: number;
   readonly chainSha256: string;
   readonly layoutSha256: string;
+  /** Added to the instants of its scans when it is read. */
+  readonly shiftMs: number;
+  /** Whether its channels may be those of an earlier source. */
+  readonly fills: boolean;
+  readonly scans: number;
   readonly fileSha256s: readonly string[];
   /** The last scan, in whole ms. */
   readonly untilMs: number;
@@ -84,7 +98,7 @@ export function gatherInputs(db: Db, run: number, changes: Changes = {}): RunInp
     decisions,
     materials,
     hashes: {
-      readings: oneHash(sources.map(({ chainSha256 }) => chainSha256)),
+      readings: oneHash(sources.map(hashOfReadings)),
       layout: oneHash(sources.map(({ layoutSha256 }) => layoutSha256)),
       load: sha256OfDocument(load),
       cycle: cycleRow.sha256,
@@ -93,30 +107,46 @@ export function gatherInputs(db: Db, run: number, changes: Changes = {}): RunInp
       materials: materials === null ? null : sha256OfDocument(materials),
     },
     logSha256: oneHash(sources.flatMap(({ fileSha256s }) => fileSha256s)),
+    open: changes.open ?? findOpenRun(db, run) !== undefined,
+    scans: sources.reduce((sum, { scans }) => sum + scans, 0),
     readLog: () => readRunLog(sources),
   };
 }
 
 /** The sources a run is judged by. */
-export function sourceInputs(db: Db, run: number): (SourceInput & { readonly n: number })[] {
+export function sourceInputs(db: Db, run: number): SourceInput[] {
   return readSources(db, run).map((source) => ({
     n: source.n,
     chainSha256: source.chainSha256,
     layoutSha256: source.layoutSha256,
-    fileSha256s: source.files.map(({ sha256 }) => sha256),
+    shiftMs: source.shiftMs,
+    fills: source.fills,
+    scans: source.scans,
+    // What was logged live has no file; its bytes are its scans.
+    fileSha256s: source.files.length > 0 ? source.files.map(({ sha256 }) => sha256) : [source.chainSha256],
     untilMs: Date.parse(source.until),
-    readLog: () => readSourceLog(db, source),
+    readLog: () => shiftedLog(readSourceLog(db, source), source.shiftMs),
   }));
 }
 
 /** All readings of a run, of however many sources; where a recorder wrote emf, as the temperatures it stands for. */
 export function readRunLog(sources: readonly SourceInput[]): ReadLog {
+  return readRunSources(sources).log;
+}
+
+/** All readings of a run, and what was joined in them. */
+export function readRunSources(sources: readonly SourceInput[]): MergedLog {
   return mergeLogs(
-    sources.map(({ readLog }) => {
+    sources.map(({ n, fills, readLog }) => {
       const log = readLog();
-      return { ...log, readings: temperaturesOfEmf(log.readings) };
+      return { n, fills, log: { ...log, readings: temperaturesOfEmf(log.readings) } };
     }),
   );
+}
+
+/** A source that is read by another clock is another input. */
+function hashOfReadings({ chainSha256, shiftMs }: SourceInput): string {
+  return shiftMs === 0 ? chainSha256 : sha256Of(`${chainSha256} ${shiftMs}`);
 }
 
 function cycleOf(db: Db, named: { readonly code: string; readonly issue: string } | null): CycleRow | null {

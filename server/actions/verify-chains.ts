@@ -4,6 +4,7 @@ import type { Db } from '../store/database.ts';
 import { findBrokenDocument } from '../store/documents.ts';
 import { findBrokenEvaluation } from '../store/evaluations.ts';
 import { findBrokenFile } from '../store/files.ts';
+import { findBrokenLiveChain } from '../store/live-verify.ts';
 import { countSources, findBrokenSource } from '../store/sources.ts';
 
 /** Recomputes every hash there is: the audit trail, readings, files, documents and evaluations. */
@@ -12,6 +13,7 @@ export function verifyChains(db: Db): AuditVerification {
   const firstBroken =
     (trail.firstBroken === null ? null : `audit line ${trail.firstBroken}`) ??
     broken('readings of', () => findBrokenSource(db)) ??
+    broken('scans of', () => findBrokenLiveChain(db)) ??
     broken('file', () => findBrokenFile(db)) ??
     broken('document', () => findBrokenDocument(db)) ??
     broken('evaluation', () => findBrokenEvaluation(db));

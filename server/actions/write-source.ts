@@ -7,7 +7,7 @@ import { keepFile } from '../store/files.ts';
 import { markImportRecorded, requireImport } from '../store/imports.ts';
 import { findRecorder, requireRecorder } from '../store/recorders.ts';
 import { refreshSpan } from '../store/runs.ts';
-import { insertSource } from '../store/sources.ts';
+import { insertSource, type NewSource } from '../store/sources.ts';
 import { type ActionParts, deedOf } from './action-parts.ts';
 import { addRecorder } from './add-recorder.ts';
 import type { IncomingFile } from './incoming-file.ts';
@@ -40,14 +40,20 @@ export interface Origin {
 }
 
 /** Writes files and their readings as a source of a run; part of a larger write. Says what the audit line should. */
-export function writeNewSource(parts: ActionParts, run: number, read: ReadFiles, origin: Origin) {
+export function writeNewSource(
+  parts: ActionParts,
+  run: number,
+  read: ReadFiles,
+  origin: Origin,
+  join: NewSource['join'] = null,
+) {
   const { db } = parts;
   for (const file of read.files) refuseRecorded(parts, file);
   const recorder = origin.recorder ?? null;
   if (recorder !== null) keepForRecorder(parts, recorder, read.layout, origin.vessel);
   const files = read.files.map((file) => ({ name: file.name, fileId: keepFile(db, file) }));
   const recorderId = recorder === null ? null : requireRecorder(db, recorder).id;
-  const source = insertSource(db, { runId: run, recorderId, replacesId: null, ...read, files, ...deedOf(parts) });
+  const source = insertSource(db, { runId: run, recorderId, replacesId: null, ...read, files, join, ...deedOf(parts) });
   refreshSpan(db, run);
   if (origin.importId !== undefined) settleImport(parts, origin.importId, run);
   return {

@@ -7,6 +7,7 @@ import type { JudgingParts } from '../actions/judge-run.ts';
 import { createLongWork } from '../actions/long-work.ts';
 import { verifyInThread } from '../actions/verify-in-thread.ts';
 import { createApp } from '../app.ts';
+import { startLiveLogging } from '../live/live-logging.ts';
 import type { Db } from '../store/database.ts';
 import { openDatabase } from '../store/database.ts';
 import { builtInPerson } from './built-in-person.ts';
@@ -35,12 +36,14 @@ export async function serveWorkshop(options: ServerOptions): Promise<void> {
   const path = databasePath(options.folder);
   const db = openDatabase(path, { at: new Date().toISOString() });
   const longWork = createLongWork();
+  const live = startLiveLogging({ db, clock: Date.now, log });
   const parts = { db, clock: Date.now, actor: builtInPerson(), evaluate: longWork.evaluate };
   await options.prepare?.(parts);
   const incomingFolder = join(options.folder, 'incoming');
   mkdirSync(incomingFolder, { recursive: true });
   const app = createApp({
     ...parts,
+    live,
     estimateCure: longWork.estimateCure,
     cureThroughPart: longWork.cureThroughPart,
     log,
@@ -54,11 +57,13 @@ export async function serveWorkshop(options: ServerOptions): Promise<void> {
   process.stdout.write(`Dwellbook is at ${addressOf(server, options.host)}\n`);
   // Most of the program: loaded now rather than while the first person waits.
   await import('../http/answer.ts');
+  void live.lookAfterStart().catch((error: unknown) => log.error({ err: error }, 'live logging'));
   const watched = await startWatching(options, { ...parts, log });
   await ended;
   server.close();
   server.closeAllConnections();
   await watched?.close();
+  await live.close();
   await longWork.close();
   closeDatabase(db);
 }

@@ -3,6 +3,7 @@ import { CHANNEL_ROLES } from '../../models/log/layout.ts';
 import { PASSED_OVER_KINDS, REPAIR_KINDS } from '../../models/log/readings.ts';
 import { layoutDocument } from './documents.ts';
 import { problem } from './problem.ts';
+import { joinedChannel } from './runs.ts';
 import { deed, instant, name, reason, runNumber, sha256 } from './scalars.ts';
 
 export const IMPORT_STATES = ['waiting', 'recorded', 'discarded'] as const;
@@ -91,6 +92,33 @@ export const preview = z.object({
 });
 export type Preview = z.infer<typeof preview>;
 
+/** A person may say a clock was wrong by up to a day. */
+const shiftS = z.number().min(-86_400).max(86_400);
+
+/** What joining the file to a run would make of it, with its clock shifted so much. */
+export const previewJoinRequest = z.strictObject({ layout: layoutDocument, run: runNumber, shiftS: shiftS.default(0) });
+
+export const joinPreview = z.object({
+  /** Number it would have among the run's sources. */
+  source: z.number(),
+  /** Channels both have: who would say which stretch, and where they differ. */
+  joined: z.array(joinedChannel),
+  /** Channels of the file that the run has not. */
+  ownChannels: z.array(z.string()),
+  /** Where the readings of both say that its clock stands; a proposal, never applied by itself. */
+  proposal: z.object({
+    shiftS: z.number().nullable(),
+    because: z.string(),
+    /** Root mean square of the differences without and with it, in `unit`. */
+    rmsWithout: z.number().nullable(),
+    rmsWith: z.number().nullable(),
+    unit: z.string(),
+    channels: z.array(z.string()),
+    compared: z.number(),
+  }),
+});
+export type JoinPreviewView = z.infer<typeof joinPreview>;
+
 export const recordRunRequest = z.strictObject({
   layout: layoutDocument,
   /** Keeps the layout for this recorder, making the recorder where it is new. */
@@ -98,6 +126,8 @@ export const recordRunRequest = z.strictObject({
   vessel: name.nullish(),
   /** Adds the file to this run as another source, instead of making a run. */
   run: runNumber.nullish(),
+  /** Joins it to that run: its channels may be the run's, and fill what was not read. Its clock is shifted as said. */
+  join: z.strictObject({ shiftS: shiftS.default(0), because: reason }).nullish(),
 });
 export type RecordRunRequest = z.infer<typeof recordRunRequest>;
 

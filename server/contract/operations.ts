@@ -8,13 +8,25 @@ import {
   discardImportRequest,
   imports,
   importView,
+  joinPreview,
   preview,
+  previewJoinRequest,
   previewRequest,
   recordedRun,
   recordRunRequest,
   uploadQuery,
 } from './imports.ts';
 import { addPartWorkRequest, layupQuery, layupView, setCouponRequest, setLayupRequest } from './layups.ts';
+import {
+  beginRunRequest,
+  endRunRequest,
+  madeKey,
+  makeKeyRequest,
+  pushed,
+  pushRequest,
+  revokeKeyRequest,
+  senderKeys,
+} from './live.ts';
 import {
   batchLine,
   correctEventRequest,
@@ -39,6 +51,7 @@ import { importResinRequest, resins, resinView } from './resins.ts';
 import { ROUTES, type Route } from './routes.ts';
 import {
   addNoteRequest,
+  closeRunRequest,
   decideSuspectRequest,
   evaluationView,
   judgeAgainRequest,
@@ -132,5 +145,13 @@ export const OPERATIONS = {
   find: { ...ROUTES.find, query: findQuery, answer: found },
   readAudit: { ...ROUTES.readAudit, query: auditQuery, answer: audit },
   verifyAudit: { ...ROUTES.verifyAudit, answer: auditVerification },
+  previewJoin: { ...ROUTES.previewJoin, body: previewJoinRequest, answer: joinPreview },
+  listKeys: { ...ROUTES.listKeys, answer: senderKeys },
+  makeKey: { ...ROUTES.makeKey, body: makeKeyRequest, answer: madeKey, status: 201 },
+  revokeKey: { ...ROUTES.revokeKey, body: revokeKeyRequest, answer: senderKeys },
+  push: { ...ROUTES.push, body: pushRequest, answer: pushed },
+  beginRun: { ...ROUTES.beginRun, body: beginRunRequest, answer: runView, status: 201 },
+  endRun: { ...ROUTES.endRun, body: endRunRequest, answer: runView },
+  closeRun: { ...ROUTES.closeRun, body: closeRunRequest, answer: runView },
   readOpenApi: { ...ROUTES.readOpenApi, answer: 'application/json' },
 } as const satisfies Record<keyof typeof ROUTES, Operation>;

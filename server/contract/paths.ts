@@ -191,6 +191,34 @@ export function auditPath(query: { before?: number; limit?: number; subject?: st
   return withQuery(AUDIT_PATH, query);
 }
 
+export function importJoinPath(id: number): string {
+  return `${importPath(id)}/join`;
+}
+
+/** Where scans are pushed. */
+export const PUSH_PATH = '/api/push';
+
+export function vesselKeysPath(vessel: string): string {
+  return `${VESSELS_PATH}/${encodeURIComponent(vessel)}/keys`;
+}
+
+export function vesselKeyRevokePath(vessel: string, key: number): string {
+  return `${vesselKeysPath(vessel)}/${key}/revoke`;
+}
+
+/** Where a run is begun. */
+export function vesselRunsPath(vessel: string): string {
+  return `${VESSELS_PATH}/${encodeURIComponent(vessel)}/runs`;
+}
+
+export function runEndPath(run: number): string {
+  return `${runPath(run)}/end`;
+}
+
+export function runClosePath(run: number): string {
+  return `${runPath(run)}/close`;
+}
+
 /** The help page of a problem's `type`. */
 export function problemPath(code: string): string {
   return `/problems/${code}`;

@@ -121,6 +121,38 @@ export const ROUTES = {
   find: route('get', '/api/find', 'Where a code leads', ANYONE),
   readAudit: route('get', '/api/audit', 'The audit trail, latest first', ANYONE),
   verifyAudit: route('get', '/api/audit/verify', 'Recompute every chain', ANYONE),
+  previewJoin: route(
+    'post',
+    '/api/imports/{import}/join',
+    'See what joining the file to a run would make of it, keeping nothing',
+    ANYONE,
+    'json',
+  ),
+  listKeys: route('get', '/api/vessels/{vessel}/keys', 'Keys of those who push scans of a vessel', ENGINEERS),
+  makeKey: route('post', '/api/vessels/{vessel}/keys', 'Make a key for a sender; it is shown once', ENGINEERS, 'json'),
+  revokeKey: route(
+    'post',
+    '/api/vessels/{vessel}/keys/{key}/revoke',
+    'Take a key out of use for good',
+    ENGINEERS,
+    'json',
+  ),
+  push: route('post', '/api/push', 'Push scans of a vessel, with its key as Authorization: Bearer', ANYONE, 'json'),
+  beginRun: route(
+    'post',
+    '/api/vessels/{vessel}/runs',
+    'Begin a run, now or from an instant still kept',
+    ANYONE,
+    'json',
+  ),
+  endRun: route('post', '/api/runs/{run}/end', 'End a run; scans up to the instant count', ANYONE, 'json'),
+  closeRun: route(
+    'post',
+    '/api/runs/{run}/close',
+    'Close a run that has ended: its scans are merged, verified and judged for good',
+    ANYONE,
+    'json',
+  ),
   readOpenApi: route('get', '/api/openapi.json', 'This description', ANYONE),
 } as const satisfies Record<string, Route>;
 

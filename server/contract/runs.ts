@@ -2,7 +2,14 @@ import * as z from 'zod';
 import { CHANNEL_ROLES } from '../../models/log/layout.ts';
 import { PASSED_OVER_KINDS, REPAIR_KINDS } from '../../models/log/readings.ts';
 import { FAULT_KINDS } from '../../models/run/fault-kinds.ts';
-import { cycleDocument, evaluationDocument, layoutDocument, loadDocument, resinDocument } from './documents.ts';
+import {
+  cycleDocument,
+  evaluationDocument,
+  layoutDocument,
+  loadDocument,
+  resinDocument,
+  sourceDocument,
+} from './documents.ts';
 import { countInQuery, deed, instant, name, reason, runNumber, sha256, verdict } from './scalars.ts';
 
 export const RUN_STATES = ['awaiting-load', 'awaiting-cycle', 'judged'] as const;
@@ -20,6 +27,8 @@ export const runLine = z.object({
   cycle: z.object({ code: z.string(), issue: z.string() }).nullable(),
   parts: z.array(z.string()),
   state: z.enum(RUN_STATES),
+  /** Of a run that is logged as it happens, until it is closed; null of any other. */
+  live: z.enum(['running', 'ended']).nullable(),
   /** Of the latest evaluation; null before the first. */
   verdict: verdict.nullable(),
   /** Suspected sensors nobody has decided on yet. */
@@ -60,11 +69,12 @@ export const runFile = z.object({
 });
 export type RunFile = z.infer<typeof runFile>;
 
-/** Where readings of a run came from: one recorder, one layout, one chain. */
+/** Where readings of a run came from: one recorder or live source, one document that says how, one chain. */
 export const runSource = z.object({
   n: z.number(),
   recorder: z.string().nullable(),
-  layout: layoutDocument,
+  /** How its files are read; of what was logged live, the document of its source. */
+  layout: z.union([layoutDocument, sourceDocument]),
   layoutSha256: sha256,
   files: z.array(runFile),
   /** SHA-256 over the canonical form of the scans in order. */
@@ -76,11 +86,37 @@ export const runSource = z.object({
     z.object({ kind: z.enum(REPAIR_KINDS), lines, file: z.number(), scans: z.number(), because: z.string() }),
   ),
   passedOver: z.array(z.object({ kind: z.enum(PASSED_OVER_KINDS), file: z.number(), lines })),
+  /**
+   * Where its channels are those of an earlier source: it fills what that one did not read. What was added to its
+   * instants, and why; `from` and `until` have it in them.
+   */
+  joined: z.object({ shiftS: z.number(), because: z.string() }).nullable(),
   recorded: deed,
 });
 export type RunSource = z.infer<typeof runSource>;
 
 export const DECISIONS = ['exclude', 'keep'] as const;
+
+/** A channel that more than one source read: who said which stretch, and where they differ. */
+export const joinedChannel = z.object({
+  channel: z.string(),
+  /** In order of time; `source` is the `n` of a source. */
+  stretches: z.array(z.object({ source: z.number(), from: instant, until: instant, readings: z.number() })),
+  /** What each later source read where the earlier ones did, in the channel's unit. */
+  differences: z.array(
+    z.object({
+      source: z.number(),
+      unit: z.string(),
+      compared: z.number(),
+      /** Those further apart than the uncertainties of both together; where one is not known, than 0. */
+      differing: z.number(),
+      toleranceOfBoth: z.number().nullable(),
+      /** Later less earlier. */
+      largest: z.object({ difference: z.number(), at: instant }).nullable(),
+    }),
+  ),
+});
+export type JoinedChannel = z.infer<typeof joinedChannel>;
 
 /** What a person decided about a suspected sensor; the latest of a channel holds. */
 export const sensorDecision = z.object({
@@ -122,6 +158,7 @@ export type MarginEntry = z.infer<typeof marginEntry>;
 export const runView = runLine.extend({
   channels: z.array(z.object({ name: z.string(), role: z.enum(CHANNEL_ROLES), unit: z.string(), source: z.number() })),
   sources: z.array(runSource),
+  joined: z.array(joinedChannel),
   load: loadDocument.nullable(),
   loadSet: deed.nullable(),
   cycleIssue: z
@@ -177,6 +214,9 @@ export type DecideSuspectRequest = z.infer<typeof decideSuspectRequest>;
 
 export const readAgainRequest = z.strictObject({ layout: layoutDocument, reason });
 export type ReadAgainRequest = z.infer<typeof readAgainRequest>;
+
+/** Nothing need be said. */
+export const closeRunRequest = z.strictObject({});
 
 export const judgeAgainRequest = z.strictObject({ reason: reason.optional() });
 export type JudgeAgainRequest = z.infer<typeof judgeAgainRequest>;

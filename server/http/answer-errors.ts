@@ -27,6 +27,7 @@ export function answerErrors({ log }: Pick<AppParts, 'log'>): ErrorRequestHandle
 }
 
 export function sendProblem(response: Response, problem: Problem): void {
+  if (problem.status === 401) response.set('WWW-Authenticate', 'Bearer');
   response.status(problem.status).type('application/problem+json').send(JSON.stringify(problem));
 }
 

@@ -21,7 +21,8 @@ export async function answer(
   const body = operation.body === undefined ? request : parse(operation.body, request.body, '#');
   const params = request.params as Record<string, string>;
   const handler = HANDLERS[name] as Handler<OperationName>;
-  const result = await handler(parts, { params, query, body } as never);
+  const key = /^Bearer +(\S+)$/i.exec(request.get('authorization') ?? '')?.[1] ?? null;
+  const result = await handler(parts, { params, query, body, key } as never);
   response.status(operation.status ?? 200);
   if (operation.answer === 'text/csv' || operation.answer === 'application/octet-stream') {
     await sendDownload(response, operation.answer, result as Download);

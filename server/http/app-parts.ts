@@ -2,10 +2,13 @@ import type { CureThroughPart } from '../actions/ask-thickness.ts';
 import type { EstimateCure } from '../actions/evaluate-log.ts';
 import type { JudgingParts } from '../actions/judge-run.ts';
 import type { AuditVerification } from '../contract/audit.ts';
+import type { LiveLogging } from '../live/live-logging.ts';
 
 /** What the server is made of. Everything is opened by who makes it. */
 export interface AppParts extends JudgingParts {
   readonly estimateCure: EstimateCure;
+  /** What takes scans and keeps them. */
+  readonly live: LiveLogging;
   readonly cureThroughPart: CureThroughPart;
   /** Folder of the built pages; null where none are served. */
   readonly siteFolder: string | null;

@@ -31,6 +31,8 @@ export interface Input<N extends OperationName> {
   readonly params: Readonly<Record<string, string>>;
   readonly query: InputOf<N, 'query'>;
   readonly body: InputOf<N, 'body'>;
+  /** What was sent as `Authorization: Bearer`. */
+  readonly key: string | null;
 }
 
 export type Handler<N extends OperationName> = (parts: AppParts, input: Input<N>) => AnswerOf<N> | Promise<AnswerOf<N>>;

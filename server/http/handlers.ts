@@ -1,9 +1,11 @@
 import { cycleHandlers } from './cycle-handlers.ts';
 import type { Handlers } from './handler.ts';
 import { importHandlers } from './import-handlers.ts';
+import { liveRunHandlers } from './live-run-handlers.ts';
 import { materialHandlers } from './material-handlers.ts';
 import { partHandlers } from './part-handlers.ts';
 import { runHandlers } from './run-handlers.ts';
+import { senderHandlers } from './sender-handlers.ts';
 import { toolHandlers } from './tool-handlers.ts';
 import { workshopHandlers } from './workshop-handlers.ts';
 
@@ -16,4 +18,6 @@ export const HANDLERS: Handlers = {
   ...partHandlers,
   ...toolHandlers,
   ...materialHandlers,
+  ...liveRunHandlers,
+  ...senderHandlers,
 };

@@ -10,7 +10,7 @@ export function marginOf(
 ): MarginEntry[] {
   const entries: MarginEntry[] = [
     { at: run.from, kind: 'log', text: 'logging began' },
-    { at: run.until, kind: 'log', text: 'logging ended' },
+    ...(run.live === 'running' ? [] : [{ at: run.until, kind: 'log', text: 'logging ended' } as const]),
     ...(evaluation === null ? [] : eventsOf(evaluation)),
     ...decisions.flatMap(({ channel, from, reason }): MarginEntry[] =>
       from === null ? [] : [{ at: from, kind: 'decision', text: `${channel} excluded: ${reason}` }],

@@ -1,6 +1,6 @@
 import { DomainError } from '../../models/errors.ts';
 import { asTemperature } from '../../models/log/temperatures-of-emf.ts';
-import type { RunView } from '../contract/runs.ts';
+import type { RunSource, RunView } from '../contract/runs.ts';
 import { findCycle, readCycleDocument } from '../store/cycles.ts';
 import type { Db } from '../store/database.ts';
 import { readDecisions } from '../store/decisions.ts';
@@ -9,14 +9,16 @@ import { findLoad, type LoadRow } from '../store/loads.ts';
 import { readNotes } from '../store/notes.ts';
 import { findResin, readResinDocument } from '../store/resins.ts';
 import { findRunLine } from '../store/run-lines.ts';
-import { readSources } from '../store/sources.ts';
+import { readSources, type StoredSource } from '../store/sources.ts';
+import { joinedChannels } from './joined-channels.ts';
 import { marginOf } from './run-margin.ts';
 
 /** Everything of a run but its readings. */
 export function runView(db: Db, run: number): RunView {
   const line = findRunLine(db, run);
   if (line === undefined) throw new DomainError('not-found', `There is no run ${run}`, { run });
-  const sources = readSources(db, run).map(({ id: _id, recorderId: _recorderId, ...source }) => source);
+  const sources = readSources(db, run);
+  const channels = channelsOfSources(sources);
   const load = findLoad(db, run);
   const cycleIssue = cycleIssueOf(db, load);
   const resin = resinOf(db, cycleIssue);
@@ -25,10 +27,9 @@ export function runView(db: Db, run: number): RunView {
   const notes = readNotes(db, run);
   return {
     ...line,
-    channels: sources.flatMap(({ n, layout }) =>
-      layout.channels.map(asTemperature).map(({ name, role, unit }) => ({ name, role, unit, source: n })),
-    ),
-    sources,
+    channels,
+    sources: sources.map(shownSource),
+    joined: channels.length < countChannels(sources) ? joinedChannels(db, run) : [],
     load: load?.document ?? null,
     loadSet: load === null ? null : { at: load.at, by: load.by },
     cycleIssue,
@@ -39,6 +40,23 @@ export function runView(db: Db, run: number): RunView {
     notes,
     margin: marginOf(line, evaluation?.document ?? null, decisions, notes),
   };
+}
+
+function shownSource(source: StoredSource): RunSource {
+  const { id: _id, recorderId: _recorderId, shiftMs: _shiftMs, fills: _fills, growing: _growing, ...shown } = source;
+  return shown;
+}
+
+/** Each channel once: of those that several sources read, the first. */
+function channelsOfSources(sources: readonly StoredSource[]): RunView['channels'] {
+  const channels = sources.flatMap(({ n, layout }) =>
+    layout.channels.map(asTemperature).map(({ name, role, unit }) => ({ name, role, unit, source: n })),
+  );
+  return [...new Map(channels.toReversed().map((channel) => [channel.name, channel])).values()].reverse();
+}
+
+function countChannels(sources: readonly StoredSource[]): number {
+  return sources.reduce((sum, { layout }) => sum + layout.channels.length, 0);
 }
 
 function cycleIssueOf(db: Db, load: LoadRow | null): RunView['cycleIssue'] {

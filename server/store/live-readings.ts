@@ -1,5 +1,6 @@
 import type { LiveScan } from '../../models/log/live-source.ts';
 import type { Readings } from '../../models/log/readings.ts';
+import { channelsOfSource } from '../../models/log/source-channels.ts';
 import type { Db } from './database.ts';
 import { beginChain, type ChainHead, digestOf } from './live-chain.ts';
 import { headsOf, readPackedScans } from './live-heads.ts';
@@ -47,7 +48,7 @@ function growingOf(db: Db, run: LiveRunRow, { id: sourceId, settings: current }:
 
 /** Readings of an open run's source so far, as {@link readReadings} gives those of a stored one. */
 export function readGrowing(db: Db, { run, sourceId, settings, head }: GrowingSource): Readings {
-  const { channels } = settings.document;
+  const channels = channelsOfSource(settings.document);
   const timeMs = new Float64Array(head.scans);
   const columns = channels.map(() => new Float64Array(head.scans));
   let scan = 0;

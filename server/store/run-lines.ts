@@ -1,6 +1,8 @@
 import type { RunLine, Runs, RunsQuery } from '../contract/runs.ts';
 import type { Db } from './database.ts';
 import { isoFromMs } from './instants.ts';
+import { growingSources } from './live-readings.ts';
+import { findOpenRun } from './live-runs.ts';
 
 /** Runs on one line each, latest first. */
 export function listRuns(db: Db, query: Partial<RunsQuery> = {}): Runs {
@@ -41,11 +43,12 @@ const FROM = `
   LEFT JOIN vessels ON vessels.id = runs.vessel_id
   LEFT JOIN loads ON loads.id = (SELECT max(id) FROM loads WHERE run_id = runs.id)
   LEFT JOIN cycles ON cycles.id = loads.cycle_id
+  LEFT JOIN live_runs ON live_runs.run_id = runs.id AND live_runs.closed_at IS NULL
   LEFT JOIN evaluations ON evaluations.id = (SELECT max(id) FROM evaluations WHERE run_id = runs.id)`;
 
 const SELECT = `
   SELECT runs.id AS run, vessels.name AS vessel, runs.from_ms, runs.until_ms, loads.id AS load_id,
-         loads.work_order, cycles.code, cycles.issue, evaluations.verdict, evaluations.undecided,
+         live_runs.begun_ms, live_runs.ended_ms, loads.work_order, cycles.code, cycles.issue, evaluations.verdict, evaluations.undecided,
          evaluations.not_met, evaluations.cannot_tell ${FROM}`;
 
 interface LineRow {
@@ -53,6 +56,9 @@ interface LineRow {
   readonly vessel: string | null;
   readonly from_ms: number;
   readonly until_ms: number;
+  /** Of a run that is open. */
+  readonly begun_ms: number | null;
+  readonly ended_ms: number | null;
   readonly load_id: number | null;
   readonly work_order: string | null;
   readonly code: string | null;
@@ -68,13 +74,12 @@ function lineOf(db: Db, row: LineRow): RunLine {
   return {
     run: row.run,
     vessel: row.vessel,
-    ...readSourceSummary(db, row.run),
-    from: isoFromMs(row.from_ms),
-    until: isoFromMs(row.until_ms),
+    ...(row.begun_ms === null ? summaryOf(db, row) : summaryOfOpen(db, row)),
     workOrder: row.work_order,
     cycle: code === null || issue === null ? null : { code, issue },
     parts: row.load_id === null ? [] : readSerials(db, row.load_id),
     state: row.load_id === null ? 'awaiting-load' : code === null ? 'awaiting-cycle' : 'judged',
+    live: row.begun_ms === null ? null : row.ended_ms === null ? 'running' : 'ended',
     verdict: row.verdict,
     undecided: JSON.parse(row.undecided ?? '[]').length,
     notMet: JSON.parse(row.not_met ?? '[]'),
@@ -82,15 +87,34 @@ function lineOf(db: Db, row: LineRow): RunLine {
   };
 }
 
-function readSourceSummary(db: Db, run: number): { recorder: string | null; scans: number } {
+type Summary = Pick<RunLine, 'recorder' | 'scans' | 'from' | 'until'>;
+
+function summaryOf(db: Db, { run, from_ms, until_ms }: LineRow): Summary {
   const row = db
     .prepare<[number], { recorder: string | null; scans: number }>(
-      `SELECT recorders.name AS recorder, scans FROM run_sources LEFT JOIN recorders ON recorders.id = recorder_id
+      `SELECT coalesce(recorders.name, CASE documents.format WHEN 'dwellbook-source/1'
+                THEN json_extract(documents.text, '$.name') END) AS recorder, scans
+       FROM run_sources LEFT JOIN recorders ON recorders.id = recorder_id
+       JOIN documents ON documents.sha256 = layout_sha256
        WHERE run_id = ? AND run_sources.id NOT IN (SELECT replaces_id FROM run_sources WHERE replaces_id IS NOT NULL)
        ORDER BY n LIMIT 1`,
     )
     .get(run);
-  return row ?? { recorder: null, scans: 0 };
+  return { ...(row ?? { recorder: null, scans: 0 }), from: isoFromMs(from_ms), until: isoFromMs(until_ms) };
+}
+
+/** A run that is open goes as far as its last scan. */
+function summaryOfOpen(db: Db, { run, from_ms }: LineRow): Summary {
+  const live = findOpenRun(db, run);
+  const growing = live === undefined ? [] : growingSources(db, live);
+  const [first] = growing.toSorted((a, b) => b.head.scans - a.head.scans);
+  const untilMs = Math.max(from_ms, ...growing.map(({ head }) => head.lastMs ?? from_ms));
+  return {
+    recorder: first?.settings.document.name ?? null,
+    scans: first?.head.scans ?? 0,
+    from: isoFromMs(from_ms),
+    until: isoFromMs(untilMs),
+  };
 }
 
 function readSerials(db: Db, loadId: number): string[] {

@@ -16,6 +16,11 @@ export function insertRun(db: Db, run: NewRun): number {
   return Number(lastInsertRowid);
 }
 
+/** A run that was logged live spans at least from its beginning to its end, be there scans or not. */
+export function setSpan(db: Db, run: number, fromMs: number, untilMs: number): void {
+  db.prepare('UPDATE runs SET from_ms = ?, until_ms = ? WHERE id = ?').run(fromMs, untilMs, run);
+}
+
 export function requireRun(db: Db, run: number): void {
   if (db.prepare('SELECT 1 FROM runs WHERE id = ?').get(run) === undefined) {
     throw new DomainError('not-found', `There is no run ${run}`, { run });
@@ -26,11 +31,13 @@ export function setVessel(db: Db, run: number, vesselId: number): void {
   db.prepare('UPDATE runs SET vessel_id = ? WHERE id = ?').run(vesselId, run);
 }
 
-/** The span of a run is that of the sources it is judged by. */
+/** The span of a run is that of the sources it is judged by, by the clock each is read by; without one it stays. */
 export function refreshSpan(db: Db, run: number): void {
   db.prepare(
     `UPDATE runs SET (from_ms, until_ms) = (
-       SELECT min(from_ms), max(until_ms) FROM run_sources
+       SELECT coalesce(min(run_sources.from_ms + coalesce(shift_ms, 0)), runs.from_ms),
+              coalesce(max(run_sources.until_ms + coalesce(shift_ms, 0)), runs.until_ms)
+       FROM run_sources LEFT JOIN source_joins ON source_joins.source_id = run_sources.id
        WHERE run_id = @run AND id NOT IN (SELECT replaces_id FROM run_sources WHERE replaces_id IS NOT NULL))
      WHERE id = @run`,
   ).run({ run });

@@ -15,6 +15,7 @@ import { verifyChains } from '../../server/actions/verify-chains.ts';
 import { createApp } from '../../server/app.ts';
 import { runChartPath } from '../../server/contract/paths.ts';
 import { ROLES } from '../../server/contract/roles.ts';
+import { startLiveLogging } from '../../server/live/live-logging.ts';
 import { type Db, openDatabase } from '../../server/store/database.ts';
 import { insertRun } from '../../server/store/runs.ts';
 import { insertSource } from '../../server/store/sources.ts';
@@ -118,6 +119,7 @@ function serve(parts: JudgingParts, folder: string): Promise<Server> {
   const app = createApp({
     ...parts,
     log,
+    live: startLiveLogging({ db: parts.db, clock: parts.clock, log }),
     siteFolder: null,
     incomingFolder: folder,
     watchedFolder: null,

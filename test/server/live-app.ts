@@ -10,6 +10,7 @@ import { verifyChains } from '../../server/actions/verify-chains.ts';
 import { createApp } from '../../server/app.ts';
 import { ROLES } from '../../server/contract/roles.ts';
 import type { AppParts } from '../../server/http/app-parts.ts';
+import { startLiveLogging } from '../../server/live/live-logging.ts';
 import { freshDatabase, freshFolder } from './fresh-database.ts';
 import { expectContractKept } from './keeps-contract.ts';
 
@@ -48,10 +49,15 @@ export async function liveApp(changes: Partial<AppParts> = {}): Promise<LiveApp>
   const incomingFolder = join(folder, 'incoming');
   mkdirSync(incomingFolder);
   const db = freshDatabase();
+  const clock = changes.clock ?? (() => Date.parse(NOW));
+  const log = { info: () => undefined, error: (facts: object) => faults.push(facts) };
+  const live = startLiveLogging({ db: changes.db ?? db, clock, monotonic: clock, log });
+  running.push(() => live.close());
   const parts: AppParts = {
     db,
+    live,
     verify: async () => verifyChains(db),
-    clock: () => Date.parse(NOW),
+    clock,
     actor: { name: 'inspector 2', roles: ROLES },
     evaluate: async (log, inputs) => evaluateLog(log, inputs),
     estimateCure: async (...given) => cureCourses(...given),
@@ -60,7 +66,7 @@ export async function liveApp(changes: Partial<AppParts> = {}): Promise<LiveApp>
     incomingFolder,
     watchedFolder: null,
     mostUploadBytes: 1_000_000,
-    log: { info: () => undefined, error: (facts) => faults.push(facts) },
+    log,
     ...changes,
   };
   const server = createServer(createApp(parts));

@@ -40,16 +40,22 @@ export default function ReadAgainPage() {
       <Shown reading={reading} what="Reading the run">
         {(view) => {
           const source = view.sources.find((one) => one.n === n);
-          return source ? <Form run={run} source={source} /> : <p>This run has no source {n} that counts now.</p>;
+          if (source === undefined) return <p>This run has no source {n} that counts now.</p>;
+          const { layout, files } = source;
+          return layout.format === 'dwellbook-source/1' ? (
+            <p>{layout.name} was logged as it happened; there is no file to read again.</p>
+          ) : (
+            <Form run={run} n={n} kept={layout} files={files} />
+          );
         }}
       </Shown>
     </Notebook>
   );
 }
 
-function Form({ run, source }: { run: number; source: RunSource }) {
+function Form({ run, n, kept, files }: { run: number; n: number; kept: Layout; files: RunSource['files'] }) {
   const { route } = useLocation();
-  const [layout, setLayout] = useState<Layout>(source.layout);
+  const [layout, setLayout] = useState<Layout>(kept);
   const [answered, setAnswered] = useState<ReadonlySet<string>>(new Set());
   const [reason, setReason] = useState('');
   const onChange = (next: Layout, key: string) => {
@@ -58,7 +64,7 @@ function Form({ run, source }: { run: number; source: RunSource }) {
   };
   const editing: LayoutEditing = { layout, statements: [], answered, onChange };
   const reading = usePost(async () => {
-    await postJson<RunView>(runSourceLayoutPath(run, source.n), { layout, reason } satisfies ReadAgainRequest);
+    await postJson<RunView>(runSourceLayoutPath(run, n), { layout, reason } satisfies ReadAgainRequest);
     route(`/runs/${run}`);
   });
   const readAgain = (event: Event) => {
@@ -67,7 +73,7 @@ function Form({ run, source }: { run: number; source: RunSource }) {
   };
   return (
     <form onSubmit={readAgain}>
-      <p class="said-of">Files: {listed(source.files.map(({ name }) => name))}.</p>
+      <p class="said-of">Files: {listed(files.map(({ name }) => name))}.</p>
       <LayoutEditor {...editing} />
       <section class="section">
         <h2>Columns</h2>

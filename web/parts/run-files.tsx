@@ -1,7 +1,7 @@
 import { runFilePath } from '../../server/contract/paths.ts';
 import type { RunSource, RunView } from '../../server/contract/runs.ts';
 import { dayAndClock, stretch } from '../words/clock.ts';
-import { bytes } from '../words/figures.ts';
+import { asWritten, bytes } from '../words/figures.ts';
 import { passedOverWords, repairWords } from '../words/repairs.ts';
 import { zone } from '../workshop.ts';
 import { LayoutWords } from './layout-words.tsx';
@@ -32,10 +32,18 @@ function Source({ run, source }: { run: number; source: RunSource }) {
         ))}
       </ul>
       <p>
+        {source.layout.format === 'dwellbook-source/1' ? `Logged as it happened, from ${source.layout.name}. ` : ''}
         {source.recorder ? `Recorder ${source.recorder}. ` : ''}
         {source.scans} scans, {stretch(source.from, source.until, zone.value)}. Taken in by {source.recorded.by},{' '}
         {dayAndClock(source.recorded.at, zone.value)}.
       </p>
+      {source.joined && (
+        <p>
+          Joined to the sources before it: it speaks where they did not read
+          {source.joined.shiftS === 0 ? '' : `, ${asWritten(source.joined.shiftS, 's')} added to its clock`}. The reason
+          given: {source.joined.because}
+        </p>
+      )}
       {source.repairs.length > 0 ? (
         <div>
           <h3>Mended in its time</h3>
@@ -52,13 +60,15 @@ function Source({ run, source }: { run: number; source: RunSource }) {
       <p class="soft small breakable">
         Chain of its scans <code>{source.chainSha256}</code>
       </p>
-      <details class="no-print">
-        <summary>The layout it was read by</summary>
-        <LayoutWords layout={source.layout} />
-        <p>
-          <a href={`/runs/${run}/sources/${source.n}`}>Read these files again by a layout put right</a>
-        </p>
-      </details>
+      {source.layout.format === 'dwellbook-layout/1' && (
+        <details class="no-print">
+          <summary>The layout it was read by</summary>
+          <LayoutWords layout={source.layout} />
+          <p>
+            <a href={`/runs/${run}/sources/${source.n}`}>Read these files again by a layout put right</a>
+          </p>
+        </details>
+      )}
     </div>
   );
 }

@@ -1,0 +1,253 @@
+import { describe, expect, it } from 'vitest';
+import type { LiveSource } from '../../models/log/live-source.ts';
+import { readLog } from '../../models/log/read-log.ts';
+import type { Readings } from '../../models/log/readings.ts';
+import { verifyChains } from '../../server/actions/verify-chains.ts';
+import { asLogFile } from '../../server/files/as-log-file.ts';
+import type { Db } from '../../server/store/database.ts';
+import { insertLiveSource } from '../../server/store/live-sources.ts';
+import { requireVessel } from '../../server/store/vessels.ts';
+import { type LiveApp, liveApp, upload } from './live-app.ts';
+import { DEED } from './live-workshop.ts';
+import { recordedCase } from './recorded-case.ts';
+import { loadCase, recordCase } from './workshop-steps.ts';
+
+const CASE = 'must-work';
+const { layout, log } = recordedCase(CASE);
+
+async function caseReadings(): Promise<Readings> {
+  return readLog([await asLogFile('run.csv', [log], log.length)], layout).readings;
+}
+
+/** The case's vessel with a source that pushes its channels, by their names. */
+function addSource(db: Db, vessel: string, name = 'plc'): void {
+  const channels = layout.channels.map((channel) => ({ ...channel, column: channel.name }));
+  const document: LiveSource = { format: 'dwellbook-source/1', name, intervalS: 10, reads: { kind: 'push' }, channels };
+  insertLiveSource(db, requireVessel(db, vessel), { document, isResting: false, ...DEED });
+}
+
+async function liveVessel(app: LiveApp, vessel = 'Autoclave 7'): Promise<string> {
+  await app.post('/api/vessels', { name: vessel, kind: 'autoclave' });
+  addSource(app.parts.db, vessel, `plc of ${vessel}`);
+  const made = await app.post(`/api/vessels/${vessel}/keys`, { name: 'cell controller' });
+  expect(made.status, made.text).toBe(201);
+  return made.body.key;
+}
+
+function push(app: LiveApp, key: string, scans: object[]) {
+  return app.send('/api/push', {
+    method: 'POST',
+    headers: { 'content-type': 'application/json', authorization: `Bearer ${key}` },
+    body: JSON.stringify({ scans }),
+  });
+}
+
+function scansOf({ timeMs, channels }: Readings): { at: string; values: Record<string, number | null> }[] {
+  return [...timeMs].map((at, scan) => ({
+    at: new Date(at).toISOString(),
+    values: Object.fromEntries(
+      channels.map(({ channel, value }) => [channel.name, Number.isNaN(value[scan]) ? null : (value[scan] ?? null)]),
+    ),
+  }));
+}
+
+async function pushAll(app: LiveApp, key: string, scans: object[]): Promise<void> {
+  for (let first = 0; first < scans.length; first += 200) {
+    const pushed = await push(app, key, scans.slice(first, first + 200));
+    expect(pushed.status, pushed.text).toBe(200);
+    expect(pushed.body.refused).toEqual([]);
+  }
+}
+
+describe('a run logged as it happens', () => {
+  it('comes to the same readings and the same verdict as the recorder’s file of it', async () => {
+    const app = await liveApp();
+    const filed = await recordCase(app, CASE);
+    expect((await loadCase(app, filed, CASE)).status).toBe(201);
+    const ofFile = (await app.get(`/api/runs/${filed}`)).body;
+
+    const key = await liveVessel(app);
+    const scans = scansOf(await caseReadings());
+    const [head, rest] = [scans.slice(0, 50), scans.slice(50)];
+    await pushAll(app, key, head);
+    // Its start was forgotten: begun from the first scan that is kept.
+    const begun = await app.post('/api/vessels/Autoclave 7/runs', { from: head[0]?.at, load: null, cycle: null });
+    expect(begun.status, begun.text).toBe(201);
+    const { run } = begun.body;
+    expect(begun.body).toMatchObject({ live: 'running', scans: 50, recorder: 'plc of Autoclave 7', from: head[0]?.at });
+    const loaded = await loadCase(app, run, CASE);
+    expect(loaded.status, loaded.text).toBe(201);
+    const outcomes = loaded.body.evaluation.document.parts[0].findings.map((one: { outcome: string }) => one.outcome);
+    expect(outcomes).toContain('pending');
+    await pushAll(app, key, rest);
+    expect((await app.get(`/api/runs/${run}/chart?points=200`)).status).toBe(200);
+    expect((await app.get('/api/runs')).body.runs.map((line: { live: string | null }) => line.live)).toContain(
+      'running',
+    );
+    const ended = await app.post(`/api/runs/${run}/end`, { at: scans.at(-1)?.at });
+    expect(ended.status, ended.text).toBe(200);
+    expect(ended.body).toMatchObject({ live: 'ended', scans: scans.length, until: scans.at(-1)?.at });
+    const open = ended.body.sources[0];
+    const csvWhileOpen = (await app.get(`/api/runs/${run}/readings.csv`)).text;
+
+    const closed = await app.post(`/api/runs/${run}/close`, {});
+    expect(closed.status, closed.text).toBe(200);
+    expect(closed.body.live).toBeNull();
+    expect(closed.body.sources).toEqual([{ ...open, recorded: closed.body.sources[0].recorded }]);
+    expect((await app.get(`/api/runs/${run}/readings.csv`)).text).toBe(csvWhileOpen);
+    expect(csvWhileOpen).toBe((await app.get(`/api/runs/${filed}/readings.csv`)).text);
+    expect(closed.body.evaluation.because).toBe('run closed');
+    expect(closed.body.evaluation.document.parts).toEqual(ofFile.evaluation.document.parts);
+    expect(closed.body.evaluation.verdict).toBe(ofFile.evaluation.verdict);
+    expect(verifyChains(app.parts.db)).toMatchObject({ holds: true });
+    await app.parts.live.rolling.sweep();
+    expect(app.parts.db.prepare('SELECT count(*) FROM live_scans').pluck().get()).toBe(0);
+    const verbs = (await app.get(`/api/audit?subject=run/${run}`)).body.lines.map(
+      (line: { verb: string }) => line.verb,
+    );
+    expect(verbs).toEqual(['judge-run', 'close-run', 'end-run', 'judge-run', 'set-load', 'begin-run']);
+  });
+
+  it('is begun with its load, and open runs are one a vessel', async () => {
+    const app = await liveApp();
+    await recordCase(app, CASE);
+    await liveVessel(app);
+    const { cycle } = recordedCase(CASE);
+    const load = {
+      format: 'dwellbook-load/1',
+      parts: [{ part: 'P-1' }],
+      sensors: [{ channel: 'TC1', parts: ['P-1'] }],
+    };
+    const request = { load, cycle: { code: cycle.code, issue: cycle.issue } };
+    const unknown = { ...request, load: { ...load, sensors: [{ channel: 'TC99', parts: ['P-1'] }] } };
+    const refused = await app.post('/api/vessels/Autoclave 7/runs', unknown);
+    expect([refused.status, refused.body.type]).toEqual([422, '/problems/channel-unknown']);
+    expect((await app.get('/api/runs')).body.total).toBe(1);
+    const begun = await app.post('/api/vessels/Autoclave 7/runs', request);
+    expect(begun.status, begun.text).toBe(201);
+    expect(begun.body).toMatchObject({ state: 'judged', live: 'running', scans: 0, evaluation: null, parts: ['P-1'] });
+    const { run } = begun.body;
+    expect((await app.get(`/api/runs/${run}/chart`)).body.detail).toBe('A log without scans cannot be drawn');
+    const again = await app.post('/api/vessels/Autoclave 7/runs', { load: null, cycle: null });
+    expect([again.status, again.body.detail]).toEqual([
+      409,
+      `Run ${run} is open in this vessel; end and close it first`,
+    ]);
+    const running = await app.post(`/api/runs/${run}/close`, {});
+    expect([running.status, running.body.detail]).toEqual([409, `Run ${run} is still running; end it first`]);
+    await app.post(`/api/runs/${run}/end`, {});
+    // Nothing ever came: its channels are the run's all the same, and there is nothing to judge.
+    const closed = await app.post(`/api/runs/${run}/close`, {});
+    expect(closed.status, closed.text).toBe(200);
+    expect(closed.body).toMatchObject({ live: null, evaluation: null, sources: [{ scans: 0, files: [] }] });
+    expect(closed.body.channels.map(({ name }: { name: string }) => name)).toContain('TC1');
+    const after = await app.post('/api/vessels/Autoclave 7/runs', {
+      from: '2026-03-01T00:00:00Z',
+      load: null,
+      cycle: null,
+    });
+    expect([after.status, after.body.detail]).toEqual([
+      409,
+      'The run before it in this vessel ended at 2026-03-10T08:00:00.000Z',
+    ]);
+  });
+
+  it('cannot begin before what is kept, nor in what is still to come, nor where nothing sends', async () => {
+    const app = await liveApp();
+    const key = await liveVessel(app);
+    const begin = (from: string, vessel = 'Autoclave 7') =>
+      app.post(`/api/vessels/${vessel}/runs`, { from, load: null, cycle: null });
+    expect((await begin('2026-03-10T07:00:00Z')).body.detail).toBe(
+      'A run cannot begin at 2026-03-10T07:00:00.000Z: nothing is kept',
+    );
+    await push(app, key, [{ at: '2026-03-10T07:30:00Z', values: { TC1: 20 } }]);
+    expect((await begin('2026-03-10T07:00:00Z')).body.detail).toBe(
+      'A run cannot begin at 2026-03-10T07:00:00.000Z: scans are kept from 2026-03-10T07:30:00.000Z on',
+    );
+    expect((await begin('2026-03-10T08:00:01Z')).body.detail).toBe('2026-03-10T08:00:01.000Z is still to come');
+    await app.post('/api/vessels', { name: 'Oven 9', kind: 'oven' });
+    expect((await begin('2026-03-10T08:00:00Z', 'Oven 9')).status).toBe(409);
+    expect((await begin('2026-03-10T07:30:00Z')).status).toBe(201);
+  });
+
+  it('refuses what is for files and for closed runs by name', async () => {
+    const app = await liveApp();
+    const key = await liveVessel(app);
+    await push(app, key, [{ at: '2026-03-10T07:30:00Z', values: { TC1: 20 } }]);
+    const { run } = (
+      await app.post('/api/vessels/Autoclave 7/runs', { from: '2026-03-10T07:30:00Z', load: null, cycle: null })
+    ).body;
+    const received = await upload(app, '/api/imports?name=late.csv', log);
+    const joined = await app.post(`/api/imports/${received.body.id}/run`, { layout, run });
+    expect(joined.body.detail).toBe(`Run ${run} is still open; end and close it before a file is added to it`);
+    await app.post(`/api/runs/${run}/end`, {});
+    await app.post(`/api/runs/${run}/close`, {});
+    const again = await app.post(`/api/runs/${run}/sources/1/layout`, { layout, reason: 'a column' });
+    expect([again.status, again.body.detail]).toEqual([
+      409,
+      `Source 1 of run ${run}, "plc of Autoclave 7", was logged as it happened; there is no file to read again`,
+    ]);
+    expect((await app.post(`/api/runs/${run}/end`, {})).body.detail).toBe(`Run ${run} is closed already`);
+  });
+});
+
+describe('POST /api/push', () => {
+  it('takes scans of the vessel whose key is shown, and of no other', async () => {
+    const app = await liveApp();
+    const key = await liveVessel(app);
+    await liveVessel(app, 'Oven 2');
+    const scans = [{ at: '2026-03-10T07:30:00Z', sequence: 4, values: { TC1: 20, TC2: null, other: 3 } }];
+    expect((await push(app, key, scans)).body).toEqual({ kept: 1, known: 0, refused: [] });
+    expect((await push(app, key, scans)).body).toEqual({ kept: 0, known: 1, refused: [] });
+    const named = await app.send('/api/push', {
+      method: 'POST',
+      headers: { 'content-type': 'application/json', authorization: `Bearer ${key}` },
+      body: JSON.stringify({ source: 'plc of Oven 2', scans }),
+    });
+    expect([named.status, named.body.detail]).toEqual([
+      404,
+      'No source of this vessel that is pushed is called "plc of Oven 2"',
+    ]);
+    const nothing = await push(app, key, [{ at: '2026-03-10T07:30:01Z', values: { tc1: 20 } }]);
+    expect(nothing.body.refused).toEqual([
+      { at: '2026-03-10T07:30:01.000Z', because: expect.stringContaining('none of its keys is a channel') },
+    ]);
+  });
+
+  it('asks for a key that is known and not revoked', async () => {
+    const app = await liveApp();
+    const key = await liveVessel(app);
+    const scans = [{ at: '2026-03-10T07:30:00Z', values: { TC1: 20 } }];
+    const without = await app.post('/api/push', { scans });
+    expect([without.status, without.headers.get('www-authenticate')]).toEqual([401, 'Bearer']);
+    expect((await push(app, `${key}x`, scans)).status).toBe(401);
+    expect((await push(app, key, scans)).status).toBe(200);
+    const keys = (await app.get('/api/vessels/Autoclave 7/keys')).body.keys;
+    expect(keys).toEqual([
+      { id: 1, name: 'cell controller', made: expect.any(Object), revoked: null, lastUsed: '2026-03-10T08:00:00.000Z' },
+    ]);
+    expect(app.parts.db.prepare('SELECT count(*) FROM sender_keys WHERE sha256 = ?').pluck().get(key)).toBe(0);
+    const revoked = await app.post('/api/vessels/Autoclave 7/keys/1/revoke', { reason: 'laptop lost' });
+    expect(revoked.body.keys[0].revoked).toEqual({ at: '2026-03-10T08:00:00.000Z', by: 'inspector 2' });
+    const after = await push(app, key, scans);
+    expect([after.status, after.body.detail]).toEqual([403, 'The key "cell controller" was revoked']);
+    expect((await app.post('/api/vessels/Autoclave 7/keys/1/revoke', { reason: 'again' })).status).toBe(409);
+  });
+
+  it('answers 507 where the disk is full, and takes the same scans when it is not', async () => {
+    const app = await liveApp();
+    const key = await liveVessel(app);
+    const { db } = app.parts;
+    const scans = Array.from({ length: 4000 }, (_, n) => ({
+      at: new Date(Date.parse('2026-03-10T06:00:00Z') + 1000 * n).toISOString(),
+      values: { TC1: n / 10 },
+    }));
+    db.pragma(`max_page_count = ${Number(db.pragma('page_count', { simple: true })) + 30}`);
+    const full = await push(app, key, scans);
+    expect([full.status, full.body.type]).toEqual([507, '/problems/disk-full']);
+    db.pragma('max_page_count = 1073741823');
+    const after = await push(app, key, scans);
+    expect(after.body.kept + after.body.known).toBe(4000);
+    expect(db.prepare('SELECT count(*) FROM live_scans').pluck().get()).toBe(4000);
+  });
+});
