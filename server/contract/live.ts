@@ -33,6 +33,8 @@ export const sourceView = sourceLine.extend({
   latest: z.array(
     z.object({ channel: z.string(), unit: z.string(), raw: z.number().nullable(), value: z.number().nullable() }),
   ),
+  /** What was repaired or left out since the program began to listen, the latest last. */
+  notes: z.array(z.object({ at: instant, text: z.string() })),
 });
 export type SourceView = z.infer<typeof sourceView>;
 
@@ -42,6 +44,10 @@ export type Sources = z.infer<typeof sources>;
 /** A password is kept beside the document and is never shown again. */
 export const setSourceRequest = z.strictObject({ document: sourceDocument, password: z.string().max(200).optional() });
 export type SetSourceRequest = z.infer<typeof setSourceRequest>;
+
+/** A source that rests is not listened to. */
+export const restSourceRequest = z.strictObject({ resting: z.boolean(), reason });
+export type RestSourceRequest = z.infer<typeof restSourceRequest>;
 
 /** One reading by settings nobody has saved: raw beside scaled, or the problem it met. */
 export const tryRequest = setSourceRequest;
@@ -221,6 +227,8 @@ export const liveRun = z.object({
   ended: instant.nullable(),
   /** Scans kept so far: the number a reader of events goes on from. */
   scans: z.number(),
+  /** Channels of a scan that events bring, in order. */
+  channels: z.array(z.string()),
   readings: z.array(liveReading),
   sources: z.array(sourceLine),
   evaluation: evaluationDocument.nullable(),
@@ -230,7 +238,7 @@ export const liveRun = z.object({
 });
 export type LiveRun = Omit<z.infer<typeof liveRun>, 'forecasts'> & { readonly forecasts: readonly Forecast[] };
 
-/** A scan as the events of a run bring it: `values` in the order of the run view's channels, as in the file. */
+/** A scan as the events of a run bring it: `values` in the order of the live run's channels, as judged: °C or Pa. */
 export const scanEvent = z.object({
   n: z.number(),
   timeMs: z.number(),

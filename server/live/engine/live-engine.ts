@@ -1,0 +1,288 @@
+import { DomainError } from '../../../models/errors.ts';
+import type { LiveRun, LiveVessel, LiveVessels, SourceLine, Warning } from '../../contract/live.ts';
+import type { Db } from '../../store/database.ts';
+import { isoFromMs } from '../../store/instants.ts';
+import { type LiveRunRow, listOpenRuns } from '../../store/live-runs.ts';
+import { type LiveSourceRow, listLiveSources } from '../../store/live-sources.ts';
+import { findRunLine } from '../../store/run-lines.ts';
+import { listVessels, requireVessel } from '../../store/vessels.ts';
+import { zoneOfWorkshop } from '../../store/workshop.ts';
+import type { Journal } from '../journal.ts';
+import type { SteadyClock } from '../steady-clock.ts';
+import { LatestReadings } from './latest-readings.ts';
+import { type FollowedScan, type LiveJudgement, RunFollower } from './run-follower.ts';
+import { saysOf } from './says.ts';
+
+export interface LiveEngineParts {
+  readonly db: Db;
+  readonly journal: Journal;
+  readonly clock: SteadyClock;
+  /** Sources of a vessel as they do now. */
+  readonly sourceLines: (vesselId: number) => readonly SourceLine[];
+  /** Looks at what a vessel came to, and answers the warnings that last. */
+  readonly look: (vesselId: number, seen: SeenVessel) => void;
+  readonly warnings: (vesselId: number) => readonly Warning[];
+  readonly log: { error(facts: object, message: string): void };
+}
+
+/** What warnings are looked for in. */
+export interface SeenVessel {
+  readonly run: number | null;
+  readonly judged: LiveJudgement | null;
+  readonly sources: readonly SourceLine[];
+  readonly nowMs: number;
+}
+
+/** What a watcher of a run is told. */
+export type RunNews =
+  | { readonly kind: 'scans'; readonly scans: readonly FollowedScan[] }
+  /** Scans are numbered afresh: everything is to be read again. */
+  | { readonly kind: 'again' }
+  | { readonly kind: 'state'; readonly state: LiveRun }
+  | { readonly kind: 'closed' };
+
+export interface LiveEngine {
+  vessels(): LiveVessels;
+  run(run: number): LiveRun;
+  /** Tells of every vessel once a second while something changed; the answer ends it. */
+  watchVessels(tell: (vessels: LiveVessels) => void): () => void;
+  watchRun(run: number, tell: (news: RunNews) => void): () => void;
+  /** Resolves once every open run is followed. */
+  ready(): Promise<void>;
+  close(): Promise<void>;
+}
+
+const TURN_MS = 1000;
+/** A run nobody watches is judged so seldom. */
+const UNWATCHED_MS = 10_000;
+/** What came late is folded in no more often than this: the whole run is folded again for it. */
+const BEGIN_AGAIN_MS = 10_000;
+
+interface Followed {
+  readonly follower: RunFollower;
+  readonly watchers: Set<(news: RunNews) => void>;
+  judged: LiveJudgement | null;
+  judgedMs: number;
+  begunMs: number;
+  beginnings: number;
+  changed: boolean;
+}
+
+/** Follows every vessel: its latest readings, and its open run judged with what is to come. */
+export function startLiveEngine(parts: LiveEngineParts): LiveEngine {
+  const { db, journal, clock, log } = parts;
+  const followed = new Map<number, Followed>();
+  const latest = new LatestReadings();
+  const vesselWatchers = new Set<(vessels: LiveVessels) => void>();
+  const starting: Promise<void>[] = [];
+  let vesselsChanged = true;
+  for (const source of listLiveSources(db)) latest.begin(db, source);
+
+  const endListening = journal.onKept((event) => {
+    latest.take(event);
+    vesselsChanged = true;
+    for (const one of followed.values()) {
+      if (one.follower.row.vesselId !== event.vesselId) continue;
+      one.follower.take(event);
+      one.changed = true;
+    }
+  });
+
+  const turn = () => {
+    try {
+      followOpenRuns();
+      for (const one of followed.values()) advance(one);
+      for (const { id } of vesselIds(db)) lookAt(id);
+      if (vesselsChanged && vesselWatchers.size > 0) {
+        vesselsChanged = false;
+        const vessels = all();
+        for (const tell of vesselWatchers) tell(vessels);
+      }
+    } catch (error) {
+      // One vessel's fault must not stop the others from being followed at the next turn.
+      log.error({ err: error }, 'a turn of the live engine failed');
+    }
+  };
+
+  const followOpenRuns = () => {
+    const open = listOpenRuns(db);
+    for (const row of open) {
+      const known = followed.get(row.run);
+      if (known === undefined) followed.set(row.run, newlyFollowed(row, new Set()));
+      else if (known.follower.row.endedMs !== row.endedMs) followed.set(row.run, newlyFollowed(row, known.watchers));
+    }
+    for (const [run, { watchers }] of followed) {
+      if (open.some((row) => row.run === run)) continue;
+      followed.delete(run);
+      vesselsChanged = true;
+      for (const tell of watchers) tell({ kind: 'closed' });
+    }
+  };
+
+  const newlyFollowed = (row: LiveRunRow, watchers: Followed['watchers']): Followed => {
+    vesselsChanged = true;
+    const follower = new RunFollower(db, row);
+    return { follower, watchers, judged: null, judgedMs: 0, begunMs: 0, beginnings: 0, changed: true };
+  };
+
+  const advance = (one: Followed) => {
+    const nowMs = clock.now(one.follower.row.vesselId);
+    if (one.follower.mustBegin && Math.abs(nowMs - one.begunMs) >= BEGIN_AGAIN_MS) {
+      one.begunMs = nowMs;
+      starting.push(beginFollowing(one));
+      return;
+    }
+    const scans = one.follower.advance(nowMs);
+    if (one.follower.beginnings !== one.beginnings) {
+      one.beginnings = one.follower.beginnings;
+      one.changed = true;
+      for (const tell of one.watchers) tell({ kind: 'again' });
+    } else if (scans.length > 0) {
+      one.changed = true;
+      for (const tell of one.watchers) tell({ kind: 'scans', scans });
+    }
+    const dueMs = one.watchers.size > 0 ? TURN_MS / 2 : UNWATCHED_MS;
+    if (!one.changed || Math.abs(nowMs - one.judgedMs) < dueMs) return;
+    judgeNow(one, nowMs);
+  };
+
+  const beginFollowing = async (one: Followed) => {
+    try {
+      await one.follower.begin();
+    } catch (error) {
+      // What cannot be folded now is tried again; the other vessels are followed meanwhile.
+      log.error({ err: error, run: one.follower.row.run }, 'a run cannot be followed');
+    }
+  };
+
+  const judgeNow = (one: Followed, nowMs: number) => {
+    one.judgedMs = nowMs;
+    one.changed = false;
+    vesselsChanged = true;
+    try {
+      one.judged = one.follower.judge();
+    } catch (error) {
+      // A cycle and a load that do not fit are told where they are set; the scans go on being kept.
+      if (!(error instanceof DomainError)) log.error({ err: error, run: one.follower.row.run }, 'cannot be judged');
+      one.judged = null;
+    }
+    if (one.watchers.size === 0) return;
+    const state = stateOf(one);
+    for (const tell of one.watchers) tell({ kind: 'state', state });
+  };
+
+  const lookAt = (vesselId: number) => {
+    const one = ofVessel(vesselId);
+    const nowMs = clock.now(vesselId);
+    const run = one?.follower.row.run ?? null;
+    parts.look(vesselId, { run, judged: one?.judged ?? null, sources: parts.sourceLines(vesselId), nowMs });
+  };
+
+  const ofVessel = (vesselId: number) =>
+    [...followed.values()].find(({ follower }) => follower.row.vesselId === vesselId);
+
+  const readingsOf = (vesselId: number) => {
+    const nowMs = clock.now(vesselId);
+    return listLiveSources(db, vesselId)
+      .filter(({ settings }) => !settings.isResting)
+      .flatMap((source: LiveSourceRow) => latest.of(source, nowMs));
+  };
+
+  const stateOf = ({ follower, judged }: Followed): LiveRun => {
+    const { run, vesselId, begunMs, endedMs } = follower.row;
+    return {
+      at: isoFromMs(clock.now(vesselId)),
+      run,
+      vessel: findRunLine(db, run)?.vessel ?? '',
+      state: endedMs === null ? 'running' : 'ended',
+      begun: isoFromMs(begunMs),
+      ended: endedMs === null ? null : isoFromMs(endedMs),
+      scans: follower.scans,
+      channels: [...follower.channels],
+      readings: readingsOf(vesselId),
+      sources: [...parts.sourceLines(vesselId)],
+      evaluation: judged?.evaluation ?? null,
+      forecasts: judged?.forecasts ?? [],
+      warnings: [...parts.warnings(vesselId)],
+    };
+  };
+
+  const all = (): LiveVessels => {
+    const zone = zoneOfWorkshop(db);
+    const vessels = listVessels(db).map(({ name, kind }): LiveVessel => {
+      const vesselId = requireVessel(db, name);
+      const one = ofVessel(vesselId);
+      return {
+        vessel: name,
+        kind,
+        sources: [...parts.sourceLines(vesselId)],
+        readings: readingsOf(vesselId),
+        run: one === undefined ? null : runLineOf(one, zone),
+        warnings: [...parts.warnings(vesselId)],
+      };
+    });
+    return { at: isoFromMs(clock.now(0)), vessels };
+  };
+
+  const runLineOf = ({ follower, judged }: Followed, zone: string): LiveVessel['run'] => {
+    const { run, begunMs, endedMs } = follower.row;
+    const line = findRunLine(db, run);
+    const forecasts = judged?.forecasts ?? [];
+    const runners = forecasts.flatMap(({ leading, lagging }) => [leading, lagging]).filter((one) => one !== null);
+    const byHeat = runners.toSorted((a, b) => b.valueC - a.valueC).map(({ channel, valueC }) => ({ channel, valueC }));
+    return {
+      run,
+      state: endedMs === null ? 'running' : 'ended',
+      begun: isoFromMs(begunMs),
+      cycle: line?.cycle ?? null,
+      parts: line?.parts ?? [],
+      verdict: judged?.evaluation.verdict ?? null,
+      says: saysOf(judged?.evaluation ?? null, forecasts, zone),
+      hottest: byHeat[0] ?? null,
+      coldest: byHeat.at(-1) ?? null,
+    };
+  };
+
+  const requireFollowed = (run: number): Followed => {
+    followOpenRuns();
+    const one = followed.get(run);
+    if (one !== undefined) return one;
+    throw new DomainError('state-conflict', `Run ${run} is not being logged now`, { run });
+  };
+
+  const timer = setInterval(turn, TURN_MS);
+  timer.unref();
+  turn();
+  return {
+    vessels: all,
+    run(run) {
+      const one = requireFollowed(run);
+      advance(one);
+      if (one.judged === null || one.changed) judgeNow(one, clock.now(one.follower.row.vesselId));
+      return stateOf(one);
+    },
+    watchVessels(tell) {
+      vesselWatchers.add(tell);
+      return () => vesselWatchers.delete(tell);
+    },
+    watchRun(run, tell) {
+      const { watchers } = requireFollowed(run);
+      watchers.add(tell);
+      return () => watchers.delete(tell);
+    },
+    async ready() {
+      turn();
+      await Promise.all(starting.splice(0));
+      turn();
+    },
+    async close() {
+      clearInterval(timer);
+      endListening();
+      await Promise.allSettled(starting);
+    },
+  };
+}
+
+function vesselIds(db: Db): { readonly id: number }[] {
+  return listVessels(db).map(({ name }) => ({ id: requireVessel(db, name) }));
+}
