@@ -4,7 +4,7 @@
  * With both rows 0 and 1 (a level, or not) this is φ, Cramér's V of the 2×2 table; with both rows midranks it is
  * Spearman's ρ; with one of each it is the correlation ratio η of the ranks over the two groups.
  *
- * @param a Scores; NaN where nothing is on record.
+ * @param a Scores, whole numbers for exact sums; NaN where nothing is on record.
  * @param b Scores of the same parts.
  * @returns In [−1, 1]; 0 where either is the same over all parts on record in both.
  *
@@ -13,23 +13,21 @@
  *   Proc R Soc 71 (1903) 303 (η).
  */
 export function association(a: Float64Array, b: Float64Array): number {
-  let [n, sumA, sumB] = [0, 0, 0];
+  // Scores are whole numbers (ranks, 0 and 1): the sums are exact.
+  let [n, sumA, sumB, ab, aa, bb] = [0, 0, 0, 0, 0, 0];
   for (let i = 0; i < a.length; i += 1) {
-    if (Number.isNaN(a[i]! + b[i]!)) continue;
+    const [x, y] = [a[i]!, b[i]!];
+    if (Number.isNaN(x + y)) continue;
     n += 1;
-    sumA += a[i]!;
-    sumB += b[i]!;
+    sumA += x;
+    sumB += y;
+    ab += x * y;
+    aa += x * x;
+    bb += y * y;
   }
-  let [ab, aa, bb] = [0, 0, 0];
-  for (let i = 0; i < a.length; i += 1) {
-    if (Number.isNaN(a[i]! + b[i]!)) continue;
-    const fromA = a[i]! - sumA / n;
-    const fromB = b[i]! - sumB / n;
-    ab += fromA * fromB;
-    aa += fromA * fromA;
-    bb += fromB * fromB;
-  }
-  return aa === 0 || bb === 0 ? 0 : Math.max(-1, Math.min(1, ab / Math.sqrt(aa * bb)));
+  const [varyA, varyB] = [n * aa - sumA * sumA, n * bb - sumB * sumB];
+  if (!(varyA > 0 && varyB > 0)) return 0;
+  return Math.max(-1, Math.min(1, (n * ab - sumA * sumB) / Math.sqrt(varyA * varyB)));
 }
 
 /**
@@ -59,7 +57,6 @@ export function accountedFor(score: Float64Array, classes: Int32Array): number {
     sum += value;
     squares += value * value;
   }
-  // Scores are whole numbers (ranks, 0 and 1): the sums are exact.
   let between = 0;
   for (let of = 0; of < size; of += 1) if (counts[of]! > 0) between += sums[of]! ** 2 / counts[of]!;
   const all = squares - (sum * sum) / n;

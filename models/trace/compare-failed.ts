@@ -86,8 +86,7 @@ interface Row {
 }
 
 function rowOf(factor: Factor, isFailed: Uint8Array, all: Counts): Row {
-  const values: Factor['values'] = factor.values;
-  const places = Int32Array.from(values.keys()).filter((part) => values[part] !== null);
+  const places = Int32Array.from(isFailed, (_, part) => part).filter((part) => factor.values[part] !== null);
   const failed = places.reduce((sum, part) => sum + isFailed[part]!, 0);
   const onRecord = { failed, sound: places.length - failed };
   return { places, onRecord, missing: { failed: all.failed - failed, sound: all.sound - onRecord.sound } };

@@ -58,7 +58,7 @@ export function sayUntested(
     'no-failed-on-record': `${name} is on record for no failed part.`,
     'no-sound-on-record': `${name} is on record for no sound part.`,
   };
-  return [words[why], ...sayMissing(missing, parts)].join(' ');
+  return [startingLarge(words[why]), ...sayMissing(missing, parts)].join(' ');
 }
 
 /** What the whole comparison can and cannot show. */
@@ -92,6 +92,11 @@ export function sayComparison({
 /** "p = 0.0021", "Holm < 0.0001". */
 export function sayP(name: string, p: number): string {
   return p < 1e-4 ? `${name} < 0.0001` : `${name} = ${figureOfP(p)}`;
+}
+
+/** A sentence begins with a capital, whatever the name it begins with. */
+export function startingLarge(sentence: string): string {
+  return sentence.charAt(0).toUpperCase() + sentence.slice(1);
 }
 
 export function count(n: number, what: string): string {

@@ -2,17 +2,19 @@ import type { Tie, TiedFactor } from './comparison.ts';
 import { TELLING_P } from './p-value.ts';
 import type { HeldFixed } from './stratified-test.ts';
 import type { Contrast } from './tied-factors.ts';
-import { sayP } from './words-of-comparison.ts';
+import { sayP, startingLarge } from './words-of-comparison.ts';
 
 /** How a factor is tied to the first of its group, and what holding either fixed shows. */
 export function sayTie(first: Contrast, other: Contrast, tied: Omit<TiedFactor, 'name' | 'sentence'>): string {
   const { withFirstFixed, firstWithThisFixed, tie, association } = tied;
-  const moves = `${other.label} moves with ${first.label} (association ${association.toFixed(2).replace('-', '−')}).`;
+  const moves = startingLarge(
+    `${other.label} moves with ${first.label} (association ${association.toFixed(2).replace('-', '−')}).`,
+  );
   if (withFirstFixed === null || firstWithThisFixed === null) return moves;
   const words: Record<Tie, string> = {
     'cannot-tell-apart': 'The two cannot be told apart on these parts.',
-    follows: `On these parts ${other.label} only goes along with ${first.label}.`,
-    leads: `On these parts ${first.label} only goes along with ${other.label}.`,
+    follows: `Nothing on these parts shows ${other.label} to go with failure by itself.`,
+    leads: `Nothing on these parts shows ${first.label} to go with failure by itself.`,
     each: 'Each goes with failure with the other held fixed.',
     'moves-with': '',
   };

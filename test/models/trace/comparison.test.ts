@@ -133,7 +133,7 @@ describe('a comparison', () => {
       ['tool', 'no-sound-on-record'],
     ]);
     expect(untested[0]!.sentence).toBe(
-      'vessel is the same in all parts on record. Not on record for 0 of 2 failed and 1 of 4 sound parts.',
+      'Vessel is the same in all parts on record. Not on record for 0 of 2 failed and 1 of 4 sound parts.',
     );
   });
 
