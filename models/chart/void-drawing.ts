@@ -51,7 +51,7 @@ export function voidWords(
   return [
     `${line} least resin pressure at which voids of water vapour do not grow at ${humidityPercent} % relative humidity ` +
       `of the lay-up (Kardos, Duduković and Dave), by the hottest judged sensor that has not gelled${conversion === null ? ', is' : ':'} ` +
-      `at most ${needed}, at ${clock.minute(most.atMs)}. The pressure in the resin falls below the vessel’s as the fibre bed ` +
+      `at most ${needed}, at ${clock.minute(most.atMs)}. The pressure in the resin falls below the one applied as the fibre bed ` +
       'takes up load: a guide, never a limit.',
     conversion === null && unit !== undefined
       ? 'The barometer of the day is not on record, so the gauge pressure of the vessel cannot be set against it.'
