@@ -21,6 +21,9 @@ const LoadPage = lazy(() => import('./pages/load.tsx'));
 const ReadAgainPage = lazy(() => import('./pages/read-again.tsx'));
 const ImportFilePage = lazy(() => import('./pages/import-file.tsx'));
 const CyclePage = lazy(() => import('./pages/cycle.tsx'));
+const MaterialsPage = lazy(() => import('./pages/materials.tsx'));
+const MaterialPage = lazy(() => import('./pages/material.tsx'));
+const RollPage = lazy(() => import('./pages/roll.tsx'));
 const CycleImportPage = lazy(() => import('./pages/cycle-import.tsx'));
 const LayupPage = lazy(() => import('./pages/layup.tsx'));
 const ToolsPage = lazy(() => import('./pages/tools.tsx'));
@@ -51,6 +54,10 @@ export function App() {
               <Route path="/parts/:serial/layup" component={LayupPage} />
               <Route path="/tools" component={ToolsPage} />
               <Route path="/tools/:tool" component={ToolPage} />
+              <Route path="/materials" component={MaterialsPage} />
+              <Route path="/materials/:code" component={MaterialPage} />
+              <Route path="/rolls/:item" component={RollPage} />
+              <Route path="/kits/:item" component={RollPage} />
               <Route path="/cycles" component={CyclesPage} />
               <Route path="/cycles/import" component={CycleImportPage} />
               <Route path="/cycles/:code/:issue" component={CyclePage} />

@@ -9,6 +9,7 @@ import './style/run.css';
 import './style/chart.css';
 import './style/import.css';
 import './style/load.css';
+import './style/material.css';
 import './style/cycle.css';
 import './style/resin.css';
 import './style/thickness.css';

@@ -38,7 +38,7 @@ export function outLife(course: Course, material: Material, atMs: number): Life 
   const limit = limitOfOutLife(course, material, atMs);
   const rule = material.equivalent === undefined ? '' : ` as at ${material.out.atMost} ${material.units.temperature}`;
   return clock('out-life', least, most, limit.minutes, {
-    used: (words) => `${course.item} had been out for ${words}${rule}; ${durationWords(limit.minutes)} allowed.`,
+    used: (words) => `${course.item} was out for ${words}${rule}; ${durationWords(limit.minutes)} allowed.`,
     unknown,
     why: [...statedSentences(course), ...limit.why],
     item: course.item,
@@ -66,8 +66,7 @@ export function tackLife(course: Course, lifeDays: number, neededMs: number): Li
     ...course.stays.flatMap((stay) => (stay.kind === 'unknown' ? [stay.because] : [])),
   ];
   return clock('tack-life', least, most, lifeDays * 1440, {
-    used: (words) =>
-      `${course.item} had been open in the room for ${words}; ${durationWords(lifeDays * 1440)} of tack.`,
+    used: (words) => `${course.item} was open in the room for ${words}; ${durationWords(lifeDays * 1440)} of tack.`,
     unknown,
     why: fromMs === null ? ['Taken as opened when it was first out, because nobody wrote it down.'] : [],
     item: course.item,
@@ -85,7 +84,7 @@ export function shelfLife(course: Course, material: Material, batch: BatchRecord
   const leftMinutes = (endMs - atMs) / 60_000;
   const because =
     leftMinutes >= 0
-      ? `The shelf life of ${course.item} ran to ${dayOf(endMs - 1)}.`
+      ? `The shelf life of ${course.item} runs to ${dayOf(endMs - 1)}.`
       : `The shelf life of ${course.item} ended on ${dayOf(endMs - 1)}, ${durationWords(-leftMinutes)} before.`;
   return { ...known, outcome: leftMinutes >= 0 ? 'met' : 'not-met', leftMinutes, because };
 }
@@ -100,7 +99,7 @@ export function refreezing({ item, refreezings }: Course, atMost: number): Life 
     atMost,
     unit: '',
     leftMinutes: null,
-    because: `${item} had been re-frozen ${timesWords(refreezings)}; ${atMost === 0 ? 'never' : timesWords(atMost)} allowed.`,
+    because: `${item} was re-frozen ${timesWords(refreezings)}; ${atMost === 0 ? 'never' : timesWords(atMost)} allowed.`,
     why: [],
   };
 }

@@ -38,6 +38,8 @@ export const itemLine = z.object({
   batch: z.string().nullable(),
   material: z.object({ code: z.string(), issue: z.string(), name: z.string() }).nullable(),
   cutFrom: z.string().nullable(),
+  /** A kit that lies in a part; it is judged there. */
+  laidUp: z.boolean(),
   /** Worked out by `models/material` as of now; null where every line of it was taken back. */
   state: materialStateDocument.nullable(),
 });

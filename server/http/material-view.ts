@@ -17,10 +17,7 @@ const AUDIT_LINES = 100;
 /** What is in life and what is due. */
 export function materialsView(db: Db, nowMs: number): Materials {
   const all = itemLines(db, listItems(db), nowMs);
-  const laidUp = listLaidUpItems(db);
-  const items = all.filter(
-    ({ item, kind, state }) => state?.place !== 'scrapped' && !(kind === 'kit' && laidUp.has(item)),
-  );
+  const items = all.filter((line) => line.state?.place !== 'scrapped' && !line.laidUp);
   return {
     now: isoFromMs(nowMs),
     materials: latestOf(listMaterials(db)).map(lineOf),
@@ -56,7 +53,15 @@ export function itemView(db: Db, item: string, nowMs: number): ItemView {
   const lengthM = born?.lengthM ?? null;
   const cutM = children.reduce((sum, child) => sum + (child.lengthM ?? 0), 0);
   return {
-    ...(own ?? { item: row.item, kind: row.kind, batch: null, material: null, cutFrom: null, state: null }),
+    ...(own ?? {
+      item: row.item,
+      kind: row.kind,
+      batch: null,
+      material: null,
+      cutFrom: null,
+      laidUp: false,
+      state: null,
+    }),
     now: isoFromMs(nowMs),
     ledger,
     children: children.flatMap((child) => lines.find((line) => line.item === child.item) ?? []),
@@ -70,6 +75,7 @@ export function itemView(db: Db, item: string, nowMs: number): ItemView {
 /** Items as they stand; `rows` must hold all that any of them was cut from. */
 function itemLines(db: Db, rows: readonly ItemRow[], nowMs: number): ItemLine[] {
   const records = recordsOfItems(db, rows);
+  const laidUp = listLaidUpItems(db);
   return records.items.map((item): ItemLine => {
     const { events, kind } = item;
     const birth = events.find((event) => event.kind === 'received' || event.kind === 'cut');
@@ -79,6 +85,7 @@ function itemLines(db: Db, rows: readonly ItemRow[], nowMs: number): ItemLine[] 
       kind,
       ...(birth === undefined ? { batch: null, material: null } : productLine(records, item.item, nowMs)),
       cutFrom: birth?.kind === 'cut' ? birth.from : null,
+      laidUp: kind === 'kit' && laidUp.has(item.item),
       state,
     };
   });

@@ -6,6 +6,7 @@ import { AuditEntries } from '../parts/audit-entries.tsx';
 import { Notebook, PageHead } from '../parts/notebook.tsx';
 import { OutcomeMark, VerdictLine } from '../parts/outcome-mark.tsx';
 import { PartLayup } from '../parts/part-layup.tsx';
+import { PartMaterialsSection } from '../parts/part-materials.tsx';
 import { PartResults } from '../parts/part-results.tsx';
 import { PartRunEntry } from '../parts/part-run.tsx';
 import { Shown } from '../parts/shown.tsx';
@@ -91,6 +92,7 @@ function Body({ view, again }: { view: PartView; again: () => void }) {
       </section>
       <PartThickness view={view} />
       <PartLayup view={view} onChanged={again} />
+      <PartMaterialsSection part={view.serial} at={view.runs[0]?.line.from} onChanged={again} />
       <section class="section">
         <h2>Not on record</h2>
         {missing.length === 0 ? (

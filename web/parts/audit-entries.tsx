@@ -28,6 +28,9 @@ const PAGES: Readonly<Record<string, string>> = {
   part: '/parts/',
   cycle: '/cycles/',
   resin: '/resins/',
+  material: '/materials/',
+  roll: '/rolls/',
+  kit: '/kits/',
   import: '/imports/',
   recorder: '/recorders/',
 };

@@ -3,6 +3,7 @@ import type { Cycle } from '../../models/cycle/cycle.ts';
 import type { RunView } from '../../server/contract/runs.ts';
 import { asWritten, listed } from '../words/figures.ts';
 import { type LoadForm, newPart, type PartForm } from '../words/load-form.ts';
+import { AgedOffer } from './aged-offer.tsx';
 import { ChoiceField, TextField } from './field.tsx';
 
 /** The parts of a load: a serial and Enter is enough; everything else can wait or be left out. */
@@ -60,6 +61,7 @@ export function LoadParts({
               n={n + 1}
               bagLines={bagLines}
               cycle={cycle}
+              from={run.from}
               onChange={(next) => change(part.id, next)}
               onRemove={() => remove(part.id)}
             />
@@ -75,6 +77,7 @@ function PartLine({
   n,
   bagLines,
   cycle,
+  from,
   onChange,
   onRemove,
 }: {
@@ -82,6 +85,8 @@ function PartLine({
   n: number;
   bagLines: readonly string[];
   cycle: Cycle | null;
+  /** The log's first scan: the age of a part's material is told as of it. */
+  from: string;
   onChange: (next: Partial<PartForm>) => void;
   onRemove: () => void;
 }) {
@@ -142,6 +147,7 @@ function PartLine({
             value={part.startDegree}
             onValue={(startDegree) => onChange({ startDegree })}
           />
+          <AgedOffer part={part.part} at={from} onTake={(startDegree) => onChange({ startDegree })} />
           <Figure
             label="Relative humidity of the lay-up, %"
             hint="Of the room it was laid up in; for the pressure that voids need"

@@ -6,6 +6,7 @@ const PAGES: readonly (readonly [string, string])[] = [
   ['/', 'Now in the shop'],
   ['/runs', 'Runs'],
   ['/parts', 'Parts'],
+  ['/materials', 'Materials'],
   ['/cycles', 'Cycles'],
   ['/resins', 'Resins'],
   ['/recorders', 'Recorders'],
@@ -49,5 +50,6 @@ export function Masthead() {
 
 function isHere(path: string, href: string): boolean {
   if (href === '/') return path === '/' || path.startsWith('/import');
+  if (href === '/materials' && /^\/(rolls|kits)\//.test(path)) return true;
   return path === href || path.startsWith(`${href}/`);
 }

@@ -10,7 +10,6 @@ export function missingOfPart(view: PartView): string[] {
   else if (!view.toolRecord?.material || view.toolRecord.thicknessMm === null)
     missing.push(`What tool ${view.tool} is made of, and how thick it is.`);
   missing.push(...missingOfLayup(view));
-  missing.push('The rolls it was laid up from, and their out-life.');
   for (const { line, evaluation, leakTest, startDegree, sensors } of view.runs) {
     const run = `Run ${line.run}: `;
     if (!line.cycle) missing.push(`${run}the cycle it was cured to.`);

@@ -52,7 +52,7 @@ describe('material/out-life', () => {
     const days = (Date.parse(heatOn!) - Date.parse(OUT_AT)) / 86_400_000;
     expect(finding).toMatchObject({ outcome: 'met', unit: 'd', atMost: 30, from: heatOn });
     expect(finding.observed).toBeCloseTo(days, 6);
-    expect(finding.because).toContain('K-1 had been out for 29 d');
+    expect(finding.because).toContain('K-1 was out for 29 d');
   });
 
   it('is met where the out-life ends during heat-up, and not met where it ended a minute before heat-on', () => {
@@ -78,7 +78,7 @@ describe('material/out-life', () => {
         codes.map((item) => ({ item })),
       ).finding;
     expect(worst('K-1', 'K-2', 'K-3')).toMatchObject({ outcome: 'not-met' });
-    expect(worst('K-1', 'K-2', 'K-3').because).toContain('K-2 had been out for');
+    expect(worst('K-1', 'K-2', 'K-3').because).toContain('K-2 was out for');
     expect(worst('K-3', 'K-1')).toMatchObject({ outcome: 'cannot-tell', possible: null });
     expect(worst('K-3', 'K-1').because).toContain('the temperature of the room is not on record');
   });

@@ -34,7 +34,7 @@ describe('a roll cut into three kits, one of them re-frozen', () => {
   });
 
   it('says it in one sentence', () => {
-    expect(lifeOf(records, 'K-1B', '2026-03-10T12:00:00Z').because).toBe('K-1B had been out for 12 h; 30 d allowed.');
+    expect(lifeOf(records, 'K-1B', '2026-03-10T12:00:00Z').because).toBe('K-1B was out for 12 h; 30 d allowed.');
   });
 });
 
