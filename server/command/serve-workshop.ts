@@ -8,8 +8,11 @@ import { createLongWork } from '../actions/long-work.ts';
 import { verifyInThread } from '../actions/verify-in-thread.ts';
 import { createApp } from '../app.ts';
 import { startLiveLogging } from '../live/live-logging.ts';
+import { runSources } from '../live/run-sources.ts';
+import type { InventVessel } from '../live/sources/invented-vessel.ts';
 import type { Db } from '../store/database.ts';
 import { openDatabase } from '../store/database.ts';
+import { findWorkshop } from '../store/workshop.ts';
 import { builtInPerson } from './built-in-person.ts';
 import { databasePath } from './data-folder.ts';
 import { createLog } from './log.ts';
@@ -39,11 +42,13 @@ export async function serveWorkshop(options: ServerOptions): Promise<void> {
   const live = startLiveLogging({ db, clock: Date.now, log });
   const parts = { db, clock: Date.now, actor: builtInPerson(), evaluate: longWork.evaluate };
   await options.prepare?.(parts);
+  const sources = runSources({ db, live, inventVessel: await inventVesselIn(db), log });
   const incomingFolder = join(options.folder, 'incoming');
   mkdirSync(incomingFolder, { recursive: true });
   const app = createApp({
     ...parts,
     live,
+    sources,
     estimateCure: longWork.estimateCure,
     cureThroughPart: longWork.cureThroughPart,
     log,
@@ -57,15 +62,24 @@ export async function serveWorkshop(options: ServerOptions): Promise<void> {
   process.stdout.write(`Dwellbook is at ${addressOf(server, options.host)}\n`);
   // Most of the program: loaded now rather than while the first person waits.
   await import('../http/answer.ts');
+  sources.begin();
   void live.lookAfterStart().catch((error: unknown) => log.error({ err: error }, 'live logging'));
   const watched = await startWatching(options, { ...parts, log });
   await ended;
   server.close();
   server.closeAllConnections();
   await watched?.close();
+  await sources.close();
   await live.close();
   await longWork.close();
   closeDatabase(db);
+}
+
+/** Readings are invented in a practice workshop only. */
+async function inventVesselIn(db: Db): Promise<InventVessel | null> {
+  if (findWorkshop(db)?.practice == null) return null;
+  const { inventVesselBy } = await import('../practice/invented-vessel.ts');
+  return inventVesselBy(db);
 }
 
 function findSite(): string | null {

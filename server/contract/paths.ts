@@ -198,6 +198,28 @@ export function importJoinPath(id: number): string {
 /** Where scans are pushed. */
 export const PUSH_PATH = '/api/push';
 
+export function vesselSourcesPath(vessel: string): string {
+  return `${VESSELS_PATH}/${encodeURIComponent(vessel)}/sources`;
+}
+
+/** Where settings are tried that nobody has saved. */
+export function vesselSourcesTryPath(vessel: string): string {
+  return `${vesselSourcesPath(vessel)}/try`;
+}
+
+export function sourcePath(source: number): string {
+  return `/api/sources/${source}`;
+}
+
+export function sourceRestPath(source: number): string {
+  return `${sourcePath(source)}/rest`;
+}
+
+/** Where what a person read is entered. */
+export function sourceReadingsPath(source: number): string {
+  return `${sourcePath(source)}/readings`;
+}
+
 export function vesselKeysPath(vessel: string): string {
   return `${VESSELS_PATH}/${encodeURIComponent(vessel)}/keys`;
 }
@@ -217,6 +239,29 @@ export function runEndPath(run: number): string {
 
 export function runClosePath(run: number): string {
   return `${runPath(run)}/close`;
+}
+
+/** Every vessel as it is now; its events tell of what changed. */
+export const LIVE_PATH = '/api/live';
+export const LIVE_EVENTS_PATH = `${LIVE_PATH}/events`;
+
+export function runLivePath(run: number): string {
+  return `${runPath(run)}/live`;
+}
+
+/** Scans as they come, and what the run came to. */
+export function runLiveEventsPath(run: number): string {
+  return `${runLivePath(run)}/events`;
+}
+
+export function vesselDoorChecksPath(vessel: string): string {
+  return `${VESSELS_PATH}/${encodeURIComponent(vessel)}/door-checks`;
+}
+
+export const WARNINGS_PATH = '/api/warnings';
+
+export function warningAcknowledgePath(warning: number): string {
+  return `${WARNINGS_PATH}/${warning}/acknowledge`;
 }
 
 /** The help page of a problem's `type`. */

@@ -3,12 +3,15 @@ import type { EstimateCure } from '../actions/evaluate-log.ts';
 import type { JudgingParts } from '../actions/judge-run.ts';
 import type { AuditVerification } from '../contract/audit.ts';
 import type { LiveLogging } from '../live/live-logging.ts';
+import type { RunningSources } from '../live/run-sources.ts';
 
 /** What the server is made of. Everything is opened by who makes it. */
 export interface AppParts extends JudgingParts {
   readonly estimateCure: EstimateCure;
   /** What takes scans and keeps them. */
   readonly live: LiveLogging;
+  /** What is listened to. */
+  readonly sources: RunningSources;
   readonly cureThroughPart: CureThroughPart;
   /** Folder of the built pages; null where none are served. */
   readonly siteFolder: string | null;

@@ -6,6 +6,7 @@ import { materialHandlers } from './material-handlers.ts';
 import { partHandlers } from './part-handlers.ts';
 import { runHandlers } from './run-handlers.ts';
 import { senderHandlers } from './sender-handlers.ts';
+import { sourceHandlers } from './source-handlers.ts';
 import { toolHandlers } from './tool-handlers.ts';
 import { workshopHandlers } from './workshop-handlers.ts';
 
@@ -20,4 +21,5 @@ export const HANDLERS: Handlers = {
   ...materialHandlers,
   ...liveRunHandlers,
   ...senderHandlers,
+  ...sourceHandlers,
 };

@@ -23,6 +23,8 @@ export type ClockJump =
 export interface SteadyClock {
   /** The instant now in a vessel. While a run is open in it, it never goes back and never jumps. */
   now(vesselId: number): number;
+  /** From now on a vessel has a time of its own, as an invented one has: it is stamped and told by that. */
+  lead(vesselId: number, time: () => number): void;
 }
 
 interface Base {
@@ -34,6 +36,7 @@ interface Base {
 export function createSteadyClock(parts: SteadyClockParts): SteadyClock {
   const { wall, monotonic, hasOpenRun, tell } = parts;
   const bases = new Map<number, Base>();
+  const led = new Map<number, () => number>();
   let watched: Base = { wallMs: wall(), monotonicMs: monotonic() };
   const watchForJump = (wallMs: number, monotonicMs: number) => {
     const byMs = wallMs - steadyMs(watched, monotonicMs);
@@ -52,6 +55,8 @@ export function createSteadyClock(parts: SteadyClockParts): SteadyClock {
       const wallMs = wall();
       const monotonicMs = monotonic();
       watchForJump(wallMs, monotonicMs);
+      const own = led.get(vesselId);
+      if (own !== undefined) return own();
       if (!hasOpenRun(vesselId)) {
         bases.set(vesselId, { wallMs, monotonicMs });
         return wallMs;
@@ -60,6 +65,7 @@ export function createSteadyClock(parts: SteadyClockParts): SteadyClock {
       bases.set(vesselId, base);
       return steadyMs(base, monotonicMs);
     },
+    lead: (vesselId, time) => void led.set(vesselId, time),
   };
 }
 

@@ -16,6 +16,7 @@ import { createApp } from '../../server/app.ts';
 import { runChartPath } from '../../server/contract/paths.ts';
 import { ROLES } from '../../server/contract/roles.ts';
 import { startLiveLogging } from '../../server/live/live-logging.ts';
+import { runSources } from '../../server/live/run-sources.ts';
 import { type Db, openDatabase } from '../../server/store/database.ts';
 import { insertRun } from '../../server/store/runs.ts';
 import { insertSource } from '../../server/store/sources.ts';
@@ -116,10 +117,12 @@ function writeReadings(db: Db, readings: Readings): number {
 
 function serve(parts: JudgingParts, folder: string): Promise<Server> {
   const log = { info: () => undefined, error: (facts: object) => console.error(facts) };
+  const live = startLiveLogging({ db: parts.db, clock: parts.clock, log });
   const app = createApp({
     ...parts,
     log,
-    live: startLiveLogging({ db: parts.db, clock: parts.clock, log }),
+    live,
+    sources: runSources({ db: parts.db, live, inventVessel: null, log }),
     siteFolder: null,
     incomingFolder: folder,
     watchedFolder: null,

@@ -11,6 +11,7 @@ import { createApp } from '../../server/app.ts';
 import { ROLES } from '../../server/contract/roles.ts';
 import type { AppParts } from '../../server/http/app-parts.ts';
 import { startLiveLogging } from '../../server/live/live-logging.ts';
+import { runSources } from '../../server/live/run-sources.ts';
 import { freshDatabase, freshFolder } from './fresh-database.ts';
 import { expectContractKept } from './keeps-contract.ts';
 
@@ -52,10 +53,15 @@ export async function liveApp(changes: Partial<AppParts> = {}): Promise<LiveApp>
   const clock = changes.clock ?? (() => Date.parse(NOW));
   const log = { info: () => undefined, error: (facts: object) => faults.push(facts) };
   const live = startLiveLogging({ db: changes.db ?? db, clock, monotonic: clock, log });
-  running.push(() => live.close());
+  const sources = runSources({ db: changes.db ?? db, live, inventVessel: null, log });
+  running.push(async () => {
+    await sources.close();
+    await live.close();
+  });
   const parts: AppParts = {
     db,
     live,
+    sources,
     verify: async () => verifyChains(db),
     clock,
     actor: { name: 'inspector 2', roles: ROLES },

@@ -15,7 +15,7 @@ export interface SourceParts {
   readonly note: (sentence: string) => void;
   /** Told of a fault of our own, which must not end the program: other vessels are listened to. */
   readonly fault: (error: unknown) => void;
-  /** The steady clock: ms since 1970-01-01T00:00:00Z, never going back. */
+  /** The vessel's time, ms since 1970-01-01T00:00:00Z: the steady clock, or an invented vessel's own. */
   readonly now: () => number;
   /** What is kept of the source already; null where nothing is. */
   readonly kept: KeptScans | null;
@@ -24,10 +24,9 @@ export interface SourceParts {
 }
 
 export interface KeptScans {
-  /** First scan kept under the settings that hold now; null where none is. */
+  /** Of an invented vessel the first scan kept under the settings that hold now; else null. */
   readonly firstMs: number | null;
   readonly lastMs: number;
-  readonly lastArrivedMs: number;
 }
 
 export interface RunningSource {
