@@ -22,6 +22,8 @@ export function screensOf(runs: ReadonlyMap<string, number>, waiting: number): R
     'read-again': `${run('sound')}/sources/1`,
     parts: '/parts',
     part: `/parts/${encodeURIComponent('part of short-for-the-lagging')}`,
+    layup: `/parts/${encodeURIComponent('part of sound')}/layup`,
+    tools: '/tools',
     cycles: '/cycles',
     cycle: '/cycles/SR-180/B-sound',
     'cycle-import': '/cycles/import',
