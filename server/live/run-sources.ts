@@ -192,8 +192,8 @@ export function runSources(parts: RunSourcesParts): RunningSources {
 function leadVessel({ db, live: { steadyClock } }: RunSourcesParts, source: LiveSourceRow): void {
   const { reads } = source.settings.document;
   if (reads.kind !== 'practice') return;
-  const fromMs = Math.max(steadyClock.now(source.vesselId), findLastScan(db, source.id)?.timeMs ?? -Infinity);
-  steadyClock.lead(source.vesselId, vesselTime(fromMs, reads.speed));
+  const lastMs = findLastScan(db, source.id)?.timeMs ?? -Infinity;
+  steadyClock.lead(source.vesselId, (nowMs) => vesselTime(Math.max(nowMs, lastMs), reads.speed));
 }
 
 function keptOf(db: Db, { id, settings }: LiveSourceRow): KeptScans | null {

@@ -23,8 +23,8 @@ export type ClockJump =
 export interface SteadyClock {
   /** The instant now in a vessel. While a run is open in it, it never goes back and never jumps. */
   now(vesselId: number): number;
-  /** From now on a vessel has a time of its own, as an invented one has: it is stamped and told by that. */
-  lead(vesselId: number, time: () => number): void;
+  /** From now on a vessel has a time of its own, as an invented one has, made of its time now: it is stamped by that. */
+  lead(vesselId: number, begin: (nowMs: number) => () => number): void;
 }
 
 interface Base {
@@ -65,7 +65,7 @@ export function createSteadyClock(parts: SteadyClockParts): SteadyClock {
       bases.set(vesselId, base);
       return steadyMs(base, monotonicMs);
     },
-    lead: (vesselId, time) => void led.set(vesselId, time),
+    lead: (vesselId, begin) => void led.set(vesselId, begin(led.get(vesselId)?.() ?? wall())),
   };
 }
 

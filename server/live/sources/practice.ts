@@ -3,7 +3,7 @@ import type { LiveScan, LiveSource, SourceReads } from '../../../models/log/live
 import type { InventedRun, InventVessel } from './invented-vessel.ts';
 import type { OneScan, ReadOnceParts, RunningSource, SourceDriver, SourceParts } from './source.ts';
 
-/** An invented vessel. Its time, by which `now` tells, goes faster than the clock; it stands still while nobody listens. */
+/** An invented vessel. Its time, by which `now` tells, goes faster than the clock. */
 export const practice: SourceDriver = { start, readOnce };
 
 /** Scans are brought this often at most, ms, however fast the vessel's time goes. */
