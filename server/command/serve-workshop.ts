@@ -7,6 +7,7 @@ import type { JudgingParts } from '../actions/judge-run.ts';
 import { createLongWork } from '../actions/long-work.ts';
 import { verifyInThread } from '../actions/verify-in-thread.ts';
 import { createApp } from '../app.ts';
+import { followLive } from '../live/follow-live.ts';
 import { startLiveLogging } from '../live/live-logging.ts';
 import { runSources } from '../live/run-sources.ts';
 import type { InventVessel } from '../live/sources/invented-vessel.ts';
@@ -45,10 +46,13 @@ export async function serveWorkshop(options: ServerOptions): Promise<void> {
   const sources = runSources({ db, live, inventVessel: await inventVesselIn(db), log });
   const incomingFolder = join(options.folder, 'incoming');
   mkdirSync(incomingFolder, { recursive: true });
+  const following = followLive({ db, folder: options.folder, live, sources, clock: Date.now, log });
   const app = createApp({
     ...parts,
     live,
     sources,
+    engine: following.engine,
+    telling: following.telling,
     estimateCure: longWork.estimateCure,
     cureThroughPart: longWork.cureThroughPart,
     log,
@@ -70,6 +74,7 @@ export async function serveWorkshop(options: ServerOptions): Promise<void> {
   server.closeAllConnections();
   await watched?.close();
   await sources.close();
+  await following.close();
   await live.close();
   await longWork.close();
   closeDatabase(db);

@@ -1,5 +1,4 @@
 import * as z from 'zod';
-import type { Forecast } from '../../models/forecast/forecast.ts';
 import { SOURCE_KINDS } from '../../models/log/live-source.ts';
 import { evaluationDocument, forecastDocument, loadDocument, sourceDocument } from './documents.ts';
 import { particulars } from './runs.ts';
@@ -153,6 +152,7 @@ export const WARNING_KINDS = [
   'cannot-be-kept',
   'clock-jumped',
   'program-restarted',
+  'damaged',
 ] as const;
 
 /** Something a person should know. Advisory only: it is no safety function and no alarm anyone may rely on. */
@@ -236,7 +236,7 @@ export const liveRun = z.object({
   forecasts: z.array(forecastDocument),
   warnings: z.array(warning),
 });
-export type LiveRun = Omit<z.infer<typeof liveRun>, 'forecasts'> & { readonly forecasts: readonly Forecast[] };
+export type LiveRun = z.infer<typeof liveRun>;
 
 /** A scan as the events of a run bring it: `values` in the order of the live run's channels, as judged: °C or Pa. */
 export const scanEvent = z.object({

@@ -18,9 +18,12 @@ import {
 } from './imports.ts';
 import { addPartWorkRequest, layupQuery, layupView, setCouponRequest, setLayupRequest } from './layups.ts';
 import {
+  acknowledgeRequest,
   beginRunRequest,
   endRunRequest,
   enterRequest,
+  liveRun,
+  liveVessels,
   madeKey,
   makeKeyRequest,
   pushed,
@@ -33,6 +36,7 @@ import {
   sourceView,
   tried,
   tryRequest,
+  warnings,
 } from './live.ts';
 import {
   batchLine,
@@ -71,6 +75,7 @@ import {
 import { thickness, thicknessQuery } from './thickness.ts';
 import { setToolRequest } from './tool-record.ts';
 import { tools, toolView } from './tools.ts';
+import { setWarningRoutesRequest, warningRoutesView } from './warnings.ts';
 import { addVesselRequest, setWorkshopRequest, vessels, workshop } from './workshop.ts';
 
 /** A route with the shapes of what it takes and answers. */
@@ -79,7 +84,7 @@ export interface Operation extends Route {
   /** Of a JSON body. */
   readonly body?: z.ZodType;
   /** JSON answer, or the media type of another one. */
-  readonly answer: z.ZodType | 'text/csv' | 'application/octet-stream' | 'application/json';
+  readonly answer: z.ZodType | 'text/csv' | 'application/octet-stream' | 'application/json' | 'text/event-stream';
   /** Status of a good answer; default 200. */
   readonly status?: 201;
 }
@@ -101,6 +106,14 @@ export const OPERATIONS = {
   previewImport: { ...ROUTES.previewImport, body: previewRequest, answer: preview },
   recordRun: { ...ROUTES.recordRun, body: recordRunRequest, answer: recordedRun, status: 201 },
   discardImport: { ...ROUTES.discardImport, body: discardImportRequest, answer: imports },
+  readLive: { ...ROUTES.readLive, answer: liveVessels },
+  watchLive: { ...ROUTES.watchLive, answer: 'text/event-stream' },
+  readLiveRun: { ...ROUTES.readLiveRun, answer: liveRun },
+  watchLiveRun: { ...ROUTES.watchLiveRun, answer: 'text/event-stream' },
+  listWarnings: { ...ROUTES.listWarnings, answer: warnings },
+  acknowledgeWarning: { ...ROUTES.acknowledgeWarning, body: acknowledgeRequest, answer: warnings },
+  readWarningRoutes: { ...ROUTES.readWarningRoutes, answer: warningRoutesView },
+  setWarningRoutes: { ...ROUTES.setWarningRoutes, body: setWarningRoutesRequest, answer: warningRoutesView },
   listRuns: { ...ROUTES.listRuns, query: runsQuery, answer: runs },
   readRun: { ...ROUTES.readRun, answer: runView },
   readRunChart: { ...ROUTES.readRunChart, query: chartQuery, answer: chartDocument },

@@ -5,6 +5,7 @@ import type * as z from 'zod';
 import { OPERATIONS, type Operation } from '../contract/operations.ts';
 import type { OperationName } from '../contract/routes.ts';
 import type { AppParts } from './app-parts.ts';
+import { type EventStream, sendEvents } from './event-stream.ts';
 import type { Download, Handler } from './handler.ts';
 import { HANDLERS } from './handlers.ts';
 import { InvalidRequest } from './invalid-request.ts';
@@ -22,10 +23,13 @@ export async function answer(
   const params = request.params as Record<string, string>;
   const handler = HANDLERS[name] as Handler<OperationName>;
   const key = /^Bearer +(\S+)$/i.exec(request.get('authorization') ?? '')?.[1] ?? null;
-  const result = await handler(parts, { params, query, body, key } as never);
+  const lastEventId = request.get('last-event-id') ?? null;
+  const result: unknown = await handler(parts, { params, query, body, key, lastEventId } as never);
   response.status(operation.status ?? 200);
   if (operation.answer === 'text/csv' || operation.answer === 'application/octet-stream') {
     await sendDownload(response, operation.answer, result as Download);
+  } else if (operation.answer === 'text/event-stream') {
+    sendEvents(response, result as EventStream);
   } else {
     response.json(result);
   }

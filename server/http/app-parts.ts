@@ -2,14 +2,20 @@ import type { CureThroughPart } from '../actions/ask-thickness.ts';
 import type { EstimateCure } from '../actions/evaluate-log.ts';
 import type { JudgingParts } from '../actions/judge-run.ts';
 import type { AuditVerification } from '../contract/audit.ts';
+import type { LiveEngine } from '../live/engine/live-engine.ts';
 import type { LiveLogging } from '../live/live-logging.ts';
 import type { RunningSources } from '../live/run-sources.ts';
+import type { Telling } from '../live/warnings/tell-outside.ts';
 
 /** What the server is made of. Everything is opened by who makes it. */
 export interface AppParts extends JudgingParts {
   readonly estimateCure: EstimateCure;
   /** What takes scans and keeps them. */
   readonly live: LiveLogging;
+  /** What follows the vessels as they go. */
+  readonly engine: LiveEngine;
+  /** How warnings are told beyond the screen. */
+  readonly telling: Telling;
   /** What is listened to. */
   readonly sources: RunningSources;
   readonly cureThroughPart: CureThroughPart;

@@ -3,6 +3,7 @@ import type * as z from 'zod';
 import type { OPERATIONS } from '../contract/operations.ts';
 import type { OperationName } from '../contract/routes.ts';
 import type { AppParts } from './app-parts.ts';
+import type { EventStream } from './event-stream.ts';
 
 type Operations = typeof OPERATIONS;
 
@@ -18,7 +19,9 @@ type AnswerOf<N extends OperationName> = Operations[N]['answer'] extends z.ZodTy
   ? z.input<Operations[N]['answer']>
   : Operations[N]['answer'] extends 'application/json'
     ? object
-    : Download;
+    : Operations[N]['answer'] extends 'text/event-stream'
+      ? EventStream
+      : Download;
 
 /** An answer that is a file, chunk by chunk. */
 export interface Download {
@@ -33,6 +36,8 @@ export interface Input<N extends OperationName> {
   readonly body: InputOf<N, 'body'>;
   /** What was sent as `Authorization: Bearer`. */
   readonly key: string | null;
+  /** The last event a reader of a stream had. */
+  readonly lastEventId: string | null;
 }
 
 export type Handler<N extends OperationName> = (parts: AppParts, input: Input<N>) => AnswerOf<N> | Promise<AnswerOf<N>>;

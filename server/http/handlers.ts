@@ -1,6 +1,7 @@
 import { cycleHandlers } from './cycle-handlers.ts';
 import type { Handlers } from './handler.ts';
 import { importHandlers } from './import-handlers.ts';
+import { liveHandlers } from './live-handlers.ts';
 import { liveRunHandlers } from './live-run-handlers.ts';
 import { materialHandlers } from './material-handlers.ts';
 import { partHandlers } from './part-handlers.ts';
@@ -8,6 +9,7 @@ import { runHandlers } from './run-handlers.ts';
 import { senderHandlers } from './sender-handlers.ts';
 import { sourceHandlers } from './source-handlers.ts';
 import { toolHandlers } from './tool-handlers.ts';
+import { warningHandlers } from './warning-handlers.ts';
 import { workshopHandlers } from './workshop-handlers.ts';
 
 /** One handler for every operation of the contract: one that lacks does not compile. */
@@ -22,4 +24,6 @@ export const HANDLERS: Handlers = {
   ...liveRunHandlers,
   ...senderHandlers,
   ...sourceHandlers,
+  ...liveHandlers,
+  ...warningHandlers,
 };

@@ -15,6 +15,7 @@ import { verifyChains } from '../../server/actions/verify-chains.ts';
 import { createApp } from '../../server/app.ts';
 import { runChartPath } from '../../server/contract/paths.ts';
 import { ROLES } from '../../server/contract/roles.ts';
+import { followLive } from '../../server/live/follow-live.ts';
 import { startLiveLogging } from '../../server/live/live-logging.ts';
 import { runSources } from '../../server/live/run-sources.ts';
 import { type Db, openDatabase } from '../../server/store/database.ts';
@@ -118,11 +119,15 @@ function writeReadings(db: Db, readings: Readings): number {
 function serve(parts: JudgingParts, folder: string): Promise<Server> {
   const log = { info: () => undefined, error: (facts: object) => console.error(facts) };
   const live = startLiveLogging({ db: parts.db, clock: parts.clock, log });
+  const sources = runSources({ db: parts.db, live, inventVessel: null, log });
+  const { engine, telling } = followLive({ db: parts.db, folder, live, sources, clock: parts.clock, log });
   const app = createApp({
     ...parts,
     log,
     live,
-    sources: runSources({ db: parts.db, live, inventVessel: null, log }),
+    sources,
+    engine,
+    telling,
     siteFolder: null,
     incomingFolder: folder,
     watchedFolder: null,

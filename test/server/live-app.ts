@@ -10,6 +10,7 @@ import { verifyChains } from '../../server/actions/verify-chains.ts';
 import { createApp } from '../../server/app.ts';
 import { ROLES } from '../../server/contract/roles.ts';
 import type { AppParts } from '../../server/http/app-parts.ts';
+import { followLive } from '../../server/live/follow-live.ts';
 import { startLiveLogging } from '../../server/live/live-logging.ts';
 import { runSources } from '../../server/live/run-sources.ts';
 import { freshDatabase, freshFolder } from './fresh-database.ts';
@@ -28,6 +29,7 @@ afterEach(async () => {
 });
 
 export interface LiveApp {
+  readonly origin: string;
   readonly parts: AppParts;
   /** Faults of the program so far; takes them out, for a test that makes one on purpose. */
   readonly takeFaults: () => object[];
@@ -58,10 +60,14 @@ export async function liveApp(changes: Partial<AppParts> = {}): Promise<LiveApp>
     await sources.close();
     await live.close();
   });
+  const following = followLive({ db: changes.db ?? db, folder, live, sources, clock, log });
+  running.push(() => following.close());
   const parts: AppParts = {
     db,
     live,
     sources,
+    engine: following.engine,
+    telling: following.telling,
     verify: async () => verifyChains(db),
     clock,
     actor: { name: 'inspector 2', roles: ROLES },
@@ -94,6 +100,7 @@ export async function liveApp(changes: Partial<AppParts> = {}): Promise<LiveApp>
     return { status: response.status, headers: response.headers, text, body };
   };
   return {
+    origin,
     parts,
     takeFaults: () => faults.splice(0),
     send,

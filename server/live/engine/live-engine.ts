@@ -202,7 +202,7 @@ export function startLiveEngine(parts: LiveEngineParts): LiveEngine {
       readings: readingsOf(vesselId),
       sources: [...parts.sourceLines(vesselId)],
       evaluation: judged?.evaluation ?? null,
-      forecasts: judged?.forecasts ?? [],
+      forecasts: [...(judged?.forecasts ?? [])],
       warnings: [...parts.warnings(vesselId)],
     };
   };
