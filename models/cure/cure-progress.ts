@@ -66,7 +66,7 @@ export class CureProgress {
     this.resin = resin;
     this.#rate = rate;
     this.#tolerance = tolerance;
-    this.#stepper = new CureStepper(rate, tolerance);
+    this.#stepper = new CureStepper(rate, tolerance < FAST_TOLERANCE ? tolerance : tolerance * EARLY);
     const law = tolerance < FAST_TOLERANCE ? null : separableLaw(resin);
     this.#fast = law === null ? null : new FastCure(law, rate, resin);
     this.#state = {
@@ -194,6 +194,9 @@ export class CureProgress {
     return Math.min(gelDegree, this.#rate.branchEnds[this.#state.branch]!);
   }
 }
+
+/** What the steps are held to beside the fast ones: errors made early in an autocatalytic cure grow with its rate. */
+const EARLY = 0.01;
 
 /** Room for one scan, to hand it on as a row of one. */
 const one = { timeS: new Float64Array(1), temperatureK: new Float64Array(1), alpha: new Float64Array(1) };

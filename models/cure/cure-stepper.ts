@@ -54,6 +54,8 @@ export class CureStepper {
     const slope = this.#slope(this.fromS, state.alpha);
     const stallDegree = this.#rate.stallsAt(this.#branch, this.temperatureAt(this.fromS));
     if (!(slope >= 0) || state.alpha > STALLED * stallDegree) this.#refuseRate(slope, stallDegree);
+    // A step past the end of its branch is cut there, be that end at 1.
+    const most = this.#rate.branchEnds[this.#branch]! <= 1 ? Number.POSITIVE_INFINITY : 1 + ROUNDING;
     let h = state.stepS;
     for (;;) {
       const last = this.fromS + h >= this.#spanS;
@@ -63,7 +65,7 @@ export class CureStepper {
       const gained = value - state.alpha;
       const allowed = this.#tolerance * gained + ROUNDING;
       const excess = Math.abs(error) / allowed;
-      if (excess <= 1 && gained >= 0 && value <= 1 + ROUNDING) {
+      if (excess <= 1 && gained >= 0 && value <= most) {
         state.stepS = Math.max(last ? state.stepS : 0, h * Math.min(5, 0.9 * excess ** -0.2));
         this.#accept(state, last ? this.#spanS : this.fromS + h, value);
         return true;
@@ -115,7 +117,7 @@ export class CureStepper {
     this.toS = toS;
     this.toAlpha = 1 - value <= NOTHING_LEFT ? 1 : value;
     const end = this.#rate.branchEnds[this.#branch]!;
-    if (this.toAlpha > end) {
+    if (value > end) {
       this.toS = this.elapsedAt(end);
       this.toAlpha = end;
       state.branch += 1;

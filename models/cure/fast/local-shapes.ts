@@ -3,8 +3,10 @@ import type { GlassTransition } from '../resin.ts';
 import type { Term } from './separable-law.ts';
 import { expandShape, reachOf, type TermShape } from './term-shape.ts';
 
-/** Natural logarithm by which the rate may change between a reference degree and the cure: half its square is left out. */
+/** Natural logarithm by which diffusion may change the rate between a reference degree and the cure: half its square is left out. */
 const OFF = 1e-3;
+/** What is left out of the shapes is of one sign all along a cure, so they may change it by a thirteenth of that only. */
+const SHAPES = 0.4;
 
 /** The terms of a law about one degree: Taylor polynomials, how far they reach, and what holds throughout that reach. */
 export class LocalShapes {
@@ -31,7 +33,7 @@ export class LocalShapes {
     const reach = Math.min(reachOf(first.shape, alpha), second === undefined ? 1 : reachOf(second.shape, alpha));
     this.center = alpha + reach;
     this.limit = alpha + 2 * reach;
-    this.near = OFF / (this.#steepness + 0.05 / reach);
+    this.near = OFF / (this.#steepness + SHAPES / reach);
     this.#lookTo(this.limit);
     expandShape(first.shape, this.center, this.taylor, 0);
     if (second !== undefined) expandShape(second.shape, this.center, this.taylor, 5);
@@ -43,7 +45,7 @@ export class LocalShapes {
    * By differentiating dα/dθ = g three times: g g', g (g'² + g g''), g (g'³ + 4 g g' g'' + g² g''').
    */
   seriesInTheta(shape: TermShape, alpha: number): readonly [number, number, number, number, number] {
-    const reach = reachOf(shape, alpha);
+    const reach = reachOf(shape, alpha) / 2;
     this.#lookTo(alpha + reach);
     expandShape(shape, alpha, this.taylor, 0);
     const [g, g1, g2, g3] = [this.taylor[0]!, this.taylor[1]!, 2 * this.taylor[2]!, 6 * this.taylor[3]!];

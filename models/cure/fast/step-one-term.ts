@@ -6,11 +6,11 @@ import type { Term } from './separable-law.ts';
 // Constants stand in this file, and e^d = 1 + d + … + d⁵/120 (within 1.6e-8 for |d| ≤ 0.15, 1e-12 for |d| ≤ 0.03) in the
 // loop itself, because an imported constant or a call costs every reading.
 
-/** Natural logarithm by which the rate constant may change from reading to reading: the rule's error is then 1.6e-7. */
-const STEEP = 0.5;
+/** Natural logarithm by which the rate constant may change from reading to reading: the rule's error is then 2.5e-9. */
+const STEEP = 0.25;
 /** Readings after which the carried exponential is found anew, and the exponent up to which it is carried. */
 const CARRIED_READINGS = 64;
-const CARRIED = 0.15;
+const CARRIED = 0.05;
 
 /** Why the inner loop was left: what is needed before the reading under way can be taken. */
 const [NOTHING, OTHER, EXPONENTIAL, SERIES, GLASS] = [0, 1, 2, 3, 4];
@@ -25,15 +25,15 @@ const [INVERSE, K, CARRY] = [7, 8, 9]; // 1/T and the rate constant
  *
  * With θ = ∫ k dt the degree depends on θ alone: dα/dθ = g(α). So θ is summed, each straight piece by the two-point
  * Hermite rule with two derivatives, h (k0 + k1)/2 + h² (k0' − k1')/10 + h³ (k0'' + k1'')/120, of order six, and α is
- * read off its Taylor series in θ, renewed every twentieth of the way to 0 or 1. Exponentials are carried from reading
+ * read off its Taylor series in θ, renewed every seventieth of the way to 0 or 1. Exponentials are carried from reading
  * to reading by the series of their quotient. What it cannot vouch for (a steep piece, an event) it declines.
  *
  * @param now      Of `FIGURES` figures: what one reading hands to the next; as `oneTermAnchored` gives it for the first.
  * @param shapes   Tells how far a series reaches.
  * Other parameters and the result as `stepReadings`.
  *
- * Accuracy: 2e-7 per unit of degree gained at worst; test/models/cure/fast.test.ts measures it on noisy and stepping
- *   histories.
+ * Accuracy: 2e-8 of the time that has passed at worst; test/models/cure/fast.test.ts measures the degree on noisy and
+ *   stepping histories.
  * Source: Lanczos, Applied Analysis (1956), ch. VI (two-point Hermite quadrature); θ: Vyazovkin et al., Thermochim Acta
  *   520 (2011) 1–19, §3.
  */

@@ -11,6 +11,13 @@ import type { SeparableLaw } from './separable-law.ts';
  * it is x²/12, and the error that is left x⁴/720: a fifth of its square, here 7e-7.
  */
 const CORRECTED_WITHIN = 1.9e-3;
+/**
+ * The same in the branch before a jump of the law: an error there is one in time, and counts as many times more as the
+ * rate is higher behind the jump. So rate constants are carried, and degrees moved along a line, less far too.
+ */
+const STRICT_WITHIN = 1.5e-4;
+const STRICT_CARRIED = 0.04;
+const STRICT_NEAR = 0.25;
 /** Natural logarithm by which the rate may change within one part of a step; above it the reading is cut into parts. */
 const BEND = 0.15;
 const MOST_PARTS = 8;
@@ -81,6 +88,9 @@ export function stepReadings(
   const isHeld = isAllHeld || isSecondHeld;
   const [C, alphaC0, alphaCT] = [law.diffusion[0]!, law.diffusion[1]!, law.diffusion[2]!];
   const taylor = shapes.taylor;
+  const isStrict = state.branch < law.branches.length - 1;
+  const carried = isStrict ? STRICT_CARRIED : CARRIED;
+  const nearer = isStrict ? STRICT_NEAR : 1;
 
   /** Where the last part ended. */
   let { alpha: a, timeS: aS, temperatureK: aK } = state;
@@ -89,6 +99,8 @@ export function stepReadings(
   let [lastInverse, k1, k2] = [now[INVERSE]!, now[K1]!, now[K2]!];
   let [lastZ, held, carry] = [now[Z]!, now[HELD]!, now[CARRY]!];
   let { center, limit, near } = shapes;
+  near *= nearer;
+  const within = isStrict ? STRICT_WITHIN : CORRECTED_WITHIN;
   let limitTgK = watch === null ? 0 : shapes.limitTgK;
   let [p0, p1, p2, p3, p4] = [taylor[0]!, taylor[1]!, taylor[2]!, taylor[3]!, taylor[4]!];
   let [q0, q1, q2, q3, q4] = [taylor[5]!, taylor[6]!, taylor[7]!, taylor[8]!, taylor[9]!];
@@ -131,7 +143,7 @@ export function stepReadings(
       inverse = 1 / partK;
       const d1 = energy1K * (lastInverse - inverse);
       const d2 = energy2K * (lastInverse - inverse);
-      if (carry <= 0 || !(Math.abs(d1) <= CARRIED && Math.abs(d2) <= CARRIED)) {
+      if (carry <= 0 || !(Math.abs(d1) <= carried && Math.abs(d2) <= carried)) {
         need = EXPONENTIALS;
         break;
       }
@@ -206,7 +218,7 @@ export function stepReadings(
         break;
       }
       next = onLine + off;
-      if (!(next >= a && next < degreeEnd && Math.abs(correction) <= CORRECTED_WITHIN * (next - a) + ROUNDING)) {
+      if (!(next >= a && next < degreeEnd && Math.abs(correction) <= within * (next - a) + ROUNDING)) {
         need = OTHER;
         break;
       }
@@ -247,6 +259,7 @@ export function stepReadings(
     } else if (need === SHAPES && onLine < degreeEnd) {
       shapes.expand(first, second, onLine);
       ({ center, limit, near } = shapes);
+      near *= nearer;
       limitTgK = watch === null ? 0 : shapes.limitTgK;
       [p0, p1, p2, p3, p4] = [taylor[0]!, taylor[1]!, taylor[2]!, taylor[3]!, taylor[4]!];
       [q0, q1, q2, q3, q4] = [taylor[5]!, taylor[6]!, taylor[7]!, taylor[8]!, taylor[9]!];

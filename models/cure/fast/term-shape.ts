@@ -9,8 +9,8 @@ export interface TermShape {
   readonly constants: Float64Array;
 }
 
-/** Relative distance, per unit of exponent, to which a polynomial is used: its error is below 2e-8 of the term. */
-const REACH = 0.05;
+/** Relative distance, per unit of exponent, to which a polynomial is used: its error is below 2e-9 of the term. */
+const REACH = 0.03;
 
 /** The shape α^m (1 − α)^n, m and n ≥ 0. */
 export function powerShape(m: number, n: number): TermShape {
@@ -37,7 +37,7 @@ export function reachOf({ kind, constants }: TermShape, alpha: number): number {
  * Those of a power follow from α(1 − α) g' = (m − (m + n) α) g by recurrence, from the power itself; the other shapes are
  * polynomials and exact.
  *
- * Accuracy: 2e-8 relative within {@link reachOf}; test/models/cure/fast.test.ts.
+ * Accuracy: 2e-9 relative within {@link reachOf}; test/models/cure/fast.test.ts.
  * Limits: the centre of a power must lie strictly between 0 and 1, where it is analytic.
  */
 export function expandShape({ kind, constants }: TermShape, center: number, into: Float64Array, at: number): void {
