@@ -6,9 +6,9 @@ export interface ShiftEvidence {
   /** Added to the later source's instants it makes both agree best, ms; null where nothing better than 0 is told. */
   readonly shiftMs: number | null;
   readonly because: string;
-  /** Root mean square of the differences without and with the shift, in `unit`; null where nothing overlaps. */
-  readonly rmsWithout: number | null;
-  readonly rmsWith: number | null;
+  /** How far the differences scatter about their mean without and with the shift, in `unit`; null: no overlap. */
+  readonly scatterWithout: number | null;
+  readonly scatterWith: number | null;
   readonly unit: string;
   readonly channels: readonly string[];
   /** Readings compared without a shift. */
@@ -36,9 +36,10 @@ const LEAST_RISE = 1.25;
 /**
  * The shift of a later source's clock that makes it agree best with an earlier one on the channels both read.
  *
- * Least squares over the shift: the later readings against the earlier ones read linearly between their readings, first
- * at every 30 s up to 3 h either way, then by halving the step around the best. Only channels of the unit most of them
- * have are compared. It is a proposal: where the overlap is flat, or is hardly better for a shift, it is null.
+ * Least squares over the shift: the later readings less the earlier ones, read linearly between their readings, and less
+ * each channel's mean difference, because two instruments may read a degree apart all along; first at every 30 s up to
+ * 3 h either way, then by halving the step around the best. Only channels of the unit most of them have are compared.
+ * It is a proposal: where the overlap is flat or one straight line, or is hardly better for a shift, it is null.
  *
  * @param shared  Channels both read, each in one unit.
  *
@@ -52,19 +53,19 @@ export function findShift(shared: readonly SharedChannel[]): ShiftEvidence {
   const at = (shiftMs: number) => misfit(used, shiftMs);
   const without = at(0);
   const channels = used.map(({ earlier }) => earlier.channel.name);
-  const told = { rmsWithout: without.rms, unit, channels, compared: without.compared };
+  const told = { scatterWithout: without.scatter, unit, channels, compared: without.compared };
   const best = bestShift(at);
-  if (best === null) return { ...told, shiftMs: null, rmsWith: null, because: 'the two do not overlap' };
-  const beside = [best.shiftMs - BESIDE_MS, best.shiftMs + BESIDE_MS].map((shiftMs) => at(shiftMs).rms ?? Infinity);
-  const shown = { ...told, rmsWith: best.rms };
-  if (Math.min(...beside) < LEAST_RISE * best.rms) {
+  if (best === null) return { ...told, shiftMs: null, scatterWith: null, because: 'the two do not overlap' };
+  const beside = [best.shiftMs - BESIDE_MS, best.shiftMs + BESIDE_MS].map((shiftMs) => at(shiftMs).scatter ?? Infinity);
+  const shown = { ...told, scatterWith: best.scatter };
+  if (Math.min(...beside) <= LEAST_RISE * best.scatter) {
     return {
       ...shown,
       shiftMs: null,
       because: 'where both read, nothing changes fast enough to tell their clocks apart',
     };
   }
-  if (Math.abs(best.shiftMs) < FINE_MS || (without.rms !== null && best.rms > MOST_LEFT * without.rms)) {
+  if (Math.abs(best.shiftMs) < FINE_MS || (without.scatter !== null && best.scatter > MOST_LEFT * without.scatter)) {
     return { ...shown, shiftMs: null, because: 'their clocks agree as well as can be told' };
   }
   const words = `with its clock ${Math.abs(best.shiftMs) / 1000} s ${best.shiftMs > 0 ? 'later' : 'earlier'}`;
@@ -72,35 +73,37 @@ export function findShift(shared: readonly SharedChannel[]): ShiftEvidence {
 }
 
 interface Misfit {
-  readonly rms: number | null;
+  readonly scatter: number | null;
   readonly compared: number;
 }
 
-function bestShift(at: (shiftMs: number) => Misfit): { readonly shiftMs: number; readonly rms: number } | null {
-  const tried: { shiftMs: number; rms: number; compared: number }[] = [];
+function bestShift(at: (shiftMs: number) => Misfit): { readonly shiftMs: number; readonly scatter: number } | null {
+  const tried: { shiftMs: number; scatter: number; compared: number }[] = [];
   for (let shiftMs = -FURTHEST_MS; shiftMs <= FURTHEST_MS; shiftMs += COARSE_MS) {
-    const { rms, compared } = at(shiftMs);
-    if (rms !== null) tried.push({ shiftMs, rms, compared });
+    const { scatter, compared } = at(shiftMs);
+    if (scatter !== null) tried.push({ shiftMs, scatter, compared });
   }
   const most = tried.reduce((sum, { compared }) => Math.max(sum, compared), 0);
   // A sliver of overlap agrees by chance.
-  const [coarse] = tried.filter(({ compared }) => 2 * compared >= most).sort((a, b) => a.rms - b.rms);
+  const [coarse] = tried.filter(({ compared }) => 2 * compared >= most).sort((a, b) => a.scatter - b.scatter);
   if (coarse === undefined) return null;
-  let { shiftMs, rms }: { shiftMs: number; rms: number } = coarse;
+  let { shiftMs, scatter }: { shiftMs: number; scatter: number } = coarse;
   for (let stepMs = COARSE_MS / 2; stepMs >= FINE_MS / 2; stepMs /= 2) {
     for (const candidate of [shiftMs - stepMs, shiftMs + stepMs]) {
-      const tryOut = at(candidate).rms;
-      if (tryOut !== null && tryOut < rms) [shiftMs, rms] = [candidate, tryOut];
+      const tryOut = at(candidate).scatter;
+      if (tryOut !== null && tryOut < scatter) [shiftMs, scatter] = [candidate, tryOut];
     }
   }
-  return { shiftMs: Math.round(shiftMs / FINE_MS) * FINE_MS, rms };
+  return { shiftMs: Math.round(shiftMs / FINE_MS) * FINE_MS, scatter };
 }
 
 function misfit(shared: readonly SharedChannel[], shiftMs: number): Misfit {
-  let sum = 0;
+  let squares = 0;
   let compared = 0;
   for (const { earlier, later } of shared) {
     let next = 0;
+    let count = 0;
+    let mean = 0;
     for (let i = 0; i < later.timeMs.length; i++) {
       const atMs = later.timeMs[i]! + shiftMs;
       while (next < earlier.timeMs.length && earlier.timeMs[next]! < atMs) next++;
@@ -110,11 +113,16 @@ function misfit(shared: readonly SharedChannel[], shiftMs: number): Misfit {
       const before = scaledReading(earlier.value[next - 1]!, earlier.channel);
       const after = scaledReading(earlier.value[next]!, earlier.channel);
       const reading = before + ((after - before) * (atMs - fromMs)) / (untilMs - fromMs);
-      sum += (scaledReading(later.value[i]!, later.channel) - reading) ** 2;
-      compared += 1;
+      // Welford's update of mean and squares about it.
+      const difference = scaledReading(later.value[i]!, later.channel) - reading;
+      const off = difference - mean;
+      count += 1;
+      mean += off / count;
+      squares += off * (difference - mean);
     }
+    compared += count;
   }
-  return { rms: compared === 0 ? null : Math.sqrt(sum / compared), compared };
+  return { scatter: compared === 0 ? null : Math.sqrt(squares / compared), compared };
 }
 
 /** Across a longer gap nothing is read between, ms. */

@@ -109,9 +109,9 @@ export const joinPreview = z.object({
   proposal: z.object({
     shiftS: z.number().nullable(),
     because: z.string(),
-    /** Root mean square of the differences without and with it, in `unit`. */
-    rmsWithout: z.number().nullable(),
-    rmsWith: z.number().nullable(),
+    /** How far the differences scatter about their mean without and with it, in `unit`. */
+    scatterWithout: z.number().nullable(),
+    scatterWith: z.number().nullable(),
     unit: z.string(),
     channels: z.array(z.string()),
     compared: z.number(),
