@@ -12,8 +12,9 @@ export const mqtt: SourceDriver = { start, readOnce };
 
 /** What is wrong is shown so long after it was last so, ms. */
 const WRONG_FOR_MS = 60_000;
-/** A broker that floods for so long is left, and heard again after the pause, ms. */
+/** A broker that floods for so long, ms, or with so many messages, is left, and heard again after the pause, ms. */
 const FLOODS_MS = 5000;
+const MOST_FLOODED = 2000;
 const FLOOD_PAUSE_MS = 30_000;
 
 function start({ document, password, take, tell, fault, now }: SourceParts): RunningSource {
@@ -26,6 +27,7 @@ function start({ document, password, take, tell, fault, now }: SourceParts): Run
   let wrong: { readonly what: string; lastMs: number } | null = null;
   let refused = '';
   let floodsSinceMs: number | null = null;
+  let flooded = 0;
 
   const gathering = gatherScans(channels.length, intervalS * 1000, (scan) => {
     if (wrong !== null && now() - wrong.lastMs > WRONG_FOR_MS) {
@@ -50,10 +52,14 @@ function start({ document, password, take, tell, fault, now }: SourceParts): Run
       if (!gate.admits(1, nowMs)) {
         floodsSinceMs ??= nowMs;
         complain(`more than ${gate.perSecond} messages a second; what is beyond that is not taken`);
-        if (nowMs - floodsSinceMs > FLOODS_MS) leave(nowMs);
+        flooded += 1;
+        if (nowMs - floodsSinceMs > FLOODS_MS || flooded > MOST_FLOODED) leave(nowMs);
         return;
       }
-      if (floodsSinceMs !== null && nowMs - (wrong?.lastMs ?? 0) > 1000) floodsSinceMs = null;
+      if (floodsSinceMs !== null && nowMs - (wrong?.lastMs ?? 0) > 1000) {
+        floodsSinceMs = null;
+        flooded = 0;
+      }
       if (message.isRetained) return;
       const said = read(message.topic, message.payload);
       if (said.wrong !== null) complain(said.wrong);
@@ -64,6 +70,7 @@ function start({ document, password, take, tell, fault, now }: SourceParts): Run
   const feed = openMqtt(reads, password, listener, fault);
   const leave = (nowMs: number) => {
     floodsSinceMs = nowMs;
+    flooded = 0;
     feed
       .then((one) => one.leaveFor(FLOOD_PAUSE_MS, `it floods: left for ${FLOOD_PAUSE_MS / 1000} s`))
       .catch(() => undefined);

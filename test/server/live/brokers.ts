@@ -72,6 +72,32 @@ async function mosquittoBroker(path: string): Promise<Broker> {
   return { address: `mqtt://127.0.0.1:${port}`, publishers: new Set(), stop };
 }
 
+/** A broker in a process of its own that sends whoever hears it as much as it can. */
+export async function floodingBroker(topic: string): Promise<string> {
+  const script = `
+    import { createServer } from 'node:net';
+    import { Aedes } from 'aedes';
+    const broker = await Aedes.createBroker();
+    let n = 0;
+    const flood = () => {
+      for (let i = 0; i < 50; i++) broker.publish({ topic: ${JSON.stringify(topic)}, payload: String(n++), qos: 0 }, () => {});
+      setImmediate(flood);
+    };
+    broker.once('subscribe', flood);
+    const server = createServer(broker.handle);
+    server.listen(0, '127.0.0.1', () => process.stdout.write(String(server.address().port)));`;
+  const child = spawn(process.execPath, ['--input-type=module', '-e', script], {
+    stdio: ['ignore', 'pipe', 'inherit'],
+  });
+  const over = new Promise<void>((resolve) => child.once('exit', () => resolve()));
+  ended.push(async () => {
+    child.kill();
+    await over;
+  });
+  const port = await new Promise((resolve) => child.stdout.once('data', resolve));
+  return `mqtt://127.0.0.1:${port}`;
+}
+
 export interface Sender {
   send(topic: string, payload: string | object, retain?: boolean): Promise<void>;
 }
