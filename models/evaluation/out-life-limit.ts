@@ -12,9 +12,10 @@ const LIMIT = 'material/out-life';
 /** `material/out-life`: every material of the part within each of its lives as the heat came on. */
 export function outLifeLimit(j: Judgement): Found {
   const { materials, part } = j;
-  const recorded = materials?.parts.find((one) => one.part === part?.part)?.materials ?? [];
-  if (materials === null || part === null || recorded.length === 0) {
-    return { limit: LIMIT, outcome: 'cannot-tell', unit: '', because: 'Not recorded.' };
+  const recorded = materials?.parts.find((one) => one.part === part?.part)?.materials;
+  if (materials === null || part === null || recorded === undefined || recorded.length === 0) {
+    const because = recorded === undefined ? 'Not recorded.' : 'All material on record was cured in an earlier run.';
+    return { limit: LIMIT, outcome: 'cannot-tell', unit: '', because };
   }
   const lateMs = heatOnMs(j, 'least');
   if (lateMs === null) {

@@ -4,6 +4,16 @@ import { dayOf } from './ledger-order.ts';
 import { type MaterialState, stateOfCourse } from './material-state.ts';
 import type { Stay } from './stays.ts';
 
+/** Whether material in a part had been cured by a run that ended by an instant; what nobody dated was there from the first. */
+export function isCured(
+  { laidUpFrom }: PartMaterial,
+  cures: readonly { readonly fromMs: number; readonly untilMs: number }[],
+  byMs: number,
+): boolean {
+  const laidMs = laidUpFrom === undefined ? Number.NEGATIVE_INFINITY : Date.parse(laidUpFrom);
+  return cures.some(({ fromMs, untilMs }) => untilMs <= byMs && laidMs <= fromMs);
+}
+
 /** What a part's materials had aged to at an instant, in the order they are on record. */
 export function partMaterialStates(records: MaterialRecords, part: string, atMs: number): MaterialState[] {
   const materials = records.parts.find((one) => one.part === part)?.materials ?? [];

@@ -241,7 +241,7 @@ export type AgedOffer = z.infer<typeof agedOffer>;
 
 export const partMaterials = z.object({
   part: z.string(),
-  /** The instant the states are of. */
+  /** The instant asked for, or now; each state says which instant it is of. */
   at: instant,
   materials: z.array(
     itemUse.omit({ part: true }).extend({
@@ -252,7 +252,7 @@ export const partMaterials = z.object({
       aged: agedOffer,
     }),
   ),
-  /** The furthest aged of all of them. */
+  /** The furthest aged of what no earlier run has cured. */
   aged: agedOffer.nullable(),
   set: deed.nullable(),
 });

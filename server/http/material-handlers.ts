@@ -65,10 +65,10 @@ export const materialHandlers: SomeHandlers<
     return itemView(parts.db, item, parts.clock());
   },
   readPartMaterials: ({ db, clock }, { params, query }) =>
-    partMaterialsView(db, params.serial ?? '', query.at === undefined ? clock() : Date.parse(query.at)),
+    partMaterialsView(db, params.serial ?? '', query.at === undefined ? null : Date.parse(query.at), clock()),
   async setPartMaterials(parts, { params, body }) {
     const { serial = '' } = params;
     await setPartMaterials(parts, serial, body);
-    return partMaterialsView(parts.db, serial, parts.clock());
+    return partMaterialsView(parts.db, serial, null, parts.clock());
   },
 };

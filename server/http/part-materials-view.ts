@@ -1,42 +1,44 @@
 import { type Aged, agedOf } from '../../models/material/aged.ts';
 import type { MaterialRecords, PartMaterial } from '../../models/material/ledger.ts';
 import { productOf } from '../../models/material/material-state.ts';
-import { courseInPart, partMaterialStates } from '../../models/material/part-materials.ts';
+import { courseInPart, isCured, partMaterialStates } from '../../models/material/part-materials.ts';
 import type { AgedOffer, PartMaterials } from '../contract/materials.ts';
 import type { Db } from '../store/database.ts';
 import { isoFromMs } from '../store/instants.ts';
 import { recordsOfParts } from '../store/material-records.ts';
-import { findPartMaterials } from '../store/part-materials.ts';
+import { findPartMaterials, readCures } from '../store/part-materials.ts';
 import { findResin, readResinDocument } from '../store/resins.ts';
 
-/** What a part was laid up from, what each of it had aged to at an instant, and the degree its cure may start from. */
-export function partMaterialsView(db: Db, part: string, atMs: number): PartMaterials {
+/**
+ * What a part was laid up from and what each of it had aged to, and the degree that a cure may start from.
+ *
+ * @param atMs The instant that is asked for; null: each as the run began that cured it, or now where none did.
+ */
+export function partMaterialsView(db: Db, part: string, atMs: number | null, nowMs: number): PartMaterials {
   const set = findPartMaterials(db, part);
-  const records = recordsOfParts(db, [part], atMs);
-  const materials = records === null || set === null ? [] : materialLines(db, records, part, set.materials, atMs);
+  const cures = readCures(db, part);
+  const lines = (set?.materials ?? []).flatMap((use) => {
+    const ms = atMs ?? cures.find((cure) => isCured(use, [cure], cure.untilMs))?.fromMs ?? nowMs;
+    return materialLines(db, part, use, ms);
+  });
+  const fresh = (set?.materials ?? []).filter((use) => !isCured(use, cures, atMs ?? nowMs)).map(({ item }) => item);
+  const offers = lines.filter(({ item }) => fresh.includes(item)).map(({ aged }) => aged);
   return {
     part,
-    at: isoFromMs(atMs),
-    materials,
-    aged: materials.length === 0 ? null : furthest(materials.map(({ aged }) => aged)),
+    at: isoFromMs(atMs ?? nowMs),
+    materials: lines,
+    aged: offers.length === 0 ? null : furthest(offers),
     set: set === null ? null : { at: set.at, by: set.by },
   };
 }
 
 type Line = PartMaterials['materials'][number];
 
-function materialLines(
-  db: Db,
-  records: MaterialRecords,
-  part: string,
-  uses: readonly PartMaterial[],
-  atMs: number,
-): Line[] {
-  const states = partMaterialStates(records, part, atMs);
-  return uses.flatMap((use, i) => {
-    const state = states[i];
-    return state === undefined ? [] : [materialLine(db, records, part, use, state, atMs)];
-  });
+function materialLines(db: Db, part: string, use: PartMaterial, atMs: number): Line[] {
+  const records = recordsOfParts(db, [part], atMs);
+  if (records === null) return [];
+  const one = { ...records, parts: [{ part, materials: [use] }] };
+  return partMaterialStates(one, part, atMs).map((state) => materialLine(db, one, part, use, state, atMs));
 }
 
 function materialLine(

@@ -128,6 +128,7 @@ export const RD_130_B: Cycle = {
   ceiling: 140,
   sensors: { workingAtLeast: 2 },
   cure: { resin: 'skerry-120', degreeAtLeast: 0.88 },
+  material: { outLife: true },
 };
 
 /** Repairs under a heat blanket: vacuum kept to the end, the coldest thermocouple counts. */

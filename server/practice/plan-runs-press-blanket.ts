@@ -36,7 +36,7 @@ export const PRESS_1_RUNS: readonly PlannedRun[] = [
     parts: skins(35, 3, 'G-06'),
     mishaps: [{ kind: 'heater-weak', fromMin: 70, untilMin: 82, dropC: 8 }],
     notes: [{ minute: 71, text: 'Heater fuse of the press blown, changed', by: 'operator 3' }],
-    expected: { verdict: 'does-not-conform', notMet: ['cure/lower'] },
+    expected: { verdict: 'does-not-conform', notMet: ['cure/lower', 'material/out-life'] },
   },
   {
     ...PRESS,
@@ -55,7 +55,7 @@ export const PRESS_1_RUNS: readonly PlannedRun[] = [
     workOrder: 'W-2204',
     operator: 'operator 1',
     parts: skins(39, 4, 'G-08'),
-    expected: SOUND,
+    expected: { verdict: 'cannot-tell', cannotTell: ['material/out-life'] },
   },
 ];
 

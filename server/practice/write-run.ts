@@ -6,7 +6,6 @@ import { recordRun } from '../actions/record-run.ts';
 import { setLoad } from '../actions/set-load.ts';
 import type { Particulars } from '../contract/runs.ts';
 import { KINDS } from './plan-kinds.ts';
-import { ROLLS } from './plan-rolls.ts';
 import type { PlannedPart, PlannedRun } from './plan-run.ts';
 import type { SimulatedRun } from './simulator/simulate-run.ts';
 import type { LogFileBytes } from './simulator/write-log.ts';
@@ -21,11 +20,11 @@ export function writeRecording(parts: JudgingParts, planned: PlannedRun, run: Si
   });
 }
 
-/** Says what lay in the vessel, and what it was laid up from; the run is judged by it. */
+/** Says what lay in the vessel; the run is judged by it. */
 export async function writeLoad(parts: JudgingParts, n: number, planned: PlannedRun, run: SimulatedRun): Promise<void> {
   const { code, issue } = run.cycle;
   await setLoad(parts, n, { load: run.load, cycle: { code, issue }, particulars: planned.parts.map(particularsOf) });
-  addNote(parts, n, { at: planned.startsAt, text: materialsOf(planned) });
+  addNote(parts, n, { at: planned.startsAt, text: `Loaded by ${planned.operator}.` });
 }
 
 export function incoming({ name, bytes }: LogFileBytes): IncomingFile {
@@ -36,16 +35,4 @@ export function incoming({ name, bytes }: LogFileBytes): IncomingFile {
 function particularsOf({ part, kind, tool }: PlannedPart): Particulars {
   const { title, drawing, drawingIssue } = KINDS[kind];
   return { part, title, drawing, drawingIssue, ...(tool === undefined ? {} : { tool }) };
-}
-
-/** The rolls of a load in one sentence each, for there is no other place for them yet. */
-function materialsOf({ parts, operator }: PlannedRun): string {
-  const rolls = [...new Set(parts.map(({ roll }) => roll))];
-  const sentences = rolls.map((name) => {
-    const serials = parts.filter(({ roll }) => roll === name).map(({ part }) => part);
-    const roll = ROLLS[name];
-    if (roll === undefined) throw new Error(`the plan names roll ${name}, which is not in it`);
-    return `${serials.join(', ')}: roll ${name} (${roll.material}, batch ${roll.batch}, ${roll.daysOut} days out of 30).`;
-  });
-  return `Loaded by ${operator}. ${sentences.join(' ')}`;
 }

@@ -1,18 +1,30 @@
 import type { BatchRecord, LedgerEvent, LedgerItem, MaterialRecords } from '../../models/material/ledger.ts';
 import type { Material } from '../../models/material/material.ts';
+import { isCured } from '../../models/material/part-materials.ts';
 import { findBatch } from './batches.ts';
 import type { Db } from './database.ts';
 import { type ItemRow, readChildren, readEvents, readForebears, requireItem } from './material-items.ts';
 import { findMaterial, readMaterialDocument } from './materials.ts';
-import { findPartMaterials, readUsesOfItem } from './part-materials.ts';
+import { findPartMaterials, readCures, readUsesOfItem } from './part-materials.ts';
 
 /**
  * Everything the ages of these parts' materials follow from up to an instant; null where none of them has any on
- * record. What was written of later times is left out, so that it makes no other judgement.
+ * record. What was written of later times is left out, so that it makes no other judgement, and so is material that a
+ * run which had ended by `curedByMs` had cured.
  */
-export function recordsOfParts(db: Db, parts: readonly string[], untilMs: number): MaterialRecords | null {
-  const used = parts.map((part) => ({ part, materials: findPartMaterials(db, part)?.materials ?? [] }));
-  const named = used.filter(({ materials }) => materials.length > 0);
+export function recordsOfParts(
+  db: Db,
+  parts: readonly string[],
+  untilMs: number,
+  curedByMs = Number.NEGATIVE_INFINITY,
+): MaterialRecords | null {
+  const said = parts.map((part) => ({ part, materials: findPartMaterials(db, part)?.materials ?? [] }));
+  const named = said
+    .filter(({ materials }) => materials.length > 0)
+    .map(({ part, materials }) => {
+      const cures = readCures(db, part);
+      return { part, materials: materials.filter((material) => !isCured(material, cures, curedByMs)) };
+    });
   if (named.length === 0) return null;
   const items = named.flatMap(({ materials }) => materials.map(({ item }) => requireItem(db, item).id));
   return { ...recordsOfItems(db, readForebears(db, items), untilMs), parts: named };

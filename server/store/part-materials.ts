@@ -56,6 +56,17 @@ export function readUsesOfItem(db: Db, itemId: number): ItemUse[] {
     .all(itemId);
 }
 
+/** When a part was cured, as its loads stand now: first and last scan of each run, in order. */
+export function readCures(db: Db, part: string): { readonly fromMs: number; readonly untilMs: number }[] {
+  return db
+    .prepare<[string], { fromMs: number; untilMs: number }>(
+      `SELECT from_ms AS fromMs, until_ms AS untilMs FROM parts
+       JOIN load_parts ON part_id = parts.id JOIN loads ON loads.id = load_id JOIN runs ON runs.id = run_id
+       WHERE serial = ? AND loads.id = (SELECT max(id) FROM loads WHERE run_id = runs.id) ORDER BY from_ms`,
+    )
+    .all(part);
+}
+
 /** Codes of the rolls and kits that some part is laid up from. */
 export function listLaidUpItems(db: Db): ReadonlySet<string> {
   return new Set(

@@ -27,6 +27,12 @@ export function requireRun(db: Db, run: number): void {
   }
 }
 
+/** The first scan of a run that must be there, in ms. */
+export function startOfRun(db: Db, run: number): number {
+  requireRun(db, run);
+  return db.prepare<[number], number>('SELECT from_ms FROM runs WHERE id = ?').pluck().get(run) ?? 0;
+}
+
 export function setVessel(db: Db, run: number, vesselId: number): void {
   db.prepare('UPDATE runs SET vessel_id = ? WHERE id = ?').run(vesselId, run);
 }

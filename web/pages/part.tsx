@@ -92,7 +92,7 @@ function Body({ view, again }: { view: PartView; again: () => void }) {
       </section>
       <PartThickness view={view} />
       <PartLayup view={view} onChanged={again} />
-      <PartMaterialsSection part={view.serial} at={view.runs[0]?.line.from} onChanged={again} />
+      <PartMaterialsSection part={view.serial} onChanged={again} />
       <section class="section">
         <h2>Not on record</h2>
         {missing.length === 0 ? (

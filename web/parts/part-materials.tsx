@@ -14,17 +14,9 @@ import { Problem } from './problem.tsx';
 import { Shown } from './shown.tsx';
 import { When } from './when.tsx';
 
-/** What a part was laid up from: each roll or kit with its age at an instant, and a form to say it. */
-export function PartMaterialsSection({
-  part,
-  at,
-  onChanged,
-}: {
-  part: string;
-  at?: string | undefined;
-  onChanged: () => void;
-}) {
-  const reading = useRead<PartMaterials>(partMaterialsPath(part, at === undefined ? {} : { at }));
+/** What a part was laid up from: each roll or kit with its age as its cure began, and a form to say it. */
+export function PartMaterialsSection({ part, onChanged }: { part: string; onChanged: () => void }) {
+  const reading = useRead<PartMaterials>(partMaterialsPath(part));
   const again = () => {
     reading.again();
     onChanged();
@@ -45,7 +37,9 @@ export function PartMaterialsSection({
                       <a href={itemPage({ item: material.item, kind: 'roll' })}>{material.item}</a>
                       <LifeMark outcome={material.state.outcome} />
                     </div>
-                    <p>{material.state.because}</p>
+                    <p>
+                      As of {dayAndClock(material.state.at, zone.value)}: {material.state.because}
+                    </p>
                     <p class="soft">
                       {[
                         material.material && `${material.material.name}, issue ${material.material.issue}`,
@@ -61,9 +55,6 @@ export function PartMaterialsSection({
                   </Entry>
                 ))}
               </ul>
-            )}
-            {view.materials.length > 0 && at !== undefined && (
-              <p class="soft small">Ages as its run began, {dayAndClock(at, zone.value)}.</p>
             )}
             <details class="section no-print">
               <summary>Say which rolls and kits it was laid up from</summary>

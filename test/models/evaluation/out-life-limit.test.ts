@@ -125,6 +125,12 @@ describe('material/out-life', () => {
     });
   });
 
+  it('cannot be told where all that is on record was cured before', () => {
+    const { finding } = judged([frozenUntil('K-1', OUT_AT)], []);
+    expect(finding).toMatchObject({ outcome: 'cannot-tell' });
+    expect(finding.because).toBe('All material on record was cured in an earlier run.');
+  });
+
   it('cannot be told where the ledger contradicts the run', () => {
     const late: LedgerItem = {
       ...roll('K-1'),

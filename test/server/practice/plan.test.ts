@@ -4,6 +4,8 @@ import { describe, expect, it } from 'vitest';
 import { parseResin } from '../../../models/cure/parse-resin.ts';
 import { parseCycle } from '../../../models/cycle/parse-cycle.ts';
 import { parseLayout } from '../../../models/log/parse-layout.ts';
+import { parseMaterial } from '../../../models/material/parse-material.ts';
+import { MATERIALS } from '../../../server/practice/plan-materials.ts';
 import { PRACTICES } from '../../../server/practice/plan-practices.ts';
 import { OVEN_1_RECORDER, RECORDERS } from '../../../server/practice/plan-recorders.ts';
 import { RESINS, SKERRY_180 } from '../../../server/practice/plan-resins.ts';
@@ -23,6 +25,7 @@ describe('the plan of the practice workshop', () => {
   it('holds documents that their own parsers take as they stand', () => {
     for (const { cycle } of Object.values(PRACTICES)) expect(parseCycle(cycle)).toEqual(cycle);
     for (const resin of RESINS) expect(parseResin(resin)).toEqual(resin);
+    for (const material of MATERIALS) expect(parseMaterial(material)).toEqual(material);
     for (const { layout } of [...RECORDERS, OVEN_1_RECORDER]) expect(parseLayout(layout)).toEqual(layout);
   });
 
