@@ -13,6 +13,12 @@ export type Heads = ReadonlyMap<string, ChainHead>;
  * Only this connection's writes are followed; where another one wrote, the scans are read again.
  */
 export function headsOf(db: Db, run: LiveRunRow, sourceId: number): Heads {
+  forgetIfOthersWrote(db);
+  return headsSinceLook(db, run, sourceId);
+}
+
+/** As {@link headsOf}, in a transaction that has looked already whether others wrote. */
+export function headsSinceLook(db: Db, run: LiveRunRow, sourceId: number): Heads {
   const { byKey } = knownHeads(db);
   const key = keyOf(run, sourceId);
   const known = byKey.get(key);
@@ -62,19 +68,25 @@ function readHeads(db: Db, run: LiveRunRow, sourceId: number): Heads {
 }
 
 interface KnownHeads {
-  readonly version: unknown;
+  version: number | undefined;
   readonly byKey: Map<string, Heads>;
 }
 
 const knownByDb = new WeakMap<Db, KnownHeads>();
 
+/** Forgets all heads where another connection wrote into the database since the last look. */
+export function forgetIfOthersWrote(db: Db): void {
+  const row = prepared<[], { data_version: number }>(db, 'PRAGMA data_version').get();
+  const known = knownHeads(db);
+  if (known.version === row?.data_version) return;
+  known.version = row?.data_version;
+  known.byKey.clear();
+}
+
 function knownHeads(db: Db): KnownHeads {
-  const version = prepared<[], number>(db, 'PRAGMA data_version').pluck().get();
-  const known = knownByDb.get(db);
-  if (known !== undefined && known.version === version) return known;
-  const fresh = { version, byKey: new Map<string, Heads>() };
-  knownByDb.set(db, fresh);
-  return fresh;
+  const known = knownByDb.get(db) ?? { version: undefined, byKey: new Map<string, Heads>() };
+  knownByDb.set(db, known);
+  return known;
 }
 
 /** A run that ends where it had not is another: its later scans no longer count. */

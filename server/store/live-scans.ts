@@ -2,7 +2,7 @@ import type { LiveScan } from '../../models/log/live-source.ts';
 import type { Db } from './database.ts';
 import { nextArrival, reserveArrivals } from './live-arrivals.ts';
 import { beginChain, type ChainHead, digestOf, extendChain, rewindChain } from './live-chain.ts';
-import { adoptHeads, type Heads, headsOf, readPackedScans } from './live-heads.ts';
+import { adoptHeads, forgetIfOthersWrote, type Heads, headsSinceLook, readPackedScans } from './live-heads.ts';
 import { findOpenRunOf, type LiveRunRow } from './live-runs.ts';
 import { packScan } from './live-scan-bytes.ts';
 import type { LiveSettings } from './live-sources.ts';
@@ -30,9 +30,26 @@ export function keepScans(db: Db, batches: readonly ScanBatch[]): KeptBatch[] {
   const count = batches.reduce((sum, { scans }) => sum + scans.length, 0);
   reserveArrivals(db, count);
   const moved: MovedHeads = new Map();
-  const kept = db.transaction(() => batches.map((batch) => keepBatch(db, batch, moved))).immediate();
+  const kept = writerOf(db)(batches, moved);
   for (const [sourceId, { run, heads }] of moved) adoptHeads(db, run, sourceId, heads);
   return kept;
+}
+
+type Writer = (batches: readonly ScanBatch[], moved: MovedHeads) => KeptBatch[];
+
+const writers = new WeakMap<Db, Writer>();
+
+/** The transaction that writes; made once, because it runs with every commit. */
+function writerOf(db: Db): Writer {
+  const known = writers.get(db);
+  if (known !== undefined) return known;
+  const write = (batches: readonly ScanBatch[], moved: MovedHeads) => {
+    forgetIfOthersWrote(db);
+    return batches.map((batch) => keepBatch(db, batch, moved));
+  };
+  const writer = db.transaction(write).immediate;
+  writers.set(db, writer);
+  return writer;
 }
 
 /** Heads as they stand once the transaction is committed, by source. */
@@ -45,7 +62,7 @@ function keepBatch(db: Db, batch: ScanBatch, moved: MovedHeads): KeptBatch {
   const run = findOpenRunOf(db, vesselId);
   const inRun = run === undefined ? [] : scans.filter(({ timeMs }) => isWithin(run, timeMs));
   if (run === undefined || inRun.length === 0) return outcomeOf(scans, insertScans(db, batch, scans, null));
-  const heads = moved.get(sourceId)?.heads ?? headsOf(db, run, sourceId);
+  const heads = moved.get(sourceId)?.heads ?? headsSinceLook(db, run, sourceId);
   const before = heads.get(sha256) ?? beginChain(settings.document);
   // As a rule every scan is new and later than all before: then the last is written with its chain at once.
   const expected = isLater(before, inRun) && inRun.length === scans.length ? extendChain(before, inRun) : null;
