@@ -192,6 +192,35 @@ BEGIN SELECT RAISE(ABORT, 'a file is kept as it came'); END;
 CREATE TRIGGER files_are_never_updated BEFORE UPDATE ON files
 BEGIN SELECT RAISE(ABORT, 'a file is kept as it came'); END;
 
+CREATE TABLE hold_list_parts (
+  hold_list_id INTEGER NOT NULL REFERENCES hold_lists (id),
+  part_id      INTEGER NOT NULL REFERENCES parts (id),
+  PRIMARY KEY (hold_list_id, part_id)
+) STRICT, WITHOUT ROWID;
+
+CREATE INDEX hold_list_parts_by_part ON hold_list_parts (part_id, hold_list_id);
+
+CREATE TRIGGER hold_list_parts_are_never_deleted BEFORE DELETE ON hold_list_parts
+BEGIN SELECT RAISE(ABORT, 'a hold list is never deleted'); END;
+
+CREATE TRIGGER hold_list_parts_are_never_updated BEFORE UPDATE ON hold_list_parts
+BEGIN SELECT RAISE(ABORT, 'a hold list is never updated; make another'); END;
+
+CREATE TABLE hold_lists (
+  id              INTEGER PRIMARY KEY,
+  document_sha256 TEXT NOT NULL REFERENCES documents (sha256),
+  why             TEXT NOT NULL CHECK (why <> ''),
+  parts           INTEGER NOT NULL CHECK (parts > 0),
+  at              TEXT NOT NULL,
+  by              TEXT NOT NULL CHECK (by <> '')
+) STRICT;
+
+CREATE TRIGGER hold_lists_are_never_deleted BEFORE DELETE ON hold_lists
+BEGIN SELECT RAISE(ABORT, 'a hold list is never deleted'); END;
+
+CREATE TRIGGER hold_lists_are_never_updated BEFORE UPDATE ON hold_lists
+BEGIN SELECT RAISE(ABORT, 'a hold list is never updated; make another'); END;
+
 CREATE TABLE imports (
   id          INTEGER PRIMARY KEY,
   sha256      TEXT NOT NULL CHECK (length(sha256) = 64),
@@ -358,6 +387,20 @@ BEGIN SELECT RAISE(ABORT, 'a load is never deleted'); END;
 CREATE TRIGGER load_parts_are_never_updated BEFORE UPDATE ON load_parts
 BEGIN SELECT RAISE(ABORT, 'a load is never updated'); END;
 
+CREATE TABLE load_places (
+  load_id INTEGER NOT NULL REFERENCES loads (id),
+  kind    TEXT NOT NULL CHECK (kind IN ('bag-line', 'thermocouple')),
+  channel TEXT NOT NULL CHECK (channel <> ''),
+  part_id INTEGER NOT NULL REFERENCES parts (id),
+  PRIMARY KEY (load_id, kind, channel, part_id)
+) STRICT, WITHOUT ROWID;
+
+CREATE TRIGGER load_places_are_never_deleted BEFORE DELETE ON load_places
+BEGIN SELECT RAISE(ABORT, 'a load is never deleted'); END;
+
+CREATE TRIGGER load_places_are_never_updated BEFORE UPDATE ON load_places
+BEGIN SELECT RAISE(ABORT, 'a load is never updated'); END;
+
 CREATE TABLE loads (
   id              INTEGER PRIMARY KEY,
   run_id          INTEGER NOT NULL REFERENCES runs (id),
@@ -370,6 +413,8 @@ CREATE TABLE loads (
 ) STRICT;
 
 CREATE INDEX loads_by_cycle ON loads (cycle_id);
+
+CREATE INDEX loads_by_person ON loads (by);
 
 CREATE INDEX loads_by_run ON loads (run_id, id);
 
@@ -583,6 +628,26 @@ BEGIN SELECT RAISE(ABORT, 'a test result is never deleted'); END;
 
 CREATE TRIGGER part_results_are_never_updated BEFORE UPDATE ON part_results
 BEGIN SELECT RAISE(ABORT, 'a test result is never updated'); END;
+
+CREATE TABLE part_whereabouts (
+  id       INTEGER PRIMARY KEY,
+  part_id  INTEGER NOT NULL REFERENCES parts (id),
+  place    TEXT NOT NULL CHECK (place IN ('in-shop', 'shipped')),
+  customer TEXT,
+  since    TEXT NOT NULL CHECK (length(since) = 10),
+  text     TEXT,
+  at       TEXT NOT NULL,
+  by       TEXT NOT NULL CHECK (by <> ''),
+  CHECK ((place = 'shipped') = (customer IS NOT NULL))
+) STRICT;
+
+CREATE INDEX part_whereabouts_by_part ON part_whereabouts (part_id, id);
+
+CREATE TRIGGER part_whereabouts_are_never_deleted BEFORE DELETE ON part_whereabouts
+BEGIN SELECT RAISE(ABORT, 'where a part was is never deleted'); END;
+
+CREATE TRIGGER part_whereabouts_are_never_updated BEFORE UPDATE ON part_whereabouts
+BEGIN SELECT RAISE(ABORT, 'where a part was is never updated'); END;
 
 CREATE TABLE part_works (
   id          INTEGER PRIMARY KEY,

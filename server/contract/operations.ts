@@ -75,6 +75,7 @@ import {
 import { thickness, thicknessQuery } from './thickness.ts';
 import { setToolRequest } from './tool-record.ts';
 import { tools, toolView } from './tools.ts';
+import { holds, holdView, makeHoldRequest, partDanger, setWhereaboutsRequest } from './trace.ts';
 import { setWarningRoutesRequest, warningRoutesView } from './warnings.ts';
 import { addVesselRequest, setWorkshopRequest, vessels, workshop } from './workshop.ts';
 
@@ -162,6 +163,12 @@ export const OPERATIONS = {
     answer: partMaterials,
     status: 201,
   },
+  readDanger: { ...ROUTES.readDanger, answer: partDanger },
+  setWhereabouts: { ...ROUTES.setWhereabouts, body: setWhereaboutsRequest, answer: partDanger, status: 201 },
+  listHolds: { ...ROUTES.listHolds, answer: holds },
+  makeHold: { ...ROUTES.makeHold, body: makeHoldRequest, answer: holdView, status: 201 },
+  readHold: { ...ROUTES.readHold, answer: holdView },
+  readHoldCsv: { ...ROUTES.readHoldCsv, answer: 'text/csv' },
   find: { ...ROUTES.find, query: findQuery, answer: found },
   readAudit: { ...ROUTES.readAudit, query: auditQuery, answer: audit },
   verifyAudit: { ...ROUTES.verifyAudit, answer: auditVerification },

@@ -9,6 +9,7 @@ import { runHandlers } from './run-handlers.ts';
 import { senderHandlers } from './sender-handlers.ts';
 import { sourceHandlers } from './source-handlers.ts';
 import { toolHandlers } from './tool-handlers.ts';
+import { traceHandlers } from './trace-handlers.ts';
 import { warningHandlers } from './warning-handlers.ts';
 import { workshopHandlers } from './workshop-handlers.ts';
 
@@ -20,6 +21,7 @@ export const HANDLERS: Handlers = {
   ...cycleHandlers,
   ...partHandlers,
   ...toolHandlers,
+  ...traceHandlers,
   ...materialHandlers,
   ...liveRunHandlers,
   ...senderHandlers,

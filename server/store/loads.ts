@@ -51,5 +51,19 @@ export function insertLoad(db: Db, { run, document, cycleId, reason, at, by }: N
   document.parts.forEach(({ part, quantity = 1 }, n) => {
     insert.run(lastInsertRowid, keepPart(db, part), n, quantity);
   });
+  insertPlaces(db, Number(lastInsertRowid), document);
   return sha256;
+}
+
+/** The bag line each part hung on and the thermocouples on it, so that parts can be found by them. */
+function insertPlaces(db: Db, loadId: number, { parts, sensors }: Load): void {
+  const known = new Set(parts.map(({ part }) => part));
+  const insert = db.prepare(
+    `INSERT OR IGNORE INTO load_places (load_id, kind, channel, part_id)
+     SELECT ?, ?, ?, id FROM parts WHERE serial = ?`,
+  );
+  for (const { part, bagLine } of parts) if (bagLine) insert.run(loadId, 'bag-line', bagLine, part);
+  for (const { channel, parts: on = [] } of sensors) {
+    for (const part of on) if (known.has(part)) insert.run(loadId, 'thermocouple', channel, part);
+  }
 }

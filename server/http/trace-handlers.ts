@@ -1,0 +1,34 @@
+import { makeHoldList } from '../actions/make-hold-list.ts';
+import { setWhereabouts } from '../actions/set-whereabouts.ts';
+import type { PartDanger } from '../contract/trace.ts';
+import type { Db } from '../store/database.ts';
+import { listHoldLists, listHoldsOfPart, requireHoldList } from '../store/hold-lists.ts';
+import { requirePart } from '../store/parts.ts';
+import { readWhereabouts } from '../store/whereabouts.ts';
+import type { SomeHandlers } from './handler.ts';
+import { holdCsv } from './hold-csv.ts';
+import { numberIn } from './number-in.ts';
+
+export const traceHandlers: SomeHandlers<
+  'listHolds' | 'makeHold' | 'readHold' | 'readHoldCsv' | 'readDanger' | 'setWhereabouts'
+> = {
+  listHolds: ({ db }) => ({ holds: listHoldLists(db) }),
+  makeHold: (parts, { body }) => requireHoldList(parts.db, makeHoldList(parts, body)),
+  readHold: ({ db }, { params }) => requireHoldList(db, numberIn(params, 'hold')),
+  readHoldCsv({ db }, { params }) {
+    const hold = numberIn(params, 'hold');
+    return { name: `hold-list-${hold}.csv`, chunks: holdCsv(requireHoldList(db, hold)) };
+  },
+  readDanger: ({ db }, { params }) => partDanger(db, params.serial ?? ''),
+  setWhereabouts(parts, { params, body }) {
+    const { serial = '' } = params;
+    setWhereabouts(parts, serial, body);
+    return partDanger(parts.db, serial);
+  },
+};
+
+function partDanger(db: Db, serial: string): PartDanger {
+  const partId = requirePart(db, serial);
+  const [whereabouts = null, ...earlier] = readWhereabouts(db, partId);
+  return { serial, whereabouts, earlier, holds: listHoldsOfPart(db, partId) };
+}
