@@ -128,5 +128,7 @@ export interface Resin {
     readonly parameters: readonly string[];
     readonly matrix: readonly (readonly number[])[];
   };
+  /** No key of the document: set by a workshop that may take the set for trials only, never as a limit. */
+  readonly forTrialsOnly?: true;
   readonly thermal?: { readonly heatOfReaction: number; readonly basis: 'resin' | 'composite' };
 }

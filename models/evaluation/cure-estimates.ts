@@ -1,7 +1,7 @@
 import { cureTrials, expandedUncertainty } from '../cure/cure-trials.ts';
 import { celsiusFromKelvin } from '../units.ts';
 import type { FollowedCure } from './cure-followers.ts';
-import type { CureEstimate } from './evaluation.ts';
+import type { CureEstimate, PartEvaluation } from './evaluation.ts';
 import { iso } from './finding.ts';
 import { cureOf, estimated } from './gel-times.ts';
 import type { JudgedSensor, Judgement } from './judgement.ts';
@@ -59,6 +59,15 @@ export function cureEstimates(j: Judgement): CureEstimate[] {
         gelInterval: gel && [at(gel[0]), at(gel[1])],
       },
     ];
+  });
+}
+
+/** The judged sensors along which the set gives no estimate, each with the reason. */
+export function notEstimated(j: Judgement): NonNullable<PartEvaluation['notEstimated']> {
+  if (j.resin === null) return [];
+  return estimated(j).flatMap((s) => {
+    const { refusal } = cureOf(j, s, 'line');
+    return refusal === null ? [] : [{ channel: s.name, because: refusal }];
   });
 }
 

@@ -1,4 +1,5 @@
 import { glassTransitionK } from '../cure/glass-transition.ts';
+import { whyNoLimit } from '../cure/standing.ts';
 import { gapsOf } from '../run/gaps.ts';
 import { overlaps } from '../run/intervals.ts';
 import {
@@ -52,6 +53,8 @@ function leastEstimate(
   const asked = `${atLeast}${unit === '' ? '' : ` ${unit}`} asked`;
   if (j.resin === null)
     return { ...known, outcome: 'cannot-tell', because: `No resin set was given; at least ${asked}.` };
+  const noLimit = whyNoLimit(j.resin);
+  if (noLimit !== null) return { ...known, outcome: 'cannot-tell', because: `It cannot be told: ${noLimit}.` };
   const sensors = estimated(j);
   const refusal = sensors
     .map((s) => cureOf(j, s, 'cold').refusal ?? cureOf(j, s, 'hot').refusal)

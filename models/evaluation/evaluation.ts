@@ -130,6 +130,8 @@ export interface PartEvaluation {
   readonly heatOn: string | null;
   readonly findings: readonly Finding[];
   readonly cure: readonly CureEstimate[];
+  /** Judged sensors that the resin set gives no estimate along, and why: it stalls there, or runs backwards. */
+  readonly notEstimated?: readonly { readonly channel: string; readonly because: string }[];
 }
 
 /** A stretch without readings on a channel. */

@@ -1,4 +1,5 @@
 import type { CureTrial } from '../cure/cure-trials.ts';
+import { whyNoLimit } from '../cure/standing.ts';
 import { type CureFill, type FollowedCure, followCure } from './cure-followers.ts';
 import { isExcluded, type JudgedSensor, type Judgement } from './judgement.ts';
 
@@ -18,8 +19,14 @@ export function gelTimes(j: Judgement): GelTimes {
 
 function gelUnknown(j: Judgement): string | null {
   if (j.resin === null) return 'no resin set was given, so gel cannot be estimated';
+  const noLimit = whyNoLimit(j.resin);
+  if (noLimit !== null) return noLimit;
   if (j.resin.gel === undefined) return `the set ${j.resin.code} gives no degree of cure at gel`;
-  return estimated(j).length === 0 ? 'no judged sensor is left to estimate gel by' : null;
+  const sensors = estimated(j);
+  if (sensors.length === 0) return 'no judged sensor is left to estimate gel by';
+  const refused = sensors.map((s) => cureOf(j, s, 'hot').refusal ?? cureOf(j, s, 'cold').refusal);
+  const refusal = refused.find((one) => one !== null);
+  return refusal === undefined ? null : `the set ${j.resin.code} gives no estimate: ${refusal}`;
 }
 
 function earliestGel(j: Judgement, fill: CureFill): number | null {

@@ -1,11 +1,11 @@
 import { temperatureDifferenceFromCelsius } from '../units.ts';
-import { cureEstimates } from './cure-estimates.ts';
+import { cureEstimates, notEstimated } from './cure-estimates.ts';
 import { cureLimits } from './cure-limits.ts';
 import type { ClockDip } from './dips.ts';
 import { dwellLowerLimit, dwellUpperLimit } from './dwell-band-limits.ts';
 import { dwellLongestLimit, dwellTimeLimit } from './dwell-time-limit.ts';
 import { Dwells } from './dwells.ts';
-import type { CureEstimate, Dip, Finding, StageRecord, WindowRecord } from './evaluation.ts';
+import type { CureEstimate, Dip, Finding, PartEvaluation, StageRecord, WindowRecord } from './evaluation.ts';
 import { type EventSources, eventTime, heatOnMs } from './events.ts';
 import { type Found, finding, iso } from './finding.ts';
 import { gelTimes } from './gel-times.ts';
@@ -59,6 +59,7 @@ export interface PartRecord {
   readonly windows: readonly WindowRecord[];
   readonly heatOn: string | null;
   readonly cure: readonly CureEstimate[];
+  readonly notEstimated: NonNullable<PartEvaluation['notEstimated']>;
 }
 
 /** What happened to a part, whatever was asked: stages, windows, heat-on and estimates. */
@@ -69,6 +70,7 @@ export function recordPart(sources: EventSources): PartRecord {
     windows: windowRecords(sources),
     heatOn: iso(heatOnMs(j)),
     cure: cureEstimates(j),
+    notEstimated: notEstimated(j),
   };
 }
 

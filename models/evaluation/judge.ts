@@ -145,7 +145,7 @@ function evaluatePart(setting: Setting, part: LoadPart | null, changes: Map<stri
           const j = judgementOf(setting, part, instantsOf(without));
           return judgePart(without.length === 0 ? sources : sourcesOf(j));
         });
-  const { stages, windows, heatOn, cure } = recordPart(sources);
+  const { stages, windows, heatOn, cure, notEstimated } = recordPart(sources);
   return {
     part: part?.part ?? null,
     verdict: verdictOf(findings),
@@ -157,6 +157,7 @@ function evaluatePart(setting: Setting, part: LoadPart | null, changes: Map<stri
     heatOn,
     findings,
     cure,
+    ...(notEstimated.length === 0 ? {} : { notEstimated }),
   };
 }
 

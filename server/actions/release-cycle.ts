@@ -1,9 +1,10 @@
+import { wordsOfStanding } from '../../models/cure/standing.ts';
 import { DomainError } from '../../models/errors.ts';
 import { appendAudit } from '../store/audit.ts';
 import { insertCycleStatus, readCycleDocument, requireCycle } from '../store/cycles.ts';
 import { findResin } from '../store/resins.ts';
-import { findWorkshop } from '../store/workshop.ts';
 import { type ActionParts, deedOf } from './action-parts.ts';
+import { mayBeLimit } from './resin-of-workshop.ts';
 
 /** Releases an issue: from here on its document is frozen. */
 export function releaseCycle(parts: ActionParts, code: string, issue: string, reason: string): void {
@@ -31,7 +32,7 @@ export function releaseCycle(parts: ActionParts, code: string, issue: string, re
   }).immediate();
 }
 
-/** A set recalled from memory is for tests and trials, never a limit in a real workshop. */
+/** A set recalled from memory, or invented, is for tests and trials, never a limit in a real workshop. */
 function requireUsableResin({ db }: ActionParts, code: string | undefined): void {
   if (code === undefined) return;
   const resin = findResin(db, code);
@@ -40,11 +41,10 @@ function requireUsableResin({ db }: ActionParts, code: string | undefined): void
       resin: code,
     });
   }
-  const isPractice = findWorkshop(db)?.practice != null;
-  if (isPractice || (resin.status !== 'recalled' && resin.status !== 'illustrative')) return;
+  if (mayBeLimit(db, resin.status)) return;
   throw new DomainError(
     'state-conflict',
-    `Resin set "${code}" is ${resin.status}: it may not stand behind a limit of a real workshop`,
+    `Resin set "${code}" is ${wordsOfStanding(resin.status)}; name a published or fitted set in the cycle's cure.resin`,
     { resin: code, status: resin.status },
   );
 }

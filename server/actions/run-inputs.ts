@@ -13,11 +13,12 @@ import type { EvaluationInputs } from '../store/evaluations.ts';
 import { findOpenRun } from '../store/live-runs.ts';
 import { findLoad } from '../store/loads.ts';
 import { recordsOfParts } from '../store/material-records.ts';
-import { findResin, readResinDocument } from '../store/resins.ts';
+import { findResin } from '../store/resins.ts';
 import { startOfRun } from '../store/runs.ts';
 import { readSourceLog, readSources } from '../store/sources.ts';
 import { type MergedLog, mergeLogs } from './merge-logs.ts';
 import { shiftedLog } from './shifted-log.ts';
+import { resinOfWorkshop } from './resin-of-workshop.ts';
 
 /** What people decided about suspects, as one document: hashed and kept with each evaluation. */
 export interface DecisionsDocument {
@@ -96,7 +97,7 @@ export function gatherInputs(db: Db, run: number, changes: Changes = {}): RunInp
   return {
     load,
     cycle,
-    resin: resin === undefined ? null : readResinDocument(db, resin),
+    resin: resin === undefined ? null : resinOfWorkshop(db, resin),
     decisions,
     materials,
     hashes: {

@@ -2,6 +2,7 @@ import { beginCure, type CureProgress } from '../../models/cure/cure-progress.ts
 import { glassTransitionK } from '../../models/cure/glass-transition.ts';
 import type { Resin } from '../../models/cure/resin.ts';
 import { uncertaintyAlong, type WithUncertainty } from '../../models/cure/uncertainty-along.ts';
+import { DomainError } from '../../models/errors.ts';
 import type { Interval } from '../../models/evaluation/evaluation.ts';
 import type { ChannelLayout } from '../../models/log/layout.ts';
 import { type ChannelReadings, type Readings, scaledReading } from '../../models/log/readings.ts';
@@ -32,11 +33,29 @@ export interface ChannelCure {
   readonly series?: { readonly t: string[]; readonly degree: number[]; readonly tgC: (number | null)[] };
 }
 
+/** A command has the time: degrees to 1e-10 and instants to the millisecond that they are written with. */
+const TIGHT = 1e-11;
+
 /** Cure along every part and tool channel; where one has no reading at all it is left out. */
 export function cureOfChannels(readings: Readings, resin: Resin, everyS: number | null): ChannelCure[] {
   return temperaturesOfEmf(readings)
     .channels.filter(({ channel }) => channel.role === 'part' || channel.role === 'tool')
-    .flatMap((one) => cureOfChannel(readings.timeMs, one, resin, everyS) ?? []);
+    .flatMap((one) => naming(one.channel.name, () => cureOfChannel(readings.timeMs, one, resin, everyS)) ?? []);
+}
+
+/** A refusal on the way, that of a set that stalls or runs backwards, with the channel it came along. */
+function naming<T>(channel: string, work: () => T): T {
+  try {
+    return work();
+  } catch (error) {
+    if (!(error instanceof DomainError)) throw error;
+    throw new DomainError(
+      error.code,
+      `Along ${channel}: ${error.message}`,
+      { ...error.facts, channel },
+      { cause: error },
+    );
+  }
 }
 
 function cureOfChannel(
@@ -48,7 +67,7 @@ function cureOfChannel(
   const scans = presentScans(timeMs, readings);
   const beginsMs = scans[0]?.atMs;
   if (beginsMs === undefined) return null;
-  const progress = beginCure(resin);
+  const progress = beginCure(resin, { tolerance: TIGHT });
   const series = everyS === null ? null : new Series(beginsMs, everyS * 1000, resin);
   let last: Scan | null = null;
   for (const scan of scans) {

@@ -1,4 +1,5 @@
 import { parseResin } from '../../models/cure/parse-resin.ts';
+import { wordsOfStanding } from '../../models/cure/standing.ts';
 import { parseLayout } from '../../models/log/parse-layout.ts';
 import { readLog } from '../../models/log/read-log.ts';
 import { openLog } from '../files/open-log.ts';
@@ -41,11 +42,13 @@ export const cureCommand: Command = {
     const files = await Promise.all(logs.map((path) => openLog(path, path)));
     const channels = cureOfChannels(readLog(files, layout).readings, resin, everyS);
     const { code, source } = resin;
+    const words = wordsOfStanding(source.status);
+    const standing = words === null ? '' : `; ${words}`;
     const answer = { resin: { code, status: source.status, citation: source.citation }, channels };
     process.stdout.write(
       values.json
         ? `${JSON.stringify(answer)}\n`
-        : `Resin set ${code} (${source.status}): ${source.citation}\n${table(channels)}${intervals(channels)}`,
+        : `Resin set ${code} (${source.status}): ${source.citation}${standing}\n${table(channels)}${intervals(channels)}`,
     );
     return EXIT.done;
   },

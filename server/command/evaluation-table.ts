@@ -1,3 +1,5 @@
+import type { ResinStatus } from '../../models/cure/resin.ts';
+import { wordsOfStanding } from '../../models/cure/standing.ts';
 import type { Cycle } from '../../models/cycle/cycle.ts';
 import { limitTitle } from '../../models/cycle/limits-of-cycle.ts';
 import type { Evaluation, Finding, Outcome, PartEvaluation, Verdict } from '../../models/evaluation/evaluation.ts';
@@ -32,6 +34,8 @@ export function evaluationTable(evaluation: Evaluation, cycle: Cycle): string {
   for (const { channel, kind, because, changes } of decisions) {
     lines.push(`  ${channel} may be ${kind}: ${because}`, `    changes ${changes.join(', ')}`);
   }
+  const standing = evaluation.resin && wordsOfStanding(evaluation.resin.status as ResinStatus);
+  if (standing) lines.push('', `Resin set ${evaluation.resin?.code} is ${standing}`);
   for (const part of parts) lines.push('', ...partLines(part, cycle));
   if (evaluation.assumptions.length > 0)
     lines.push('', 'Not written in the cycle, so:', ...indented(evaluation.assumptions));
@@ -54,6 +58,7 @@ function partLines(part: PartEvaluation, cycle: Cycle): string[] {
   return [
     `${name}: ${VERDICT_WORDS[part.verdict]}${estimates}`,
     `  judged by ${part.judgedBy.join(', ') || 'no sensor'}${own}`,
+    ...(part.notEstimated ?? []).map(({ channel, because }) => `  no estimate of cure along ${channel}: ${because}`),
     ...part.findings.flatMap((finding, n) => {
       const cells = rows[n]?.map((cell, column) => cell.padEnd(widths[column] ?? 0)) ?? [];
       const line = `  ${cells.join('  ').trimEnd()}`;

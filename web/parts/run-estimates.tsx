@@ -18,7 +18,9 @@ export function RunEstimates({
   told: EstimatesTold | null;
 }) {
   const estimates = new Map(evaluation.parts.flatMap((part) => part.cure).map((one) => [one.channel, one]));
-  if (estimates.size === 0 || !evaluation.resin) return null;
+  const without = evaluation.parts.flatMap(({ notEstimated }) => notEstimated ?? []);
+  const refused = new Map(without.map((one) => [one.channel, one]));
+  if (estimates.size + refused.size === 0 || !evaluation.resin) return null;
   const status = run.resin?.document.source.status;
   const unit = shownUnits.value.temperature;
   return (
@@ -62,6 +64,11 @@ export function RunEstimates({
           </tbody>
         </table>
       </Wide>
+      {[...refused.values()].map(({ channel, because }) => (
+        <p class="notice amber" key={channel}>
+          No estimate along {channel}: {because}.
+        </p>
+      ))}
       {intervalSentences([...estimates.values()], run.resin?.document.covariance !== undefined).map((sentence) => (
         <p class="small soft" key={sentence}>
           {sentence}
