@@ -9,8 +9,9 @@ import { listVessels, requireVessel } from '../../store/vessels.ts';
 import { zoneOfWorkshop } from '../../store/workshop.ts';
 import type { Journal } from '../journal.ts';
 import type { SteadyClock } from '../steady-clock.ts';
+import { type Followed, type RunNews, stopTelling, tellScans, tellSoon } from './followed.ts';
 import { LatestReadings } from './latest-readings.ts';
-import { type FollowedScan, type LiveJudgement, RunFollower } from './run-follower.ts';
+import { type LiveJudgement, RunFollower } from './run-follower.ts';
 import { saysOf } from './says.ts';
 
 export interface LiveEngineParts {
@@ -33,14 +34,6 @@ export interface SeenVessel {
   readonly nowMs: number;
 }
 
-/** What a watcher of a run is told. */
-export type RunNews =
-  | { readonly kind: 'scans'; readonly scans: readonly FollowedScan[] }
-  /** Scans are numbered afresh: everything is to be read again. */
-  | { readonly kind: 'again' }
-  | { readonly kind: 'state'; readonly state: LiveRun }
-  | { readonly kind: 'closed' };
-
 export interface LiveEngine {
   vessels(): LiveVessels;
   run(run: number): LiveRun;
@@ -53,20 +46,12 @@ export interface LiveEngine {
 }
 
 const TURN_MS = 1000;
+/** What warns is looked at so often when nothing was judged. */
+const TURNS_BETWEEN_LOOKS = 5;
 /** A run nobody watches is judged so seldom. */
 const UNWATCHED_MS = 10_000;
 /** What came late is folded in no more often than this: the whole run is folded again for it. */
 const BEGIN_AGAIN_MS = 10_000;
-
-interface Followed {
-  readonly follower: RunFollower;
-  readonly watchers: Set<(news: RunNews) => void>;
-  judged: LiveJudgement | null;
-  judgedMs: number;
-  begunMs: number;
-  beginnings: number;
-  changed: boolean;
-}
 
 /** Follows every vessel: its latest readings, and its open run judged with what is to come. */
 export function startLiveEngine(parts: LiveEngineParts): LiveEngine {
@@ -76,6 +61,7 @@ export function startLiveEngine(parts: LiveEngineParts): LiveEngine {
   const vesselWatchers = new Set<(vessels: LiveVessels) => void>();
   const starting: Promise<void>[] = [];
   let vesselsChanged = true;
+  let turns = 0;
   for (const source of listLiveSources(db)) latest.begin(db, source);
 
   const endListening = journal.onKept((event) => {
@@ -85,6 +71,7 @@ export function startLiveEngine(parts: LiveEngineParts): LiveEngine {
       if (one.follower.row.vesselId !== event.vesselId) continue;
       one.follower.take(event);
       one.changed = true;
+      tellSoon(one, clock, log);
     }
   });
 
@@ -92,7 +79,8 @@ export function startLiveEngine(parts: LiveEngineParts): LiveEngine {
     try {
       followOpenRuns();
       for (const one of followed.values()) advance(one);
-      for (const { id } of vesselIds(db)) lookAt(id);
+      if (turns % TURNS_BETWEEN_LOOKS === 0) for (const { id } of vesselIds(db)) lookAt(id);
+      turns += 1;
       if (vesselsChanged && vesselWatchers.size > 0) {
         vesselsChanged = false;
         const vessels = all();
@@ -109,20 +97,26 @@ export function startLiveEngine(parts: LiveEngineParts): LiveEngine {
     for (const row of open) {
       const known = followed.get(row.run);
       if (known === undefined) followed.set(row.run, newlyFollowed(row, new Set()));
-      else if (known.follower.row.endedMs !== row.endedMs) followed.set(row.run, newlyFollowed(row, known.watchers));
+      else if (known.follower.row.endedMs !== row.endedMs) replace(known, row);
     }
-    for (const [run, { watchers }] of followed) {
+    for (const [run, gone] of followed) {
       if (open.some((row) => row.run === run)) continue;
+      stopTelling(gone);
       followed.delete(run);
       vesselsChanged = true;
-      for (const tell of watchers) tell({ kind: 'closed' });
+      for (const tell of gone.watchers) tell({ kind: 'closed' });
     }
+  };
+
+  const replace = (known: Followed, row: LiveRunRow) => {
+    stopTelling(known);
+    followed.set(row.run, newlyFollowed(row, known.watchers));
   };
 
   const newlyFollowed = (row: LiveRunRow, watchers: Followed['watchers']): Followed => {
     vesselsChanged = true;
     const follower = new RunFollower(db, row);
-    return { follower, watchers, judged: null, judgedMs: 0, begunMs: 0, beginnings: 0, changed: true };
+    return { follower, watchers, judged: null, judgedMs: 0, begunMs: 0, beginnings: 0, changed: true, soon: null };
   };
 
   const advance = (one: Followed) => {
@@ -132,15 +126,7 @@ export function startLiveEngine(parts: LiveEngineParts): LiveEngine {
       starting.push(beginFollowing(one));
       return;
     }
-    const scans = one.follower.advance(nowMs);
-    if (one.follower.beginnings !== one.beginnings) {
-      one.beginnings = one.follower.beginnings;
-      one.changed = true;
-      for (const tell of one.watchers) tell({ kind: 'again' });
-    } else if (scans.length > 0) {
-      one.changed = true;
-      for (const tell of one.watchers) tell({ kind: 'scans', scans });
-    }
+    tellScans(one, nowMs);
     const dueMs = one.watchers.size > 0 ? TURN_MS / 2 : UNWATCHED_MS;
     if (!one.changed || Math.abs(nowMs - one.judgedMs) < dueMs) return;
     judgeNow(one, nowMs);
@@ -166,6 +152,7 @@ export function startLiveEngine(parts: LiveEngineParts): LiveEngine {
       if (!(error instanceof DomainError)) log.error({ err: error, run: one.follower.row.run }, 'cannot be judged');
       one.judged = null;
     }
+    lookAt(one.follower.row.vesselId);
     if (one.watchers.size === 0) return;
     const state = stateOf(one);
     for (const tell of one.watchers) tell({ kind: 'state', state });
@@ -277,6 +264,7 @@ export function startLiveEngine(parts: LiveEngineParts): LiveEngine {
     },
     async close() {
       clearInterval(timer);
+      for (const one of followed.values()) stopTelling(one);
       endListening();
       await Promise.allSettled(starting);
     },

@@ -161,7 +161,7 @@ function putRest(order: ScanOrder, { readings }: ReadLog, afterMs: number): void
 }
 
 /** The inputs of a judgement while its run goes on. */
-function judgementInputsOf({ cycle, load, resin, materials, decisions }: RunInputs): JudgementInputs {
+function judgementInputsOf({ cycle, load, resin, materials, instruments, decisions }: RunInputs): JudgementInputs {
   const { exclusions, believed } = decisions;
-  return { cycle, load, resin, materials, exclusions, believed, barometer: null, open: true };
+  return { cycle, load, resin, materials, instruments, exclusions, believed, barometer: null, open: true };
 }
