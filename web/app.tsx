@@ -16,6 +16,10 @@ import { Cautions } from './parts/cautions.tsx';
 import { Masthead } from './parts/masthead.tsx';
 import { readWorkshop } from './workshop.ts';
 
+const LivePage = lazy(() => import('./pages/live.tsx'));
+const VesselPage = lazy(() => import('./pages/vessel.tsx'));
+const BeginPage = lazy(() => import('./pages/begin.tsx'));
+const WarningsPage = lazy(() => import('./pages/warnings.tsx'));
 const RunPage = lazy(() => import('./pages/run.tsx'));
 const LoadPage = lazy(() => import('./pages/load.tsx'));
 const ReadAgainPage = lazy(() => import('./pages/read-again.tsx'));
@@ -43,6 +47,10 @@ export function App() {
           <ErrorBoundary>
             <Router onRouteChange={beginPage}>
               <Route path="/" component={NowPage} />
+              <Route path="/live" component={LivePage} />
+              <Route path="/warnings" component={WarningsPage} />
+              <Route path="/vessels/:vessel" component={VesselPage} />
+              <Route path="/vessels/:vessel/begin" component={BeginPage} />
               <Route path="/import" component={ImportPage} />
               <Route path="/imports/:id" component={ImportFilePage} />
               <Route path="/runs" component={RunsPage} />

@@ -7,22 +7,22 @@ import type { ReadLog } from '../../models/log/readings.ts';
 import { gatherInputs, readRunLog, sourceInputs } from '../actions/run-inputs.ts';
 import type { ChartQuery } from '../contract/chart.ts';
 import type { Db } from '../store/database.ts';
-import { findLatestEvaluation } from '../store/evaluations.ts';
 import { findLoad } from '../store/loads.ts';
 import { requireRun } from '../store/runs.ts';
 import { zoneOfWorkshop } from '../store/workshop.ts';
 import type { AppParts } from './app-parts.ts';
+import { evaluationNow } from './evaluation-now.ts';
 import { remember } from './remember.ts';
 
 /** What is to be drawn of a run, or of a stretch of it, for one part. */
 export async function readChart(
-  { db, estimateCure }: Pick<AppParts, 'db' | 'estimateCure'>,
+  { db, engine, estimateCure }: Pick<AppParts, 'db' | 'engine' | 'estimateCure'>,
   run: number,
   query: ChartQuery,
 ): Promise<RunChart> {
   requireRun(db, run);
   const inputs = gatherInputs(db, run);
-  const evaluation = findLatestEvaluation(db, run)?.document ?? null;
+  const evaluation = evaluationNow({ db, engine }, run);
   const part = partOf(evaluation?.parts ?? [], query.part);
   const { readings } = readLogOnce(db, run);
   const load = inputs?.load ?? findLoad(db, run)?.document ?? null;

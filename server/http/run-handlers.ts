@@ -6,6 +6,7 @@ import { setLoad } from '../actions/set-load.ts';
 import { requireEvaluation } from '../store/evaluations.ts';
 import { listRuns } from '../store/run-lines.ts';
 import { requireRun } from '../store/runs.ts';
+import { evaluationNow } from './evaluation-now.ts';
 import type { SomeHandlers } from './handler.ts';
 import { numberIn } from './number-in.ts';
 import { readChart } from './read-chart.ts';
@@ -27,7 +28,10 @@ export const runHandlers: SomeHandlers<
   | 'readFile'
 > = {
   listRuns: ({ db }, { query }) => listRuns(db, query),
-  readRun: ({ db }, { params }) => runView(db, numberIn(params, 'run')),
+  readRun(parts, { params }) {
+    const run = numberIn(params, 'run');
+    return runView(parts.db, run, evaluationNow(parts, run));
+  },
   readRunChart: (parts, { params, query }) => readChart(parts, numberIn(params, 'run'), query),
   async setLoad(parts, { params, body }) {
     const run = numberIn(params, 'run');

@@ -1,4 +1,5 @@
 import { DomainError } from '../../models/errors.ts';
+import type { Evaluation } from '../../models/evaluation/evaluation.ts';
 import { asTemperature } from '../../models/log/temperatures-of-emf.ts';
 import type { RunSource, RunView } from '../contract/runs.ts';
 import { findCycle, readCycleDocument } from '../store/cycles.ts';
@@ -13,8 +14,8 @@ import { readSources, type StoredSource } from '../store/sources.ts';
 import { joinedChannels } from './joined-channels.ts';
 import { marginOf } from './run-margin.ts';
 
-/** Everything of a run but its readings. */
-export function runView(db: Db, run: number): RunView {
+/** Everything of a run but its readings; `now` is what an open run came to so far. */
+export function runView(db: Db, run: number, now?: Evaluation | null): RunView {
   const line = findRunLine(db, run);
   if (line === undefined) throw new DomainError('not-found', `There is no run ${run}`, { run });
   const sources = readSources(db, run);
@@ -38,7 +39,7 @@ export function runView(db: Db, run: number): RunView {
     evaluations: listEvaluations(db, run),
     decisions,
     notes,
-    margin: marginOf(line, evaluation?.document ?? null, decisions, notes),
+    margin: marginOf(line, now ?? evaluation?.document ?? null, decisions, notes),
   };
 }
 

@@ -12,6 +12,7 @@ import { clock, lasting } from '../words/clock.ts';
 import { shownUnits, zone } from '../workshop.ts';
 import { ChartTable } from './chart-table.tsx';
 import { inUnits } from './in-units.ts';
+import { type LiveScans, withScans } from './live-scans.ts';
 import { pictureInWords } from './picture-in-words.ts';
 import { Readout } from './readout.tsx';
 import { RunCanvas } from './run-canvas.tsx';
@@ -26,6 +27,7 @@ export function RunChart({
   lit,
   onNext,
   onEstimates,
+  live,
 }: {
   run: RunView;
   part: PartEvaluation | null;
@@ -35,11 +37,11 @@ export function RunChart({
   onNext: () => void;
   /** Hears what is estimated over the run, to be told elsewhere on the page. */
   onEstimates?: (told: EstimatesTold) => void;
+  /** Of an open run: what came since the chart was drawn. */
+  live?: LiveScans;
 }) {
-  const whole = useMemo(
-    () => ({ fromMs: Date.parse(run.from), untilMs: Date.parse(run.until) }),
-    [run.from, run.until],
-  );
+  const lastMs = Math.max(Date.parse(run.until), live?.scans.at(-1)?.timeMs ?? 0);
+  const whole = useMemo(() => ({ fromMs: Date.parse(run.from), untilMs: lastMs }), [run.from, lastMs]);
   const { view, isWhole, show, zoom, pan, showAll } = useView(whole);
   const [cursorH, setCursorH] = useState<number | null>(null);
   const [isTable, setIsTable] = useState(false);
@@ -51,7 +53,12 @@ export function RunChart({
   };
   const latest = useLatest<RunChartDocument>(runChartPath(run.run, query), run);
   const units = shownUnits.value;
-  const drawing = useMemo(() => (latest.value ? inUnits(latest.value, units) : null), [latest.value, units]);
+  // Only the whole grows: who looks at a stretch of it is left in peace.
+  const growing = isWhole ? live : undefined;
+  const drawing = useMemo(() => {
+    if (!latest.value) return null;
+    return inUnits(growing ? withScans(latest.value, run, growing) : latest.value, units);
+  }, [latest.value, units, growing?.scans, growing?.channels]);
   const told = latest.value;
   useEffect(() => {
     if (told) onEstimates?.({ part: told.part, sentences: told.estimates });

@@ -1,4 +1,4 @@
-import { useEffect, useState } from 'preact/hooks';
+import { useEffect, useRef, useState } from 'preact/hooks';
 
 /** The stretch of time in view, in ms since 1970. */
 export interface View {
@@ -8,7 +8,11 @@ export interface View {
 
 const LEAST_MS = 60_000;
 
-/** The view of a run's chart and the ways it moves; never beyond the log, never shorter than a minute. */
+/**
+ * The view of a run's chart and the ways it moves; never beyond the log, never shorter than a minute.
+ *
+ * Where the log grows, a view of the whole grows with it and any other stays where it is.
+ */
 export function useView(whole: View): {
   view: View;
   isWhole: boolean;
@@ -18,7 +22,12 @@ export function useView(whole: View): {
   showAll: () => void;
 } {
   const [view, setView] = useState<View>(whole);
-  useEffect(() => setView(whole), [whole.fromMs, whole.untilMs]);
+  const wasWhole = useRef(whole);
+  useEffect(() => {
+    const before = wasWhole.current;
+    wasWhole.current = whole;
+    setView((now) => (now.fromMs <= before.fromMs && now.untilMs >= before.untilMs ? whole : bounded(now, whole)));
+  }, [whole.fromMs, whole.untilMs]);
   const show = (next: View) => setView(bounded(next, whole));
   return {
     view,

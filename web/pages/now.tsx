@@ -44,18 +44,43 @@ function NowBody({ now }: { now: Now }) {
   if (now.lastRuns.length === 0 && now.needs.length === 0) return <FirstSteps />;
   return (
     <>
+      <OpenRuns lines={now.lastRuns.filter(({ live }) => live !== null)} />
       <Needs needs={now.needs} />
       <section class="section">
         <h2>Last runs</h2>
         <ul class="entries">
-          {now.lastRuns.map((line) => (
-            <RunEntry key={line.run} line={line} />
-          ))}
+          {now.lastRuns
+            .filter(({ live }) => live === null)
+            .map((line) => (
+              <RunEntry key={line.run} line={line} />
+            ))}
         </ul>
         <p class="section">
           <a href="/runs">All runs</a>
         </p>
       </section>
     </>
+  );
+}
+
+/** Runs that are being logged stand before everything else. */
+function OpenRuns({ lines }: { lines: Now['lastRuns'] }) {
+  if (lines.length === 0) return null;
+  return (
+    <section>
+      <h2>Running now</h2>
+      <ul class="entries">
+        {lines.map((line) => (
+          <RunEntry key={line.run} line={line}>
+            <a class="button" href={`/runs/${line.run}`}>
+              {line.live === 'ended' ? 'Close its record' : 'Watch it'}
+            </a>
+          </RunEntry>
+        ))}
+      </ul>
+      <p class="section">
+        <a href="/live">All vessels as they are now</a>
+      </p>
+    </section>
   );
 }

@@ -6,6 +6,7 @@ import { RunChart } from '../charts/run-chart.tsx';
 import { Decisions } from '../parts/decisions.tsx';
 import type { EstimatesTold } from '../parts/estimates-told.tsx';
 import { FindingList, focusNextFinding } from '../parts/finding-list.tsx';
+import { PartSwitch } from '../parts/part-switch.tsx';
 import { RunHead } from '../parts/run-head.tsx';
 import { RunMargin } from '../parts/run-margin.tsx';
 import { RunPapers } from '../parts/run-papers.tsx';
@@ -40,22 +41,7 @@ export function RunJudged({ run, evaluation, again }: { run: RunView; evaluation
         />
       </div>
       <div class="side" ref={findings}>
-        {parts.length > 1 && (
-          <fieldset class="part-switch">
-            <legend>Part</legend>
-            {parts.map((one) => (
-              <button
-                key={partName(one)}
-                type="button"
-                class="quiet"
-                aria-pressed={one === part}
-                onClick={() => choose(one.part)}
-              >
-                {partName(one)}
-              </button>
-            ))}
-          </fieldset>
-        )}
+        <PartSwitch parts={parts} chosen={part} onChoose={choose} />
         {part && <FindingList part={part} run={run} lit={lit} onLight={setLit} />}
         <div class="on-paper">
           {parts

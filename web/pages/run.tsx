@@ -6,6 +6,7 @@ import { Notebook, PageHead } from '../parts/notebook.tsx';
 import { Shown } from '../parts/shown.tsx';
 import { useRead } from '../use-read.ts';
 import { RunJudged } from './run-judged.tsx';
+import { RunLive } from './run-live.tsx';
 import { RunUnjudged } from './run-unjudged.tsx';
 
 /** One run: what it came to, why, and all it rests on. */
@@ -25,6 +26,7 @@ export default function RunPage() {
     );
   }
   const view = reading.value;
+  if (view.live !== null) return <RunLive key={view.run} run={view} again={reading.again} />;
   return view.evaluation ? (
     <RunJudged key={view.run} run={view} evaluation={view.evaluation} again={reading.again} />
   ) : (

@@ -11,7 +11,7 @@ interface Common {
 }
 
 interface TextFieldProps extends Common {
-  readonly type?: 'text' | 'search' | 'number' | 'datetime-local';
+  readonly type?: 'text' | 'search' | 'number' | 'datetime-local' | 'password';
   readonly required?: boolean;
   readonly maxLength?: number;
   readonly min?: number;

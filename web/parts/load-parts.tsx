@@ -175,7 +175,7 @@ function PartLine({
   );
 }
 
-function LeakTestFields({
+export function LeakTestFields({
   part,
   cycle,
   onChange,

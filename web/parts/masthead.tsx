@@ -4,6 +4,7 @@ import { ScanBox } from './scan-box.tsx';
 
 const PAGES: readonly (readonly [string, string])[] = [
   ['/', 'Now in the shop'],
+  ['/live', 'All vessels'],
   ['/runs', 'Runs'],
   ['/parts', 'Parts'],
   ['/materials', 'Materials'],
@@ -51,5 +52,6 @@ export function Masthead() {
 function isHere(path: string, href: string): boolean {
   if (href === '/') return path === '/' || path.startsWith('/import');
   if (href === '/materials' && /^\/(rolls|kits)\//.test(path)) return true;
+  if (href === '/live' && /^\/(vessels\/|warnings)/.test(path)) return true;
   return path === href || path.startsWith(`${href}/`);
 }

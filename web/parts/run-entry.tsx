@@ -23,6 +23,7 @@ export function RunEntry({ line, children }: { line: RunLine; children?: Compone
 }
 
 export function RunState({ line }: { line: RunLine }) {
+  if (line.live !== null) return <LiveRunState line={line} />;
   if (line.state === 'awaiting-load' || line.state === 'awaiting-cycle' || line.verdict === null) {
     return (
       <span class="outcome-line outcome-awaits">
@@ -32,6 +33,16 @@ export function RunState({ line }: { line: RunLine }) {
     );
   }
   return <VerdictLine verdict={line.verdict} />;
+}
+
+/** A run that is being logged: what it came to so far is said on its page. */
+function LiveRunState({ line }: { line: RunLine }) {
+  return (
+    <span class="outcome-line outcome-pending">
+      <OutcomeMark mark="pending" />
+      {line.live === 'ended' ? 'Ended, its record is open' : 'Running'}
+    </span>
+  );
 }
 
 /** `Autoclave 1 · SR-180 issue B · W-2231 · 2 parts · 6 h 31 min` */

@@ -78,7 +78,7 @@ export function formOfRun(run: RunView): LoadForm {
 }
 
 /** Thermocouples that can be on a part: those laid there, those in its tool, and the air where the cycle is judged by it. */
-export function isAttachable({ role }: RunView['channels'][number], judgedBy: string): boolean {
+export function isAttachable({ role }: { readonly role: string }, judgedBy: string): boolean {
   return role === 'part' || role === 'tool' || role === judgedBy;
 }
 
