@@ -7,9 +7,11 @@ import type { MaterialRecords } from '../material/ledger.ts';
 import type { RunChannel } from '../run/channel.ts';
 import { foldReadings, type RunDigest } from '../run/digest.ts';
 import { gapsOf } from '../run/gaps.ts';
+import type { InstrumentRecords } from '../run/instrument-records.ts';
 import type { Exclusion, Load, LoadPart } from '../run/load.ts';
 import { parseBarometer } from '../run/parse-load.ts';
 import { type SuspectedFault, suspectedFaults } from '../run/suspected-faults.ts';
+import { calibrationSentences } from './calibration-sentences.ts';
 import { type Suspect, setsOf, withUndecided } from './decide-suspects.ts';
 import type { Evaluation, Finding, GapRecord, OpenDecision, PartEvaluation, SensorState } from './evaluation.ts';
 import { iso, say, verdictOf } from './finding.ts';
@@ -24,6 +26,8 @@ export interface JudgementInputs {
   readonly resin: Resin | null;
   /** What the parts were laid up from, as their ledgers tell it. */
   readonly materials?: MaterialRecords | null;
+  /** What the channels were read by. The load is corrected by it already: see `calibratedLoad`. */
+  readonly instruments?: InstrumentRecords | null;
   /** Decisions that do not stand in the load document. */
   readonly exclusions: readonly Exclusion[];
   /** Channels that a person decided to go on believing although a fault was suspected. */
@@ -74,7 +78,7 @@ export function judge(digest: RunDigest, inputs: JudgementInputs): Evaluation {
     },
     cycle: { code: cycle.code, issue: cycle.issue, sha256: null },
     resin: resin === null ? null : { code: resin.code, status: resin.source.status, citation: resin.source.citation },
-    assumptions: assumptionsOf(digest, cycle, gapMs),
+    assumptions: [...assumptionsOf(digest, cycle, gapMs), ...calibrationSentences(digest, inputs.instruments ?? null)],
     sensors: sensorStates(digest, faults, suspects, exclusions),
     decisions: openDecisions(suspects, changes),
     parts,
@@ -183,6 +187,7 @@ function judgementOf(
     part,
     resin: inputs.resin,
     materials: inputs.materials ?? null,
+    instruments: inputs.instruments ?? null,
     log: digest.log,
     isOpen: inputs.open,
     longestGapMs: gapMs,

@@ -4,6 +4,7 @@ import type { MaterialRecords } from '../material/ledger.ts';
 import type { RunChannel } from '../run/channel.ts';
 import type { RunDigest } from '../run/digest.ts';
 import { type Gap, gapsOf } from '../run/gaps.ts';
+import type { InstrumentRecords } from '../run/instrument-records.ts';
 import type { Interval } from '../run/intervals.ts';
 import type { LoadPart } from '../run/load.ts';
 import { celsiusDifferenceFrom, type TemperatureUnit } from '../units.ts';
@@ -53,6 +54,8 @@ export interface Judgement {
   readonly resin: Resin | null;
   /** What the parts were laid up from; null where nothing of it is on record. */
   readonly materials: MaterialRecords | null;
+  /** What the channels were read by; null where nothing of it is on record. */
+  readonly instruments: InstrumentRecords | null;
   readonly log: Interval;
   /** The run goes on: what has not ended is pending. */
   readonly isOpen: boolean;

@@ -1,3 +1,4 @@
+import { calibrationLimit } from './calibration-limit.ts';
 import { ALLOWANCE } from './dips.ts';
 import type { Outcome } from './evaluation.ts';
 import { type Found, isAtMost, say, sayBeside } from './finding.ts';
@@ -7,11 +8,10 @@ import { outLifeLimit } from './out-life-limit.ts';
 /** Limits on what was recorded before the run: `leak-test`, `material/out-life`, `instruments/calibration`. */
 export function recordLimits(j: Judgement): Found[] {
   const { leakTest, material, instruments } = j.cycle;
-  const notRecorded = (limit: string): Found => ({ limit, outcome: 'cannot-tell', unit: '', because: 'Not recorded.' });
   return [
     ...(leakTest === undefined ? [] : [leakTestLimit(j)]),
     ...(material?.outLife === true ? [outLifeLimit(j)] : []),
-    ...(instruments?.calibration === true ? [notRecorded('instruments/calibration')] : []),
+    ...(instruments?.calibration === true ? [calibrationLimit(j)] : []),
   ];
 }
 

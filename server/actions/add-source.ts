@@ -4,6 +4,7 @@ import { sha256OfDocument } from '../store/canonical.ts';
 import type { Db } from '../store/database.ts';
 import { findOpenRun } from '../store/live-runs.ts';
 import { chainOfReadings } from '../store/reading-chain.ts';
+import { findRecorder, requireRecorder } from '../store/recorders.ts';
 import { requireRun } from '../store/runs.ts';
 import { countSourcesOf } from '../store/sources.ts';
 import { deedOf } from './action-parts.ts';
@@ -39,14 +40,19 @@ export async function addSource(
   const read = await readFiles(recording.files, recording.layout);
   const before = sourceInputs(db, run);
   const shiftMs = join?.shiftMs ?? 0;
+  const { recorder } = recording;
+  const isKnown = recorder != null && findRecorder(db, recorder) !== undefined;
   const added: SourceInput = {
     n: 1 + countSourcesOf(db, run),
+    recorderId: isKnown ? requireRecorder(db, recorder).id : null,
+    layout: read.layout,
     shiftMs,
     fills: join !== null,
     scans: read.log.readings.timeMs.length,
     chainSha256: chainOfReadings(read.log.readings),
     layoutSha256: sha256OfDocument(read.layout),
     fileSha256s: read.files.map(({ sha256 }) => sha256),
+    fromMs: Math.trunc((read.log.readings.timeMs[0] ?? 0) + shiftMs),
     untilMs: Math.trunc((read.log.readings.timeMs.at(-1) ?? 0) + shiftMs),
     readLog: () => shiftedLog(read.log, shiftMs),
   };

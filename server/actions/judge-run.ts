@@ -56,13 +56,14 @@ export async function judgeRun(parts: JudgingParts, run: number, because = 'judg
 
 /** Judges by inputs; nothing is written. */
 export async function evaluateInputs(evaluate: EvaluateLog, inputs: RunInputs): Promise<Evaluation> {
-  const { cycle, load, resin, materials, decisions } = inputs;
+  const { cycle, load, resin, materials, instruments, decisions } = inputs;
   const { exclusions, believed } = decisions;
   const evaluation = await evaluate(inputs.readLog(), {
     cycle,
     load,
     resin,
     materials,
+    instruments,
     exclusions,
     believed,
     barometer: null,
@@ -92,6 +93,7 @@ export function writeEvaluation(
   }
   keepDocument(db, inputs.decisions);
   if (inputs.materials !== null) keepDocument(db, inputs.materials);
+  if (inputs.instruments !== null) keepDocument(db, inputs.instruments);
   const { at, by } = deedOf(parts);
   const { hashes } = inputs;
   const id = insertEvaluation(db, { run, because, engine: VERSION, inputs: hashes, document, at, by });
@@ -108,7 +110,7 @@ export function writeEvaluation(
 
 /** What a run is judged by now and was not when its inputs were gathered. Of an open run readings go on coming. */
 function changedInputs({ hashes, open }: RunInputs, now: RunInputs): string[] {
-  const grows: readonly string[] = open ? ['readings', 'layout', 'materials'] : [];
+  const grows: readonly string[] = open ? ['readings', 'layout', 'materials', 'instruments'] : [];
   return Object.entries(hashes).flatMap(([key, hash]) =>
     Object(now.hashes)[key] === hash || grows.includes(key) ? [] : [key],
   );

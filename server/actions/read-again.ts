@@ -50,12 +50,15 @@ export async function readAgain(
   const { shiftMs, fills } = source;
   const again: SourceInput = {
     n,
+    recorderId: source.recorderId,
+    layout,
     shiftMs,
     fills,
     scans: log.readings.timeMs.length,
     chainSha256: chainOfReadings(log.readings),
     layoutSha256: sha256OfDocument(layout),
     fileSha256s: source.files.map(({ sha256 }) => sha256),
+    fromMs: Math.trunc((log.readings.timeMs[0] ?? 0) + shiftMs),
     untilMs: Math.trunc((log.readings.timeMs.at(-1) ?? 0) + shiftMs),
     readLog: () => shiftedLog(log, shiftMs),
   };

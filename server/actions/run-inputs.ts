@@ -1,8 +1,13 @@
 import type { Resin } from '../../models/cure/resin.ts';
 import type { Cycle } from '../../models/cycle/cycle.ts';
+import type { Layout } from '../../models/log/layout.ts';
+import type { LiveSource } from '../../models/log/live-source.ts';
 import type { ReadLog } from '../../models/log/readings.ts';
-import { temperaturesOfEmf } from '../../models/log/temperatures-of-emf.ts';
+import { channelsOf } from '../../models/log/source-channels.ts';
+import { asTemperature, temperaturesOfEmf } from '../../models/log/temperatures-of-emf.ts';
 import type { MaterialRecords } from '../../models/material/ledger.ts';
+import { calibratedLoad } from '../../models/run/calibrated-load.ts';
+import type { InstrumentRecords } from '../../models/run/instrument-records.ts';
 import type { Exclusion, Load } from '../../models/run/load.ts';
 import type { SensorDecision } from '../contract/runs.ts';
 import { oneHash, sha256Of, sha256OfDocument } from '../store/canonical.ts';
@@ -10,15 +15,17 @@ import { type CycleRow, readCycleDocument, requireCycle } from '../store/cycles.
 import type { Db } from '../store/database.ts';
 import { readDecisions } from '../store/decisions.ts';
 import type { EvaluationInputs } from '../store/evaluations.ts';
+import { type OtherCalibrations, recordsOfInstruments } from '../store/instrument-records.ts';
 import { findOpenRun } from '../store/live-runs.ts';
 import { findLoad } from '../store/loads.ts';
 import { recordsOfParts } from '../store/material-records.ts';
 import { findResin } from '../store/resins.ts';
 import { startOfRun } from '../store/runs.ts';
 import { readSourceLog, readSources } from '../store/sources.ts';
+import { vesselOfRun } from '../store/vessels.ts';
 import { type MergedLog, mergeLogs } from './merge-logs.ts';
-import { shiftedLog } from './shifted-log.ts';
 import { resinOfWorkshop } from './resin-of-workshop.ts';
+import { shiftedLog } from './shifted-log.ts';
 
 /** What people decided about suspects, as one document: hashed and kept with each evaluation. */
 export interface DecisionsDocument {
@@ -30,12 +37,15 @@ export interface DecisionsDocument {
 
 /** Everything a run is judged by, with its hashes. */
 export interface RunInputs {
+  /** As it is judged by: where it names no correction of its own, with that of the instruments' calibrations. */
   readonly load: Load;
   readonly cycle: Cycle;
   readonly resin: Resin | null;
   readonly decisions: DecisionsDocument;
   /** What the parts were laid up from; null where the cycle does not ask, or nothing of it is on record. */
   readonly materials: MaterialRecords | null;
+  /** What its channels were read by; null where nothing of it is on record. */
+  readonly instruments: InstrumentRecords | null;
   readonly hashes: EvaluationInputs;
   /** Of the bytes as they came. */
   readonly logSha256: string;
@@ -56,11 +66,16 @@ export interface Changes {
   readonly sources?: readonly SourceInput[];
   /** Whether it is judged as one that is still being logged. */
   readonly open?: boolean;
+  readonly vesselId?: number | null;
+  /** Calibrations of an instrument as they would stand. */
+  readonly calibrations?: OtherCalibrations;
 }
 
 /** One source's part in a judgement. */
 export interface SourceInput {
   readonly n: number;
+  readonly recorderId: number | null;
+  readonly layout: Layout | LiveSource;
   readonly chainSha256: string;
   readonly layoutSha256: string;
   /** Added to the instants of its scans when it is read. */
@@ -69,7 +84,8 @@ export interface SourceInput {
   readonly fills: boolean;
   readonly scans: number;
   readonly fileSha256s: readonly string[];
-  /** The last scan, in whole ms. */
+  /** The first and the last scan, in whole ms. */
+  readonly fromMs: number;
   readonly untilMs: number;
   readonly readLog: () => ReadLog;
 }
@@ -77,9 +93,9 @@ export interface SourceInput {
 /** The inputs of a run's judgement; null while it has no load or no cycle. */
 export function gatherInputs(db: Db, run: number, changes: Changes = {}): RunInputs | null {
   const stored = findLoad(db, run);
-  const load = changes.load ?? stored?.document;
+  const written = changes.load ?? stored?.document;
   const cycleRow = changes.cycle === undefined ? cycleOf(db, stored?.cycle ?? null) : changes.cycle;
-  if (load === undefined || cycleRow === null) return null;
+  if (written === undefined || cycleRow === null) return null;
   const cycle = readCycleDocument(db, cycleRow);
   const resin = cycle.cure === undefined ? undefined : findResin(db, cycle.cure.resin);
   const decisions = decisionsDocument([...readDecisions(db, run), ...(changes.decisions ?? [])]);
@@ -89,25 +105,29 @@ export function gatherInputs(db: Db, run: number, changes: Changes = {}): RunInp
   const materials = asks
     ? recordsOfParts(
         db,
-        load.parts.map(({ part }) => part),
+        written.parts.map(({ part }) => part),
         untilMs,
         startOfRun(db, run),
       )
     : null;
+  const instruments = instrumentsOf(db, run, sources, changes);
+  const layouts = sources.flatMap(({ layout }) => channelsOf(layout)).map(asTemperature);
   return {
-    load,
+    load: calibratedLoad(written, instruments, layouts),
     cycle,
     resin: resin === undefined ? null : resinOfWorkshop(db, resin),
     decisions,
     materials,
+    instruments,
     hashes: {
       readings: oneHash(sources.map(hashOfReadings)),
       layout: oneHash(sources.map(({ layoutSha256 }) => layoutSha256)),
-      load: sha256OfDocument(load),
+      load: sha256OfDocument(written),
       cycle: cycleRow.sha256,
       resin: resin?.sha256 ?? null,
       decisions: sha256OfDocument(decisions),
       materials: materials === null ? null : sha256OfDocument(materials),
+      instruments: instruments === null ? null : sha256OfDocument(instruments),
     },
     logSha256: oneHash(sources.flatMap(({ fileSha256s }) => fileSha256s)),
     open: changes.open ?? findOpenRun(db, run) !== undefined,
@@ -116,10 +136,31 @@ export function gatherInputs(db: Db, run: number, changes: Changes = {}): RunInp
   };
 }
 
+/** What is on record of the instruments of a run's channels. */
+function instrumentsOf(
+  db: Db,
+  run: number,
+  sources: readonly SourceInput[],
+  { vesselId = vesselOfRun(db, run), calibrations }: Changes,
+): InstrumentRecords | null {
+  const fromMs = Math.min(...sources.map((source) => source.fromMs));
+  const untilMs = Math.max(...sources.map((source) => source.untilMs));
+  if (!Number.isFinite(fromMs)) return null;
+  return recordsOfInstruments(db, { vesselId, fromMs, untilMs }, sources.flatMap(recordedChannels), calibrations);
+}
+
+/** The channels of a source, each with the recorder or live source it came through. */
+export function recordedChannels({ layout, recorderId }: Pick<SourceInput, 'layout' | 'recorderId'>) {
+  const source = layout.format === 'dwellbook-source/1' ? layout.name : null;
+  return layout.channels.map(({ name }) => ({ channel: name, recorderId, source }));
+}
+
 /** The sources a run is judged by. */
 export function sourceInputs(db: Db, run: number): SourceInput[] {
   return readSources(db, run).map((source) => ({
     n: source.n,
+    recorderId: source.recorderId,
+    layout: source.layout,
     chainSha256: source.chainSha256,
     layoutSha256: source.layoutSha256,
     shiftMs: source.shiftMs,
@@ -127,6 +168,7 @@ export function sourceInputs(db: Db, run: number): SourceInput[] {
     scans: source.scans,
     // What was logged live has no file; its bytes are its scans.
     fileSha256s: source.files.length > 0 ? source.files.map(({ sha256 }) => sha256) : [source.chainSha256],
+    fromMs: Date.parse(source.from),
     untilMs: Date.parse(source.until),
     readLog: () => shiftedLog(readSourceLog(db, source), source.shiftMs),
   }));

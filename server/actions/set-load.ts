@@ -27,7 +27,8 @@ export async function setLoad(parts: JudgingParts, run: number, request: SetLoad
   const said = readLoad(parts, request);
   requireChannels(db, run, said.load);
   const because = before === null ? 'load set' : 'load set again';
-  return changeAndJudge(parts, run, because, said, () => writeLoad(parts, run, request, said));
+  const changes = request.vessel == null ? said : { ...said, vesselId: requireVessel(db, request.vessel) };
+  return changeAndJudge(parts, run, because, changes, () => writeLoad(parts, run, request, said));
 }
 
 /** What a request says of a load, looked up and taken apart. */

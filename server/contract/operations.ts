@@ -16,6 +16,14 @@ import {
   recordRunRequest,
   uploadQuery,
 } from './imports.ts';
+import {
+  addCalibrationRequest,
+  instruments,
+  instrumentView,
+  placeInstrumentRequest,
+  setInstrumentRequest,
+  takeOffRequest,
+} from './instruments.ts';
 import { addPartWorkRequest, layupQuery, layupView, setCouponRequest, setLayupRequest } from './layups.ts';
 import {
   acknowledgeRequest,
@@ -72,6 +80,7 @@ import {
   runView,
   setLoadRequest,
 } from './runs.ts';
+import { addAccuracyTestRequest, addSurveyRequest, setQualifiedRangeRequest, vesselSurveys } from './surveys.ts';
 import { thickness, thicknessQuery } from './thickness.ts';
 import { setToolRequest } from './tool-record.ts';
 import { tools, toolView } from './tools.ts';
@@ -169,6 +178,21 @@ export const OPERATIONS = {
   makeHold: { ...ROUTES.makeHold, body: makeHoldRequest, answer: holdView, status: 201 },
   readHold: { ...ROUTES.readHold, answer: holdView },
   readHoldCsv: { ...ROUTES.readHoldCsv, answer: 'text/csv' },
+  listInstruments: { ...ROUTES.listInstruments, answer: instruments },
+  setInstrument: { ...ROUTES.setInstrument, body: setInstrumentRequest, answer: instrumentView, status: 201 },
+  readInstrument: { ...ROUTES.readInstrument, answer: instrumentView },
+  addCalibration: { ...ROUTES.addCalibration, body: addCalibrationRequest, answer: instrumentView, status: 201 },
+  placeInstrument: { ...ROUTES.placeInstrument, body: placeInstrumentRequest, answer: instrumentView, status: 201 },
+  takeOffInstrument: { ...ROUTES.takeOffInstrument, body: takeOffRequest, answer: instrumentView, status: 201 },
+  readSurveys: { ...ROUTES.readSurveys, answer: vesselSurveys },
+  addSurvey: { ...ROUTES.addSurvey, body: addSurveyRequest, answer: vesselSurveys, status: 201 },
+  addAccuracyTest: { ...ROUTES.addAccuracyTest, body: addAccuracyTestRequest, answer: vesselSurveys, status: 201 },
+  setQualifiedRange: {
+    ...ROUTES.setQualifiedRange,
+    body: setQualifiedRangeRequest,
+    answer: vesselSurveys,
+    status: 201,
+  },
   find: { ...ROUTES.find, query: findQuery, answer: found },
   readAudit: { ...ROUTES.readAudit, query: auditQuery, answer: audit },
   verifyAudit: { ...ROUTES.verifyAudit, answer: auditVerification },

@@ -1,6 +1,7 @@
 import { cycleHandlers } from './cycle-handlers.ts';
 import type { Handlers } from './handler.ts';
 import { importHandlers } from './import-handlers.ts';
+import { instrumentHandlers } from './instrument-handlers.ts';
 import { liveHandlers } from './live-handlers.ts';
 import { liveRunHandlers } from './live-run-handlers.ts';
 import { materialHandlers } from './material-handlers.ts';
@@ -23,6 +24,7 @@ export const HANDLERS: Handlers = {
   ...toolHandlers,
   ...traceHandlers,
   ...materialHandlers,
+  ...instrumentHandlers,
   ...liveRunHandlers,
   ...senderHandlers,
   ...sourceHandlers,

@@ -16,6 +16,8 @@ export interface EvaluationInputs {
   readonly decisions: string;
   /** Null where the cycle does not ask for material, or none is on record. */
   readonly materials: string | null;
+  /** Null where no instrument of its channels is on record. */
+  readonly instruments: string | null;
 }
 
 export interface NewEvaluation {
@@ -34,9 +36,10 @@ export function insertEvaluation(db: Db, { run, because, engine, inputs, documen
   const { lastInsertRowid } = db
     .prepare(
       `INSERT INTO evaluations (run_id, because, engine, verdict, undecided, not_met, cannot_tell, readings_sha256,
-         layout_sha256, load_sha256, cycle_sha256, resin_sha256, decisions_sha256, materials_sha256, sha256, packed, at, by)
+         layout_sha256, load_sha256, cycle_sha256, resin_sha256, decisions_sha256, materials_sha256,
+         instruments_sha256, sha256, packed, at, by)
        VALUES (@run, @because, @engine, @verdict, @undecided, @notMet, @cannotTell, @readings, @layout, @load, @cycle,
-         @resin, @decisions, @materials, @sha256, @packed, @at, @by)`,
+         @resin, @decisions, @materials, @instruments, @sha256, @packed, @at, @by)`,
     )
     .run({
       run,
@@ -96,6 +99,7 @@ interface EvaluationRow {
   readonly resin_sha256: string | null;
   readonly decisions_sha256: string;
   readonly materials_sha256: string | null;
+  readonly instruments_sha256: string | null;
   readonly sha256: string;
   readonly packed: Buffer;
   readonly at: string;
@@ -119,6 +123,7 @@ function lineOf(row: EvaluationRow): EvaluationLine {
       resin: row.resin_sha256,
       decisions: row.decisions_sha256,
       ...(row.materials_sha256 === null ? {} : { materials: row.materials_sha256 }),
+      ...(row.instruments_sha256 === null ? {} : { instruments: row.instruments_sha256 }),
     },
     sha256: row.sha256,
   };

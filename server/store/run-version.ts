@@ -12,7 +12,9 @@ export function versionOfRun(db: Db, run: number): RunVersion {
             coalesce((SELECT max(id) FROM sensor_decisions WHERE run_id = ?), 0) || ' ' ||
             coalesce((SELECT max(live_source_settings.id) FROM live_source_settings
                       JOIN live_sources ON live_sources.id = source_id
-                      JOIN live_runs ON live_runs.vessel_id = live_sources.vessel_id WHERE run_id = ?), 0) AS version`,
+                      JOIN live_runs ON live_runs.vessel_id = live_sources.vessel_id WHERE run_id = ?), 0) || ' ' ||
+            coalesce((SELECT max(id) FROM calibrations), 0) || ' ' ||
+            coalesce((SELECT max(id) FROM instrument_places), 0) AS version`,
   ).get(run, run, run);
   return row?.version ?? '';
 }

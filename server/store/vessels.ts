@@ -18,6 +18,11 @@ export function insertVessel(db: Db, { name, kind }: AddVesselRequest): void {
   db.prepare('INSERT INTO vessels (name, kind) VALUES (?, ?)').run(name, kind);
 }
 
+/** The row of the vessel a run was in; null where none is named. */
+export function vesselOfRun(db: Db, run: number): number | null {
+  return db.prepare<[number], number>('SELECT vessel_id FROM runs WHERE id = ?').pluck().get(run) ?? null;
+}
+
 /** The row of a vessel that must be there. */
 export function requireVessel(db: Db, name: string): number {
   const id = db.prepare<[string], number>('SELECT id FROM vessels WHERE name = ?').pluck().get(name);

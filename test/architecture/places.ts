@@ -21,7 +21,8 @@ const MODELS = [
   'models/trace',
   'models/forecast',
 ];
-const CONTRACT = ['server/contract', 'server/contract/paths.ts'];
+const PATHS = ['server/contract/paths.ts', 'server/contract/instrument-paths.ts'];
+const CONTRACT = ['server/contract', ...PATHS];
 const SHARED = ['models', 'models/numerics'];
 const WEB_PACKAGES = ['preact', '@preact/signals', 'preact-iso', 'chart.js', '@fontsource-variable/*'];
 
@@ -31,7 +32,7 @@ function room(may: readonly string[], packages: readonly string[] = []): Place {
 
 function webRoom(may: readonly string[]): Place {
   return {
-    may: [...may, ...MODELS, 'server/contract/paths.ts'],
+    may: [...may, ...MODELS, ...PATHS],
     mayTypes: ['server/contract'],
     packages: WEB_PACKAGES,
   };
@@ -70,6 +71,7 @@ export const PLACES: Readonly<Record<string, Place>> = {
   'server/contract': room([...CONTRACT, ...MODELS], ['zod']),
   // Addresses only: it loads no schema, so that pages may build them too.
   'server/contract/paths.ts': room([]),
+  'server/contract/instrument-paths.ts': room(PATHS),
   'server/store': room(['server/store', ...CONTRACT, ...MODELS], ['node:', 'better-sqlite3']),
   'server/files': room(['server/files', ...CONTRACT, ...MODELS], ['node:', 'read-excel-file']),
   'server/report': room(['server/report', ...CONTRACT, ...MODELS], ['node:', '@bwip-js/node']),
