@@ -2,15 +2,26 @@ import type { CureOfPart } from '../../models/chart/chart-inputs.ts';
 import type { ThroughPart } from '../../models/cure/heat/through-part.ts';
 import type { Evaluation } from '../../models/evaluation/evaluation.ts';
 import type { Readings } from '../../models/log/readings.ts';
+import type { Compared, Overlaid } from '../contract/comparison.ts';
 import type { CureThroughPart } from './ask-thickness.ts';
+import type { CompareParts } from './compare-parts.ts';
 import type { EstimateCure, EvaluateLog } from './evaluate-log.ts';
+import type { OverlayParts } from './overlay-parts.ts';
 import { startThread } from './thread.ts';
+
+/** Failed parts against sound ones. */
+export interface TraceWork {
+  readonly compare: CompareParts;
+  readonly overlay: OverlayParts;
+}
 
 export interface LongWork {
   readonly evaluate: EvaluateLog;
   readonly estimateCure: EstimateCure;
   /** Always in the thread: it takes a tenth of a second and more, however small the log. */
   readonly cureThroughPart: CureThroughPart;
+  /** Always in the thread, which reads the database for itself. */
+  readonly trace: TraceWork;
   readonly close: () => Promise<void>;
 }
 
@@ -32,6 +43,10 @@ export function createLongWork({ doneHere = READINGS_DONE_HERE } = {}): LongWork
       return cureCourses(...given);
     },
     cureThroughPart: (asked) => thread.ask<readonly ThroughPart[]>('throughPart', [asked]),
+    trace: {
+      compare: (asked) => thread.ask<Compared>('compareParts', [asked]),
+      overlay: (asked) => thread.ask<Overlaid>('overlayParts', [asked]),
+    },
     close: thread.close,
   };
 }

@@ -2,10 +2,12 @@ import { parentPort } from 'node:worker_threads';
 import { throughPart } from '../../models/cure/heat/through-part.ts';
 import { DomainError, type ErrorCode, type Facts } from '../../models/errors.ts';
 import { evaluateLog } from '../../models/evaluation/judge.ts';
+import { compareParts } from './compare-parts.ts';
 import { cureCourses } from './cure-courses.ts';
+import { overlayParts } from './overlay-parts.ts';
 
 /** What a thread can be asked to do; its arguments are plain data. */
-export const LONG_WORK = { evaluateLog, cureCourses, throughPart } as const;
+export const LONG_WORK = { evaluateLog, cureCourses, throughPart, compareParts, overlayParts } as const;
 
 export interface Question {
   readonly id: number;

@@ -55,6 +55,7 @@ export async function serveWorkshop(options: ServerOptions): Promise<void> {
     telling: following.telling,
     estimateCure: longWork.estimateCure,
     cureThroughPart: longWork.cureThroughPart,
+    trace: longWork.trace,
     log,
     siteFolder: findSite(),
     incomingFolder,

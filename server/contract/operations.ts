@@ -1,6 +1,7 @@
 import type * as z from 'zod';
 import { audit, auditQuery, auditVerification } from './audit.ts';
 import { chartQuery } from './chart.ts';
+import { compared, compareQuery, overlaid, overlayQuery } from './comparison.ts';
 import { changeStatusRequest, cycles, cycleView, importCycleRequest } from './cycles.ts';
 import { chartDocument } from './documents.ts';
 import { findQuery, found } from './find.ts';
@@ -193,6 +194,8 @@ export const OPERATIONS = {
     answer: vesselSurveys,
     status: 201,
   },
+  compareParts: { ...ROUTES.compareParts, query: compareQuery, answer: compared },
+  overlayParts: { ...ROUTES.overlayParts, query: overlayQuery, answer: overlaid },
   find: { ...ROUTES.find, query: findQuery, answer: found },
   readAudit: { ...ROUTES.readAudit, query: auditQuery, answer: audit },
   verifyAudit: { ...ROUTES.verifyAudit, answer: auditVerification },

@@ -183,20 +183,6 @@ export function partMaterialsPath(serial: string, query: { at?: string } = {}): 
   return withQuery(`${partPath(serial)}/materials`, query);
 }
 
-export function partWhereaboutsPath(serial: string): string {
-  return `${partPath(serial)}/whereabouts`;
-}
-
-export const HOLDS_PATH = '/api/holds';
-
-export function holdPath(hold: number): string {
-  return `${HOLDS_PATH}/${hold}`;
-}
-
-export function holdCsvPath(hold: number): string {
-  return `${holdPath(hold)}/list.csv`;
-}
-
 export function findPath(code: string): string {
   return withQuery('/api/find', { code });
 }

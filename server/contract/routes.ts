@@ -184,6 +184,8 @@ export const ROUTES = {
     ENGINEERS,
     'json',
   ),
+  compareParts: route('get', '/api/trace/compare', 'What failed parts share that sound ones do not', ANYONE),
+  overlayParts: route('get', '/api/trace/overlay', 'Failed and sound runs laid over each other', ANYONE),
   find: route('get', '/api/find', 'Where a code leads', ANYONE),
   readAudit: route('get', '/api/audit', 'The audit trail, latest first', ANYONE),
   verifyAudit: route('get', '/api/audit/verify', 'Recompute every chain', ANYONE),

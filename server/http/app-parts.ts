@@ -1,6 +1,7 @@
 import type { CureThroughPart } from '../actions/ask-thickness.ts';
 import type { EstimateCure } from '../actions/evaluate-log.ts';
 import type { JudgingParts } from '../actions/judge-run.ts';
+import type { TraceWork } from '../actions/long-work.ts';
 import type { AuditVerification } from '../contract/audit.ts';
 import type { LiveEngine } from '../live/engine/live-engine.ts';
 import type { LiveLogging } from '../live/live-logging.ts';
@@ -19,6 +20,7 @@ export interface AppParts extends JudgingParts {
   /** What is listened to. */
   readonly sources: RunningSources;
   readonly cureThroughPart: CureThroughPart;
+  readonly trace: TraceWork;
   /** Folder of the built pages; null where none are served. */
   readonly siteFolder: string | null;
   /** Folder an upload is written to while it arrives. */

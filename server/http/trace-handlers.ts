@@ -10,8 +10,19 @@ import { holdCsv } from './hold-csv.ts';
 import { numberIn } from './number-in.ts';
 
 export const traceHandlers: SomeHandlers<
-  'listHolds' | 'makeHold' | 'readHold' | 'readHoldCsv' | 'readDanger' | 'setWhereabouts'
+  | 'compareParts'
+  | 'overlayParts'
+  | 'listHolds'
+  | 'makeHold'
+  | 'readHold'
+  | 'readHoldCsv'
+  | 'readDanger'
+  | 'setWhereabouts'
 > = {
+  compareParts: ({ db, clock, trace }, { query }) =>
+    trace.compare({ path: db.name, at: new Date(clock()).toISOString(), query }),
+  overlayParts: ({ db, clock, trace }, { query }) =>
+    trace.overlay({ path: db.name, at: new Date(clock()).toISOString(), query }),
   listHolds: ({ db }) => ({ holds: listHoldLists(db) }),
   makeHold: (parts, { body }) => requireHoldList(parts.db, makeHoldList(parts, body)),
   readHold: ({ db }, { params }) => requireHoldList(db, numberIn(params, 'hold')),

@@ -21,7 +21,7 @@ const MODELS = [
   'models/trace',
   'models/forecast',
 ];
-const PATHS = ['server/contract/paths.ts', 'server/contract/instrument-paths.ts'];
+const PATHS = ['server/contract/paths.ts', 'server/contract/instrument-paths.ts', 'server/contract/trace-paths.ts'];
 const CONTRACT = ['server/contract', ...PATHS];
 const SHARED = ['models', 'models/numerics'];
 const WEB_PACKAGES = ['preact', '@preact/signals', 'preact-iso', 'chart.js', '@fontsource-variable/*'];
@@ -72,6 +72,7 @@ export const PLACES: Readonly<Record<string, Place>> = {
   // Addresses only: it loads no schema, so that pages may build them too.
   'server/contract/paths.ts': room([]),
   'server/contract/instrument-paths.ts': room(PATHS),
+  'server/contract/trace-paths.ts': room(PATHS),
   'server/store': room(['server/store', ...CONTRACT, ...MODELS], ['node:', 'better-sqlite3']),
   'server/files': room(['server/files', ...CONTRACT, ...MODELS], ['node:', 'read-excel-file']),
   'server/report': room(['server/report', ...CONTRACT, ...MODELS], ['node:', '@bwip-js/node']),

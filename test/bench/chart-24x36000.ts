@@ -6,10 +6,12 @@ import { throughPart } from '../../models/cure/heat/through-part.ts';
 import { evaluateLog } from '../../models/evaluation/judge.ts';
 import type { Layout } from '../../models/log/layout.ts';
 import type { Readings } from '../../models/log/readings.ts';
+import { compareParts } from '../../server/actions/compare-parts.ts';
 import { cureCourses } from '../../server/actions/cure-courses.ts';
 import { importCycle } from '../../server/actions/import-cycle.ts';
 import { importResin } from '../../server/actions/import-resin.ts';
 import type { JudgingParts } from '../../server/actions/judge-run.ts';
+import { overlayParts } from '../../server/actions/overlay-parts.ts';
 import { setLoad } from '../../server/actions/set-load.ts';
 import { verifyChains } from '../../server/actions/verify-chains.ts';
 import { createApp } from '../../server/app.ts';
@@ -134,6 +136,7 @@ function serve(parts: JudgingParts, folder: string): Promise<Server> {
     mostUploadBytes: 0,
     estimateCure: async (...given) => cureCourses(...given),
     cureThroughPart: async (asked) => throughPart(asked),
+    trace: { compare: async (asked) => compareParts(asked), overlay: async (asked) => overlayParts(asked) },
     verify: async () => verifyChains(parts.db),
   });
   const server = createServer(app);

@@ -5,7 +5,9 @@ import { join } from 'node:path';
 import { afterEach, expect } from 'vitest';
 import { throughPart } from '../../models/cure/heat/through-part.ts';
 import { evaluateLog } from '../../models/evaluation/judge.ts';
+import { compareParts } from '../../server/actions/compare-parts.ts';
 import { cureCourses } from '../../server/actions/cure-courses.ts';
+import { overlayParts } from '../../server/actions/overlay-parts.ts';
 import { verifyChains } from '../../server/actions/verify-chains.ts';
 import { createApp } from '../../server/app.ts';
 import { ROLES } from '../../server/contract/roles.ts';
@@ -74,6 +76,7 @@ export async function liveApp(changes: Partial<AppParts> = {}): Promise<LiveApp>
     evaluate: async (log, inputs) => evaluateLog(log, inputs),
     estimateCure: async (...given) => cureCourses(...given),
     cureThroughPart: async (asked) => throughPart(asked),
+    trace: { compare: async (asked) => compareParts(asked), overlay: async (asked) => overlayParts(asked) },
     siteFolder: null,
     incomingFolder,
     watchedFolder: null,
