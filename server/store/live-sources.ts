@@ -48,18 +48,15 @@ export function insertLiveSource(db: Db, vesselId: number, settings: NewSettings
 /**
  * Sets how a source is read from now on.
  *
- * While a run is open in its vessel a channel keeps its unit and its role: one run has one meaning of a name.
+ * While a run is open in its vessel a channel keeps its unit and its role, and no two sources that are listened to in
+ * one vessel have a channel of one name: one run has one meaning of a name.
  */
 export function insertSettings(db: Db, sourceId: number, { document, isResting, at, by }: NewSettings): number {
   const before = findSettings(db, sourceId);
-  if (before !== undefined) {
-    refuseOtherName(before.document, document);
-    const vesselId = db
-      .prepare<[number], number>('SELECT vessel_id FROM live_sources WHERE id = ?')
-      .pluck()
-      .get(sourceId);
-    if (findOpenRunOf(db, vesselId ?? 0) !== undefined) refuseOtherMeaning(before.document, document);
-  }
+  if (before !== undefined) refuseOtherName(before.document, document);
+  const inVessel = settingsBeside(db, sourceId);
+  if (inVessel.hasOpenRun) for (const settings of inVessel.all) refuseOtherMeaning(settings.document, document);
+  if (!isResting) for (const settings of inVessel.all) refuseTakenName(sourceId, settings, document);
   const { lastInsertRowid } = db
     .prepare('INSERT INTO live_source_settings (source_id, document_sha256, resting, at, by) VALUES (?, ?, ?, ?, ?)')
     .run(sourceId, keepDocument(db, document), isResting ? 1 : 0, at, by);
@@ -157,6 +154,34 @@ function readSettings(db: Db, row: SettingsRow): LiveSettings {
     at: row.at,
     by: row.by,
   };
+}
+
+/** The settings that hold in the vessel of a source, its own among them. */
+function settingsBeside(db: Db, sourceId: number): { readonly hasOpenRun: boolean; readonly all: LiveSettings[] } {
+  const sources = db
+    .prepare<[number], { id: number; vesselId: number }>(
+      `SELECT id, vessel_id AS vesselId FROM live_sources
+       WHERE vessel_id = (SELECT vessel_id FROM live_sources WHERE id = ?) ORDER BY id`,
+    )
+    .all(sourceId);
+  return {
+    hasOpenRun: findOpenRunOf(db, sources[0]?.vesselId ?? 0) !== undefined,
+    all: sources.flatMap(({ id }) => findSettings(db, id) ?? []),
+  };
+}
+
+/** A source that rests gives its names free: another may take over what it read. */
+function refuseTakenName(sourceId: number, other: LiveSettings, { channels }: LiveSource): void {
+  if (other.sourceId === sourceId || other.isResting) return;
+  const taken = new Set(other.document.channels.map(({ name }) => name));
+  const twice = channels.find(({ name }) => taken.has(name));
+  if (twice === undefined) return;
+  throw new DomainError(
+    'state-conflict',
+    `"${other.document.name}" has a channel called "${twice.name}" already; give one of them another name, or let ` +
+      'that source rest',
+    { channel: twice.name, source: other.document.name },
+  );
 }
 
 function refuseOtherName(before: LiveSource, after: LiveSource): void {

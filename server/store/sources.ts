@@ -8,7 +8,7 @@ import { keepDocument, readDocument } from './documents.ts';
 import { isoFromMs } from './instants.ts';
 import { type GrowingSource, growingSources, readGrowing } from './live-readings.ts';
 import { findLiveRun, type LiveRunRow } from './live-runs.ts';
-import { insertReadings, readReadings } from './reading-blocks.ts';
+import { type Block, insertBlocks, packReadings, readReadings } from './reading-blocks.ts';
 import { chainOfReadings } from './reading-chain.ts';
 import { readSilentSources, type SilentSource } from './silent-sources.ts';
 
@@ -20,6 +20,8 @@ export interface NewSource {
   /** How its files are read, or the document of the live source it was. */
   readonly layout: Layout | LiveSource;
   readonly log: ReadLog;
+  /** Its readings as blocks, where they are packed already. */
+  readonly blocks?: readonly Block[];
   readonly files: readonly { readonly name: string; readonly fileId: number }[];
   /** Where its channels are those of an earlier source: what is added to its instants, and why. */
   readonly join?: { readonly shiftMs: number; readonly because: string } | null;
@@ -66,7 +68,7 @@ export function insertSource(db: Db, source: NewSource): InsertedSource {
   source.files.forEach(({ fileId, name }, place) => {
     file.run(sourceId, place, fileId, name);
   });
-  insertReadings(db, sourceId, source.log.readings);
+  insertBlocks(db, sourceId, source.blocks ?? packReadings(source.log.readings));
   if (source.join != null) {
     const { shiftMs, because } = source.join;
     const join = 'INSERT INTO source_joins (source_id, shift_ms, because) VALUES (?, ?, ?)';

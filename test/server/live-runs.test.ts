@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { evaluateLog } from '../../models/evaluation/judge.ts';
 import type { LiveSource } from '../../models/log/live-source.ts';
 import { readLog } from '../../models/log/read-log.ts';
 import type { Readings } from '../../models/log/readings.ts';
@@ -188,6 +189,61 @@ describe('a run logged as it happens', () => {
       `Source 1 of run ${run}, "plc of Autoclave 7", was logged as it happened; there is no file to read again`,
     ]);
     expect((await app.post(`/api/runs/${run}/end`, {})).body.detail).toBe(`Run ${run} is closed already`);
+  });
+});
+
+describe('closing a run', () => {
+  const begin = async (app: LiveApp, key: string) => {
+    const scans = scansOf(await caseReadings());
+    await pushAll(app, key, scans.slice(0, 100));
+    const request = { from: scans[0]?.at, load: null, cycle: null };
+    const { run } = (await app.post('/api/vessels/Autoclave 7/runs', request)).body;
+    return { run, scans };
+  };
+
+  it('takes in a scan that comes late while it is judged', async () => {
+    let whileJudged: () => Promise<unknown> = async () => undefined;
+    const app = await liveApp({
+      evaluate: async (readings, inputs) => {
+        if (!inputs.open) await whileJudged();
+        return evaluateLog(readings, inputs);
+      },
+    });
+    await app.post('/api/cycles', { document: recordedCase(CASE).cycle });
+    const key = await liveVessel(app);
+    const { run, scans } = await begin(app, key);
+    await loadCase(app, run, CASE);
+    await app.post(`/api/runs/${run}/end`, { at: scans[150]?.at });
+    let pushes = 0;
+    whileJudged = async () => {
+      pushes += 1;
+      if (pushes === 1) await push(app, key, scans.slice(140, 145));
+    };
+    const closed = await app.post(`/api/runs/${run}/close`, {});
+    expect(closed.status, closed.text).toBe(200);
+    expect(pushes).toBe(2);
+    expect(closed.body).toMatchObject({ live: null, scans: 105, evaluation: { document: { log: { scans: 105 } } } });
+    expect(verifyChains(app.parts.db)).toMatchObject({ holds: true });
+  });
+
+  it('merges nothing that no longer has its hash, and leaves it as it is', async () => {
+    const app = await liveApp();
+    const { db } = app.parts;
+    const key = await liveVessel(app);
+    const { run, scans } = await begin(app, key);
+    await pushAll(app, key, scans.slice(100, 101));
+    await app.post(`/api/runs/${run}/end`, { at: scans[150]?.at });
+    db.exec('DROP TRIGGER live_scans_are_never_updated');
+    db.prepare('UPDATE live_scans SET packed = zeroblob(length(packed)) WHERE time_ms = ?').run(
+      Date.parse(scans[50]?.at ?? ''),
+    );
+    const closed = await app.post(`/api/runs/${run}/close`, {});
+    expect([closed.status, closed.body.type]).toEqual([503, '/problems/database-damaged']);
+    expect((await app.get(`/api/runs/${run}`)).body).toMatchObject({ live: 'ended', scans: 101 });
+    expect(verifyChains(db)).toMatchObject({
+      holds: false,
+      firstBroken: `scans of run ${run}, source "plc of Autoclave 7"`,
+    });
   });
 });
 

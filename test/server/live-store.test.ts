@@ -5,7 +5,12 @@ import { growingSources, readGrowing, readKeptScans } from '../../server/store/l
 import { keptSpanOf, pruneScans } from '../../server/store/live-rolling.ts';
 import { findOpenRunOf } from '../../server/store/live-runs.ts';
 import { keepScans } from '../../server/store/live-scans.ts';
-import { insertSettings, requireLiveSource } from '../../server/store/live-sources.ts';
+import {
+  insertLiveSource,
+  insertSettings,
+  type LiveSettings,
+  requireLiveSource,
+} from '../../server/store/live-sources.ts';
 import { findBrokenLiveChain } from '../../server/store/live-verify.ts';
 import { chainOfReadings } from '../../server/store/reading-chain.ts';
 import { freshDatabase } from './fresh-database.ts';
@@ -123,6 +128,30 @@ describe('a setting', () => {
     const set = () => insertSettings(db, settings.sourceId, { document: other, isResting: false, ...DEED });
     openRun(db, vesselId);
     expect(set).toThrow(expect.objectContaining({ code: 'state-conflict', facts: { channel: 'TC1' } }));
+  });
+});
+
+describe('two sources of one vessel', () => {
+  it('have no channel of one name, unless one of them rests: then the other may take over', () => {
+    const db = freshDatabase(':memory:');
+    const { vesselId, settings } = addLiveVessel(db, 'Autoclave 1', pushSource('plc', 2));
+    const add = (name: string) =>
+      insertLiveSource(db, vesselId, { document: pushSource(name, 1), isResting: false, ...DEED });
+    expect(() => db.transaction(() => add('spare'))()).toThrow(
+      expect.objectContaining({ code: 'state-conflict', facts: { channel: 'TC1', source: 'plc' } }),
+    );
+    openRun(db, vesselId);
+    const keep = (own: LiveSettings, ...scans: LiveScan[]) =>
+      keepScans(db, [{ vesselId, settings: own, scans, arrivedMs: BEGUN_MS }]);
+    keep(settings, scanAt(BEGUN_MS, 20, 21), scanAt(BEGUN_MS + 1000, 22, 23));
+    insertSettings(db, settings.sourceId, { document: settings.document, isResting: true, ...DEED });
+    const spare = requireLiveSource(db, add('spare')).settings;
+    keep(spare, scanAt(BEGUN_MS + 5000, 24));
+    const run = findOpenRunOf(db, vesselId);
+    expect(run === undefined ? [] : growingSources(db, run).map(({ head }) => head.scans)).toEqual([2, 1]);
+    const back = () =>
+      insertSettings(db, settings.sourceId, { document: settings.document, isResting: false, ...DEED });
+    expect(back).toThrow(expect.objectContaining({ code: 'state-conflict' }));
   });
 });
 
