@@ -20,7 +20,7 @@ export type Aged =
  * @param resin The set its material document names; null where there is none.
  * @returns See {@link Aged}; a sentence says which rule it was, or why neither.
  *
- * Limits: time in a freezer that was cold enough is taken as none. A line of diffusion that was fitted at cure temperatures shuts the
+ * Limits: past the out-life no degree was measured, so none is given. Time in a freezer that was cold enough is taken as none. A line of diffusion that was fitted at cure temperatures shuts the
  *   reaction down at room temperature, so a set is refused where its `validC` does not reach there.
  * Source: Grunenfelder, Centea, Hubert & Nutt, Composites Part A 45 (2013) 119–126: room-temperature ageing raises the
  *   degree of cure and can end in vitrification (abstract).
@@ -38,8 +38,9 @@ export function agedOf(course: Course, material: Material, resin: Resin | null):
   const { ageing, out } = material;
   if (ageing === undefined) return none(`No aged degree: ${refusal}, and its document gives no measured degrees.`);
   const share = time.most / (out.lifeDays * 1440);
+  if (share > 1 + 1e-9)
+    return none(`No aged degree: ${course.item} is past its out-life, and none was measured beyond it.`);
   const degree = ageing.freshDegree + share * (ageing.degreeAtOutLife - ageing.freshDegree);
-  if (degree >= 1) return none(`No aged degree: ${course.item} is aged beyond what its measured degrees reach.`);
   const rule = material.equivalent === undefined ? 'minute for minute' : 'by the equivalent-time rule';
   const because = `Aged to ${degree.toFixed(4)} by its used out-life, ${rule}, between two measured degrees (${ageing.source}); ${refusal}.`;
   return { degree, basis: 'equivalent-time', because };

@@ -4,7 +4,7 @@ import type { AxeResults } from 'axe-core';
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { launchChromium, openPage, settle } from '../support/browser.ts';
-import { leaveWaiting, recordWorkshop } from '../support/recorded-workshop.ts';
+import { leaveWaiting, recordMaterials, recordWorkshop } from '../support/recorded-workshop.ts';
 import { type ServedProgram, serveProgram } from '../support/served-program.ts';
 import { CASES, EXPECTED_COMPLAINT, screensOf } from './screens.ts';
 
@@ -18,6 +18,7 @@ let screens: Readonly<Record<string, string>>;
 beforeAll(async () => {
   program = await serveProgram();
   const runs = await recordWorkshop(program.address, CASES);
+  await recordMaterials(program.address);
   screens = screensOf(runs, await leaveWaiting(program.address, 'bad-cell'));
   browser = await launchChromium();
 });
@@ -79,7 +80,17 @@ describe('every screen of an empty workshop', () => {
     const empty = await serveProgram();
     const { page, expectNoComplaints, close } = await openPage(browser, empty.address);
     const found: string[] = [];
-    for (const path of ['/', '/runs', '/parts', '/cycles', '/resins', '/recorders', '/audit', '/import']) {
+    for (const path of [
+      '/',
+      '/runs',
+      '/parts',
+      '/materials',
+      '/cycles',
+      '/resins',
+      '/recorders',
+      '/audit',
+      '/import',
+    ]) {
       await page.goto(path);
       await settle(page);
       found.push(...violationsOf(`empty ${path}`, await runAxe(page, null)));

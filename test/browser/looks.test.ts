@@ -3,7 +3,7 @@ import { fileURLToPath } from 'node:url';
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { launchChromium, openPage, settle } from '../support/browser.ts';
-import { leaveWaiting, recordWorkshop } from '../support/recorded-workshop.ts';
+import { leaveWaiting, recordMaterials, recordWorkshop } from '../support/recorded-workshop.ts';
 import { type ServedProgram, serveProgram } from '../support/served-program.ts';
 import { CASES, EXPECTED_COMPLAINT, screensOf } from './screens.ts';
 
@@ -16,6 +16,7 @@ let screens: Readonly<Record<string, string>>;
 beforeAll(async () => {
   program = await serveProgram();
   const runs = await recordWorkshop(program.address, CASES);
+  await recordMaterials(program.address);
   screens = screensOf(runs, await leaveWaiting(program.address, 'bad-cell'));
   browser = await launchChromium();
   rmSync(FOLDER, { recursive: true, force: true });

@@ -39,6 +39,34 @@ export async function recordWorkshop(
   return runs;
 }
 
+/** A material with a roll that is out of the freezer, a kit cut from it, and one whose room nobody wrote down. */
+export async function recordMaterials(address: string): Promise<void> {
+  const hoursAgo = (hours: number) => new Date(Date.now() - hours * 3_600_000).toISOString();
+  const room = { temperature: 21, unit: '°C', humidity: 45 };
+  const document = {
+    format: 'dwellbook-material/1',
+    code: 'tape',
+    issue: 'A',
+    name: 'Test tape',
+    units: { temperature: '°C' },
+    storage: { atMost: -18, lifeDays: 365 },
+    out: { lifeDays: 10, atMost: 24 },
+    tack: { lifeDays: 8 },
+    refreezing: { atMost: 3 },
+  };
+  const material = { code: 'tape', issue: 'A' };
+  await post(address, '/api/materials', { document });
+  await post(address, '/api/batches', { batch: 'B-1', material, made: hoursAgo(4000).slice(0, 10) });
+  for (const roll of ['K-17', 'K-18']) {
+    await post(address, '/api/rolls', { roll, batch: 'B-1', at: hoursAgo(900), lengthM: 40 });
+  }
+  await post(address, '/api/items/K-17/events', { kind: 'out', at: hoursAgo(300), room });
+  await post(address, '/api/items/K-17/kits', { kit: 'K-17-1', at: hoursAgo(299), lengthM: 6 });
+  await post(address, '/api/items/K-17/events', { kind: 'in', at: hoursAgo(290) });
+  await post(address, '/api/items/K-17/events', { kind: 'out', at: hoursAgo(4), room });
+  await post(address, '/api/items/K-18/events', { kind: 'out', at: hoursAgo(30) });
+}
+
 /** Leaves a recorded file waiting to be read, as an upload does; its number. */
 export async function leaveWaiting(address: string, name: string): Promise<number> {
   return (await postBytes(address, `/api/imports?name=${name}.csv`, recordedFile(name, 'run.csv'))).id;

@@ -18,7 +18,7 @@ export function LifeLines({ state }: { state: MaterialState }) {
     <ul class="lives">
       {state.lives.map((life) => (
         <li key={life.name}>
-          <h3>{LIFE_NAMES[life.name]}</h3>
+          <h2>{LIFE_NAMES[life.name]}</h2>
           <p class="left">{leftWords(life) ?? 'not known'}</p>
           <LifeMark outcome={life.outcome} />
           <p>{life.because}</p>

@@ -82,6 +82,8 @@ describe('agedOf', () => {
       );
     expect(degreeAfter(24, 10)).toMatchObject({ degree: expect.closeTo(0.02, 10), basis: 'equivalent-time' });
     expect(degreeAfter(32, 10)).toMatchObject({ degree: expect.closeTo(0.04, 10) });
+    expect(degreeAfter(32, 11)).toMatchObject({ degree: null });
+    expect(degreeAfter(32, 11).because).toContain('past its out-life');
     expect(degreeAfter(24, 10).because).toContain('by the equivalent-time rule');
   });
 
