@@ -17,7 +17,9 @@ const exponent = number({ atLeast: 0, atMost: 60 });
 /** E in J/mol. Less than 5 kJ/mol is a figure in kJ or kcal; more than 1 MJ/mol breaks bonds that no resin has. */
 const energy: Read<number> = (value, path) => {
   const E = number()(value, path);
-  return E >= 5000 && E <= 1e6 ? E : refuse(path, 'an activation energy in J/mol, 5000 to 1000000', value);
+  return E >= 5000 && E <= 1e6
+    ? E
+    : refuse(path, 'an activation energy in J/mol, 5000 to 1000000 (1 kJ/mol is 1000, 1 kcal/mol 4184)', value);
 };
 
 /** Reads `kinetics`: the law by its name, then its own keys and no others. */

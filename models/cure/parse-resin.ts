@@ -40,10 +40,17 @@ const readGlassTransition: Read<GlassTransition> = object((fields) => {
 });
 
 const readValidC: Read<readonly [number, number]> = (value, path) => {
-  const range = pairOf(number({ atLeast: -100, atMost: 450 }))(value, path);
+  const range = pairOf(number({ atLeast: -100 }))(value, path);
   if (range[0] >= range[1]) refuse(path, 'the lower temperature first', value);
-  if (range[0] > 280) refuse(path, 'temperatures in °C (these look like K)', value);
+  if (range[0] > 280 || range[1] > 450) {
+    refuse(path, 'temperatures in °C: these look like K; take 273.15 off both', value);
+  }
   return range;
+};
+
+const readHeat: Read<number> = (value, path) => {
+  const heat = number()(value, path);
+  return heat >= 5000 && heat <= 3e6 ? heat : refuse(path, 'a heat in J/kg, 5000 to 3000000 (1 J/g is 1000)', value);
 };
 
 const readGasConstant: Read<number> = (value, path) => {
@@ -81,7 +88,7 @@ const readResin: Read<Resin> = object((fields) => ({
   ...fields.optional(
     'thermal',
     object((thermal) => ({
-      heatOfReaction: thermal.required('heatOfReaction', number({ atLeast: 5000, atMost: 3e6 })),
+      heatOfReaction: thermal.required('heatOfReaction', readHeat),
       basis: thermal.required('basis', oneOf(['resin', 'composite'])),
     })),
   ),

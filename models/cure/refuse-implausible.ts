@@ -1,42 +1,23 @@
 import { refuse } from '../document.ts';
 import { kelvinFromCelsius } from '../units.ts';
-import { beginCure } from './cure-progress.ts';
+import { refuseImplausibleRates } from './implausible-rates.ts';
 import { arrhenius } from './laws/arrhenius.ts';
 import type { Resin } from './resin.ts';
 
 /**
  * Refuses figures that are possible but look like another unit or a lost sign, unless `source.confirmed` says in words
- * that the source prints them so. The bounds come from the sets gathered for autoclave, oven and out-of-autoclave
- * epoxies: there half of a cure at the hottest valid temperature takes 2 to 25 min, 60 times less if 1/min is taken for
- * 1/s. Very fast resins (frontal, room-temperature) do exist: theirs is the confirmation.
+ * that the source prints them so.
  */
 export function refuseImplausible(resin: Resin): void {
   if (resin.source.confirmed !== undefined) return;
-  refuseRatesPerMinute(resin);
+  refuseKelvinTg(resin);
+  refuseFahrenheitRange(resin);
   refuseCelsiusLine(resin);
   refuseLostSign(resin);
+  refuseImplausibleRates(resin, CONFIRM);
 }
 
 const CONFIRM = 'if the source prints it so, say so in source.confirmed';
-
-/** Two fifths of the cure in less than this at the hottest valid temperature: asked about. */
-const HASTY_S = 15;
-
-function refuseRatesPerMinute(resin: Resin): void {
-  if (resin.validC === undefined || resin.initialDegree >= 0.4) return;
-  const hottestK = kelvinFromCelsius(resin.validC[1]);
-  const { glassTransition: _, validC: __, ...kinetics } = resin;
-  const trial = beginCure({ ...kinetics, gel: { degree: 0.4 } }, { tolerance: 1e-4 });
-  trial.accept(0, hottestK);
-  trial.accept(HASTY_S, hottestK);
-  if (trial.gelS === null) return;
-  refuse(
-    'kinetics',
-    `rate constants in 1/s: at ${resin.validC[1]} °C, the hottest of validC, degree 0.4 would be reached in ` +
-      `${trial.gelS.toPrecision(2)} s. Are they in 1/min? ${CONFIRM}`,
-    resin.kinetics,
-  );
-}
 
 function refuseCelsiusLine({ diffusion, kinetics, validC }: Resin): void {
   const limits = [
@@ -76,4 +57,24 @@ function refuseLostSign({ kinetics, gasConstant, validC }: Resin): void {
   const atSwitch = arrhenius(A1, E1, hottestK, gasConstant) + switchDegree * arrhenius(A2, E2, hottestK, gasConstant);
   if (atSwitch > 0) return;
   refuse('kinetics.A2', 'a first branch that reaches its switch degree; this one stalls before it when hottest', A2);
+}
+
+/** Uncured resins are glasses below 190 °C; −80 °C in K is 193. */
+function refuseKelvinTg({ glassTransition }: Resin): void {
+  if (glassTransition === undefined || glassTransition.tg0C < 190) return;
+  refuse(
+    'glassTransition.tg0C',
+    `a temperature in °C below 190: this looks like K, take 273.15 off it and off tgInfC; ${CONFIRM}`,
+    glassTransition.tg0C,
+  );
+}
+
+/** Only resins for hot structures, whose Tg says so, are cured beyond 320 °C; 180 °C in °F is 356. */
+function refuseFahrenheitRange({ validC, glassTransition }: Resin): void {
+  if (validC === undefined || validC[1] <= 320 || (glassTransition?.tgInfC ?? 0) >= 300) return;
+  refuse(
+    'validC',
+    `temperatures in °C: ${validC[1]} °C is beyond what such a resin is cured at. Is it °F? ${CONFIRM}`,
+    validC,
+  );
 }
