@@ -38,7 +38,7 @@ export async function changeMaterials(parts: JudgingParts, change: MaterialChang
     ({ run, inputs }) => gatherInputs(db, run)?.hashes.materials !== inputs.hashes.materials,
   );
   const judged: ((typeof touched)[number] & { readonly document: Evaluation })[] = [];
-  for (const one of touched) judged.push({ ...one, document: await evaluateInputs(parts.evaluate, one.inputs) });
+  for (const one of touched) judged.push({ ...one, document: await evaluateInputs(parts, one.inputs) });
   db.transaction(() => {
     change.write();
     for (const { run, inputs, document } of judged) writeEvaluation(parts, run, change.because, inputs, document);

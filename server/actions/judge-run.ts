@@ -8,10 +8,13 @@ import { requireRun } from '../store/runs.ts';
 import { type ActionParts, deedOf } from './action-parts.ts';
 import type { EvaluateLog } from './evaluate-log.ts';
 import { type Changes, gatherInputs, type RunInputs } from './run-inputs.ts';
+import type { StoredRuns } from './stored-runs.ts';
 
 /** Parts of an action that ends in a judgement. */
 export interface JudgingParts extends ActionParts {
   readonly evaluate: EvaluateLog;
+  /** For long runs; where there is none they are read and judged like short ones. */
+  readonly stored?: StoredRuns | undefined;
 }
 
 /**
@@ -32,7 +35,7 @@ export async function changeAndJudge(
   const { db } = parts;
   requireRun(db, run);
   const inputs = gatherInputs(db, run, changes);
-  const document = inputs === null || inputs.scans === 0 ? null : await evaluateInputs(parts.evaluate, inputs);
+  const document = inputs === null || inputs.scans === 0 ? null : await evaluateInputs(parts, inputs);
   return db
     .transaction(() => {
       write();
@@ -54,11 +57,16 @@ export async function judgeRun(parts: JudgingParts, run: number, because = 'judg
   );
 }
 
+type Judges = Pick<JudgingParts, 'evaluate' | 'stored'>;
+
+/** Up to here reading a run takes a few ms. */
+const SCANS_READ_HERE = 5000;
+
 /** Judges by inputs; nothing is written. */
-export async function evaluateInputs(evaluate: EvaluateLog, inputs: RunInputs): Promise<Evaluation> {
+export async function evaluateInputs({ evaluate, stored }: Judges, inputs: RunInputs): Promise<Evaluation> {
   const { cycle, load, resin, materials, instruments, decisions } = inputs;
   const { exclusions, believed } = decisions;
-  const evaluation = await evaluate(inputs.readLog(), {
+  const by = {
     cycle,
     load,
     resin,
@@ -68,7 +76,11 @@ export async function evaluateInputs(evaluate: EvaluateLog, inputs: RunInputs): 
     believed,
     barometer: null,
     open: inputs.open,
-  });
+  };
+  const { storedRun, scans } = inputs;
+  const isLong = scans > SCANS_READ_HERE && storedRun !== null;
+  const evaluation =
+    isLong && stored !== undefined ? await stored.evaluate(storedRun, by) : await evaluate(inputs.readLog(), by);
   return {
     ...evaluation,
     log: { ...evaluation.log, sha256: inputs.logSha256 },

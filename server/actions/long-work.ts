@@ -6,7 +6,9 @@ import type { Compared, Overlaid } from '../contract/comparison.ts';
 import type { CureThroughPart } from './ask-thickness.ts';
 import type { CompareParts } from './compare-parts.ts';
 import type { EstimateCure, EvaluateLog } from './evaluate-log.ts';
+import type { MergedLog } from './merge-logs.ts';
 import type { OverlayParts } from './overlay-parts.ts';
+import type { StoredRuns } from './stored-runs.ts';
 import { startThread } from './thread.ts';
 
 /** Failed parts against sound ones. */
@@ -22,6 +24,8 @@ export interface LongWork {
   readonly cureThroughPart: CureThroughPart;
   /** Always in the thread, which reads the database for itself. */
   readonly trace: TraceWork;
+  /** Stored runs of a database, read in the thread. */
+  readonly storedRuns: (path: string) => StoredRuns;
   readonly close: () => Promise<void>;
 }
 
@@ -47,6 +51,10 @@ export function createLongWork({ doneHere = READINGS_DONE_HERE } = {}): LongWork
       compare: (asked) => thread.ask<Compared>('compareParts', [asked]),
       overlay: (asked) => thread.ask<Overlaid>('overlayParts', [asked]),
     },
+    storedRuns: (path) => ({
+      evaluate: (run, inputs) => thread.ask<Evaluation>('evaluateStored', [{ path, run }, inputs]),
+      read: (run) => thread.ask<MergedLog>('readStored', [{ path, run }]),
+    }),
     close: thread.close,
   };
 }

@@ -53,6 +53,8 @@ export interface RunInputs {
   readonly open: boolean;
   /** Scans of all its sources; without one there is nothing to judge. */
   readonly scans: number;
+  /** The run whose sources, as they are stored, these are; null where they are about to change. */
+  readonly storedRun: number | null;
   /** Reads the readings: the one costly part, put off until it is needed. */
   readonly readLog: () => ReadLog;
 }
@@ -132,6 +134,7 @@ export function gatherInputs(db: Db, run: number, changes: Changes = {}): RunInp
     logSha256: oneHash(sources.flatMap(({ fileSha256s }) => fileSha256s)),
     open: changes.open ?? findOpenRun(db, run) !== undefined,
     scans: sources.reduce((sum, { scans }) => sum + scans, 0),
+    storedRun: changes.sources === undefined ? run : null,
     readLog: () => readRunLog(sources),
   };
 }

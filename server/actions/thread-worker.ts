@@ -5,9 +5,18 @@ import { evaluateLog } from '../../models/evaluation/judge.ts';
 import { compareParts } from './compare-parts.ts';
 import { cureCourses } from './cure-courses.ts';
 import { overlayParts } from './overlay-parts.ts';
+import { evaluateStored, readStored } from './stored-runs.ts';
 
 /** What a thread can be asked to do; its arguments are plain data. */
-export const LONG_WORK = { evaluateLog, cureCourses, throughPart, compareParts, overlayParts } as const;
+export const LONG_WORK = {
+  evaluateLog,
+  cureCourses,
+  throughPart,
+  compareParts,
+  overlayParts,
+  evaluateStored,
+  readStored,
+} as const;
 
 export interface Question {
   readonly id: number;

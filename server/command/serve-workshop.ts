@@ -41,7 +41,13 @@ export async function serveWorkshop(options: ServerOptions): Promise<void> {
   const db = openDatabase(path, { at: new Date().toISOString() });
   const longWork = createLongWork();
   const live = startLiveLogging({ db, clock: Date.now, log });
-  const parts = { db, clock: Date.now, actor: builtInPerson(), evaluate: longWork.evaluate };
+  const parts = {
+    db,
+    clock: Date.now,
+    actor: builtInPerson(),
+    evaluate: longWork.evaluate,
+    stored: longWork.storedRuns(path),
+  };
   await options.prepare?.(parts);
   const sources = runSources({ db, live, inventVessel: await inventVesselIn(db), log });
   const incomingFolder = join(options.folder, 'incoming');

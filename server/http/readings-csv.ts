@@ -2,22 +2,23 @@ import type { JoinedReadings } from '../../models/log/join-channels.ts';
 import { scaledReading } from '../../models/log/readings.ts';
 import type { MergedLog } from '../actions/merge-logs.ts';
 import { readRunSources, sourceInputs } from '../actions/run-inputs.ts';
-import type { Db } from '../store/database.ts';
 import { isoFromMs } from '../store/instants.ts';
 import { requireRun } from '../store/runs.ts';
+import type { AppParts } from './app-parts.ts';
 import type { Download } from './handler.ts';
 
 /**
  * All readings of a run as a table: instants in UTC, each channel in its own unit, an absent reading an empty cell.
  * A channel that several sources read is followed by the number of the source that read it.
  */
-export function readingsCsv(db: Db, run: number): Download {
+export async function readingsCsv({ db, stored }: Pick<AppParts, 'db' | 'stored'>, run: number): Promise<Download> {
   requireRun(db, run);
-  const merged = readRunSources(sourceInputs(db, run));
+  const merged = stored === undefined ? readRunSources(sourceInputs(db, run)) : await stored.read(run);
   return { name: `run-${run}-readings.csv`, chunks: rowsOf(merged) };
 }
 
-const ROWS_AT_ONCE = 500;
+/** A few ms of work, so that what comes meanwhile waits no longer. */
+const ROWS_AT_ONCE = 100;
 
 function* rowsOf({ log, joined }: MergedLog): Generator<string> {
   const { timeMs } = log.readings;

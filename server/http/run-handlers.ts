@@ -62,6 +62,6 @@ export const runHandlers: SomeHandlers<
     addNote(parts, run, body);
     return runView(parts.db, run);
   },
-  readReadings: ({ db }, { params }) => readingsCsv(db, numberIn(params, 'run')),
+  readReadings: (parts, { params }) => readingsCsv(parts, numberIn(params, 'run')),
   readFile: ({ db }, { params }) => readFileOfRun(db, numberIn(params, 'run'), numberIn(params, 'n')),
 };
