@@ -14,34 +14,49 @@ export interface HeardRun {
 
 const MOST_SCANS = 4000;
 const NOTHING: HeardRun = { state: null, scans: [], heardMs: 0, isHeard: false };
+/** The page is drawn anew no more often than this, however fast news come. */
+const DRAWN_MS = 200;
 
 /** Follows an open run; `again` is called when everything is to be read again, and when the run was closed. */
 export function useLiveRun(run: number, again: () => void): HeardRun {
   const [heard, setHeard] = useState<HeardRun>(NOTHING);
-  useEffect(
-    () =>
-      listenTo(runLiveEventsPath(run), {
-        events: {
-          scans: (scans: readonly ScanEvent[]) =>
-            setHeard((before) => ({
-              ...before,
-              scans: joined(before.scans, scans),
-              heardMs: Date.now(),
-              isHeard: true,
-            })),
-          state: (state: LiveRun) => setHeard((before) => ({ ...before, state, heardMs: Date.now(), isHeard: true })),
-          again: () => {
-            setHeard((before) => ({ ...before, scans: [] }));
-            again();
-          },
-          closed: again,
+  useEffect(() => {
+    let now = NOTHING;
+    let drawnMs = 0;
+    let timer: ReturnType<typeof setTimeout> | null = null;
+    const draw = () => {
+      timer = null;
+      drawnMs = performance.now();
+      setHeard(now);
+    };
+    const hear = (change: Partial<HeardRun>) => {
+      now = { ...now, ...change };
+      // The first of several is drawn at once; those that follow on its heels are drawn together.
+      timer ??= setTimeout(draw, Math.max(0, drawnMs + DRAWN_MS - performance.now()));
+    };
+    const close = listenTo(runLiveEventsPath(run), {
+      events: {
+        scans: (scans: readonly ScanEvent[]) => hear({ scans: joined(now.scans, scans), ...heardNow() }),
+        state: (state: LiveRun) => hear({ state, ...heardNow() }),
+        again: () => {
+          hear({ scans: [] });
+          again();
         },
-        onLine: (isHeard) => setHeard((before) => ({ ...before, isHeard })),
-        onLost: again,
-      }),
-    [run],
-  );
+        closed: again,
+      },
+      onLine: (isHeard) => hear({ isHeard }),
+      onLost: again,
+    });
+    return () => {
+      if (timer !== null) clearTimeout(timer);
+      close();
+    };
+  }, [run]);
   return heard;
+}
+
+function heardNow() {
+  return { heardMs: Date.now(), isHeard: true };
 }
 
 /** What comes again after a dropped line is known already. */

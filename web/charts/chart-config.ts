@@ -42,7 +42,6 @@ function weight({ role }: Line): number {
 }
 
 function datasetOf(line: Line, ink: Ink): ChartDataset<'line', Point[]> {
-  const until = line.excludedFromH ?? Number.POSITIVE_INFINITY;
   return {
     label: line.channel,
     data: line.hours.map((x, n) => ({ x, y: line.value[n] ?? Number.NaN })),
@@ -50,11 +49,17 @@ function datasetOf(line: Line, ink: Ink): ChartDataset<'line', Point[]> {
     pointRadius: 0,
     spanGaps: false,
     borderJoinStyle: 'round',
-    segment: {
-      borderDash: ({ p0 }: ScriptableLineSegmentContext) => ((p0.parsed.x ?? 0) >= until ? [1, 4] : undefined),
-    },
+    ...dashOf(line),
     ...strokeOf(line, ink),
   };
+}
+
+/** Dashed from where it is not believed any more; asked for only there, because it is asked for every segment. */
+function dashOf({ excludedFromH }: Line) {
+  if (excludedFromH === null) return {};
+  const borderDash = ({ p0 }: ScriptableLineSegmentContext) =>
+    (p0.parsed.x ?? 0) >= excludedFromH ? [1, 4] : undefined;
+  return { segment: { borderDash } };
 }
 
 function strokeOf({ role }: Line, ink: Ink) {

@@ -1,4 +1,4 @@
-import { useEffect, useRef, useState } from 'preact/hooks';
+import { useState } from 'preact/hooks';
 
 /** The stretch of time in view, in ms since 1970. */
 export interface View {
@@ -21,17 +21,16 @@ export function useView(whole: View): {
   pan: (part: number) => void;
   showAll: () => void;
 } {
-  const [view, setView] = useState<View>(whole);
-  const wasWhole = useRef(whole);
-  useEffect(() => {
-    const before = wasWhole.current;
-    wasWhole.current = whole;
-    setView((now) => (now.fromMs <= before.fromMs && now.untilMs >= before.untilMs ? whole : bounded(now, whole)));
-  }, [whole.fromMs, whole.untilMs]);
-  const show = (next: View) => setView(bounded(next, whole));
+  const [stretch, setStretch] = useState<View | null>(null);
+  const view = stretch === null ? whole : bounded(stretch, whole);
+  const isWhole = view.fromMs <= whole.fromMs && view.untilMs >= whole.untilMs;
+  const show = (next: View) => {
+    const { fromMs, untilMs } = bounded(next, whole);
+    setStretch(fromMs <= whole.fromMs && untilMs >= whole.untilMs ? null : { fromMs, untilMs });
+  };
   return {
     view,
-    isWhole: view.fromMs <= whole.fromMs && view.untilMs >= whole.untilMs,
+    isWhole,
     show,
     zoom: (factor, aroundMs = (view.fromMs + view.untilMs) / 2) =>
       show({
@@ -42,7 +41,7 @@ export function useView(whole: View): {
       const by = (view.untilMs - view.fromMs) * part;
       show({ fromMs: view.fromMs + by, untilMs: view.untilMs + by });
     },
-    showAll: () => setView(whole),
+    showAll: () => setStretch(null),
   };
 }
 

@@ -77,13 +77,15 @@ export function RunLive({ run, again }: { run: RunView; again: () => void }) {
         {part && <FindingList part={part} run={run} lit={lit} onLight={setLit} />}
       </div>
       <div class="rest">
-        {forecast && evaluation && <LiveCure cure={forecast.cure} run={run} evaluation={evaluation} isOld={isOld} />}
+        {forecast && evaluation && (
+          <LiveCure cure={forecast.cure} run={run} evaluation={evaluation} nowMs={nowMs} isOld={isOld} />
+        )}
         {forecast && <LiveNearing forecast={forecast} />}
         <LiveReadings telling={telling} />
+        <LiveEnd run={run} ended={state?.ended ?? null} again={again} />
         <RunNotes run={run} onAdded={again} />
         <RunLoad run={run} />
         {evaluation && <RunSensors run={run} evaluation={evaluation} />}
-        <LiveEnd run={run} ended={state?.ended ?? null} again={again} />
       </div>
     </div>
   );

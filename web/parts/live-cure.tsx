@@ -12,11 +12,14 @@ export function LiveCure({
   cure,
   run,
   evaluation,
+  nowMs,
   isOld,
 }: {
   cure: Forecast['cure'];
   run: RunView;
   evaluation: Evaluation;
+  /** By the server's clock. */
+  nowMs: number;
   isOld: boolean;
 }) {
   if (cure === null || !evaluation.resin) return null;
@@ -27,7 +30,7 @@ export function LiveCure({
     ['degree at the end', cure.degreeAtEnd === null ? null : plain(cure.degreeAtEnd, 2)],
     ['Tg now', cure.tgNowC === null ? null : temperatureWords(cure.tgNowC, unit)],
     ['Tg at the end', cure.tgAtEndC === null ? null : temperatureWords(cure.tgAtEndC, unit)],
-    ['gel expected', cure.gelExpectedAt === null ? null : clockRoundedUp(cure.gelExpectedAt, zone.value)],
+    [isGelled(cure, nowMs) ? 'gelled' : 'gel expected', gelClock(cure)],
   ] as const;
   return (
     <section class="section">
@@ -46,4 +49,14 @@ export function LiveCure({
       {status && <ResinStanding status={status} />}
     </section>
   );
+}
+
+type Cure = NonNullable<Forecast['cure']>;
+
+function isGelled({ gelExpectedAt }: Cure, nowMs: number): boolean {
+  return gelExpectedAt !== null && Date.parse(gelExpectedAt) <= nowMs;
+}
+
+function gelClock({ gelExpectedAt }: Cure): string | null {
+  return gelExpectedAt === null ? null : clockRoundedUp(gelExpectedAt, zone.value);
 }
