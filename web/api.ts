@@ -17,6 +17,11 @@ export async function postBytes<T>(path: string, bytes: Blob): Promise<T> {
   return bodyOf<T>(await ask(path, { method: 'POST', headers, body: bytes }));
 }
 
+/** Asks for a picture, for whether there is one. */
+export async function readPicture(path: string): Promise<void> {
+  await ask(path, {});
+}
+
 async function ask(path: string, init: RequestInit): Promise<Response> {
   let response: Response;
   try {

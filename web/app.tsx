@@ -32,6 +32,7 @@ const CycleImportPage = lazy(() => import('./pages/cycle-import.tsx'));
 const LayupPage = lazy(() => import('./pages/layup.tsx'));
 const ToolsPage = lazy(() => import('./pages/tools.tsx'));
 const ToolPage = lazy(() => import('./pages/tool.tsx'));
+const LabelsPage = lazy(() => import('./pages/labels.tsx'));
 const ResinPage = lazy(() => import('./pages/resin.tsx'));
 
 export function App() {
@@ -60,6 +61,7 @@ export function App() {
               <Route path="/parts" component={PartsPage} />
               <Route path="/parts/:serial" component={PartPage} />
               <Route path="/parts/:serial/layup" component={LayupPage} />
+              <Route path="/labels" component={LabelsPage} />
               <Route path="/tools" component={ToolsPage} />
               <Route path="/tools/:tool" component={ToolPage} />
               <Route path="/materials" component={MaterialsPage} />

@@ -25,6 +25,7 @@ import {
   setInstrumentRequest,
   takeOffRequest,
 } from './instruments.ts';
+import { labelQuery } from './labels.ts';
 import { addPartWorkRequest, layupQuery, layupView, setCouponRequest, setLayupRequest } from './layups.ts';
 import {
   acknowledgeRequest,
@@ -95,7 +96,13 @@ export interface Operation extends Route {
   /** Of a JSON body. */
   readonly body?: z.ZodType;
   /** JSON answer, or the media type of another one. */
-  readonly answer: z.ZodType | 'text/csv' | 'application/octet-stream' | 'application/json' | 'text/event-stream';
+  readonly answer:
+    | z.ZodType
+    | 'text/csv'
+    | 'image/*'
+    | 'application/octet-stream'
+    | 'application/json'
+    | 'text/event-stream';
   /** Status of a good answer; default 200. */
   readonly status?: 201;
 }
@@ -196,6 +203,7 @@ export const OPERATIONS = {
   },
   compareParts: { ...ROUTES.compareParts, query: compareQuery, answer: compared },
   overlayParts: { ...ROUTES.overlayParts, query: overlayQuery, answer: overlaid },
+  readLabel: { ...ROUTES.readLabel, query: labelQuery, answer: 'image/*' },
   find: { ...ROUTES.find, query: findQuery, answer: found },
   readAudit: { ...ROUTES.readAudit, query: auditQuery, answer: audit },
   verifyAudit: { ...ROUTES.verifyAudit, answer: auditVerification },

@@ -186,6 +186,7 @@ export const ROUTES = {
   ),
   compareParts: route('get', '/api/trace/compare', 'What failed parts share that sound ones do not', ANYONE),
   overlayParts: route('get', '/api/trace/overlay', 'Failed and sound runs laid over each other', ANYONE),
+  readLabel: route('get', '/api/labels', 'The code of a part, tool, roll or kit as a symbol to scan', ANYONE),
   find: route('get', '/api/find', 'Where a code leads', ANYONE),
   readAudit: route('get', '/api/audit', 'The audit trail, latest first', ANYONE),
   verifyAudit: route('get', '/api/audit/verify', 'Recompute every chain', ANYONE),

@@ -6,7 +6,7 @@ import { OPERATIONS, type Operation } from '../contract/operations.ts';
 import type { OperationName } from '../contract/routes.ts';
 import type { AppParts } from './app-parts.ts';
 import { type EventStream, sendEvents } from './event-stream.ts';
-import type { Download, Handler } from './handler.ts';
+import type { Download, Handler, Picture } from './handler.ts';
 import { HANDLERS } from './handlers.ts';
 import { InvalidRequest } from './invalid-request.ts';
 
@@ -28,6 +28,10 @@ export async function answer(
   response.status(operation.status ?? 200);
   if (operation.answer === 'text/csv' || operation.answer === 'application/octet-stream') {
     await sendDownload(response, operation.answer, result as Download);
+  } else if (operation.answer === 'image/*') {
+    const { type, chunks } = result as Picture;
+    response.type(type);
+    await pipeline(Readable.from(chunks), response);
   } else if (operation.answer === 'text/event-stream') {
     sendEvents(response, result as EventStream);
   } else {

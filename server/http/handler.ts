@@ -21,11 +21,19 @@ type AnswerOf<N extends OperationName> = Operations[N]['answer'] extends z.ZodTy
     ? object
     : Operations[N]['answer'] extends 'text/event-stream'
       ? EventStream
-      : Download;
+      : Operations[N]['answer'] extends 'image/*'
+        ? Picture
+        : Download;
 
 /** An answer that is a file, chunk by chunk. */
 export interface Download {
   readonly name: string;
+  readonly chunks: Iterable<Uint8Array | string>;
+}
+
+/** An answer that is shown as a picture. Its type is told from its own bytes, or it was drawn here. */
+export interface Picture {
+  readonly type: 'image/svg+xml' | 'image/jpeg' | 'image/png' | 'image/webp' | 'image/gif';
   readonly chunks: Iterable<Uint8Array | string>;
 }
 

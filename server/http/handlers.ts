@@ -2,6 +2,7 @@ import { cycleHandlers } from './cycle-handlers.ts';
 import type { Handlers } from './handler.ts';
 import { importHandlers } from './import-handlers.ts';
 import { instrumentHandlers } from './instrument-handlers.ts';
+import { labelHandlers } from './label-handlers.ts';
 import { liveHandlers } from './live-handlers.ts';
 import { liveRunHandlers } from './live-run-handlers.ts';
 import { materialHandlers } from './material-handlers.ts';
@@ -22,6 +23,7 @@ export const HANDLERS: Handlers = {
   ...cycleHandlers,
   ...partHandlers,
   ...toolHandlers,
+  ...labelHandlers,
   ...traceHandlers,
   ...materialHandlers,
   ...instrumentHandlers,

@@ -21,7 +21,12 @@ const MODELS = [
   'models/trace',
   'models/forecast',
 ];
-const PATHS = ['server/contract/paths.ts', 'server/contract/instrument-paths.ts', 'server/contract/trace-paths.ts'];
+const PATHS = [
+  'server/contract/paths.ts',
+  'server/contract/instrument-paths.ts',
+  'server/contract/trace-paths.ts',
+  'server/contract/record-paths.ts',
+];
 const CONTRACT = ['server/contract', ...PATHS];
 const SHARED = ['models', 'models/numerics'];
 const WEB_PACKAGES = ['preact', '@preact/signals', 'preact-iso', 'chart.js', '@fontsource-variable/*'];
@@ -71,6 +76,7 @@ export const PLACES: Readonly<Record<string, Place>> = {
   'server/contract': room([...CONTRACT, ...MODELS], ['zod']),
   // Addresses only: it loads no schema, so that pages may build them too.
   'server/contract/paths.ts': room([]),
+  'server/contract/record-paths.ts': room(['server/contract/paths.ts']),
   'server/contract/instrument-paths.ts': room(PATHS),
   'server/contract/trace-paths.ts': room(PATHS),
   'server/store': room(['server/store', ...CONTRACT, ...MODELS], ['node:', 'better-sqlite3']),

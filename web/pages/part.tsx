@@ -3,6 +3,7 @@ import type { PartView } from '../../server/contract/parts.ts';
 import { partPath } from '../../server/contract/paths.ts';
 import { usePageTitle } from '../page-title.ts';
 import { AuditEntries } from '../parts/audit-entries.tsx';
+import { LabelLink } from '../parts/label-link.tsx';
 import { Notebook, PageHead } from '../parts/notebook.tsx';
 import { OutcomeMark, VerdictLine } from '../parts/outcome-mark.tsx';
 import { PartLayup } from '../parts/part-layup.tsx';
@@ -25,7 +26,10 @@ export function PartPage() {
   const view = reading.value;
   return (
     <Notebook margin={view && <Marks view={view} />}>
-      <PageHead title={serial}>{view && <About view={view} />}</PageHead>
+      <PageHead title={serial}>
+        {view && <About view={view} />}
+        {view && <LabelLink kind="part" code={serial} />}
+      </PageHead>
       <Shown reading={reading} what="Reading the part’s history">
         {(part) => <Body view={part} again={reading.again} />}
       </Shown>

@@ -6,6 +6,7 @@ import { ItemActs } from '../parts/item-acts.tsx';
 import { ItemEntry } from '../parts/item-entry.tsx';
 import { ItemExtras } from '../parts/item-extras.tsx';
 import { ItemLedger } from '../parts/item-ledger.tsx';
+import { LabelLink } from '../parts/label-link.tsx';
 import { LifeLines, LifeMark } from '../parts/life-lines.tsx';
 import { Entry, Notebook, PageHead } from '../parts/notebook.tsx';
 import { Shown } from '../parts/shown.tsx';
@@ -26,7 +27,10 @@ export default function RollPage() {
   usePageTitle(`${kind} ${item}`);
   return (
     <Notebook>
-      <PageHead title={`${kind} ${item}`}>{view && <About view={view} />}</PageHead>
+      <PageHead title={`${kind} ${item}`}>
+        {view && <About view={view} />}
+        {view && <LabelLink kind={view.kind} code={item} />}
+      </PageHead>
       <Shown reading={reading} what="Reading the ledger">
         {(found) => <Body key={found.item} view={found} again={reading.again} />}
       </Shown>

@@ -3,6 +3,7 @@ import { toolPath } from '../../server/contract/paths.ts';
 import type { ToolRecord } from '../../server/contract/tool-record.ts';
 import type { ToolView } from '../../server/contract/tools.ts';
 import { usePageTitle } from '../page-title.ts';
+import { LabelLink } from '../parts/label-link.tsx';
 import { Entry, Notebook, PageHead } from '../parts/notebook.tsx';
 import { VerdictLine } from '../parts/outcome-mark.tsx';
 import { Shown } from '../parts/shown.tsx';
@@ -22,6 +23,7 @@ export default function ToolPage() {
     <Notebook>
       <PageHead title={`Tool ${code}`}>
         {reading.value?.record && <p class="soft">{reading.value.record.title ?? 'What it is is not on record'}</p>}
+        {reading.value && <LabelLink kind="tool" code={code} />}
       </PageHead>
       {isNew ? (
         <>
