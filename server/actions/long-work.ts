@@ -19,6 +19,8 @@ export interface TraceWork {
 
 export interface LongWork {
   readonly evaluate: EvaluateLog;
+  /** Always in the thread: for many runs one after another. */
+  readonly evaluateAside: EvaluateLog;
   readonly estimateCure: EstimateCure;
   /** Always in the thread: it takes a tenth of a second and more, however small the log. */
   readonly cureThroughPart: CureThroughPart;
@@ -41,6 +43,7 @@ export function createLongWork({ doneHere = READINGS_DONE_HERE } = {}): LongWork
       const { evaluateLog } = await import('../../models/evaluation/judge.ts');
       return evaluateLog(log, inputs);
     },
+    evaluateAside: (log, inputs) => thread.ask<Evaluation>('evaluateLog', [log, inputs]),
     async estimateCure(...given) {
       if (countReadings(given[0]) > doneHere) return thread.ask<CureOfPart>('cureCourses', given);
       const { cureCourses } = await import('./cure-courses.ts');

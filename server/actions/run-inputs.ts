@@ -15,7 +15,7 @@ import { type CycleRow, readCycleDocument, requireCycle } from '../store/cycles.
 import type { Db } from '../store/database.ts';
 import { readDecisions } from '../store/decisions.ts';
 import type { EvaluationInputs } from '../store/evaluations.ts';
-import { type OtherCalibrations, recordsOfInstruments } from '../store/instrument-records.ts';
+import { recordsOfInstruments } from '../store/instrument-records.ts';
 import { findOpenRun } from '../store/live-runs.ts';
 import { findLoad } from '../store/loads.ts';
 import { recordsOfParts } from '../store/material-records.ts';
@@ -69,8 +69,6 @@ export interface Changes {
   /** Whether it is judged as one that is still being logged. */
   readonly open?: boolean;
   readonly vesselId?: number | null;
-  /** Calibrations of an instrument as they would stand. */
-  readonly calibrations?: OtherCalibrations;
 }
 
 /** One source's part in a judgement. */
@@ -140,16 +138,20 @@ export function gatherInputs(db: Db, run: number, changes: Changes = {}): RunInp
 }
 
 /** What is on record of the instruments of a run's channels. */
+export function instrumentsOfRun(db: Db, run: number): InstrumentRecords | null {
+  return instrumentsOf(db, run, sourceInputs(db, run), {});
+}
+
 function instrumentsOf(
   db: Db,
   run: number,
   sources: readonly SourceInput[],
-  { vesselId = vesselOfRun(db, run), calibrations }: Changes,
+  { vesselId = vesselOfRun(db, run) }: Changes,
 ): InstrumentRecords | null {
   const fromMs = Math.min(...sources.map((source) => source.fromMs));
   const untilMs = Math.max(...sources.map((source) => source.untilMs));
   if (!Number.isFinite(fromMs)) return null;
-  return recordsOfInstruments(db, { vesselId, fromMs, untilMs }, sources.flatMap(recordedChannels), calibrations);
+  return recordsOfInstruments(db, { vesselId, fromMs, untilMs }, sources.flatMap(recordedChannels));
 }
 
 /** The channels of a source, each with the recorder or live source it came through. */

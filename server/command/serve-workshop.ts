@@ -60,6 +60,7 @@ export async function serveWorkshop(options: ServerOptions): Promise<void> {
     engine: following.engine,
     telling: following.telling,
     estimateCure: longWork.estimateCure,
+    evaluateAside: longWork.evaluateAside,
     cureThroughPart: longWork.cureThroughPart,
     trace: longWork.trace,
     log,

@@ -1,4 +1,5 @@
 import type * as z from 'zod';
+import { askedParts, askPartsQuery, askVerdictsQuery, touched, withoutRecord } from './ask.ts';
 import { audit, auditQuery, auditVerification } from './audit.ts';
 import { chartQuery } from './chart.ts';
 import { compared, compareQuery, overlaid, overlayQuery } from './comparison.ts';
@@ -192,6 +193,10 @@ export const OPERATIONS = {
   addCalibration: { ...ROUTES.addCalibration, body: addCalibrationRequest, answer: instrumentView, status: 201 },
   placeInstrument: { ...ROUTES.placeInstrument, body: placeInstrumentRequest, answer: instrumentView, status: 201 },
   takeOffInstrument: { ...ROUTES.takeOffInstrument, body: takeOffRequest, answer: instrumentView, status: 201 },
+  readTouched: { ...ROUTES.readTouched, answer: touched },
+  askParts: { ...ROUTES.askParts, query: askPartsQuery, answer: askedParts },
+  askWithoutRecord: { ...ROUTES.askWithoutRecord, answer: withoutRecord },
+  askVerdicts: { ...ROUTES.askVerdicts, query: askVerdictsQuery, answer: 'text/event-stream' },
   readSurveys: { ...ROUTES.readSurveys, answer: vesselSurveys },
   addSurvey: { ...ROUTES.addSurvey, body: addSurveyRequest, answer: vesselSurveys, status: 201 },
   addAccuracyTest: { ...ROUTES.addAccuracyTest, body: addAccuracyTestRequest, answer: vesselSurveys, status: 201 },

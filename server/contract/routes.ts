@@ -168,6 +168,20 @@ export const ROUTES = {
     ANYONE,
     'json',
   ),
+  readTouched: route(
+    'get',
+    '/api/instruments/{instrument}/calibrations/{calibration}/touched',
+    'Runs a calibration casts doubt on that found its instrument out of tolerance',
+    ANYONE,
+  ),
+  askParts: route('get', '/api/ask/parts', 'Which parts saw a roll, a tool, a sensor, a vessel', ANYONE),
+  askWithoutRecord: route('get', '/api/ask/without-record', 'Parts of which something is not on record', ANYONE),
+  askVerdicts: route(
+    'get',
+    '/api/ask/verdicts/events',
+    'Which runs would be judged otherwise by something else, as server-sent events',
+    DECIDERS,
+  ),
   readSurveys: route('get', '/api/vessels/{vessel}/surveys', 'Surveys and tests of a vessel, and its range', ANYONE),
   addSurvey: route('post', '/api/vessels/{vessel}/surveys', 'Record a uniformity survey', DECIDERS, 'json'),
   addAccuracyTest: route(

@@ -1,5 +1,5 @@
 import type { CureThroughPart } from '../actions/ask-thickness.ts';
-import type { EstimateCure } from '../actions/evaluate-log.ts';
+import type { EstimateCure, EvaluateLog } from '../actions/evaluate-log.ts';
 import type { JudgingParts } from '../actions/judge-run.ts';
 import type { TraceWork } from '../actions/long-work.ts';
 import type { AuditVerification } from '../contract/audit.ts';
@@ -10,6 +10,8 @@ import type { Telling } from '../live/warnings/tell-outside.ts';
 
 /** What the server is made of. Everything is opened by who makes it. */
 export interface AppParts extends JudgingParts {
+  /** As `evaluate`, however small the log: for many runs one after another. */
+  readonly evaluateAside: EvaluateLog;
   readonly estimateCure: EstimateCure;
   /** What takes scans and keeps them. */
   readonly live: LiveLogging;

@@ -1,3 +1,4 @@
+import { askHandlers } from './ask-handlers.ts';
 import { cycleHandlers } from './cycle-handlers.ts';
 import type { Handlers } from './handler.ts';
 import { importHandlers } from './import-handlers.ts';
@@ -27,6 +28,7 @@ export const HANDLERS: Handlers = {
   ...traceHandlers,
   ...materialHandlers,
   ...instrumentHandlers,
+  ...askHandlers,
   ...liveRunHandlers,
   ...senderHandlers,
   ...sourceHandlers,

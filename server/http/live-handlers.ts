@@ -1,4 +1,4 @@
-import { readRunLog, sourceInputs } from '../actions/run-inputs.ts';
+import { gatherInputs, readRunLog, sourceInputs } from '../actions/run-inputs.ts';
 import type { LiveRun, ScanEvent } from '../contract/live.ts';
 import { foldedRows } from '../live/engine/folded-run.ts';
 import type { FollowedScan } from '../live/engine/run-follower.ts';
@@ -48,7 +48,7 @@ export const liveHandlers: SomeHandlers<'readLive' | 'watchLive' | 'readLiveRun'
 function scansSince({ db }: AppParts, run: number, lastEventId: string | null, { scans }: LiveRun): FollowedScan[] {
   const after = Number(lastEventId ?? scans);
   if (!Number.isInteger(after) || after < 0 || after >= scans) return [];
-  const load = findLoad(db, run)?.document ?? null;
+  const load = gatherInputs(db, run)?.load ?? findLoad(db, run)?.document ?? null;
   return foldedRows(readRunLog(sourceInputs(db, run)), load, after, scans);
 }
 

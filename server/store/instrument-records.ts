@@ -14,9 +14,6 @@ export interface RecordedChannel {
   readonly source: string | null;
 }
 
-/** The calibrations of an instrument as they would stand; undefined: as they do. */
-export type OtherCalibrations = (instrumentId: number) => readonly CalibrationLine[] | undefined;
-
 /**
  * What is on record of the instruments a run was read by, as of the day it began; null where no channel's instrument
  * is known. What sat on a recorder's or source's channel goes before what sat on the vessel's.
@@ -25,7 +22,6 @@ export function recordsOfInstruments(
   db: Db,
   run: { readonly vesselId: number | null; readonly fromMs: number; readonly untilMs: number },
   channels: readonly RecordedChannel[],
-  other: OtherCalibrations = () => undefined,
 ): InstrumentRecords | null {
   const zone = zoneOfWorkshop(db);
   const from = dayIn(zone, run.fromMs);
@@ -35,7 +31,7 @@ export function recordsOfInstruments(
     const places = placesOf(db, run, one);
     const place = places.find(({ fromMs }) => fromMs <= run.fromMs);
     if (place === undefined) continue;
-    const calibrations = other(place.instrumentId) ?? readCalibrationsNow(db, place.instrumentId);
+    const calibrations = readCalibrationsNow(db, place.instrumentId);
     found.push({
       channel: one.channel,
       instrument: place.instrument,

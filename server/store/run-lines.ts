@@ -21,6 +21,16 @@ export function findRunLine(db: Db, run: number): RunLine | undefined {
   return row === undefined ? undefined : lineOf(db, row);
 }
 
+/** Judged runs whose load names an issue of a cycle, in order of time. */
+export function listJudgedRuns(db: Db, code: string, issue: string): number[] {
+  return db
+    .prepare<[string, string], number>(
+      `SELECT runs.id ${FROM} WHERE code = ? AND issue = ? AND evaluations.id IS NOT NULL ORDER BY runs.from_ms, runs.id`,
+    )
+    .pluck()
+    .all(code, issue);
+}
+
 /** A run that waits for a person, with the channels of the sensors to decide on. */
 export interface RunInNeed {
   readonly run: RunLine;

@@ -135,6 +135,7 @@ function serve(parts: JudgingParts, folder: string): Promise<Server> {
     watchedFolder: null,
     mostUploadBytes: 0,
     estimateCure: async (...given) => cureCourses(...given),
+    evaluateAside: async (log, inputs) => evaluateLog(log, inputs),
     cureThroughPart: async (asked) => throughPart(asked),
     trace: { compare: async (asked) => compareParts(asked), overlay: async (asked) => overlayParts(asked) },
     verify: async () => verifyChains(parts.db),

@@ -3,7 +3,7 @@ import type { LiveApp } from './live-app.ts';
 import { recordedCase } from './recorded-case.ts';
 import { loadCase, recordCase } from './workshop-steps.ts';
 
-const CASE = 'must-work';
+const CASE = 'sound';
 
 /** Part thermocouples of the recorded run of 3 March. */
 export const CHANNELS = recordedCase(CASE)

@@ -74,6 +74,7 @@ export async function liveApp(changes: Partial<AppParts> = {}): Promise<LiveApp>
     clock,
     actor: { name: 'inspector 2', roles: ROLES },
     evaluate: async (log, inputs) => evaluateLog(log, inputs),
+    evaluateAside: async (log, inputs) => evaluateLog(log, inputs),
     estimateCure: async (...given) => cureCourses(...given),
     cureThroughPart: async (asked) => throughPart(asked),
     trace: { compare: async (asked) => compareParts(asked), overlay: async (asked) => overlayParts(asked) },
