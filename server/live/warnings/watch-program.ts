@@ -29,6 +29,7 @@ export function watchProgram({ db, folder, live, desk }: WatchedProgram): () => 
     const claim = claimOf(notice);
     if (claim !== null) desk.note(claim, now(), 'vesselId' in notice ? notice.vesselId : null);
   });
+  let isOver = false;
   const turn = async () => {
     const claims: Claim[] = [];
     const state = journal.state();
@@ -37,6 +38,7 @@ export function watchProgram({ db, folder, live, desk }: WatchedProgram): () => 
       claims.push({ kind: 'cannot-be-kept', subject: 'disk', text });
     }
     const freeBytes = await freeBytesIn(folder);
+    if (isOver) return;
     if (freeBytes < LOW_BYTES) {
       const text = `${Math.floor(freeBytes / 1024 ** 2)} MB are left on the disk of the database.`;
       claims.push({ kind: 'disk-low', subject: 'disk', text });
@@ -47,6 +49,7 @@ export function watchProgram({ db, folder, live, desk }: WatchedProgram): () => 
   timer.unref();
   void turn();
   return () => {
+    isOver = true;
     clearInterval(timer);
     endNotices();
   };
