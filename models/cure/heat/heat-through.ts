@@ -90,6 +90,8 @@ export function heatThrough(
   const rate = cureRate(resin);
   const step = new RosenbrockStep(stack, (t, a) => rate.rate(branchAt(rate, a), t, a));
   const temperatureK = new Float64Array(stack.positionM.length).fill(startK);
+  temperatureK[0] = startOf(faces[0], startK);
+  temperatureK[temperatureK.length - 1] = startOf(faces[1], startK);
   const alpha = Float64Array.from(stack.reactionHeat, (heat) => (heat === 0 ? 0 : startDegree));
   const profileAt = (at: number): Profile => ({
     timeS: at,
@@ -151,6 +153,11 @@ export function heatThrough(
     mostCured: placeOf(end.alpha, stack.positionM, (degree, best) => degree > best),
     steps,
   };
+}
+
+/** A face under a thermocouple is as warm as that reads, from the first moment on. */
+function startOf(face: Face, startK: number): number {
+  return face.meets === 'thermocouple' ? face.temperatureK[0]! : startK;
 }
 
 function historyOfFace(face: Face): Float64Array {
