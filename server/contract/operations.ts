@@ -31,6 +31,8 @@ import { addPartWorkRequest, layupQuery, layupView, setCouponRequest, setLayupRe
 import {
   acknowledgeRequest,
   beginRunRequest,
+  doorChecks,
+  doorChecksRequest,
   endRunRequest,
   enterRequest,
   liveRun,
@@ -193,6 +195,8 @@ export const OPERATIONS = {
   addCalibration: { ...ROUTES.addCalibration, body: addCalibrationRequest, answer: instrumentView, status: 201 },
   placeInstrument: { ...ROUTES.placeInstrument, body: placeInstrumentRequest, answer: instrumentView, status: 201 },
   takeOffInstrument: { ...ROUTES.takeOffInstrument, body: takeOffRequest, answer: instrumentView, status: 201 },
+  readDoorChecks: { ...ROUTES.readDoorChecks, answer: doorChecks },
+  checkDoor: { ...ROUTES.checkDoor, body: doorChecksRequest, answer: doorChecks },
   readTouched: { ...ROUTES.readTouched, answer: touched },
   askParts: { ...ROUTES.askParts, query: askPartsQuery, answer: askedParts },
   askWithoutRecord: { ...ROUTES.askWithoutRecord, answer: withoutRecord },

@@ -168,6 +168,19 @@ export const ROUTES = {
     ANYONE,
     'json',
   ),
+  readDoorChecks: route(
+    'get',
+    '/api/vessels/{vessel}/door-checks',
+    'What is to be seen before the door closes',
+    ANYONE,
+  ),
+  checkDoor: route(
+    'post',
+    '/api/vessels/{vessel}/door-checks',
+    'What is to be seen before the door closes on a load and for a cycle',
+    ANYONE,
+    'json',
+  ),
   readTouched: route(
     'get',
     '/api/instruments/{instrument}/calibrations/{calibration}/touched',

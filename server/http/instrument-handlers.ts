@@ -2,6 +2,7 @@ import { addCalibration } from '../actions/add-calibration.ts';
 import { addAccuracyTest, addSurvey, setQualifiedRange } from '../actions/add-survey.ts';
 import { placeInstrument, takeOff } from '../actions/place-instrument.ts';
 import { setInstrument } from '../actions/set-instrument.ts';
+import { doorChecks } from './door-checks.ts';
 import type { SomeHandlers } from './handler.ts';
 import { instrumentsView, instrumentView, vesselSurveysView } from './instrument-view.ts';
 import { numberIn } from './number-in.ts';
@@ -17,6 +18,8 @@ export const instrumentHandlers: SomeHandlers<
   | 'addSurvey'
   | 'addAccuracyTest'
   | 'setQualifiedRange'
+  | 'readDoorChecks'
+  | 'checkDoor'
 > = {
   listInstruments: ({ db, clock }) => instrumentsView(db, clock()),
   setInstrument(parts, { body }) {
@@ -55,4 +58,6 @@ export const instrumentHandlers: SomeHandlers<
     setQualifiedRange(parts, vessel, body);
     return vesselSurveysView(parts.db, vessel, parts.clock());
   },
+  readDoorChecks: (parts, { params }) => doorChecks(parts, params.vessel ?? '', { load: null, cycle: null }),
+  checkDoor: (parts, { params, body }) => doorChecks(parts, params.vessel ?? '', body),
 };
