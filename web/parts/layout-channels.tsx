@@ -92,7 +92,6 @@ function ChannelLine({
           onInput={(event) => change('unit', event.currentTarget.value)}
         />
       </label>
-      {channel.thermocouple && <ThermocoupleFields editing={editing} n={n} thermocouple={channel.thermocouple} />}
       <button
         type="button"
         class="quiet"
@@ -101,6 +100,7 @@ function ChannelLine({
       >
         Leave out
       </button>
+      {channel.thermocouple && <ThermocoupleFields editing={editing} n={n} thermocouple={channel.thermocouple} />}
       <p class="read small soft">
         {read &&
           `${figure(read.least, read.unit)} to ${figure(read.greatest, read.unit)}${read.absent > 0 ? `, ${read.absent} absent` : ''}. `}

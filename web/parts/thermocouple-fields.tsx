@@ -19,7 +19,7 @@ export function ThermocoupleFields({
   const change = (what: string, answer: string) => onChange(withAnswer(layout, keyOf(what), answer), keyOf(what));
   const colds = layout.channels.filter(({ unit }) => isTemperatureUnit(unit));
   return (
-    <>
+    <div class="emf">
       <label>
         <span>Thermocouple</span>
         <select
@@ -50,6 +50,6 @@ export function ThermocoupleFields({
           ))}
         </datalist>
       </label>
-    </>
+    </div>
   );
 }
