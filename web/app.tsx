@@ -33,6 +33,9 @@ const LayupPage = lazy(() => import('./pages/layup.tsx'));
 const ToolsPage = lazy(() => import('./pages/tools.tsx'));
 const ToolPage = lazy(() => import('./pages/tool.tsx'));
 const LabelsPage = lazy(() => import('./pages/labels.tsx'));
+const TracePage = lazy(() => import('./pages/trace.tsx'));
+const HoldPage = lazy(() => import('./pages/hold.tsx'));
+const ComparePage = lazy(() => import('./pages/compare.tsx'));
 const ResinPage = lazy(() => import('./pages/resin.tsx'));
 
 export function App() {
@@ -62,6 +65,9 @@ export function App() {
               <Route path="/parts/:serial" component={PartPage} />
               <Route path="/parts/:serial/layup" component={LayupPage} />
               <Route path="/labels" component={LabelsPage} />
+              <Route path="/trace" component={TracePage} />
+              <Route path="/trace/holds/:hold" component={HoldPage} />
+              <Route path="/trace/compare" component={ComparePage} />
               <Route path="/tools" component={ToolsPage} />
               <Route path="/tools/:tool" component={ToolPage} />
               <Route path="/materials" component={MaterialsPage} />

@@ -13,6 +13,7 @@ import './style/material.css';
 import './style/cycle.css';
 import './style/resin.css';
 import './style/thickness.css';
+import './style/trace.css';
 import './style/live.css';
 import './style/live-run.css';
 import './style/vessel.css';

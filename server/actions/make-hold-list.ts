@@ -52,7 +52,10 @@ export function findEndangered(
       if (known !== undefined) known.failed.push(serial);
       else placeOf.set(key, shared.push({ kind, what, failed: [serial] }) - 1);
     }
-    for (const [id, serial] of serialOf) if (!traits.some(({ partId }) => partId === id)) lacks.get(serial)?.push(kind);
+    // Most parts come from no kit: a roll on record is enough.
+    const mayLack = kind !== 'kit';
+    for (const [id, serial] of serialOf)
+      if (mayLack && !traits.some(({ partId }) => partId === id)) lacks.get(serial)?.push(kind);
     for (const { partId, key, run } of readKin(db, kind, [...placeOf.keys()], span)) {
       addReason(reasons, partId, placeOf.get(key) ?? 0, run);
     }

@@ -89,7 +89,7 @@ import { addAccuracyTestRequest, addSurveyRequest, setQualifiedRangeRequest, ves
 import { thickness, thicknessQuery } from './thickness.ts';
 import { setToolRequest } from './tool-record.ts';
 import { tools, toolView } from './tools.ts';
-import { holds, holdView, makeHoldRequest, partDanger, setWhereaboutsRequest } from './trace.ts';
+import { failedParts, holds, holdView, makeHoldRequest, partDanger, setWhereaboutsRequest } from './trace.ts';
 import { setWarningRoutesRequest, warningRoutesView } from './warnings.ts';
 import { addVesselRequest, setWorkshopRequest, vessels, workshop } from './workshop.ts';
 
@@ -210,6 +210,7 @@ export const OPERATIONS = {
     answer: vesselSurveys,
     status: 201,
   },
+  listFailed: { ...ROUTES.listFailed, answer: failedParts },
   compareParts: { ...ROUTES.compareParts, query: compareQuery, answer: compared },
   overlayParts: { ...ROUTES.overlayParts, query: overlayQuery, answer: overlaid },
   readLabel: { ...ROUTES.readLabel, query: labelQuery, answer: 'image/*' },

@@ -211,6 +211,7 @@ export const ROUTES = {
     ENGINEERS,
     'json',
   ),
+  listFailed: route('get', '/api/trace/failed', 'Parts with a failed test, those tested last first', ANYONE),
   compareParts: route('get', '/api/trace/compare', 'What failed parts share that sound ones do not', ANYONE),
   overlayParts: route('get', '/api/trace/overlay', 'Failed and sound runs laid over each other', ANYONE),
   readLabel: route('get', '/api/labels', 'The code of a part, tool, roll or kit as a symbol to scan', ANYONE),

@@ -16,6 +16,8 @@ export function holdCsvPath(hold: number): string {
   return `${holdPath(hold)}/list.csv`;
 }
 
+export const FAILED_PARTS_PATH = '/api/trace/failed';
+
 /** Which parts are compared; `failed` are serials, a line each. */
 export interface ScopeWords {
   readonly failed?: string;

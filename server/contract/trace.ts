@@ -47,6 +47,23 @@ export const partDanger = z.object({
 });
 export type PartDanger = z.infer<typeof partDanger>;
 
+/** Parts with a failed test, those tested last first. */
+export const failedParts = z.object({
+  parts: z.array(
+    z.object({
+      serial: z.string(),
+      title: z.string().nullable(),
+      drawing: z.string().nullable(),
+      /** What the latest failed test showed. */
+      test: z.string(),
+      text: z.string(),
+      at: instant,
+    }),
+  ),
+  total: z.number(),
+});
+export type FailedParts = z.infer<typeof failedParts>;
+
 export const makeHoldRequest = z.strictObject({
   /** Serials of the failed parts it starts from. */
   failed: z.array(name).min(1).max(200),

@@ -2,6 +2,7 @@ import { makeHoldList } from '../actions/make-hold-list.ts';
 import { setWhereabouts } from '../actions/set-whereabouts.ts';
 import type { PartDanger } from '../contract/trace.ts';
 import type { Db } from '../store/database.ts';
+import { listFailedParts } from '../store/failed-parts.ts';
 import { listHoldLists, listHoldsOfPart, requireHoldList } from '../store/hold-lists.ts';
 import { requirePart } from '../store/parts.ts';
 import { readWhereabouts } from '../store/whereabouts.ts';
@@ -10,6 +11,7 @@ import { holdCsv } from './hold-csv.ts';
 import { numberIn } from './number-in.ts';
 
 export const traceHandlers: SomeHandlers<
+  | 'listFailed'
   | 'compareParts'
   | 'overlayParts'
   | 'listHolds'
@@ -19,6 +21,7 @@ export const traceHandlers: SomeHandlers<
   | 'readDanger'
   | 'setWhereabouts'
 > = {
+  listFailed: ({ db }) => listFailedParts(db),
   compareParts: ({ db, clock, trace }, { query }) =>
     trace.compare({ path: db.name, at: new Date(clock()).toISOString(), query }),
   overlayParts: ({ db, clock, trace }, { query }) =>

@@ -130,7 +130,7 @@ describe('a hold list', () => {
       withoutRun: 5,
       runsWithoutLoad: [5],
       runsWithoutVessel: [5],
-      notFollowed: [{ serial: 'same-vessel', lacks: ['kit', 'roll', 'batch', 'tool', 'bag-line', 'thermocouple'] }],
+      notFollowed: [{ serial: 'same-vessel', lacks: ['roll', 'batch', 'tool', 'bag-line', 'thermocouple'] }],
     });
   });
 

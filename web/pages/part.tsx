@@ -6,6 +6,7 @@ import { AuditEntries } from '../parts/audit-entries.tsx';
 import { LabelLink } from '../parts/label-link.tsx';
 import { Notebook, PageHead } from '../parts/notebook.tsx';
 import { OutcomeMark, VerdictLine } from '../parts/outcome-mark.tsx';
+import { PartDangerSection } from '../parts/part-danger.tsx';
 import { PartLayup } from '../parts/part-layup.tsx';
 import { PartMaterialsSection } from '../parts/part-materials.tsx';
 import { PartResults } from '../parts/part-results.tsx';
@@ -110,6 +111,7 @@ function Body({ view, again }: { view: PartView; again: () => void }) {
         )}
       </section>
       <PartResults view={view} onAdded={again} />
+      <PartDangerSection serial={view.serial} hasFailed={view.results.some(({ outcome }) => outcome === 'failed')} />
       <section class="section">
         <h2>Parts that share something with it</h2>
         {view.shares.length === 0 ? (

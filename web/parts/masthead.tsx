@@ -7,6 +7,7 @@ const PAGES: readonly (readonly [string, string])[] = [
   ['/live', 'All vessels'],
   ['/runs', 'Runs'],
   ['/parts', 'Parts'],
+  ['/trace', 'Trace'],
   ['/materials', 'Materials'],
   ['/cycles', 'Cycles'],
   ['/resins', 'Resins'],
