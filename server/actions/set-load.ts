@@ -14,6 +14,7 @@ import { readSources } from '../store/sources.ts';
 import { requireVessel } from '../store/vessels.ts';
 import { type ActionParts, deedOf } from './action-parts.ts';
 import { changeAndJudge, type JudgingParts } from './judge-run.ts';
+import { refuseTwoPlaces } from './refuse-two-places.ts';
 
 /** Says what was in the vessel and by which cycle it was cured, and judges the run by it. */
 export async function setLoad(parts: JudgingParts, run: number, request: SetLoadRequest): Promise<number | null> {
@@ -68,6 +69,7 @@ export function writeLoad(
   const reason = request.reason ?? null;
   const sha256 = insertLoad(db, { run, document: load, cycleId: cycle?.id ?? null, reason, ...deed });
   if (request.vessel != null) setVessel(db, run, requireVessel(db, request.vessel));
+  refuseTwoPlaces(db, run);
   for (const particulars of request.particulars ?? []) insertParticulars(db, particulars, deed.at, deed.by);
   for (const decision of decisions) insertDecision(db, run, decision);
   appendAudit(db, {

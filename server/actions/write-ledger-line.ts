@@ -1,3 +1,4 @@
+import { DomainError } from '../../models/errors.ts';
 import type { LedgerEvent } from '../../models/material/ledger.ts';
 import { appendAudit } from '../store/audit.ts';
 import { type ItemRow, insertLine, type NewLine } from '../store/material-items.ts';
@@ -10,6 +11,9 @@ export function writeLedgerLine(
   verb: string,
   line: Pick<NewLine, 'event' | 'lengthM' | 'replaces' | 'reason'>,
 ): number {
+  if (line.event?.kind === 'cut' && line.event.from === item.item) {
+    throw new DomainError('event-impossible', `${item.item} cannot be cut from itself`, { item: item.item });
+  }
   const deed = deedOf(parts);
   const id = insertLine(parts.db, { itemId: item.id, ...line, ...deed });
   appendAudit(parts.db, {

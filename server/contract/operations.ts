@@ -69,9 +69,11 @@ import {
   setPartMaterialsRequest,
 } from './materials.ts';
 import { now } from './now.ts';
-import { addPartResultRequest, parts, partsQuery, partView } from './parts.ts';
+import { papers, sendPaperQuery } from './papers.ts';
+import { parts, partsQuery, partView } from './parts.ts';
 import { addRecorderRequest, keepLayoutRequest, recorder, recorders } from './recorders.ts';
 import { importResinRequest, resins, resinView } from './resins.ts';
+import { addPartResultRequest, setNonconformanceRequest } from './results.ts';
 import { ROUTES, type Route } from './routes.ts';
 import {
   addNoteRequest,
@@ -157,6 +159,18 @@ export const OPERATIONS = {
   listParts: { ...ROUTES.listParts, query: partsQuery, answer: parts },
   readPart: { ...ROUTES.readPart, answer: partView },
   addPartResult: { ...ROUTES.addPartResult, body: addPartResultRequest, answer: partView, status: 201 },
+  setNonconformance: {
+    ...ROUTES.setNonconformance,
+    body: setNonconformanceRequest,
+    answer: partView,
+    status: 201,
+  },
+  listPartPapers: { ...ROUTES.listPartPapers, answer: papers },
+  sendPartPaper: { ...ROUTES.sendPartPaper, query: sendPaperQuery, answer: papers, status: 201 },
+  listRunPapers: { ...ROUTES.listRunPapers, answer: papers },
+  sendRunPaper: { ...ROUTES.sendRunPaper, query: sendPaperQuery, answer: papers, status: 201 },
+  readPaper: { ...ROUTES.readPaper, answer: 'application/octet-stream' },
+  showPaper: { ...ROUTES.showPaper, answer: 'image/*' },
   readLayup: { ...ROUTES.readLayup, query: layupQuery, answer: layupView },
   setLayup: { ...ROUTES.setLayup, body: setLayupRequest, answer: layupView, status: 201 },
   readThickness: { ...ROUTES.readThickness, query: thicknessQuery, answer: thickness },

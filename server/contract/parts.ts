@@ -2,24 +2,10 @@ import * as z from 'zod';
 import { auditLine } from './audit.ts';
 import { partEvaluationDocument } from './documents.ts';
 import { coupon, layup, partWork } from './layups.ts';
+import { nonconformance, partResult } from './results.ts';
 import { runFile, runLine, sensorDecision } from './runs.ts';
-import { countInQuery, deed, instant, reason, verdict } from './scalars.ts';
+import { countInQuery, instant, verdict } from './scalars.ts';
 import { toolRecord } from './tool-record.ts';
-
-export const RESULT_OUTCOMES = ['passed', 'failed', 'noted'] as const;
-
-/** What a test or inspection of a part showed. */
-export const partResult = z.object({
-  at: instant,
-  deed,
-  /** `DSC residual cure`, `ultrasonic`, `proof load` … */
-  test: z.string(),
-  outcome: z.enum(RESULT_OUTCOMES),
-  figure: z.number().nullable(),
-  unit: z.string().nullable(),
-  text: z.string(),
-});
-export type PartResult = z.infer<typeof partResult>;
 
 export const partLine = z.object({
   serial: z.string(),
@@ -67,6 +53,7 @@ export const partView = z.object({
   verdict: verdict.nullable(),
   runs: z.array(partRun),
   results: z.array(partResult),
+  nonconformances: z.array(nonconformance),
   /** How it was laid up; null where nobody wrote it down. */
   layup: layup.nullable(),
   /** What is on record of the tool it was laid up on. */
@@ -81,13 +68,3 @@ export const partView = z.object({
   audit: z.array(auditLine),
 });
 export type PartView = z.infer<typeof partView>;
-
-export const addPartResultRequest = z.strictObject({
-  at: instant,
-  test: reason,
-  outcome: z.enum(RESULT_OUTCOMES),
-  figure: z.number().nullish(),
-  unit: z.string().max(40).nullish(),
-  text: z.string().max(2000).default(''),
-});
-export type AddPartResultRequest = z.input<typeof addPartResultRequest>;

@@ -51,7 +51,8 @@ function parse(schema: z.ZodType, value: unknown, root: string): unknown {
 }
 
 async function sendDownload(response: Response, type: string, { name, chunks }: Download): Promise<void> {
-  response.type(type);
   response.attachment(name);
+  // After the name, from whose ending another type would be guessed.
+  response.type(type);
   await pipeline(Readable.from(chunks), response);
 }

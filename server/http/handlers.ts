@@ -7,6 +7,7 @@ import { labelHandlers } from './label-handlers.ts';
 import { liveHandlers } from './live-handlers.ts';
 import { liveRunHandlers } from './live-run-handlers.ts';
 import { materialHandlers } from './material-handlers.ts';
+import { paperHandlers } from './paper-handlers.ts';
 import { partHandlers } from './part-handlers.ts';
 import { runHandlers } from './run-handlers.ts';
 import { senderHandlers } from './sender-handlers.ts';
@@ -25,6 +26,7 @@ export const HANDLERS: Handlers = {
   ...partHandlers,
   ...toolHandlers,
   ...labelHandlers,
+  ...paperHandlers,
   ...traceHandlers,
   ...materialHandlers,
   ...instrumentHandlers,

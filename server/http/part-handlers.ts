@@ -2,6 +2,7 @@ import { addPartResult } from '../actions/add-part-result.ts';
 import { addPartWork } from '../actions/add-part-work.ts';
 import { setCoupon } from '../actions/set-coupon.ts';
 import { setLayup } from '../actions/set-layup.ts';
+import { setNonconformance } from '../actions/set-nonconformance.ts';
 import { readAudit } from '../store/audit.ts';
 import { findCode } from '../store/find.ts';
 import { listParts } from '../store/parts.ts';
@@ -16,6 +17,7 @@ export const partHandlers: SomeHandlers<
   | 'listParts'
   | 'readPart'
   | 'addPartResult'
+  | 'setNonconformance'
   | 'readLayup'
   | 'setLayup'
   | 'readThickness'
@@ -31,6 +33,11 @@ export const partHandlers: SomeHandlers<
   addPartResult(parts, { params, body }) {
     const { serial = '' } = params;
     addPartResult(parts, serial, body);
+    return partView(parts.db, serial);
+  },
+  setNonconformance(parts, { params, body }) {
+    const { serial = '' } = params;
+    setNonconformance(parts, serial, body);
     return partView(parts.db, serial);
   },
   readLayup: ({ db }, { params, query }) => layupView(db, params.serial ?? '', query),

@@ -8,8 +8,10 @@ import { readDecisions } from '../store/decisions.ts';
 import { findLatestEvaluation } from '../store/evaluations.ts';
 import { findLayup } from '../store/layups.ts';
 import { findLoad } from '../store/loads.ts';
+import { readNonconformances } from '../store/nonconformances.ts';
+import { readPartResults } from '../store/part-results.ts';
 import { readPartWorks } from '../store/part-works.ts';
-import { readParticulars, readPartResults, readRunsOfPart, requirePart } from '../store/parts.ts';
+import { readParticulars, readRunsOfPart, requirePart } from '../store/parts.ts';
 import { findRunLine } from '../store/run-lines.ts';
 import { readSources } from '../store/sources.ts';
 import { findToolRecord } from '../store/tools.ts';
@@ -30,6 +32,7 @@ export function partView(db: Db, serial: string): PartView {
     verdict: latest?.evaluation?.verdict ?? null,
     runs: runs.map(({ quantity: _quantity, ...run }) => run),
     results: readPartResults(db, id),
+    nonconformances: readNonconformances(db, id),
     layup: findLayup(db, id),
     toolRecord: particulars.tool === null ? null : findToolRecord(db, particulars.tool),
     works: readPartWorks(db, id),

@@ -1,4 +1,4 @@
-import type { AddPartResultRequest } from '../contract/parts.ts';
+import type { AddPartResultRequest } from '../contract/results.ts';
 import { BROKEN_AT_KN, PROOF_LOAD_KN } from './plan-failures.ts';
 import type { PlannedPart, PlannedRun } from './plan-run.ts';
 import { beginRandom, seedFrom } from './simulator/random.ts';

@@ -53,8 +53,8 @@ const SELECT = `
   SELECT parts.id AS partId, serial, runs.id AS run, from_ms AS fromMs, vessels.name AS vessel,
     cycles.code || ' issue ' || cycles.issue AS cycle, loads.by AS setBy,
     drawing_issue AS drawingIssue, tool,
-    EXISTS (SELECT 1 FROM part_results WHERE part_id = parts.id AND outcome = 'failed') AS hasFailed,
-    EXISTS (SELECT 1 FROM part_results WHERE part_id = parts.id AND outcome = 'passed') AS hasPassed
+    EXISTS (SELECT 1 FROM part_results_now WHERE part_id = parts.id AND outcome = 'failed') AS hasFailed,
+    EXISTS (SELECT 1 FROM part_results_now WHERE part_id = parts.id AND outcome = 'passed') AS hasPassed
   FROM runs
   JOIN loads ON loads.id = (SELECT max(id) FROM loads WHERE run_id = runs.id)
   JOIN load_parts ON load_id = loads.id

@@ -95,8 +95,8 @@ const RUNS = `${WITH}
   JOIN runs ON runs.id = run_id WHERE loads.id = (SELECT max(id) FROM loads WHERE run_id = runs.id)`;
 
 const FAILURES = `${WITH}
-  SELECT DISTINCT part_results.part_id AS partId, test
-  FROM ${NAMED} part_results ON part_results.part_id = named.part_id WHERE outcome = 'failed'`;
+  SELECT DISTINCT results.part_id AS partId, test
+  FROM ${NAMED} part_results_now AS results ON results.part_id = named.part_id WHERE outcome = 'failed'`;
 
 const VERDICTS = `${WITH}
   SELECT evaluation_parts.part_id AS partId, evaluation_parts.verdict, from_ms AS fromMs, evaluation_id AS evaluation

@@ -1,5 +1,5 @@
 import { DomainError } from '../../models/errors.ts';
-import type { PartLine, PartResult, Parts } from '../contract/parts.ts';
+import type { PartLine, Parts } from '../contract/parts.ts';
 import type { Particulars } from '../contract/runs.ts';
 import type { Db } from './database.ts';
 import { isoFromMs } from './instants.ts';
@@ -47,27 +47,6 @@ export function readParticulars(db: Db, partId: number): ParticularsRow {
     )
     .get(partId);
   return row ?? { title: null, drawing: null, drawingIssue: null, tool: null };
-}
-
-export function insertPartResult(
-  db: Db,
-  serial: string,
-  { at, test, outcome, figure, unit, text }: Omit<PartResult, 'deed'>,
-  deed: PartResult['deed'],
-): void {
-  db.prepare(
-    `INSERT INTO part_results (part_id, tested_at, test, outcome, figure, unit, text, at, by)
-     VALUES (?, ?, ?, ?, ?, ?, ?, ?, ?)`,
-  ).run(requirePart(db, serial), at, test, outcome, figure, unit, text, deed.at, deed.by);
-}
-
-export function readPartResults(db: Db, partId: number): PartResult[] {
-  return db
-    .prepare<[number], Omit<PartResult, 'deed' | 'at'> & { tested_at: string; at: string; by: string }>(
-      'SELECT tested_at, test, outcome, figure, unit, text, at, by FROM part_results WHERE part_id = ? ORDER BY id',
-    )
-    .all(partId)
-    .map(({ tested_at, at, by, ...result }) => ({ ...result, at: tested_at, deed: { at, by } }));
 }
 
 /** Parts on one line each, those that came last first; `q` is any stretch of serial, title, drawing or work order. */
@@ -137,7 +116,7 @@ const VERDICT = `(
   SELECT evaluation_parts.verdict FROM evaluation_parts JOIN evaluations ON evaluations.id = evaluation_id
   JOIN runs ON runs.id = run_id WHERE part_id = parts.id ORDER BY from_ms DESC, evaluation_id DESC LIMIT 1)`;
 
-const FAILED = "EXISTS (SELECT 1 FROM part_results WHERE part_id = parts.id AND outcome = 'failed')";
+const FAILED = "EXISTS (SELECT 1 FROM part_results_now WHERE part_id = parts.id AND outcome = 'failed')";
 
 /** What a part's particulars say now. */
 function latest(column: 'title' | 'drawing' | 'tool'): string {

@@ -20,6 +20,7 @@ const MODELS = [
   'models/material',
   'models/trace',
   'models/forecast',
+  'models/measured',
 ];
 const PATHS = [
   'server/contract/paths.ts',
@@ -70,6 +71,7 @@ export const PLACES: Readonly<Record<string, Place>> = {
     'models/cure',
   ]),
   'models/material': room([...SHARED, 'models/material', 'models/cure']),
+  'models/measured': room(SHARED),
   'models/trace': room([...SHARED, 'models/trace', 'models/evaluation']),
   'models/forecast': room([...MODELS.filter((place) => !/chart|material|trace/.test(place))]),
 

@@ -1,6 +1,7 @@
 import { useState } from 'preact/hooks';
-import type { AddPartResultRequest, PartView } from '../../server/contract/parts.ts';
+import type { PartView } from '../../server/contract/parts.ts';
 import { partResultsPath } from '../../server/contract/paths.ts';
+import type { AddPartResultRequest } from '../../server/contract/results.ts';
 import { postJson } from '../api.ts';
 import { useKeptForm } from '../kept-form.ts';
 import { usePost } from '../use-post.ts';
