@@ -54,10 +54,10 @@ export function RunLive({ run, again }: { run: RunView; again: () => void }) {
         <LineState isHeard={heard.isHeard} heardMs={heard.heardMs} nowMs={browserMs} />
         <WarningStrip warnings={(state?.warnings ?? []).filter((one) => one.run === run.run || one.run === null)} />
         <LiveState run={run} state={state} evaluation={evaluation} />
-        {forecast && <LiveOutlook forecast={forecast} telling={telling} />}
+        {forecast && <LiveOutlook forecast={forecast} heatOn={part?.heatOn ?? null} telling={telling} />}
         <Advisory />
-        {forecast && <LiveNeeds forecast={forecast} />}
-        {evaluation && <Decisions run={run} evaluation={evaluation} onDecided={again} />}
+        <LiveNeeds forecasts={state?.forecasts ?? []} />
+        {evaluation && <Decisions run={run} evaluation={withSuspects(evaluation)} onDecided={again} />}
         <RunChart
           run={run}
           part={part}
@@ -89,6 +89,15 @@ export function RunLive({ run, again }: { run: RunView; again: () => void }) {
       </div>
     </div>
   );
+}
+
+/** While all is pending no finding hangs on a suspect yet; it can be decided on all the same. */
+function withSuspects(evaluation: Evaluation): Evaluation {
+  const asked = new Set(evaluation.decisions.map(({ channel }) => channel));
+  const suspects = evaluation.sensors.flatMap(({ channel, state, faults: [fault] }) =>
+    state === 'suspect' && fault && !asked.has(channel) ? [{ channel, ...fault, changes: [] }] : [],
+  );
+  return { ...evaluation, decisions: [...evaluation.decisions, ...suspects] };
 }
 
 /** Asks for run and chart again when a stage, a verdict or a sensor's standing changed, and every half minute. */

@@ -46,10 +46,12 @@ export function Decisions({
     <section class="decisions" aria-label="Decisions to take">
       {weighty.map(decide)}
       {idle.length > 0 && (
-        <details>
+        // While it runs all is pending: what will hang on it cannot be known.
+        <details open={run.live !== null}>
           <summary>
             {listed(idle.map(({ channel }) => channel))} may not be telling the truth; no finding hangs on{' '}
             {idle.length === 1 ? 'it' : 'them'}
+            {run.live === null ? '' : ' yet'}
           </summary>
           <div class="decisions">{idle.map(decide)}</div>
         </details>

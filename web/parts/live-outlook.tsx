@@ -15,13 +15,20 @@ export interface Telling {
 }
 
 /** Where the run is heading, large: the stage, the earliest end, who is furthest along and furthest behind. */
-export function LiveOutlook({ forecast, telling }: { forecast: Forecast; telling: Telling }) {
+export function LiveOutlook({
+  forecast,
+  heatOn,
+  telling,
+}: {
+  forecast: Forecast;
+  /** Null before it. */
+  heatOn: string | null;
+  telling: Telling;
+}) {
   const { stage, leading, lagging } = forecast;
   return (
     <section class={telling.isOld ? 'outlook is-old' : 'outlook'} aria-label="Where the run is heading">
-      <p class="stage">
-        {stage === null ? 'Before heat-on' : `${stage.name}, since ${clock(stage.since, zone.value)}`}
-      </p>
+      <p class="stage">{stage === null ? OUTSIDE[heatOn === null ? 'before' : 'after'] : inStage(stage)}</p>
       <Ahead forecast={forecast} />
       <dl class="live-figures">
         <RunnerFigure name="leading" runner={leading} telling={telling} />
@@ -29,6 +36,12 @@ export function LiveOutlook({ forecast, telling }: { forecast: Forecast; telling
       </dl>
     </section>
   );
+}
+
+const OUTSIDE = { before: 'Before heat-on', after: 'After the last stage' } as const;
+
+function inStage({ name, since }: NonNullable<Forecast['stage']>): string {
+  return `${name}, since ${clock(since, zone.value)}`;
 }
 
 /** The one thing that is waited for. */
@@ -117,14 +130,16 @@ export function LiveNearing({ forecast }: { forecast: Forecast }) {
   );
 }
 
-/** What only a person can do, oldest first. */
-export function LiveNeeds({ forecast }: { forecast: Forecast }) {
-  if (forecast.needs.length === 0) return null;
+/** What only a person can do, for whatever part, oldest first. */
+export function LiveNeeds({ forecasts }: { forecasts: readonly Forecast[] }) {
+  const needs = [...new Map(forecasts.flatMap((one) => one.needs).map((need) => [need.text, need])).values()];
+  if (needs.length === 0) return null;
+  const oldestFirst = needs.toSorted((a, b) => Date.parse(a.since) - Date.parse(b.since));
   return (
     <section class="live-needs" aria-label="Needs a person">
       <h2>Needs a person</h2>
       <ul>
-        {forecast.needs.map((need) => (
+        {oldestFirst.map((need) => (
           <li key={need.text}>
             <time dateTime={need.since}>since {clock(need.since, zone.value)}</time>
             <span>{sentence(need.text)}</span>
