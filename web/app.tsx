@@ -36,6 +36,9 @@ const LabelsPage = lazy(() => import('./pages/labels.tsx'));
 const TracePage = lazy(() => import('./pages/trace.tsx'));
 const HoldPage = lazy(() => import('./pages/hold.tsx'));
 const ComparePage = lazy(() => import('./pages/compare.tsx'));
+const InstrumentsPage = lazy(() => import('./pages/instruments.tsx'));
+const InstrumentPage = lazy(() => import('./pages/instrument.tsx'));
+const AskPage = lazy(() => import('./pages/ask.tsx'));
 const ResinPage = lazy(() => import('./pages/resin.tsx'));
 
 export function App() {
@@ -70,6 +73,9 @@ export function App() {
               <Route path="/trace/compare" component={ComparePage} />
               <Route path="/tools" component={ToolsPage} />
               <Route path="/tools/:tool" component={ToolPage} />
+              <Route path="/instruments" component={InstrumentsPage} />
+              <Route path="/instruments/:instrument" component={InstrumentPage} />
+              <Route path="/ask" component={AskPage} />
               <Route path="/materials" component={MaterialsPage} />
               <Route path="/materials/:code" component={MaterialPage} />
               <Route path="/rolls/:item" component={RollPage} />

@@ -1,4 +1,4 @@
-import { VESSELS_PATH } from './paths.ts';
+import { type Query, VESSELS_PATH, withQuery } from './paths.ts';
 
 export const INSTRUMENTS_PATH = '/api/instruments';
 
@@ -29,4 +29,21 @@ export function vesselAccuracyTestsPath(vessel: string): string {
 
 export function vesselRangePath(vessel: string): string {
   return `${VESSELS_PATH}/${encodeURIComponent(vessel)}/qualified-range`;
+}
+
+/** Runs a calibration casts doubt on; `calibration` is its `id`. */
+export function instrumentTouchedPath(code: string, calibration: number): string {
+  return `${instrumentCalibrationsPath(code)}/${calibration}/touched`;
+}
+
+/** Which parts saw something: `kind` and `code`, a thermocouple's `vessel`, `from` and `until` as instants. */
+export function askPartsPath(query: Query): string {
+  return withQuery('/api/ask/parts', query);
+}
+
+export const WITHOUT_RECORD_PATH = '/api/ask/without-record';
+
+/** Events of runs judged otherwise: by what, `by` says. */
+export function askVerdictsPath(query: Query): string {
+  return withQuery('/api/ask/verdicts/events', query);
 }

@@ -9,6 +9,29 @@ export const need = z.discriminatedUnion('kind', [
   z.object({ kind: z.literal('undecided-suspect'), run: runLine, channels: z.array(z.string()) }),
   z.object({ kind: z.literal('cannot-tell'), run: runLine }),
   z.object({ kind: z.literal('unread-file'), import: importLine }),
+  /** An instrument that sits somewhere, out of date or due within a fortnight. */
+  z.object({
+    kind: z.literal('calibration-due'),
+    instrument: z.string(),
+    due: z.iso.date(),
+    isOver: z.boolean(),
+    places: z.array(z.string()),
+  }),
+  z.object({
+    kind: z.literal('survey-due'),
+    vessel: z.string(),
+    what: z.enum(['uniformity survey', 'system accuracy test']),
+    due: z.iso.date(),
+    isOver: z.boolean(),
+  }),
+  /** A maker's lot near the end of its shelf life, with rolls of it still here. */
+  z.object({
+    kind: z.literal('batch-ends'),
+    batch: z.string(),
+    material: z.string(),
+    due: z.iso.date(),
+    isOver: z.boolean(),
+  }),
 ]);
 export type Need = z.infer<typeof need>;
 

@@ -3,6 +3,7 @@ import { listWaitingImports } from '../store/imports.ts';
 import { listRuns, listRunsInNeed, type RunInNeed } from '../store/run-lines.ts';
 import { listVessels } from '../store/vessels.ts';
 import type { AppParts } from './app-parts.ts';
+import { dueNeeds } from './due-needs.ts';
 import { importLineOf } from './import-view.ts';
 
 const MOST_NEEDS = 100;
@@ -12,7 +13,7 @@ const PRESSING: readonly Need['kind'][] = ['awaiting-load', 'undecided-suspect',
 const DAY_MS = 86_400_000;
 
 /** What each vessel did last, what needs someone, and the last runs. */
-export function nowView({ db }: AppParts): Now {
+export function nowView({ db, clock }: AppParts): Now {
   const lastRuns = listRuns(db, { limit: LAST_RUNS }).runs;
   // Counted from the last run, so that a shop that was closed still sees its last month.
   const recently = new Date(Date.parse(lastRuns[0]?.from ?? '1970-01-01T00:00:00Z') - 30 * DAY_MS).toISOString();
@@ -31,6 +32,7 @@ export function nowView({ db }: AppParts): Now {
     ...listRunsInNeed(db, MOST_NEEDS)
       .map(needOf)
       .sort((a, b) => PRESSING.indexOf(a.kind) - PRESSING.indexOf(b.kind)),
+    ...dueNeeds(db, clock()),
   ];
   return { vessels, needs, lastRuns };
 }

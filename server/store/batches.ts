@@ -52,6 +52,25 @@ export function requireBatch(db: Db, batch: string): BatchLine {
   return line;
 }
 
+/** Batches that expire on a day or before, of which a roll is still here: neither scrapped nor laid up. */
+export function listBatchesThatEnd(
+  db: Db,
+  day: string,
+): { readonly batch: string; readonly material: string; readonly expires: string }[] {
+  return db
+    .prepare<object, { batch: string; material: string; expires: string }>(
+      `SELECT batches.code AS batch, materials.code AS material, expires FROM batches
+       JOIN batch_particulars AS about ON about.id = (SELECT max(id) FROM batch_particulars WHERE batch_id = batches.id)
+       JOIN materials ON materials.id = material_id
+       WHERE expires <= @day AND EXISTS (
+         SELECT 1 FROM material_events_now AS event WHERE event.batch_id = batches.id
+           AND NOT EXISTS (SELECT 1 FROM material_events_now AS later WHERE later.item_id = event.item_id AND later.kind = 'scrapped')
+           AND NOT EXISTS (SELECT 1 FROM part_materials_now AS used WHERE used.item_id = event.item_id))
+       ORDER BY expires, batches.code`,
+    )
+    .all({ day });
+}
+
 interface BatchRow {
   readonly id: number;
   readonly batch: string;

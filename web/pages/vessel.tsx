@@ -11,6 +11,7 @@ import { SenderKeys } from '../parts/sender-keys.tsx';
 import { Shown } from '../parts/shown.tsx';
 import { SourceEntry } from '../parts/source-entry.tsx';
 import { SourceFormView } from '../parts/source-form.tsx';
+import { VesselSurveys } from '../parts/vessel-surveys.tsx';
 import { WarningStrip } from '../parts/warning-strip.tsx';
 import { useLiveVessels } from '../use-live-vessels.ts';
 import { useNow } from '../use-now.ts';
@@ -44,6 +45,7 @@ export default function VesselPage() {
       {vessel && <WarningStrip warnings={vessel.warnings} />}
       {vessel && vessel.readings.length > 0 && <LiveReadings telling={readings} />}
       <SourcesOfVessel key={name} vessel={name} />
+      <VesselSurveys key={`surveys ${name}`} vessel={name} />
       <SenderKeys key={`keys ${name}`} vessel={name} />
     </div>
   );

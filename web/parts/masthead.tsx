@@ -9,6 +9,7 @@ const PAGES: readonly (readonly [string, string])[] = [
   ['/parts', 'Parts'],
   ['/trace', 'Trace'],
   ['/materials', 'Materials'],
+  ['/instruments', 'Instruments'],
   ['/cycles', 'Cycles'],
   ['/resins', 'Resins'],
   ['/recorders', 'Recorders'],
@@ -52,6 +53,7 @@ export function Masthead() {
 
 function isHere(path: string, href: string): boolean {
   if (href === '/') return path === '/' || path.startsWith('/import');
+  if (href === '/instruments' && path === '/ask') return true;
   if (href === '/materials' && /^\/(rolls|kits)\//.test(path)) return true;
   if (href === '/live' && /^\/(vessels\/|warnings)/.test(path)) return true;
   return path === href || path.startsWith(`${href}/`);

@@ -1,6 +1,7 @@
 import type { ImportLine } from '../../server/contract/imports.ts';
 import type { Need } from '../../server/contract/now.ts';
 import { bytes, count, listed } from '../words/figures.ts';
+import { DueEntry, keyOfDue } from './due-entry.tsx';
 import { Entry } from './notebook.tsx';
 import { OutcomeMark } from './outcome-mark.tsx';
 import { RunEntry } from './run-entry.tsx';
@@ -53,6 +54,8 @@ function NeedEntry({ need }: { need: Need }) {
       return <RunEntry line={need.run} />;
     case 'unread-file':
       return <UnreadFile file={need.import} />;
+    default:
+      return <DueEntry need={need} />;
   }
 }
 
@@ -82,5 +85,6 @@ const ORIGINS = {
 };
 
 function keyOf(need: Need): string {
-  return need.kind === 'unread-file' ? `file ${need.import.id}` : `${need.kind} ${need.run.run}`;
+  if (need.kind === 'unread-file') return `file ${need.import.id}`;
+  return 'run' in need ? `${need.kind} ${need.run.run}` : keyOfDue(need);
 }
