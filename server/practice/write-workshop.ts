@@ -15,6 +15,7 @@ import { simulationOf } from './simulation-of-run.ts';
 import { seedFrom } from './simulator/random.ts';
 import { type SimulatedRun, simulateRun } from './simulator/simulate-run.ts';
 import { documentDeeds, openWorkshop } from './write-documents.ts';
+import { instrumentDeeds, surveyDeeds } from './write-instruments.ts';
 import { layupDeeds, toolDeeds } from './write-layups.ts';
 import { materialDeeds } from './write-materials.ts';
 import { incoming, writeLoad, writeRecording } from './write-run.ts';
@@ -52,7 +53,14 @@ export async function writePracticeWorkshop({
   });
   openWorkshop(partsFor);
   // A run's later deeds are known once it is simulated; they wait here until the year has come to them.
-  const waiting: PracticeDeed[] = [...documentDeeds(), ...toolDeeds(), ...layupDeeds(runs), ...materialDeeds(runs)];
+  const waiting: PracticeDeed[] = [
+    ...documentDeeds(),
+    ...toolDeeds(),
+    ...instrumentDeeds(),
+    ...surveyDeeds(),
+    ...layupDeeds(runs),
+    ...materialDeeds(runs),
+  ];
   const catchUp = async (untilMs: number): Promise<void> => {
     waiting.sort((one, other) => one.atMs - other.atMs);
     while (waiting[0] !== undefined && waiting[0].atMs <= untilMs) {
