@@ -19,6 +19,8 @@ export interface Followed {
   begunMs: number;
   beginnings: number;
   changed: boolean;
+  /** The latest figure of each channel as it is judged: °C, Pa. */
+  readonly asJudged: Map<string, number>;
   /** Set while scans that just came wait to be told. */
   soon: ReturnType<typeof setTimeout> | null;
 }
@@ -36,6 +38,14 @@ export function tellScans(one: Followed, nowMs: number): void {
   } else if (scans.length > 0) {
     one.changed = true;
     for (const tell of one.watchers) tell({ kind: 'scans', scans });
+  }
+  for (const { values } of scans) noteFigures(one, values);
+}
+
+function noteFigures({ follower, asJudged }: Followed, values: Float64Array): void {
+  for (const [n, channel] of follower.channels.entries()) {
+    const figure = values[n] ?? Number.NaN;
+    if (!Number.isNaN(figure)) asJudged.set(channel, figure);
   }
 }
 

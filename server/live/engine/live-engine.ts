@@ -1,5 +1,5 @@
 import { DomainError } from '../../../models/errors.ts';
-import type { LiveRun, LiveVessel, LiveVessels, SourceLine, Warning } from '../../contract/live.ts';
+import type { LiveReading, LiveRun, LiveVessel, LiveVessels, SourceLine, Warning } from '../../contract/live.ts';
 import type { Db } from '../../store/database.ts';
 import { isoFromMs } from '../../store/instants.ts';
 import { type LiveRunRow, listOpenRuns } from '../../store/live-runs.ts';
@@ -9,6 +9,7 @@ import { listVessels, requireVessel } from '../../store/vessels.ts';
 import { zoneOfWorkshop } from '../../store/workshop.ts';
 import type { Journal } from '../journal.ts';
 import type { SteadyClock } from '../steady-clock.ts';
+import { extremesOf } from './extremes.ts';
 import { type Followed, type RunNews, stopTelling, tellScans, tellSoon } from './followed.ts';
 import { LatestReadings } from './latest-readings.ts';
 import { type LiveJudgement, RunFollower } from './run-follower.ts';
@@ -116,7 +117,17 @@ export function startLiveEngine(parts: LiveEngineParts): LiveEngine {
   const newlyFollowed = (row: LiveRunRow, watchers: Followed['watchers']): Followed => {
     vesselsChanged = true;
     const follower = new RunFollower(db, row);
-    return { follower, watchers, judged: null, judgedMs: 0, begunMs: 0, beginnings: 0, changed: true, soon: null };
+    return {
+      follower,
+      watchers,
+      judged: null,
+      judgedMs: 0,
+      begunMs: 0,
+      beginnings: 0,
+      changed: true,
+      soon: null,
+      asJudged: new Map(),
+    };
   };
 
   const advance = (one: Followed) => {
@@ -198,25 +209,28 @@ export function startLiveEngine(parts: LiveEngineParts): LiveEngine {
     const zone = zoneOfWorkshop(db);
     const vessels = listVessels(db).map(({ name, kind }): LiveVessel => {
       const vesselId = requireVessel(db, name);
+      const readings = readingsOf(vesselId);
       const one = ofVessel(vesselId);
       return {
         vessel: name,
         kind,
         sources: [...parts.sourceLines(vesselId)],
-        readings: readingsOf(vesselId),
-        run: one === undefined ? null : runLineOf(one, zone),
+        readings,
+        run: one === undefined ? null : runLineOf(one, readings, zone),
         warnings: [...parts.warnings(vesselId)],
       };
     });
     return { at: isoFromMs(clock.now(0)), vessels };
   };
 
-  const runLineOf = ({ follower, judged }: Followed, zone: string): LiveVessel['run'] => {
+  const runLineOf = (
+    { follower, judged, asJudged }: Followed,
+    readings: readonly LiveReading[],
+    zone: string,
+  ): LiveVessel['run'] => {
     const { run, begunMs, endedMs } = follower.row;
     const line = findRunLine(db, run);
     const forecasts = judged?.forecasts ?? [];
-    const runners = forecasts.flatMap(({ leading, lagging }) => [leading, lagging]).filter((one) => one !== null);
-    const byHeat = runners.toSorted((a, b) => b.valueC - a.valueC).map(({ channel, valueC }) => ({ channel, valueC }));
     return {
       run,
       state: endedMs === null ? 'running' : 'ended',
@@ -225,8 +239,7 @@ export function startLiveEngine(parts: LiveEngineParts): LiveEngine {
       parts: line?.parts ?? [],
       verdict: judged?.evaluation.verdict ?? null,
       says: saysOf(judged?.evaluation ?? null, forecasts, zone),
-      hottest: byHeat[0] ?? null,
-      coldest: byHeat.at(-1) ?? null,
+      ...extremesOf(judged?.evaluation ?? null, forecasts, readings, asJudged),
     };
   };
 
