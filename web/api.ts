@@ -17,6 +17,12 @@ export async function postBytes<T>(path: string, bytes: Blob): Promise<T> {
   return bodyOf<T>(await ask(path, { method: 'POST', headers, body: bytes }));
 }
 
+/** Sends a table. */
+export async function postTable<T>(path: string, table: Blob): Promise<T> {
+  const headers = { accept: 'application/json', 'content-type': 'text/csv' };
+  return bodyOf<T>(await ask(path, { method: 'POST', headers, body: table }));
+}
+
 /** Asks for a picture, for whether there is one. */
 export async function readPicture(path: string): Promise<void> {
   await ask(path, {});

@@ -32,6 +32,7 @@ const CycleImportPage = lazy(() => import('./pages/cycle-import.tsx'));
 const LayupPage = lazy(() => import('./pages/layup.tsx'));
 const ToolsPage = lazy(() => import('./pages/tools.tsx'));
 const ToolPage = lazy(() => import('./pages/tool.tsx'));
+const TableImportPage = lazy(() => import('./pages/table-import.tsx'));
 const LabelsPage = lazy(() => import('./pages/labels.tsx'));
 const TracePage = lazy(() => import('./pages/trace.tsx'));
 const HoldPage = lazy(() => import('./pages/hold.tsx'));
@@ -65,6 +66,8 @@ export function App() {
               <Route path="/runs/:run/load" component={LoadPage} />
               <Route path="/runs/:run/sources/:source" component={ReadAgainPage} />
               <Route path="/parts" component={PartsPage} />
+              <Route path="/parts/import" component={TableImportPage} />
+              <Route path="/rolls/import" component={TableImportPage} />
               <Route path="/parts/:serial" component={PartPage} />
               <Route path="/parts/:serial/layup" component={LayupPage} />
               <Route path="/labels" component={LabelsPage} />

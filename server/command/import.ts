@@ -7,8 +7,11 @@ import { readDocumentFile } from './read-document.ts';
 import { type Command, EXIT, needed, readWords, wrongUsage } from './usage.ts';
 
 const HELP = `Usage: dwellbook import FILE... (--layout LAYOUT.json | --recorder NAME) [OPTIONS]
+       dwellbook import parts FILE.csv [--columns serial,title,...] [--dry-run] [--data FOLDER] [--json]
+       dwellbook import rolls FILE.csv [--columns roll,batch,...] [--dry-run] [--data FOLDER] [--json]
 
 Records a recorder's file as a run that awaits its load. Several files are pieces of one run.
+Of a table of parts or rolls the good rows are kept, all at once, and the others named by line.
 
   --layout FILE    how the files are to be read (dwellbook-layout/1)
   --recorder NAME  the recorder they came from: its kept layout is used, or the one given is kept for it
@@ -23,6 +26,11 @@ Exit status: 0 done, 64 wrong usage, 65 the input cannot be read or used (so is 
 export const importCommand: Command = {
   help: HELP,
   async run(args) {
+    const [kind] = args;
+    if (kind === 'parts' || kind === 'rolls') {
+      const { importRows } = await import('./import-rows.ts');
+      return importRows(kind, args.slice(1));
+    }
     const { values, positionals } = readWords('import', args, {
       layout: { type: 'string' },
       recorder: { type: 'string' },

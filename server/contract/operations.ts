@@ -88,6 +88,7 @@ import {
   setLoadRequest,
 } from './runs.ts';
 import { addAccuracyTestRequest, addSurveyRequest, setQualifiedRangeRequest, vesselSurveys } from './surveys.ts';
+import { tableImport, tableQuery } from './tables.ts';
 import { thickness, thicknessQuery } from './thickness.ts';
 import { setToolRequest } from './tool-record.ts';
 import { tools, toolView } from './tools.ts';
@@ -157,6 +158,8 @@ export const OPERATIONS = {
   importResin: { ...ROUTES.importResin, body: importResinRequest, answer: resinView, status: 201 },
   readResin: { ...ROUTES.readResin, answer: resinView },
   listParts: { ...ROUTES.listParts, query: partsQuery, answer: parts },
+  importParts: { ...ROUTES.importParts, query: tableQuery, answer: tableImport },
+  importRolls: { ...ROUTES.importRolls, query: tableQuery, answer: tableImport },
   readPart: { ...ROUTES.readPart, answer: partView },
   addPartResult: { ...ROUTES.addPartResult, body: addPartResultRequest, answer: partView, status: 201 },
   setNonconformance: {

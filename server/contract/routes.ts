@@ -8,8 +8,8 @@ export interface Route {
   readonly summary: string;
   /** Who may use it. */
   readonly roles: readonly Role[];
-  /** What is sent along: JSON, or a file as it is. */
-  readonly sends: 'nothing' | 'json' | 'bytes';
+  /** What is sent along: JSON, a table, or a file as it is. */
+  readonly sends: 'nothing' | 'json' | 'bytes' | 'csv';
 }
 
 const ANYONE: readonly Role[] = ['operator', 'engineer', 'inspector', 'administrator'];
@@ -104,6 +104,8 @@ export const ROUTES = {
   importResin: route('post', '/api/resins', 'Bring in a resin document', ENGINEERS, 'json'),
   readResin: route('get', '/api/resins/{code}', 'A resin set', ANYONE),
   listParts: route('get', '/api/parts', 'Parts', ANYONE),
+  importParts: route('post', '/api/parts/import', 'See what a table of parts would make, or keep it', ANYONE, 'csv'),
+  importRolls: route('post', '/api/rolls/import', 'See what a table of rolls would make, or keep it', ANYONE, 'csv'),
   readPart: route('get', '/api/parts/{serial}', 'A part: what touched it, and what shares it', ANYONE),
   addPartResult: route('post', '/api/parts/{serial}/results', 'Record a test or inspection', DECIDERS, 'json'),
   setNonconformance: route(

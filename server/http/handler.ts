@@ -11,7 +11,7 @@ type InputOf<N extends OperationName, Key extends 'query' | 'body'> = Operations
   readonly [P in Key]: infer Schema extends z.ZodType;
 }
   ? z.output<Schema>
-  : Operations[N]['sends'] extends 'bytes'
+  : Operations[N]['sends'] extends 'bytes' | 'csv'
     ? Readable
     : undefined;
 

@@ -12,6 +12,7 @@ import { partHandlers } from './part-handlers.ts';
 import { runHandlers } from './run-handlers.ts';
 import { senderHandlers } from './sender-handlers.ts';
 import { sourceHandlers } from './source-handlers.ts';
+import { tableHandlers } from './table-handlers.ts';
 import { toolHandlers } from './tool-handlers.ts';
 import { traceHandlers } from './trace-handlers.ts';
 import { warningHandlers } from './warning-handlers.ts';
@@ -26,6 +27,7 @@ export const HANDLERS: Handlers = {
   ...partHandlers,
   ...toolHandlers,
   ...labelHandlers,
+  ...tableHandlers,
   ...paperHandlers,
   ...traceHandlers,
   ...materialHandlers,

@@ -51,7 +51,7 @@ function describe(operationId: string, operation: Operation): object {
     summary,
     'x-roles': roles,
     parameters: [...pathParameters(path), ...(query === undefined ? [] : queryParameters(query))],
-    ...(sends === 'nothing' ? {} : { requestBody: { required: true, content: bodyContent(body) } }),
+    ...(sends === 'nothing' ? {} : { requestBody: { required: true, content: bodyContent(sends, body) } }),
     responses: {
       [status]: { description: summary, content: answerContent(answer) },
       default: {
@@ -81,9 +81,9 @@ function queryParameters(query: z.ZodType): object[] {
   }));
 }
 
-function bodyContent(body: z.ZodType | undefined): object {
+function bodyContent(sends: Operation['sends'], body: z.ZodType | undefined): object {
   return body === undefined
-    ? { 'application/octet-stream': { schema: { type: 'string', format: 'binary' } } }
+    ? { [sends === 'csv' ? 'text/csv' : 'application/octet-stream']: { schema: { type: 'string', format: 'binary' } } }
     : { 'application/json': { schema: schemaOf(body, 'input') } };
 }
 

@@ -27,8 +27,10 @@ function permit({ actor }: AppParts, { roles, summary }: Route): RequestHandler 
 }
 
 /** Asking for a media type no form can send also keeps other sites' pages from posting here. */
-function requireMediaType(sends: 'json' | 'bytes'): RequestHandler {
-  const expected = sends === 'bytes' ? 'application/octet-stream' : 'application/json';
+const MEDIA_TYPES = { json: 'application/json', bytes: 'application/octet-stream', csv: 'text/csv' } as const;
+
+function requireMediaType(sends: keyof typeof MEDIA_TYPES): RequestHandler {
+  const expected = MEDIA_TYPES[sends];
   return (request, _response, next) => {
     if (request.is(expected)) return next();
     const sent = request.get('content-type') ?? 'nothing';

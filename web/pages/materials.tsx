@@ -19,6 +19,9 @@ export default function MaterialsPage() {
           What is in life and what is due, the soonest first. The margin says when the first of its lives ends if it
           stays where it is.
         </p>
+        <p class="no-print">
+          <a href="/rolls/import">Rolls from a table</a>
+        </p>
       </PageHead>
       <Shown reading={reading} what="Reading the materials">
         {(view) => (

@@ -27,7 +27,7 @@ export function PartsPage() {
       <PageHead title="Parts">
         <p class="soft">{reading.value ? `${count(reading.value.total, 'part')}${q ? ` like “${q}”` : ''}` : ''}</p>
         <p>
-          <a href="/tools">Tools they are made on</a>
+          <a href="/tools">Tools they are made on</a> · <a href="/parts/import">Parts from a table</a>
         </p>
       </PageHead>
       <form class="row filters" onSubmit={look}>
