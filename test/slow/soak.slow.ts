@@ -57,7 +57,7 @@ describe('a soak', () => {
     })) as { run: number };
     const stop = new AbortController();
     const watching = watch(`${origin}/api/runs/${run}/live/events`, stop.signal);
-    const memory: { minutes: number; mb: number }[] = [];
+    const memory: Sample[] = [];
     const startMs = performance.now();
     for (let second = 1; second <= MINUTES * 60; second += 1) {
       await send();
@@ -68,9 +68,9 @@ describe('a soak', () => {
     stop.abort();
     const seen = await watching;
     const settled = memory.filter(({ minutes }) => minutes >= Math.min(WARM_UP_MINUTES, MINUTES / 2));
-    const slope = slopeOf(lowestOfEachMinute(settled));
+    const slope = growthOf(settled);
     console.log(
-      `memory after the warm-up: ${settled[0]?.mb.toFixed(0)} to ${settled.at(-1)?.mb.toFixed(0)} MB, slope ` +
+      `memory after the warm-up, MB: ${settled.map(({ mb }) => mb.toFixed(0)).join(' ')}\nslope of its lowest ` +
         `${slope.toFixed(2)} MB/min of which the run itself takes ${MB_PER_MIN_OF_THE_RUN.toFixed(2)}; ` +
         `${sent} scans sent, ${seen} seen by a watcher`,
     );
@@ -100,21 +100,19 @@ function residentMb(pid: number): number {
   return Number(/VmRSS:\s+(\d+) kB/.exec(readFileSync(`/proc/${pid}/status`, 'utf8'))?.[1]) / 1024;
 }
 
-/** Between two collections memory rises and falls; what stays is told by the lowest of each minute. */
-function lowestOfEachMinute(points: readonly { minutes: number; mb: number }[]) {
-  const lowest = new Map<number, { minutes: number; mb: number }>();
-  for (const point of points) {
-    const known = lowest.get(Math.floor(point.minutes));
-    if (known === undefined || point.mb < known.mb) lowest.set(Math.floor(point.minutes), point);
-  }
-  return [...lowest.values()];
+/**
+ * Growth of what stays, MB/min: from the lowest memory of the first third to that of the last. Between two collections
+ * memory only rises, and the collector takes its time where there is room.
+ */
+function growthOf(points: readonly Sample[]): number {
+  const third = Math.floor(points.length / 3);
+  const lowest = (some: readonly Sample[]) => some.reduce((a, b) => (b.mb < a.mb ? b : a));
+  const first = lowest(points.slice(0, third));
+  const last = lowest(points.slice(-third));
+  return (last.mb - first.mb) / (last.minutes - first.minutes);
 }
 
-/** Least-squares slope, MB/min. */
-function slopeOf(points: readonly { minutes: number; mb: number }[]): number {
-  const meanX = points.reduce((sum, { minutes }) => sum + minutes, 0) / points.length;
-  const meanY = points.reduce((sum, { mb }) => sum + mb, 0) / points.length;
-  const sxy = points.reduce((sum, { minutes, mb }) => sum + (minutes - meanX) * (mb - meanY), 0);
-  const sxx = points.reduce((sum, { minutes }) => sum + (minutes - meanX) ** 2, 0);
-  return sxy / sxx;
+interface Sample {
+  readonly minutes: number;
+  readonly mb: number;
 }
