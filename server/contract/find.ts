@@ -9,6 +9,7 @@ export const FIND_KINDS = [
   'kit',
   'batch',
   'material',
+  'instrument',
   'cycle',
   'resin',
   'work-order',

@@ -1,4 +1,4 @@
-import { type Query, VESSELS_PATH, withQuery } from './paths.ts';
+import { type Query, RUNS_PATH, VESSELS_PATH, withQuery } from './paths.ts';
 
 export const INSTRUMENTS_PATH = '/api/instruments';
 
@@ -46,4 +46,8 @@ export const WITHOUT_RECORD_PATH = '/api/ask/without-record';
 /** Events of runs judged otherwise: by what, `by` says. */
 export function askVerdictsPath(query: Query): string {
   return withQuery('/api/ask/verdicts/events', query);
+}
+
+export function runInstrumentsPath(run: number): string {
+  return `${RUNS_PATH}/${run}/instruments`;
 }

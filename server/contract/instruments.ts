@@ -149,3 +149,28 @@ export type PlaceInstrumentRequest = z.input<typeof placeInstrumentRequest>;
 /** `at` null: it never sat there. */
 export const takeOffRequest = z.strictObject({ at: instant.nullable(), reason });
 export type TakeOffRequest = z.input<typeof takeOffRequest>;
+
+/** What each channel of a run was read by as the run began, by what is on record now; empty where nothing is. */
+export const runInstruments = z.object({
+  channels: z.array(
+    z.object({
+      channel: z.string(),
+      instrument: z.string(),
+      /** The calibration that held on the day. */
+      calibration: z
+        .object({
+          done: day,
+          until: day,
+          certificate: z.string().nullable(),
+          unit: z.string(),
+          points,
+          uncertainty: z.number().nullable(),
+        })
+        .nullable(),
+      /** Where none held: when the last before ran out. */
+      ranOut: day.nullable(),
+      replacedBy: z.string().nullable(),
+    }),
+  ),
+});
+export type RunInstruments = z.infer<typeof runInstruments>;

@@ -23,6 +23,7 @@ import {
   instruments,
   instrumentView,
   placeInstrumentRequest,
+  runInstruments,
   setInstrumentRequest,
   takeOffRequest,
 } from './instruments.ts';
@@ -212,6 +213,7 @@ export const OPERATIONS = {
   addCalibration: { ...ROUTES.addCalibration, body: addCalibrationRequest, answer: instrumentView, status: 201 },
   placeInstrument: { ...ROUTES.placeInstrument, body: placeInstrumentRequest, answer: instrumentView, status: 201 },
   takeOffInstrument: { ...ROUTES.takeOffInstrument, body: takeOffRequest, answer: instrumentView, status: 201 },
+  readRunInstruments: { ...ROUTES.readRunInstruments, answer: runInstruments },
   readDoorChecks: { ...ROUTES.readDoorChecks, answer: doorChecks },
   checkDoor: { ...ROUTES.checkDoor, body: doorChecksRequest, answer: doorChecks },
   readTouched: { ...ROUTES.readTouched, answer: touched },

@@ -183,6 +183,7 @@ export const ROUTES = {
     ANYONE,
     'json',
   ),
+  readRunInstruments: route('get', '/api/runs/{run}/instruments', 'What the channels of a run were read by', ANYONE),
   readDoorChecks: route(
     'get',
     '/api/vessels/{vessel}/door-checks',

@@ -1,7 +1,10 @@
+import type { Calibration } from '../../models/run/instrument-records.ts';
 import { addCalibration } from '../actions/add-calibration.ts';
 import { addAccuracyTest, addSurvey, setQualifiedRange } from '../actions/add-survey.ts';
 import { placeInstrument, takeOff } from '../actions/place-instrument.ts';
+import { instrumentsOfRun } from '../actions/run-inputs.ts';
 import { setInstrument } from '../actions/set-instrument.ts';
+import { requireRun } from '../store/runs.ts';
 import { doorChecks } from './door-checks.ts';
 import type { SomeHandlers } from './handler.ts';
 import { instrumentsView, instrumentView, vesselSurveysView } from './instrument-view.ts';
@@ -18,6 +21,7 @@ export const instrumentHandlers: SomeHandlers<
   | 'addSurvey'
   | 'addAccuracyTest'
   | 'setQualifiedRange'
+  | 'readRunInstruments'
   | 'readDoorChecks'
   | 'checkDoor'
 > = {
@@ -58,6 +62,21 @@ export const instrumentHandlers: SomeHandlers<
     setQualifiedRange(parts, vessel, body);
     return vesselSurveysView(parts.db, vessel, parts.clock());
   },
+  readRunInstruments({ db }, { params }) {
+    const run = numberIn(params, 'run');
+    requireRun(db, run);
+    const channels = instrumentsOfRun(db, run)?.channels ?? [];
+    return {
+      channels: channels.map(({ calibration, ...one }) => ({
+        ...one,
+        calibration: calibration === null ? null : heldThen(calibration),
+      })),
+    };
+  },
   readDoorChecks: (parts, { params }) => doorChecks(parts, params.vessel ?? '', { load: null, cycle: null }),
   checkDoor: (parts, { params, body }) => doorChecks(parts, params.vessel ?? '', body),
 };
+
+function heldThen({ done, until, certificate, unit, points, uncertainty }: Calibration) {
+  return { done, until, certificate, unit, points: points.map(([at, by]): [number, number] => [at, by]), uncertainty };
+}

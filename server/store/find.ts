@@ -46,6 +46,10 @@ const SELECT = `
     FROM materials WHERE code LIKE @start ESCAPE '\\'
       AND id = (SELECT max(id) FROM materials AS latest WHERE latest.code = materials.code)
   UNION ALL
+  SELECT * FROM (SELECT 'instrument', 'Instrument ' || code, '/instruments' || char(31) || code,
+      code = @code COLLATE NOCASE AS exact, 3
+    FROM instruments WHERE code LIKE @start ESCAPE '\\' ORDER BY exact DESC, code LIMIT 20)
+  UNION ALL
   SELECT 'cycle', code || ' issue ' || issue, '/cycles' || char(31) || code || char(31) || issue,
     code = @code COLLATE NOCASE, 3 FROM cycles WHERE code LIKE @start ESCAPE '\\'
   UNION ALL

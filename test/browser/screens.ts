@@ -25,6 +25,8 @@ export function screensOf(runs: ReadonlyMap<string, number>, waiting: number): R
     layup: `/parts/${encodeURIComponent('part of sound')}/layup`,
     tools: '/tools',
     materials: '/materials',
+    instruments: '/instruments',
+    questions: '/ask',
     material: '/materials/tape',
     roll: '/rolls/K-17',
     'kit-out-of-life': '/kits/K-17-1',

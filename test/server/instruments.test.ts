@@ -128,6 +128,14 @@ describe('instruments over HTTP', () => {
     // The load as it was written stays as it is.
     const { body } = await app.get(`/api/runs/${run}`);
     expect(JSON.stringify(body.load)).not.toContain('corrections');
+    const { channels } = (await app.get(`/api/runs/${run}/instruments`)).body;
+    expect(channels[0]).toMatchObject({ channel: CHANNELS[0], instrument: 'K-1', calibration: { done: '2026-03-03' } });
+    expect((await app.get('/api/runs/99/instruments')).status).toBe(404);
+    expect((await app.get('/api/find?code=k-1')).body.hits[0]).toMatchObject({
+      kind: 'instrument',
+      page: '/instruments/K-1',
+      exact: true,
+    });
   });
 });
 

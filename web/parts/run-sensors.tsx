@@ -5,6 +5,7 @@ import { count, listed } from '../words/figures.ts';
 import { ROLE_WORDS } from '../words/layouts.ts';
 import { sentence } from '../words/verdicts.ts';
 import { zone } from '../workshop.ts';
+import { RunInstruments } from './run-instruments.tsx';
 
 /** Which sensors were believed, which were not, and who decided. */
 export function RunSensors({ run, evaluation }: { run: RunView; evaluation: Evaluation }) {
@@ -45,6 +46,7 @@ export function RunSensors({ run, evaluation }: { run: RunView; evaluation: Eval
           by {decision.deed.by}, {dayAndClock(decision.deed.at, zone.value)}: {sentence(decision.reason)}
         </p>
       ))}
+      <RunInstruments run={run.run} />
     </section>
   );
 }
