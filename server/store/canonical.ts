@@ -9,11 +9,13 @@ import { createHash } from 'node:crypto';
 export function canonicalJson(value: unknown): string {
   if (Array.isArray(value)) return `[${value.map((item) => canonicalJson(item ?? null)).join(',')}]`;
   if (typeof value !== 'object' || value === null) return JSON.stringify(value) ?? 'null';
-  const members = Object.entries(value)
-    .filter(([, member]) => member !== undefined)
-    .sort(([a], [b]) => (a < b ? -1 : 1))
-    .map(([key, member]) => `${JSON.stringify(key)}:${canonicalJson(member)}`);
-  return `{${members.join(',')}}`;
+  let members = '';
+  // Without a compare function, keys are sorted by code unit.
+  for (const key of Object.keys(value).sort()) {
+    const member = (value as Readonly<Record<string, unknown>>)[key];
+    if (member !== undefined) members += `${members === '' ? '' : ','}${JSON.stringify(key)}:${canonicalJson(member)}`;
+  }
+  return `{${members}}`;
 }
 
 export function sha256OfDocument(document: unknown): string {

@@ -3,8 +3,28 @@ import type { Db } from './database.ts';
 import type { Span } from './kin.ts';
 import { prepared } from './prepared.ts';
 
-/** How much is not on record, of the parts cured within a span and of those in no run, and of the runs in it. */
-export function countGaps(db: Db, span: Span): Omit<Completeness, 'notFollowed'> {
+type Gaps = Omit<Completeness, 'notFollowed'>;
+
+/** The last answer of each connection, and the state of the book it was given in. */
+const lastAnswers = new WeakMap<Db, { readonly state: string; readonly gaps: Gaps }>();
+
+/**
+ * How much is not on record, of the parts cured within a span and of those in no run, and of the runs in it.
+ *
+ * Counting looks at every part there is. Nothing is written without a line in the audit trail, so an answer stands until
+ * the next line that is about more than a list or a whereabouts.
+ */
+export function countGaps(db: Db, span: Span): Gaps {
+  const line = prepared<[], number>(db, LAST_LINE).pluck().get() ?? 0;
+  const state = `${line} ${span.fromMs} ${span.untilMs}`;
+  const known = lastAnswers.get(db);
+  if (known?.state === state) return known.gaps;
+  const gaps = readGaps(db, span);
+  lastAnswers.set(db, { state, gaps });
+  return gaps;
+}
+
+function readGaps(db: Db, span: Span): Gaps {
   const counts = prepared<[Span], Omit<Completeness, 'notFollowed' | 'runsWithoutLoad' | 'runsWithoutVessel'>>(
     db,
     COUNTS,
@@ -16,6 +36,9 @@ export function countGaps(db: Db, span: Span): Omit<Completeness, 'notFollowed'>
     runsWithoutVessel: prepared<[Span], number>(db, NO_VESSEL).pluck().all(span),
   };
 }
+
+const LAST_LINE = `
+  SELECT n FROM audit WHERE verb NOT IN ('make-hold-list', 'set-whereabouts') ORDER BY n DESC LIMIT 1`;
 
 const IN_SPAN = 'from_ms >= @fromMs AND from_ms < @untilMs';
 

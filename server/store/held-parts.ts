@@ -15,7 +15,6 @@ export function readHeldParts(db: Db, partIds: readonly number[]): HeldPartRow[]
   const given = { parts: JSON.stringify(partIds) };
   const runs = byPart(prepared<[object], RunRow>(db, RUNS).all(given));
   const failures = byPart(prepared<[object], { partId: number; test: string }>(db, FAILURES).all(given));
-  const verdicts = byPart(prepared<[object], VerdictRow>(db, VERDICTS).all(given));
   const places = byPart(prepared<[object], WhereRow>(db, PLACES).all(given));
   return prepared<[object], Particulars>(db, PARTICULARS)
     .all(given)
@@ -31,7 +30,7 @@ export function readHeldParts(db: Db, partIds: readonly number[]): HeldPartRow[]
         runs: cured.map(({ run }) => run),
         runsFromMs: cured.map(({ fromMs }) => fromMs),
         lastRunAt: cured.length === 0 ? null : isoFromMs(cured.at(-1)?.fromMs ?? 0),
-        verdict: latestOf(verdicts.get(partId) ?? [])?.verdict ?? null,
+        verdict: cured.findLast(({ verdict }) => verdict !== null)?.verdict ?? null,
         failedTests: (failures.get(partId) ?? []).map(({ test }) => test),
         whereabouts: where === undefined ? null : { place: where.place, customer: where.customer, since: where.since },
       };
@@ -43,13 +42,8 @@ interface RunRow {
   readonly run: number;
   readonly fromMs: number;
   readonly quantity: number;
-}
-
-interface VerdictRow {
-  readonly partId: number;
+  /** Of the run's latest judgement. */
   readonly verdict: HeldPart['verdict'];
-  readonly fromMs: number;
-  readonly evaluation: number;
 }
 
 interface WhereRow extends NonNullable<HeldPart['whereabouts']> {
@@ -73,14 +67,6 @@ function byPart<T extends { readonly partId: number }>(rows: readonly T[]): Map<
   return found;
 }
 
-/** Of a part's latest judged run; of that run's latest judgement. */
-function latestOf(rows: readonly VerdictRow[]): VerdictRow | undefined {
-  return rows.reduce<VerdictRow | undefined>((best, row) => {
-    if (best === undefined) return row;
-    return row.fromMs > best.fromMs || (row.fromMs === best.fromMs && row.evaluation > best.evaluation) ? row : best;
-  }, undefined);
-}
-
 const NAMED = 'named CROSS JOIN';
 const WITH = 'WITH named (part_id) AS (SELECT value FROM json_each(@parts))';
 
@@ -90,18 +76,16 @@ const PARTICULARS = `${WITH}
     ON about.id = (SELECT max(id) FROM part_particulars WHERE part_id = named.part_id)`;
 
 const RUNS = `${WITH}
-  SELECT load_parts.part_id AS partId, run_id AS run, from_ms AS fromMs, quantity
+  SELECT load_parts.part_id AS partId, run_id AS run, from_ms AS fromMs, quantity,
+    (SELECT verdict FROM evaluation_parts
+     WHERE evaluation_id = (SELECT max(id) FROM evaluations WHERE run_id = runs.id)
+       AND evaluation_parts.part_id = named.part_id) AS verdict
   FROM ${NAMED} load_parts ON load_parts.part_id = named.part_id JOIN loads ON loads.id = load_id
   JOIN runs ON runs.id = run_id WHERE loads.id = (SELECT max(id) FROM loads WHERE run_id = runs.id)`;
 
 const FAILURES = `${WITH}
   SELECT DISTINCT results.part_id AS partId, test
   FROM ${NAMED} part_results_now AS results ON results.part_id = named.part_id WHERE outcome = 'failed'`;
-
-const VERDICTS = `${WITH}
-  SELECT evaluation_parts.part_id AS partId, evaluation_parts.verdict, from_ms AS fromMs, evaluation_id AS evaluation
-  FROM ${NAMED} evaluation_parts ON evaluation_parts.part_id = named.part_id
-  JOIN evaluations ON evaluations.id = evaluation_id JOIN runs ON runs.id = run_id`;
 
 const PLACES = `${WITH}
   SELECT part_whereabouts.part_id AS partId, place, customer, since

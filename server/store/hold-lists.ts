@@ -14,8 +14,10 @@ export function insertHoldList(
   const { lastInsertRowid } = db
     .prepare('INSERT INTO hold_lists (document_sha256, why, parts, at, by) VALUES (?, ?, ?, ?, ?)')
     .run(sha256, document.why, partIds.length, deed.at, deed.by);
-  const insert = db.prepare('INSERT INTO hold_list_parts (hold_list_id, part_id) VALUES (?, ?)');
-  for (const partId of partIds) insert.run(lastInsertRowid, partId);
+  db.prepare('INSERT INTO hold_list_parts (hold_list_id, part_id) SELECT ?, value FROM json_each(?)').run(
+    lastInsertRowid,
+    JSON.stringify(partIds),
+  );
   return { hold: Number(lastInsertRowid), sha256 };
 }
 

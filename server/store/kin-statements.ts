@@ -50,9 +50,11 @@ function channelKin(kind: 'bag-line' | 'thermocouple'): string {
     SELECT value AS key, CAST(substr(value, 1, instr(value, ' ') - 1) AS INTEGER) AS vessel,
       substr(value, instr(value, ' ') + 1) AS channel FROM json_each(@keys))
   SELECT DISTINCT load_places.part_id AS partId, key, runs.id AS run
-  FROM wanted CROSS JOIN runs ON vessel_id = vessel AND ${IN_SPAN}
-  CROSS JOIN loads ON loads.run_id = runs.id AND ${HOLDS}
-  CROSS JOIN load_places ON load_places.load_id = loads.id AND load_places.kind = '${kind}' AND load_places.channel = wanted.channel`;
+  FROM (SELECT DISTINCT vessel FROM wanted) AS here CROSS JOIN runs ON vessel_id = here.vessel AND ${IN_SPAN}
+  CROSS JOIN loads ON loads.id = (SELECT max(id) FROM loads AS later WHERE later.run_id = runs.id)
+  CROSS JOIN wanted ON wanted.vessel = here.vessel
+  CROSS JOIN load_places ON load_places.load_id = loads.id AND load_places.kind = '${kind}'
+    AND load_places.channel = wanted.channel`;
 }
 
 /** What parts have, by kind. */

@@ -51,17 +51,28 @@ export function readParticulars(db: Db, partId: number): ParticularsRow {
 
 /** Parts on one line each, those that came last first; `q` is any stretch of serial, title, drawing or work order. */
 export function listParts(db: Db, { q = '', limit }: { q?: string | undefined; limit: number }): Parts {
-  const values = { q: `%${q.replace(/[\\%_]/g, '\\$&')}%` };
-  const found = q === '' ? 'SELECT id FROM parts' : FOUND;
-  const total = db.prepare<object, number>(`SELECT count(*) FROM (${found})`).pluck().get(values) ?? 0;
+  const ids = q === '' ? latestParts(db, limit) : findParts(db, q);
   const rows = db
-    .prepare<object, PartRow>(
+    .prepare<[string], PartRow>(
       `SELECT parts.id, serial, ${latest('title')} AS title, ${latest('drawing')} AS drawing, ${VERDICT} AS verdict,
          ${FAILED} AS failed
-       FROM parts WHERE id IN (${found}) ORDER BY id DESC LIMIT @limit`,
+       FROM parts WHERE id IN (SELECT value FROM json_each(?)) ORDER BY id DESC`,
     )
-    .all({ ...values, limit });
+    .all(JSON.stringify(ids.slice(0, limit)));
+  const total = q === '' ? (db.prepare<[], number>('SELECT count(*) FROM parts').pluck().get() ?? 0) : ids.length;
   return { parts: rows.map((row) => lineOf(db, row)), total };
+}
+
+function latestParts(db: Db, limit: number): number[] {
+  return db.prepare<[number], number>('SELECT id FROM parts ORDER BY id DESC LIMIT ?').pluck().all(limit);
+}
+
+/** Every part like a word, in one pass: counting them apart would compare the word with every part again. */
+function findParts(db: Db, q: string): number[] {
+  return db
+    .prepare<object, number>(`SELECT id FROM (${FOUND}) ORDER BY id DESC`)
+    .pluck()
+    .all({ q: `%${q.replace(/[\\%_]/g, '\\$&')}%` });
 }
 
 /** Parts whose particulars name this tool now, those that came last first. */
