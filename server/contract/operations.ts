@@ -75,7 +75,8 @@ import { parts, partsQuery, partView } from './parts.ts';
 import { addRecorderRequest, keepLayoutRequest, recorder, recorders } from './recorders.ts';
 import { importResinRequest, resins, resinView } from './resins.ts';
 import { addPartResultRequest, setNonconformanceRequest } from './results.ts';
-import { ROUTES, type Route } from './routes.ts';
+import type { Route } from './route.ts';
+import { ROUTES } from './routes.ts';
 import {
   addNoteRequest,
   closeRunRequest,

@@ -1,6 +1,7 @@
 import express, { type Request, type RequestHandler, type Response, type Router } from 'express';
 import { DomainError } from '../../models/errors.ts';
-import { type OperationName, ROUTES, type Route } from '../contract/routes.ts';
+import type { Route } from '../contract/route.ts';
+import { type OperationName, ROUTES } from '../contract/routes.ts';
 import type { AppParts } from './app-parts.ts';
 
 /** Largest JSON body: a cycle or a load is a few kB. */
