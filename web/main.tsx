@@ -19,6 +19,7 @@ import './style/live-run.css';
 import './style/vessel.css';
 import './style/begin.css';
 import './style/labels.css';
+import './style/papers.css';
 import './style/print.css';
 import { render } from 'preact';
 import { App } from './app.tsx';

@@ -1,14 +1,17 @@
 import { useRoute } from 'preact-iso';
 import type { PartView } from '../../server/contract/parts.ts';
 import { partPath } from '../../server/contract/paths.ts';
+import { partPapersPath } from '../../server/contract/record-paths.ts';
 import { usePageTitle } from '../page-title.ts';
 import { AuditEntries } from '../parts/audit-entries.tsx';
 import { LabelLink } from '../parts/label-link.tsx';
 import { Notebook, PageHead } from '../parts/notebook.tsx';
 import { OutcomeMark, VerdictLine } from '../parts/outcome-mark.tsx';
+import { PaperSection } from '../parts/papers.tsx';
 import { PartDangerSection } from '../parts/part-danger.tsx';
 import { PartLayup } from '../parts/part-layup.tsx';
 import { PartMaterialsSection } from '../parts/part-materials.tsx';
+import { PartNonconformances } from '../parts/part-nonconformances.tsx';
 import { PartResults } from '../parts/part-results.tsx';
 import { PartRunEntry } from '../parts/part-run.tsx';
 import { Shown } from '../parts/shown.tsx';
@@ -111,6 +114,8 @@ function Body({ view, again }: { view: PartView; again: () => void }) {
         )}
       </section>
       <PartResults view={view} onAdded={again} />
+      <PartNonconformances view={view} onChanged={again} />
+      <PaperSection path={partPapersPath(view.serial)} />
       <PartDangerSection serial={view.serial} hasFailed={view.results.some(({ outcome }) => outcome === 'failed')} />
       <section class="section">
         <h2>Parts that share something with it</h2>

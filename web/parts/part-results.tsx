@@ -7,8 +7,13 @@ import { useKeptForm } from '../kept-form.ts';
 import { usePost } from '../use-post.ts';
 import { instantOfWallClock, wallClock } from '../words/clock.ts';
 import { asWritten } from '../words/figures.ts';
+import { KIND_NAMES, type MeasuredKind, measuredWords } from '../words/measured.ts';
+import { EMPTY_MEASURED, measuredOf } from '../words/measured-form.ts';
+import { numberIn } from '../words/typed.ts';
 import { zone } from '../workshop.ts';
 import { ChoiceField, TextField } from './field.tsx';
+import { FigureField } from './figure-field.tsx';
+import { MeasuredFields } from './measured-fields.tsx';
 import { Entry } from './notebook.tsx';
 import { OutcomeMark } from './outcome-mark.tsx';
 import { Problem } from './problem.tsx';
@@ -26,7 +31,7 @@ export function PartResults({ view, onAdded }: { view: PartView; onAdded: () => 
       ) : (
         <ul class="entries">
           {view.results.map((result) => (
-            <Entry key={result.deed.at + result.test} when={<When at={result.at} />}>
+            <Entry key={result.id} when={<When at={result.at} />}>
               <div class="head">
                 <h3>{result.test}</h3>
                 <span class={`outcome-line outcome-${MARKS[result.outcome]}`}>
@@ -35,34 +40,53 @@ export function PartResults({ view, onAdded }: { view: PartView; onAdded: () => 
                 </span>
                 {result.figure !== null && <span>{asWritten(result.figure, result.unit ?? '')}</span>}
               </div>
+              {result.measured && <p>{measuredWords(result.measured)}</p>}
               {result.text && <p>{result.text}</p>}
-              <p class="soft small">written by {result.deed.by}</p>
+              <p class="soft small">
+                written by {result.deed.by}
+                {result.reason ? `, put right: ${result.reason}` : ''}
+              </p>
             </Entry>
           ))}
         </ul>
       )}
       <details class="section">
         <summary>Write down a test or an inspection</summary>
-        <ResultForm serial={view.serial} onAdded={onAdded} />
+        <ResultForm view={view} onAdded={onAdded} />
       </details>
     </section>
   );
 }
 
-const EMPTY = { at: '', test: '', outcome: 'passed', figure: '', unit: '', text: '' };
+const EMPTY = {
+  kind: 'other',
+  at: '',
+  test: '',
+  outcome: 'passed',
+  figure: '',
+  unit: '',
+  text: '',
+  replaces: '',
+  reason: '',
+  measured: EMPTY_MEASURED,
+};
 
-function ResultForm({ serial, onAdded }: { serial: string; onAdded: () => void }) {
-  const [form, setForm, { clear }] = useKeptForm(`result.${serial}`, EMPTY);
+function ResultForm({ view, onAdded }: { view: PartView; onAdded: () => void }) {
+  const { serial } = view;
+  const [form, setForm, { clear }] = useKeptForm(`measured.${serial}`, EMPTY);
+  const kind = form.kind as MeasuredKind;
+  const isOther = kind === 'other';
   const [now] = useState(() => wallClock(Date.now(), zone.value).slice(0, 16));
   const change = (next: Partial<typeof EMPTY>) => setForm({ ...form, ...next });
   const at = instantOfWallClock(form.at || now, zone.value);
   const adding = usePost(async () => {
     const request: AddPartResultRequest = {
       at: new Date(at ?? Date.now()).toISOString(),
-      test: form.test.trim(),
+      test: form.test.trim() || KIND_NAMES[kind],
       outcome: form.outcome as AddPartResultRequest['outcome'],
-      figure: form.figure.trim() === '' ? null : Number(form.figure.replace(',', '.')),
-      unit: form.unit.trim() || null,
+      ...(isOther ? { figure: numberIn(form.figure), unit: form.unit.trim() || null } : {}),
+      ...(isOther ? {} : { measured: measuredOf(kind, form.measured) }),
+      ...(form.replaces === '' ? {} : { replaces: Number(form.replaces), reason: form.reason.trim() }),
       text: form.text,
     };
     await postJson<PartView>(partResultsPath(serial), request);
@@ -76,10 +100,16 @@ function ResultForm({ serial, onAdded }: { serial: string; onAdded: () => void }
   return (
     <form class="stack section" onSubmit={add}>
       <div class="fields">
+        <ChoiceField
+          label="Kind"
+          choices={Object.entries(KIND_NAMES).map(([value, text]) => ({ value, text }))}
+          value={form.kind}
+          onValue={(value) => change({ kind: value })}
+        />
         <TextField
           label="Test or inspection"
-          hint="DSC residual cure, ultrasonic, proof load"
-          required
+          hint={isOther ? 'Tap test, dimensions, proof load' : `Left empty: ${KIND_NAMES[kind]}`}
+          required={isOther}
           maxLength={200}
           value={form.test}
           onValue={(test) => change({ test })}
@@ -98,15 +128,34 @@ function ResultForm({ serial, onAdded }: { serial: string; onAdded: () => void }
           wrong={at === null ? 'This time does not exist in the shop’s zone.' : null}
           onValue={(value) => change({ at: value })}
         />
-        <TextField
-          label="Figure"
-          inputMode="decimal"
-          pattern="-?[0-9]+([.,][0-9]+)?"
-          value={form.figure}
-          onValue={(value) => change({ figure: value })}
+        {isOther && <FigureField label="Figure" value={form.figure} onValue={(value) => change({ figure: value })} />}
+        {isOther && <TextField label="Unit" maxLength={40} value={form.unit} onValue={(unit) => change({ unit })} />}
+        <MeasuredFields
+          kind={kind}
+          form={form.measured}
+          onChange={(next) => change({ measured: { ...form.measured, ...next } })}
         />
-        <TextField label="Unit" maxLength={40} value={form.unit} onValue={(unit) => change({ unit })} />
         <TextField label="What was seen" maxLength={2000} value={form.text} onValue={(text) => change({ text })} />
+        {view.results.length > 0 && (
+          <ChoiceField
+            label="Stands in place of"
+            choices={[
+              { value: '', text: 'nothing: it is another result' },
+              ...view.results.map(({ id, test, outcome }) => ({ value: String(id), text: `${test}: ${outcome}` })),
+            ]}
+            value={form.replaces}
+            onValue={(replaces) => change({ replaces })}
+          />
+        )}
+        {form.replaces !== '' && (
+          <TextField
+            label="Why it is put right"
+            required
+            maxLength={2000}
+            value={form.reason}
+            onValue={(reason) => change({ reason })}
+          />
+        )}
       </div>
       {adding.problem && <Problem problem={adding.problem} kept="What you typed is kept on this page." />}
       <button type="submit" disabled={adding.isUnderWay || at === null}>

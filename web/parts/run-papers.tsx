@@ -1,7 +1,9 @@
 import { runReadingsCsvPath } from '../../server/contract/paths.ts';
+import { runPapersPath } from '../../server/contract/record-paths.ts';
 import type { EvaluationView, RunView } from '../../server/contract/runs.ts';
 import { sentence } from '../words/verdicts.ts';
 import type { EstimatesTold } from './estimates-told.tsx';
+import { PaperSection } from './papers.tsx';
 import { RunEstimates } from './run-estimates.tsx';
 import { RunEvaluations } from './run-evaluations.tsx';
 import { RunFiles } from './run-files.tsx';
@@ -28,6 +30,7 @@ export function RunPapers({
       <RunLoad run={run} />
       {evaluation && <RunSensors run={run} evaluation={evaluation.document} />}
       <RunFiles run={run} />
+      <PaperSection path={runPapersPath(run.run)} />
       {evaluation && evaluation.document.assumptions.length > 0 && (
         <section class="section">
           <h2>Rules the documents left open</h2>
