@@ -4,6 +4,7 @@ import type { AxeResults } from 'axe-core';
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { launchChromium, openPage, settle } from '../support/browser.ts';
+import { openLive } from '../support/live-shop.ts';
 import { leaveWaiting, recordMaterials, recordWorkshop } from '../support/recorded-workshop.ts';
 import { type ServedProgram, serveProgram } from '../support/served-program.ts';
 import { CASES, EXPECTED_COMPLAINT, screensOf } from './screens.ts';
@@ -19,7 +20,7 @@ beforeAll(async () => {
   program = await serveProgram();
   const runs = await recordWorkshop(program.address, CASES);
   await recordMaterials(program.address);
-  screens = screensOf(runs, await leaveWaiting(program.address, 'bad-cell'));
+  screens = screensOf(runs, await leaveWaiting(program.address, 'bad-cell'), await openLive(program.address));
   browser = await launchChromium();
 });
 

@@ -1,5 +1,9 @@
 /** Every screen there is, each with an address where it has something to show. Runs by the case they were recorded from. */
-export function screensOf(runs: ReadonlyMap<string, number>, waiting: number): Readonly<Record<string, string>> {
+export function screensOf(
+  runs: ReadonlyMap<string, number>,
+  waiting: number,
+  live: { readonly run: number; readonly vessel: string },
+): Readonly<Record<string, string>> {
   const run = (name: string) => {
     const number = runs.get(name);
     if (number === undefined) throw new Error(`no run was recorded from ${name}`);
@@ -7,6 +11,12 @@ export function screensOf(runs: ReadonlyMap<string, number>, waiting: number): R
   };
   return {
     now: '/',
+    'all-vessels': '/live',
+    'run-live': `/runs/${live.run}`,
+    vessel: `/vessels/${encodeURIComponent(live.vessel)}`,
+    begin: `/vessels/${encodeURIComponent('Autoclave 1')}/begin`,
+    'begin-loading': `/vessels/${encodeURIComponent('Oven 8')}/begin`,
+    warnings: '/warnings',
     import: '/import',
     'import-file': `/imports/${waiting}`,
     runs: '/runs',

@@ -1,4 +1,4 @@
-import { useEffect, useRef } from 'preact/hooks';
+import { useEffect, useLayoutEffect, useRef } from 'preact/hooks';
 import type { RunChart, Stretch } from '../../models/chart/chart.ts';
 import { createPainter, type Painter } from './painter.ts';
 
@@ -30,13 +30,14 @@ export function RunCanvas({
   const painter = useRef<Painter | null>(null);
   const dragFromH = useRef<number | null>(null);
 
-  useEffect(() => {
+  // Before the browser paints: a scan that just came is then on the picture of this frame.
+  useLayoutEffect(() => {
     if (!canvas.current || !frame.current) return;
     const scene = { chart: drawn, lit, stretch, cursorH, selection: null };
     painter.current = createPainter(canvas.current, frame.current, scene);
     return () => painter.current?.destroy();
   }, []);
-  useEffect(() => painter.current?.show({ chart: drawn }), [drawn]);
+  useLayoutEffect(() => painter.current?.show({ chart: drawn }), [drawn]);
   useEffect(() => painter.current?.show({ lit, stretch, cursorH }), [lit, stretch, cursorH]);
 
   const hoursAt = (event: MouseEvent) => painter.current?.hoursAt(event.clientX) ?? null;

@@ -58,13 +58,17 @@ export function RunLive({ run, again }: { run: RunView; again: () => void }) {
         <Advisory />
         <LiveNeeds forecasts={state?.forecasts ?? []} />
         {evaluation && <Decisions run={run} evaluation={withSuspects(evaluation)} onDecided={again} />}
-        <RunChart
-          run={run}
-          part={part}
-          lit={lit}
-          onNext={() => focusNextFinding(findings.current)}
-          live={{ channels, scans: heard.scans }}
-        />
+        {(state?.scans ?? run.scans) < 2 ? (
+          <p class="soft">The picture begins with the second scan.</p>
+        ) : (
+          <RunChart
+            run={run}
+            part={part}
+            lit={lit}
+            onNext={() => focusNextFinding(findings.current)}
+            live={{ channels, scans: heard.scans }}
+          />
+        )}
       </div>
       <div class="side" ref={findings}>
         {evaluation && (

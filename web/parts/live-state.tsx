@@ -49,6 +49,17 @@ function SoFar({ evaluation, hasEnded }: { evaluation: Evaluation; hasEnded: boo
 }
 
 function NotJudged({ run }: { run: RunView }) {
+  if (run.load !== null && run.cycleIssue !== null) {
+    return (
+      <>
+        <h2 class="outcome-line outcome-pending">
+          <OutcomeMark mark="pending" />
+          Nothing to judge yet
+        </h2>
+        <p>It is judged from its first scans on.</p>
+      </>
+    );
+  }
   const isCycleMissing = run.load !== null && run.cycleIssue === null;
   return (
     <>

@@ -26,7 +26,7 @@ export interface Followed {
 }
 
 /** Scans that come within so long are told together. */
-const SOON_MS = 40;
+const SOON_MS = 15;
 
 /** Tells who watches a run what came since: scans in their order, or that everything is to be read again. */
 export function tellScans(one: Followed, nowMs: number): void {
