@@ -1,71 +1,20 @@
 import { describe, expect, it } from 'vitest';
 import { evaluateLog } from '../../models/evaluation/judge.ts';
-import type { LiveSource } from '../../models/log/live-source.ts';
-import { readLog } from '../../models/log/read-log.ts';
-import type { Readings } from '../../models/log/readings.ts';
 import { verifyChains } from '../../server/actions/verify-chains.ts';
-import { asLogFile } from '../../server/files/as-log-file.ts';
-import type { Db } from '../../server/store/database.ts';
-import { insertLiveSource } from '../../server/store/live-sources.ts';
-import { requireVessel } from '../../server/store/vessels.ts';
 import { type LiveApp, liveApp, upload } from './live-app.ts';
-import { DEED } from './live-workshop.ts';
+import { CASE, caseReadings, layout, liveVessel, log, push, pushAll, scansOf } from './live-steps.ts';
 import { recordedCase } from './recorded-case.ts';
 import { loadCase, recordCase } from './workshop-steps.ts';
 
-const CASE = 'must-work';
-const { layout, log } = recordedCase(CASE);
-
-async function caseReadings(): Promise<Readings> {
-  return readLog([await asLogFile('run.csv', [log], log.length)], layout).readings;
-}
-
-/** The case's vessel with a source that pushes its channels, by their names. */
-function addSource(db: Db, vessel: string, name = 'plc'): void {
-  const channels = layout.channels.map((channel) => ({ ...channel, column: channel.name }));
-  const document: LiveSource = { format: 'dwellbook-source/1', name, intervalS: 10, reads: { kind: 'push' }, channels };
-  insertLiveSource(db, requireVessel(db, vessel), { document, isResting: false, ...DEED });
-}
-
-async function liveVessel(app: LiveApp, vessel = 'Autoclave 7'): Promise<string> {
-  await app.post('/api/vessels', { name: vessel, kind: 'autoclave' });
-  addSource(app.parts.db, vessel, `plc of ${vessel}`);
-  const made = await app.post(`/api/vessels/${vessel}/keys`, { name: 'cell controller' });
-  expect(made.status, made.text).toBe(201);
-  return made.body.key;
-}
-
-function push(app: LiveApp, key: string, scans: object[]) {
-  return app.send('/api/push', {
-    method: 'POST',
-    headers: { 'content-type': 'application/json', authorization: `Bearer ${key}` },
-    body: JSON.stringify({ scans }),
-  });
-}
-
-function scansOf({ timeMs, channels }: Readings): { at: string; values: Record<string, number | null> }[] {
-  return [...timeMs].map((at, scan) => ({
-    at: new Date(at).toISOString(),
-    values: Object.fromEntries(
-      channels.map(({ channel, value }) => [channel.name, Number.isNaN(value[scan]) ? null : (value[scan] ?? null)]),
-    ),
-  }));
-}
-
-async function pushAll(app: LiveApp, key: string, scans: object[]): Promise<void> {
-  for (let first = 0; first < scans.length; first += 200) {
-    const pushed = await push(app, key, scans.slice(first, first + 200));
-    expect(pushed.status, pushed.text).toBe(200);
-    expect(pushed.body.refused).toEqual([]);
-  }
-}
-
 describe('a run logged as it happens', () => {
   it('comes to the same readings and the same verdict as the recorder’s file of it', async () => {
+    // In a workshop of its own: one part is in two vessels at once in none.
+    const files = await liveApp();
+    const filed = await recordCase(files, CASE);
+    expect((await loadCase(files, filed, CASE)).status).toBe(201);
+    const ofFile = (await files.get(`/api/runs/${filed}`)).body;
     const app = await liveApp();
-    const filed = await recordCase(app, CASE);
-    expect((await loadCase(app, filed, CASE)).status).toBe(201);
-    const ofFile = (await app.get(`/api/runs/${filed}`)).body;
+    await app.post('/api/cycles', { document: recordedCase(CASE).cycle });
 
     const key = await liveVessel(app);
     const scans = scansOf(await caseReadings());
@@ -96,7 +45,7 @@ describe('a run logged as it happens', () => {
     expect(closed.body.live).toBeNull();
     expect(closed.body.sources).toEqual([{ ...open, recorded: closed.body.sources[0].recorded }]);
     expect((await app.get(`/api/runs/${run}/readings.csv`)).text).toBe(csvWhileOpen);
-    expect(csvWhileOpen).toBe((await app.get(`/api/runs/${filed}/readings.csv`)).text);
+    expect(csvWhileOpen).toBe((await files.get(`/api/runs/${filed}/readings.csv`)).text);
     expect(closed.body.evaluation.because).toBe('run closed');
     expect(closed.body.evaluation.document.parts).toEqual(ofFile.evaluation.document.parts);
     expect(closed.body.evaluation.verdict).toBe(ofFile.evaluation.verdict);
@@ -244,66 +193,5 @@ describe('closing a run', () => {
       holds: false,
       firstBroken: `scans of run ${run}, source "plc of Autoclave 7"`,
     });
-  });
-});
-
-describe('POST /api/push', () => {
-  it('takes scans of the vessel whose key is shown, and of no other', async () => {
-    const app = await liveApp();
-    const key = await liveVessel(app);
-    await liveVessel(app, 'Oven 2');
-    const scans = [{ at: '2026-03-10T07:30:00Z', sequence: 4, values: { TC1: 20, TC2: null, other: 3 } }];
-    expect((await push(app, key, scans)).body).toEqual({ kept: 1, known: 0, refused: [] });
-    expect((await push(app, key, scans)).body).toEqual({ kept: 0, known: 1, refused: [] });
-    const named = await app.send('/api/push', {
-      method: 'POST',
-      headers: { 'content-type': 'application/json', authorization: `Bearer ${key}` },
-      body: JSON.stringify({ source: 'plc of Oven 2', scans }),
-    });
-    expect([named.status, named.body.detail]).toEqual([
-      404,
-      'No source of this vessel that is pushed is called "plc of Oven 2"',
-    ]);
-    const nothing = await push(app, key, [{ at: '2026-03-10T07:30:01Z', values: { tc1: 20 } }]);
-    expect(nothing.body.refused).toEqual([
-      { at: '2026-03-10T07:30:01.000Z', because: expect.stringContaining('none of its keys is a channel') },
-    ]);
-  });
-
-  it('asks for a key that is known and not revoked', async () => {
-    const app = await liveApp();
-    const key = await liveVessel(app);
-    const scans = [{ at: '2026-03-10T07:30:00Z', values: { TC1: 20 } }];
-    const without = await app.post('/api/push', { scans });
-    expect([without.status, without.headers.get('www-authenticate')]).toEqual([401, 'Bearer']);
-    expect((await push(app, `${key}x`, scans)).status).toBe(401);
-    expect((await push(app, key, scans)).status).toBe(200);
-    const keys = (await app.get('/api/vessels/Autoclave 7/keys')).body.keys;
-    expect(keys).toEqual([
-      { id: 1, name: 'cell controller', made: expect.any(Object), revoked: null, lastUsed: '2026-03-10T08:00:00.000Z' },
-    ]);
-    expect(app.parts.db.prepare('SELECT count(*) FROM sender_keys WHERE sha256 = ?').pluck().get(key)).toBe(0);
-    const revoked = await app.post('/api/vessels/Autoclave 7/keys/1/revoke', { reason: 'laptop lost' });
-    expect(revoked.body.keys[0].revoked).toEqual({ at: '2026-03-10T08:00:00.000Z', by: 'inspector 2' });
-    const after = await push(app, key, scans);
-    expect([after.status, after.body.detail]).toEqual([403, 'The key "cell controller" was revoked']);
-    expect((await app.post('/api/vessels/Autoclave 7/keys/1/revoke', { reason: 'again' })).status).toBe(409);
-  });
-
-  it('answers 507 where the disk is full, and takes the same scans when it is not', async () => {
-    const app = await liveApp();
-    const key = await liveVessel(app);
-    const { db } = app.parts;
-    const scans = Array.from({ length: 4000 }, (_, n) => ({
-      at: new Date(Date.parse('2026-03-10T06:00:00Z') + 1000 * n).toISOString(),
-      values: { TC1: n / 10 },
-    }));
-    db.pragma(`max_page_count = ${Number(db.pragma('page_count', { simple: true })) + 30}`);
-    const full = await push(app, key, scans);
-    expect([full.status, full.body.type]).toEqual([507, '/problems/disk-full']);
-    db.pragma('max_page_count = 1073741823');
-    const after = await push(app, key, scans);
-    expect(after.body.kept + after.body.known).toBe(4000);
-    expect(db.prepare('SELECT count(*) FROM live_scans').pluck().get()).toBe(4000);
   });
 });

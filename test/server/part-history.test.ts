@@ -50,6 +50,7 @@ describe('from a part to its history', () => {
         },
       ],
       results: [],
+      nonconformances: [],
       layup: null,
       toolRecord: null,
       works: [],
