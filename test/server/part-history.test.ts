@@ -66,7 +66,7 @@ describe('from a part to its history', () => {
       audit: expect.arrayContaining([expect.objectContaining({ verb: 'set-load', by: 'inspector 2' })]),
     });
     const failed = (await app.get(`/api/parts/${mate}`)).body;
-    expect(failed.results).toEqual([{ ...result, deed: DEED }]);
+    expect(failed.results).toEqual([{ ...result, id: 1, measured: null, reason: null, deed: DEED }]);
     const listed = (await app.get('/api/parts?q=SR-D-12')).body;
     expect(listed.total).toBe(2);
     expect(listed.parts.map(({ serial: one, failedTest }: never) => [one, failedTest])).toEqual(
