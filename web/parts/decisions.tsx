@@ -92,7 +92,9 @@ function Decide({ run, decision, onDecided }: { run: RunView; decision: OpenDeci
         {sentence(decision.because)}{' '}
         {changes.length > 0
           ? `${changes.length === 1 ? 'On it hangs' : 'On it hang'}: ${changes.join('; ')}.`
-          : 'No finding would change.'}
+          : run.live === null
+            ? 'No finding would change.'
+            : 'While the run goes on it is counted against.'}
       </p>
       <div class="decide">
         <AreaField
