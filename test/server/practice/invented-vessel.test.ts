@@ -35,6 +35,9 @@ function workshopWith(...cycles: readonly Cycle[]): Db {
 /** A cycle Skerry Row does not have, so that its programme is made of the document alone. */
 const OWN: Cycle = { ...PRACTICES['struts-b'].cycle, code: 'OWN-180', issue: '1' };
 
+/** Judged from what is on record of a run, not from what its vessel shows. */
+const ON_RECORD = ['leak-test', 'material/out-life', 'instruments/calibration'];
+
 describe('an invented vessel', () => {
   const cycles = [...Object.values(PRACTICES).map(({ cycle }) => cycle), OWN];
 
@@ -59,7 +62,7 @@ describe('an invented vessel', () => {
       const inputs = { cycle, load, resin, exclusions: [], barometer: null, open: false };
       const evaluation = evaluateLog({ readings, repairs: [], passedOver: [] }, inputs);
       const { findings } = evaluation.parts[0]!;
-      const broken = findings.filter(({ limit, outcome }) => outcome !== 'met' && limit !== 'leak-test');
+      const broken = findings.filter(({ limit, outcome }) => outcome !== 'met' && !ON_RECORD.includes(limit));
       expect(broken.map(({ limit, because }) => [limit, because])).toEqual([]);
     },
   );
