@@ -6,8 +6,8 @@ import { HOUR } from '../support/open-run.ts';
 
 const MINUTES = Number(process.env.SOAK_MINUTES ?? 10);
 const SPEED = 20;
-/** While the caches fill and the collector finds its pace. */
-const WARM_UP_MINUTES = 2;
+/** While caches fill and the heap grows to the size the collector settles at. */
+const WARM_UP_MINUTES = 5;
 const CHANNELS = Array.from({ length: 32 }, (_, n) => `TC${n + 1}`);
 /**
  * What the run itself adds: a digest keeps each reading with its instant, its scan and two trees of extremes, 5 × 8 bytes;
@@ -68,9 +68,9 @@ describe('a soak', () => {
     stop.abort();
     const seen = await watching;
     const settled = memory.filter(({ minutes }) => minutes >= Math.min(WARM_UP_MINUTES, MINUTES / 2));
-    const slope = growthOf(settled);
+    const slope = slopeOf(settled);
     console.log(
-      `memory after the warm-up, MB: ${settled.map(({ mb }) => mb.toFixed(0)).join(' ')}\nslope of its lowest ` +
+      `memory after the warm-up, MB: ${settled.map(({ mb }) => mb.toFixed(0)).join(' ')}\nslope ` +
         `${slope.toFixed(2)} MB/min of which the run itself takes ${MB_PER_MIN_OF_THE_RUN.toFixed(2)}; ` +
         `${sent} scans sent, ${seen} seen by a watcher`,
     );
@@ -100,16 +100,13 @@ function residentMb(pid: number): number {
   return Number(/VmRSS:\s+(\d+) kB/.exec(readFileSync(`/proc/${pid}/status`, 'utf8'))?.[1]) / 1024;
 }
 
-/**
- * Growth of what stays, MB/min: from the lowest memory of the first third to that of the last. Between two collections
- * memory only rises, and the collector takes its time where there is room.
- */
-function growthOf(points: readonly Sample[]): number {
-  const third = Math.floor(points.length / 3);
-  const lowest = (some: readonly Sample[]) => some.reduce((a, b) => (b.mb < a.mb ? b : a));
-  const first = lowest(points.slice(0, third));
-  const last = lowest(points.slice(-third));
-  return (last.mb - first.mb) / (last.minutes - first.minutes);
+/** Least-squares slope, MB/min. */
+function slopeOf(points: readonly Sample[]): number {
+  const meanX = points.reduce((sum, { minutes }) => sum + minutes, 0) / points.length;
+  const meanY = points.reduce((sum, { mb }) => sum + mb, 0) / points.length;
+  const sxy = points.reduce((sum, { minutes, mb }) => sum + (minutes - meanX) * (mb - meanY), 0);
+  const sxx = points.reduce((sum, { minutes }) => sum + (minutes - meanX) ** 2, 0);
+  return sxy / sxx;
 }
 
 interface Sample {
