@@ -1,7 +1,7 @@
 import { compareFailed } from '../../models/trace/compare-failed.ts';
 import { factorsOf, type PartFeatures } from '../../models/trace/known-factors.ts';
 import type { Compared, CompareQuery } from '../contract/comparison.ts';
-import { type Db, openDatabase } from '../store/database.ts';
+import { type Db, readDatabase } from '../store/database.ts';
 import { findLatestEvaluation } from '../store/evaluations.ts';
 import { isoFromMs } from '../store/instants.ts';
 import { findLoad } from '../store/loads.ts';
@@ -23,12 +23,7 @@ export type CompareParts = (asked: CompareAsked) => Promise<Compared>;
 
 /** What the failed parts of a scope share that the sound ones do not; reads the database for itself. */
 export function compareParts({ path, at, query }: CompareAsked): Compared {
-  const db = openDatabase(path, { at, readonly: true });
-  try {
-    return db.transaction(() => compareIn(db, query))();
-  } finally {
-    db.close();
-  }
+  return readDatabase(path, at, (db) => compareIn(db, query));
 }
 
 function compareIn(db: Db, query: CompareQuery): Compared {

@@ -1,7 +1,7 @@
 import { longestGapMs } from '../../models/chart/longest-gap.ts';
 import { type OverlaidCourse, overlayOf } from '../../models/chart/overlay.ts';
 import type { Overlaid, OverlayEvent, OverlayQuery, OverlayStrip } from '../contract/comparison.ts';
-import { type Db, openDatabase } from '../store/database.ts';
+import { type Db, readDatabase } from '../store/database.ts';
 import { findLatestEvaluation } from '../store/evaluations.ts';
 import { type ChosenPart, chooseParts } from './compared-parts.ts';
 import { cureCourses } from './cure-courses.ts';
@@ -23,12 +23,7 @@ const STRIPS = { coldest: '°C', vacuum: 'bar', pressure: 'bar', degree: '' } as
 
 /** Failed and sound runs laid over each other by an event; reads the database for itself. */
 export function overlayParts({ path, at, query }: OverlayAsked): Overlaid {
-  const db = openDatabase(path, { at, readonly: true });
-  try {
-    return db.transaction(() => overlayIn(db, query))();
-  } finally {
-    db.close();
-  }
+  return readDatabase(path, at, (db) => overlayIn(db, query));
 }
 
 function overlayIn(db: Db, query: OverlayQuery): Overlaid {

@@ -1,6 +1,6 @@
 import type { Evaluation } from '../../models/evaluation/evaluation.ts';
 import { evaluateLog, type JudgementInputs } from '../../models/evaluation/judge.ts';
-import { openDatabase } from '../store/database.ts';
+import { readDatabase } from '../store/database.ts';
 import type { MergedLog } from './merge-logs.ts';
 import { readRunSources, sourceInputs } from './run-inputs.ts';
 
@@ -24,10 +24,5 @@ export function evaluateStored(stored: StoredRun, inputs: JudgementInputs): Eval
 
 /** All readings of a run, and what was joined in them. */
 export function readStored({ path, run }: StoredRun): MergedLog {
-  const db = openDatabase(path, { at: '', readonly: true });
-  try {
-    return readRunSources(sourceInputs(db, run));
-  } finally {
-    db.close();
-  }
+  return readDatabase(path, '', (db) => readRunSources(sourceInputs(db, run)));
 }

@@ -1,4 +1,5 @@
 import type { HeldPart, HoldView, KinKind, Shared } from '../contract/trace.ts';
+import { csvCell } from './csv-cell.ts';
 
 const HEADER = [
   'part',
@@ -63,5 +64,5 @@ function line(cells: readonly string[]): string {
 
 function cell(text: string): string {
   const plain = /^[=+\-@\t\r]/.test(text) ? `'${text}` : text;
-  return /[",\r\n]/.test(plain) ? `"${plain.replaceAll('"', '""')}"` : plain;
+  return csvCell(plain);
 }

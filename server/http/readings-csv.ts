@@ -5,6 +5,7 @@ import { readRunSources, sourceInputs } from '../actions/run-inputs.ts';
 import { isoFromMs } from '../store/instants.ts';
 import { requireRun } from '../store/runs.ts';
 import type { AppParts } from './app-parts.ts';
+import { csvCell } from './csv-cell.ts';
 import type { Download } from './handler.ts';
 
 /**
@@ -27,8 +28,8 @@ function* rowsOf({ log, joined }: MergedLog): Generator<string> {
     return { ...one, sourceAt: join === undefined ? null : sourcesOf(join) };
   });
   const headings = channels.flatMap(({ channel, sourceAt }) => [
-    cell(`${channel.name} [${channel.unit}]`),
-    ...(sourceAt === null ? [] : [cell(`${channel.name} source`)]),
+    csvCell(`${channel.name} [${channel.unit}]`),
+    ...(sourceAt === null ? [] : [csvCell(`${channel.name} source`)]),
   ]);
   yield `${['time_utc', ...headings].join(',')}\r\n`;
   for (let first = 0; first < timeMs.length; first += ROWS_AT_ONCE) {
@@ -50,9 +51,4 @@ function sourcesOf({ timeMs, source }: JoinedReadings): ReadonlyMap<number, numb
 
 function figure(reading: number): string {
   return Number.isNaN(reading) ? '' : String(reading);
-}
-
-/** RFC 4180: a cell with a delimiter, a quote or a line break stands in quotes, its quotes doubled. */
-function cell(text: string): string {
-  return /[",\r\n]/.test(text) ? `"${text.replaceAll('"', '""')}"` : text;
 }

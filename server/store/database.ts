@@ -37,6 +37,16 @@ export function openDatabase(path: string, { at, readonly = false }: OpenOptions
   }
 }
 
+/** What a thread reads of a database it opens for itself: as it stood at one moment, without being able to write. */
+export function readDatabase<T>(path: string, at: string, read: (db: Db) => T): T {
+  const db = openDatabase(path, { at, readonly: true });
+  try {
+    return db.transaction(() => read(db))();
+  } finally {
+    db.close();
+  }
+}
+
 function connect(path: string, readonly: boolean): Db {
   try {
     return new Database(path, { readonly, fileMustExist: readonly });

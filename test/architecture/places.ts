@@ -141,7 +141,6 @@ export const PLACES: Readonly<Record<string, Place>> = {
   test: { may: ['*'], packages: ['*', 'node:'] },
   'vite.config.ts': room([], ['*', 'node:']),
   'vitest.config.ts': room([], ['*', 'node:']),
-  'vitest.slow.config.ts': room(['vitest.config.ts'], ['*', 'node:']),
 };
 
 /** The place of a file; null where it lies in none. `models/errors.ts` is of `models`, `models/foo/a.ts` of no place. */

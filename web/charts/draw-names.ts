@@ -54,7 +54,8 @@ export function isStrong({ role }: Line): boolean {
   return role === 'leading' || role === 'lagging';
 }
 
-function shortened(ctx: CanvasRenderingContext2D, text: string, room: number): string {
+/** As much of a text as there is room for, the rest an ellipsis. */
+export function shortened(ctx: CanvasRenderingContext2D, text: string, room: number): string {
   if (ctx.measureText(text).width <= room) return text;
   let cut = text;
   while (cut.length > 1 && ctx.measureText(`${cut}…`).width > room) cut = cut.slice(0, -1);

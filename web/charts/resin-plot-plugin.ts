@@ -1,5 +1,6 @@
 import type { Chart, Plugin } from 'chart.js';
 import { spreadLabels } from '../../models/chart/spread-labels.ts';
+import { shortened } from './draw-names.ts';
 import type { Ink } from './ink.ts';
 import { courseAt, type PlotCourse } from './resin-plot.ts';
 import { drawCurveNames, drawPlotMarks, drawRails } from './resin-plot-marks.ts';
@@ -59,13 +60,6 @@ function endOf({ y }: PlotCourse): number | null {
     if (value !== undefined && Number.isFinite(value)) return value;
   }
   return null;
-}
-
-function shortened(ctx: CanvasRenderingContext2D, text: string, room: number): string {
-  if (ctx.measureText(text).width <= room) return text;
-  let cut = text;
-  while (cut.length > 1 && ctx.measureText(`${cut}…`).width > room) cut = cut.slice(0, -1);
-  return `${cut}…`;
 }
 
 function drawCursor({ ctx, scales, chartArea }: Chart, { plot, ink }: PlotScene, atX: number): void {
